@@ -1,0 +1,90 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import { dirname, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { describe, expect, it } from 'vitest';
+import { parse } from 'yaml';
+import { demoStudy } from '../../datasets-demo/make.js';
+
+const folder = join(dirname(fileURLToPath(import.meta.url)), '../../datasets-demo');
+const study = demoStudy();
+
+describe('demo study', () => {
+  it('stands on disk as it is made', () => {
+    for (const [path, text] of study)
+      expect(readFileSync(join(folder, path), 'utf8') === text, path).toBe(true);
+    const onDisk = readdirSync(folder, { recursive: true, withFileTypes: true })
+      .filter((entry) => entry.isFile() && !entry.name.endsWith('.ts'))
+      .map((entry) =>
+        join(entry.parentPath, entry.name)
+          .slice(folder.length + 1)
+          .replaceAll('\\', '/'),
+      );
+    expect(onDisk.sort()).toEqual([...study.keys()].sort());
+  });
+
+  it('is small, and its lines end with line feeds', () => {
+    const bytes = [...study.values()].reduce((sum, text) => sum + Buffer.byteLength(text), 0);
+    expect(bytes).toBeLessThan(2_000_000);
+    for (const text of study.values()) {
+      expect(text).not.toContain('\r');
+      expect(text.endsWith('\n')).toBe(true);
+    }
+  });
+
+  it('has a truth that its logs bear out', () => {
+    const truth = JSON.parse(study.get('truth.json')!);
+    const lines = [...study]
+      .filter(([path]) => path.startsWith('logs/'))
+      .flatMap(([, text]) => text.trimEnd().split('\n').slice(1));
+    const marks = new Set(
+      study
+        .get('marks.csv')!
+        .split('\n')
+        .slice(1)
+        .map((line) => line.split(',')[0]),
+    );
+    const cells = lines.map((line) => line.split(','));
+    const float = cells.filter((cell) => cell[8] === 'float').length;
+    const unknownMark = cells.filter((cell) => !marks.has(cell[2])).length;
+    const duplicate = lines.length - new Set(lines).size;
+    expect(truth.rows).toEqual({
+      written: lines.length,
+      float,
+      unknownMark,
+      duplicate,
+      fixed: lines.length - float - unknownMark - duplicate,
+    });
+    for (const count of [float, unknownMark, duplicate, truth.visits.withoutFix])
+      expect(count).toBeGreaterThan(0);
+    expect(float / lines.length).toBeLessThan(0.08);
+    expect(truth.days).toHaveLength(45);
+    expect(truth.wrongFixes).toEqual([]);
+  });
+
+  it('has a study file that fits its data', () => {
+    const settings = parse(study.get('study.yaml')!);
+    const truth = JSON.parse(study.get('truth.json')!);
+    expect(Object.keys(settings)).toEqual([
+      'title',
+      'timeZone',
+      'coordinates',
+      'heights',
+      'marks',
+      'bases',
+      'logs',
+      'period',
+      'occupations',
+      'tolerances',
+      'specSheet',
+      'seed',
+    ]);
+    expect(settings.timeZone).toBe('Etc/GMT+1');
+    expect(truth.settings.utcOffsetHours).toBe(-1);
+    expect(settings.period).toEqual({ from: truth.days[0].day, to: truth.days.at(-1).day });
+    expect(study.has(settings.marks) && study.has(settings.bases)).toBe(true);
+  });
+
+  it('names every file in its README', () => {
+    for (const path of study.keys()) expect(study.get('README.md')).toContain(`\`${path}\``);
+  });
+});
