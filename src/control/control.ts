@@ -1,0 +1,54 @@
+import { type LocalFrame, localFrame } from '../geodesy/index.js';
+import { nearestName } from '../logs/index.js';
+import type { Base, Bases } from './bases.js';
+import type { Mark, Marks } from './marks.js';
+
+/** Everything that is known beforehand: marks and bases. */
+export interface Control {
+  readonly marks: Marks;
+  readonly bases: Bases;
+}
+
+/** The point named, or what to tell about a name that is not known. */
+export type Match<Point> =
+  | { readonly kind: 'known'; readonly point: Point }
+  | { readonly kind: 'unknown'; readonly detail: string };
+
+/** The mark of that name; unknown names come back with the nearest known one. */
+export function matchMark(control: Control, name: string): Match<Mark> {
+  const mark = control.marks.get(name);
+  if (mark !== undefined) return { kind: 'known', point: mark };
+  if (name === '') return { kind: 'unknown', detail: 'the row names no mark' };
+  return { kind: 'unknown', detail: unknownName('mark', name, control.marks.keys()) };
+}
+
+/** The base of that name. A blank name means the only base; with several bases it cannot be known. */
+export function matchBase(control: Control, name: string): Match<Base> {
+  const { bases } = control;
+  if (name === '') {
+    if (bases.size === 1) return { kind: 'known', point: bases.values().next().value! };
+    return { kind: 'unknown', detail: `the row names no base and the study has ${bases.size}` };
+  }
+  const base = bases.get(name);
+  if (base !== undefined) return { kind: 'known', point: base };
+  return { kind: 'unknown', detail: unknownName('base', name, bases.keys()) };
+}
+
+function unknownName(what: string, name: string, known: Iterable<string>): string {
+  const near = nearestName(name, known);
+  return `no ${what} is named ${JSON.stringify(name)}${near === null ? '' : ` (did you mean ${JSON.stringify(near)}?)`}`;
+}
+
+/**
+ * The local frame in which the epochs at a mark are averaged: at the mark, with what is not known of it taken from the
+ * base. Averages do not depend on the frame; errors are only stated in it for what is known of the mark.
+ */
+export function markFrame(mark: Mark, base: Base): LocalFrame {
+  const { latitudeDeg, longitudeDeg, heightM } = mark.position;
+  const known = (value: number, otherwise: number): number => (Number.isNaN(value) ? otherwise : value);
+  return localFrame({
+    latitudeDeg: known(latitudeDeg, base.position.latitudeDeg),
+    longitudeDeg: known(longitudeDeg, base.position.longitudeDeg),
+    heightM: known(heightM, base.position.heightM),
+  });
+}

@@ -1,0 +1,51 @@
+import type { LocalVector } from '../geodesy/index.js';
+import type { Fix, Position } from '../logs/index.js';
+
+/** An epoch as numbers, so that millions of them can wait outside the garbage collector or on disk. */
+export const RECORD = {
+  utcMs: 0,
+  eastM: 1,
+  northM: 2,
+  upM: 3,
+  /** 0 fixed, 1 not fixed, 2 without coordinates. */
+  state: 4,
+  satellites: 5,
+  pdop: 6,
+  ageSeconds: 7,
+  horizontalSigmaM: 8,
+  verticalSigmaM: 9,
+  file: 10,
+  row: 11,
+  crew: 12,
+} as const;
+
+export const RECORD_WIDTH = 13;
+export const FIXED = 0;
+export const NOT_FIXED = 1;
+export const NO_POSITION = 2;
+
+const stateOf = (fix: Fix, hasPosition: boolean): number =>
+  hasPosition ? (fix === 'fixed' ? FIXED : NOT_FIXED) : NO_POSITION;
+
+/** Fills `record`; `local` is null when the row has no coordinates. */
+export function writeRecord(
+  record: Float64Array,
+  position: Position,
+  local: LocalVector | null,
+  fileIndex: number,
+  crewIndex: number,
+): void {
+  record[RECORD.utcMs] = position.utcMs;
+  record[RECORD.eastM] = local?.eastM ?? Number.NaN;
+  record[RECORD.northM] = local?.northM ?? Number.NaN;
+  record[RECORD.upM] = local?.upM ?? Number.NaN;
+  record[RECORD.state] = stateOf(position.fix, local !== null);
+  record[RECORD.satellites] = position.satellites;
+  record[RECORD.pdop] = position.pdop;
+  record[RECORD.ageSeconds] = position.ageSeconds;
+  record[RECORD.horizontalSigmaM] = position.horizontalSigmaM;
+  record[RECORD.verticalSigmaM] = position.verticalSigmaM;
+  record[RECORD.file] = fileIndex;
+  record[RECORD.row] = position.row;
+  record[RECORD.crew] = crewIndex;
+}

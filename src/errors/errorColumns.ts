@@ -1,0 +1,61 @@
+import type { ColumnTable } from 'arquero';
+import { inputError } from '../logs/index.js';
+
+/** Errors as they come from `computeErrors`, or any arquero table or array of records with the needed columns. */
+export type ErrorsInput = ColumnTable | readonly object[];
+
+/** Reads columns out of a table or an array of records, and says which option asked for one that is missing. */
+export interface ErrorColumns {
+  readonly length: number;
+  /** @throws InputError when the column is missing */
+  readonly numbers: (name: string, neededFor: string) => Float64Array;
+  /** @throws InputError when the column is missing */
+  readonly texts: (name: string, neededFor: string) => string[];
+}
+
+export function errorColumns(input: ErrorsInput): ErrorColumns {
+  const source = isTable(input) ? tableSource(input) : recordSource(input);
+  const column = (name: string, neededFor: string): ArrayLike<unknown> => {
+    if (source.length === 0) return [];
+    const values = source.column(name);
+    if (values !== null) return values;
+    throw inputError(
+      'missing-column',
+      `Expected a column "${name}" in the errors, needed for ${neededFor}, came ${source
+        .names()
+        .map((known) => JSON.stringify(known))
+        .join(', ')}. Add the column or change the option.`,
+    );
+  };
+  return {
+    length: source.length,
+    numbers: (name, neededFor) => Float64Array.from(column(name, neededFor) as ArrayLike<number>, Number),
+    texts: (name, neededFor) => Array.from(column(name, neededFor), String),
+  };
+}
+
+interface Source {
+  readonly length: number;
+  readonly names: () => string[];
+  readonly column: (name: string) => ArrayLike<unknown> | null;
+}
+
+const isTable = (input: ErrorsInput): input is ColumnTable =>
+  typeof (input as { numRows?: unknown }).numRows === 'function';
+
+function tableSource(table: ColumnTable): Source {
+  return {
+    length: table.numRows(),
+    names: () => table.columnNames(),
+    column: (name) => (table.columnIndex(name) < 0 ? null : (table.array(name) as ArrayLike<unknown>)),
+  };
+}
+
+function recordSource(records: readonly object[]): Source {
+  return {
+    length: records.length,
+    names: () => Object.keys(records[0]!),
+    column: (name) =>
+      name in records[0]! ? records.map((record) => (record as Record<string, unknown>)[name]) : null,
+  };
+}

@@ -1,0 +1,10 @@
+export {
+  type ComputedErrors,
+  computeErrors,
+  type OccupationError,
+  type SetAsideOccupation,
+} from './computeErrors.js';
+export { type ErrorColumns, type ErrorsInput, errorColumns } from './errorColumns.js';
+export { errorTable } from './errorTable.js';
+export { type FormedOccupations, type FormOccupationsOptions, formOccupations } from './formOccupations.js';
+export type { Occupation, Visit } from './occupation.js';

@@ -1,0 +1,45 @@
+import type { Geodetic } from '../geodesy/index.js';
+
+/** A crew's stay at a mark, with or without a fix. */
+export interface Visit {
+  readonly rover: string;
+  readonly mark: string;
+  readonly base: string;
+  readonly setup: string;
+  readonly crew: string;
+  /** Local calendar day of the start, `YYYY-MM-DD`. */
+  readonly day: string;
+  readonly startMs: number;
+  readonly endMs: number;
+  readonly rows: number;
+  readonly fixedRows: number;
+}
+
+/** Consecutive fixed positions of one visit, averaged: the unit that is analysed. */
+export interface Occupation {
+  readonly rover: string;
+  readonly mark: string;
+  readonly base: string;
+  readonly setup: string;
+  readonly crew: string;
+  readonly day: string;
+  readonly startMs: number;
+  readonly endMs: number;
+  /** Fixed rows that were averaged. */
+  readonly epochs: number;
+  /** Mean of the fixed epochs. */
+  readonly position: Geodetic;
+  /** Standard deviation of a single epoch about the mean, mm; NaN for one epoch. */
+  readonly scatterEastMm: number;
+  readonly scatterNorthMm: number;
+  readonly scatterUpMm: number;
+  /** Means over the epochs; NaN where no epoch gave a value. */
+  readonly satellites: number;
+  readonly pdop: number;
+  readonly ageSeconds: number;
+  readonly horizontalSigmaM: number;
+  readonly verticalSigmaM: number;
+  /** Where its first epoch stands. */
+  readonly file: string;
+  readonly row: number;
+}

@@ -1,0 +1,75 @@
+import { type Message, message } from '../logs/index.js';
+import { median } from '../stats/index.js';
+import type { OccupationError, SetAsideOccupation } from './computeErrors.js';
+
+/** A mark is named from this size on, however small the others are. */
+const SMALLEST_MM = 100;
+/** … and when it is this many times the usual offset of a mark. */
+const TIMES_USUAL = 8;
+/** Above this share of occupations more than 10 m off, the cause is the study, not the occupation. */
+const WHOLE_STUDY_SHARE = 0.2;
+
+/**
+ * Names marks whose median error is far larger than that of the others (wrong coordinates, a wrong name, another
+ * frame) and occupations more than 10 m off. Nothing is repaired or dropped here.
+ */
+export function suspectMarks(
+  errors: readonly OccupationError[],
+  setAside: readonly SetAsideOccupation[],
+): Message[] {
+  return [...farOffMarks(errors), ...farOffOccupations(errors, setAside)];
+}
+
+function farOffMarks(errors: readonly OccupationError[]): Message[] {
+  const byMark = new Map<string, OccupationError[]>();
+  for (const error of errors) {
+    const list = byMark.get(error.mark);
+    if (list === undefined) byMark.set(error.mark, [error]);
+    else list.push(error);
+  }
+  const offsets = [...byMark].map(([mark, list]) => {
+    const middle = (component: 'east' | 'north' | 'up'): number => {
+      const known = list.map((error) => error[component]).filter((value) => !Number.isNaN(value));
+      return known.length === 0 ? 0 : median(known);
+    };
+    const [east, north, up] = [middle('east'), middle('north'), middle('up')];
+    return { mark, list, east, north, up, size: Math.hypot(east, north, up) };
+  });
+  if (offsets.length === 0) return [];
+  const usual = median(offsets.map(({ size }) => size));
+  return offsets
+    .filter(({ size }) => size > SMALLEST_MM && size > TIMES_USUAL * usual)
+    .map(({ mark, list, east, north, up, size }) => {
+      const signed = (value: number): string => `${value < 0 ? '−' : '+'}${Math.abs(value).toFixed(0)}`;
+      const days = new Set(list.map(({ day }) => day)).size;
+      return message(
+        'warning',
+        'mark-far-off',
+        `Mark "${mark}" is measured ${(size / 1000).toFixed(3)} m from its known coordinates (east ${signed(east)}, north ${signed(north)}, up ${signed(up)} mm, medians of ${list.length} occupations on ${days} ${days === 1 ? 'day' : 'days'}), other marks ${usual.toFixed(0)} mm. It is kept and spoils the fit: check its coordinates, its name and its frame.`,
+      );
+    });
+}
+
+function farOffOccupations(
+  errors: readonly OccupationError[],
+  setAside: readonly SetAsideOccupation[],
+): Message[] {
+  if (setAside.length === 0) return [];
+  const all = errors.length + setAside.length;
+  const { error } = setAside[0]!;
+  const size = Math.hypot(error.east || 0, error.north || 0, error.up || 0) / 1000;
+  const count = setAside.length === 1 ? '1 occupation is' : `${setAside.length} of ${all} occupations are`;
+  const first = `the first, on mark "${error.mark}", by ${size.toFixed(1)} m`;
+  const remedy =
+    setAside.length > WHOLE_STUDY_SHARE * all
+      ? 'So many have one cause: check units, coordinate system, height system, and the coordinates of marks and bases.'
+      : 'Check the name of the mark and the coordinates.';
+  return [
+    message(
+      'warning',
+      'error-over-10-m',
+      `${count} more than 10 m from the known coordinates and set aside, ${first}. ${remedy}`,
+      { file: error.file, row: error.row },
+    ),
+  ];
+}

@@ -1,0 +1,125 @@
+import { geocentricToGeodetic, type LocalFrame } from '../geodesy/index.js';
+import { FIXED, RECORD } from './epochRecord.js';
+import type { Verdict } from './judgeEpochs.js';
+import type { Occupation, Visit } from './occupation.js';
+import { RunningMean } from './runningMean.js';
+
+/** What all epochs of one key have in common. */
+export interface VisitKey {
+  readonly rover: string;
+  readonly mark: string;
+  readonly base: string;
+  readonly setup: string;
+}
+
+export interface VisitBuilderOptions {
+  readonly key: VisitKey;
+  readonly frame: LocalFrame;
+  readonly gapMs: number;
+  readonly dayOf: (utcMs: number) => string;
+  readonly fileNames: readonly string[];
+  readonly crewNames: readonly string[];
+}
+
+const AVERAGED = [
+  RECORD.eastM,
+  RECORD.northM,
+  RECORD.upM,
+  RECORD.satellites,
+  RECORD.pdop,
+  RECORD.ageSeconds,
+  RECORD.horizontalSigmaM,
+  RECORD.verticalSigmaM,
+] as const;
+
+interface OpenOccupation {
+  readonly startMs: number;
+  endMs: number;
+  epochs: number;
+  readonly crew: string;
+  readonly file: string;
+  readonly row: number;
+  readonly means: readonly RunningMean[];
+}
+
+interface OpenVisit {
+  readonly startMs: number;
+  endMs: number;
+  rows: number;
+  fixedRows: number;
+  readonly crew: string;
+}
+
+/** Cuts the epochs of one key, in time order, into visits and occupations. A visit may go on over midnight. */
+export class VisitBuilder {
+  readonly visits: Visit[] = [];
+  readonly occupations: Occupation[] = [];
+  #visit: OpenVisit | null = null;
+  #occupation: OpenOccupation | null = null;
+
+  constructor(readonly options: VisitBuilderOptions) {}
+
+  /** One record at `offset`; a duplicate or conflicting row shows presence but does not enter a mean. */
+  add(records: Float64Array, offset: number, verdict: Verdict): void {
+    const utcMs = records[offset + RECORD.utcMs]!;
+    const { gapMs, fileNames, crewNames } = this.options;
+    if (this.#visit !== null && utcMs - this.#visit.endMs > gapMs) this.#closeVisit();
+    const crew = crewNames[records[offset + RECORD.crew]!]!;
+    this.#visit ??= { startMs: utcMs, endMs: utcMs, rows: 0, fixedRows: 0, crew };
+    this.#visit.endMs = utcMs;
+    this.#visit.rows += 1;
+    if (records[offset + RECORD.state] === FIXED) this.#visit.fixedRows += 1;
+    if (verdict !== 'used') return;
+    if (this.#occupation !== null && utcMs - this.#occupation.endMs > gapMs) this.#closeOccupation();
+    this.#occupation ??= {
+      startMs: utcMs,
+      endMs: utcMs,
+      epochs: 0,
+      crew,
+      file: fileNames[records[offset + RECORD.file]!]!,
+      row: records[offset + RECORD.row]!,
+      means: AVERAGED.map(() => new RunningMean()),
+    };
+    this.#occupation.endMs = utcMs;
+    this.#occupation.epochs += 1;
+    for (let k = 0; k < AVERAGED.length; k++) this.#occupation.means[k]!.add(records[offset + AVERAGED[k]!]!);
+  }
+
+  /** To be called once after the last epoch. */
+  close(): void {
+    this.#closeVisit();
+  }
+
+  #closeVisit(): void {
+    this.#closeOccupation();
+    if (this.#visit === null) return;
+    this.visits.push({ ...this.options.key, ...this.#visit, day: this.options.dayOf(this.#visit.startMs) });
+    this.#visit = null;
+  }
+
+  #closeOccupation(): void {
+    if (this.#occupation === null) return;
+    const { means, ...open } = this.#occupation;
+    this.#occupation = null;
+    const [east, north, up, satellites, pdop, ageSeconds, horizontalSigmaM, verticalSigmaM] = means.map(
+      ({ mean }) => mean,
+    ) as [number, number, number, number, number, number, number, number];
+    const [scatterEast, scatterNorth, scatterUp] = means.map(({ standardDeviation }) => standardDeviation);
+    this.occupations.push({
+      ...this.options.key,
+      ...open,
+      day: this.options.dayOf(open.startMs),
+      position: geocentricToGeodetic(
+        this.options.frame.toGeocentric({ eastM: east, northM: north, upM: up }),
+      ),
+      scatterEastMm: scatterEast! * 1000,
+      scatterNorthMm: scatterNorth! * 1000,
+      scatterUpMm: scatterUp! * 1000,
+      satellites,
+      pdop,
+      ageSeconds,
+      horizontalSigmaM,
+      verticalSigmaM,
+    });
+  }
+}

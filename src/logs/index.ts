@@ -1,0 +1,39 @@
+export {
+  type FileAccount,
+  type ReasonCount,
+  RowAccount,
+  type TotalAccount,
+  totalAccount,
+} from './account.js';
+export { DELIMITERS } from './cells.js';
+export { type CoordinateColumns, type CoordinateSystem, coordinateColumns } from './coordinateColumns.js';
+export {
+  type DelimitedHeader,
+  type DelimitedOptions,
+  type DelimitedRow,
+  readDelimitedTable,
+} from './delimited.js';
+export { type EpochBag, EpochStore } from './epochStore.js';
+export {
+  formatMessage,
+  InputError,
+  inputError,
+  type Message,
+  message,
+  type Place,
+  type Severity,
+} from './messages.js';
+export { nearestName, suggestion } from './nearestName.js';
+export { parseNumber } from './numbers.js';
+export type { Fix, Position } from './position.js';
+export { type LogBatch, type LogFile, type LogLayout, type ReadLogsOptions, readLogs } from './readLogs.js';
+export {
+  OCCUPATION_REASONS,
+  type OccupationReason,
+  REASON_WORDS,
+  ROW_REASONS,
+  type RowReason,
+  type SetAsideRow,
+} from './reasons.js';
+export { COLUMN_ROLES, type ColumnRole, roleOfHeader } from './roles.js';
+export { RowMessages } from './rowMessages.js';

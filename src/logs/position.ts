@@ -1,0 +1,26 @@
+/** What a receiver said of its ambiguities: `fixed`, `float`, or anything else (none, autonomous, differential). */
+export type Fix = 'fixed' | 'float' | 'other';
+
+/** One row of a log. A number that the row does not give is NaN, a text that it does not give is empty. */
+export interface Position {
+  readonly file: string;
+  /** Line of the file, from 1, the header included. */
+  readonly row: number;
+  readonly utcMs: number;
+  readonly mark: string;
+  readonly base: string;
+  readonly setup: string;
+  readonly rover: string;
+  readonly crew: string;
+  readonly fix: Fix;
+  /** Geographic coordinates and ellipsoidal height; all NaN when the row has no coordinates. */
+  readonly latitudeDeg: number;
+  readonly longitudeDeg: number;
+  readonly heightM: number;
+  readonly satellites: number;
+  readonly pdop: number;
+  readonly ageSeconds: number;
+  /** The receiver's own figures, in metres. */
+  readonly horizontalSigmaM: number;
+  readonly verticalSigmaM: number;
+}
