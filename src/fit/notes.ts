@@ -1,0 +1,111 @@
+import { type Message, message } from '../logs/index.js';
+import { clusteredMean } from '../split/index.js';
+import type { Component } from './forms.js';
+import type { FitData } from './prepareErrors.js';
+
+/** What the data themselves say before any fit (the fit adds its own notes). */
+export function dataNotes(data: FitData, component: Component): Message[] {
+  const notes: Message[] = [];
+  const add = (code: string, text: string): void => {
+    notes.push(message('warning', code, text));
+  };
+  const n = data.y.length;
+  const days = new Set(data.day).size;
+  if (days < 4) {
+    add(
+      'too-few-days',
+      `${days} ${days === 1 ? 'day is' : 'days are'} too few for an uncertainty; shown values describe only these days. Add days: 8 give an interval, 15 a rule.`,
+    );
+  } else if (days < 8) {
+    add(
+      'indicative',
+      `With ${days} days the intervals are indicative. Add days: from 8 on they hold what they say.`,
+    );
+  }
+  const values = data.components.flatMap((column) => [...column]);
+  const zeros = values.filter((value) => value === 0).length;
+  if (zeros > 0.2 * values.length) {
+    add(
+      'rounded',
+      `${((100 * zeros) / values.length).toFixed(0)} % of the errors are exactly 0: coordinates look rounded, and a constant below about 0.3 of the rounding step is not measurable. Export more digits.`,
+    );
+  }
+  for (const [list, what, remedy] of [
+    [data.day, 'day', 'Look at the fit without it.'],
+    [data.mark, 'mark', 'Visit other marks too.'],
+  ] as const) {
+    const top = list === null ? null : mostFrequent(list);
+    if (top !== null && top.count > 0.5 * n && new Set(list).size > 1) {
+      add(
+        `one-${what}`,
+        `${what === 'day' ? 'Day' : 'Mark'} ${top.name} alone has ${((100 * top.count) / n).toFixed(0)} % of the shots. ${remedy}`,
+      );
+    }
+  }
+  if (data.setup !== null && new Set(data.setup).size === 1 && days > 1) {
+    notes.push(
+      message(
+        'info',
+        'one-setup',
+        'There is one base setup: an error of the base coordinates cannot be separated from errors of the marks. It is part of these numbers.',
+      ),
+    );
+  }
+  if (data.withoutValue > 0) {
+    notes.push(
+      message(
+        'info',
+        'component-unknown',
+        `${data.withoutValue} ${data.withoutValue === 1 ? 'occupation has' : 'occupations have'} no ${component} error because the mark is not known in that component. They take part in the other one.`,
+      ),
+    );
+  }
+  return [...notes, ...systematicOffset(data, component)];
+}
+
+/**
+ * A mean error more than three standard errors from 0. The error of a mark repeats on every day, so the variance
+ * between marks counts beside that between days.
+ */
+function systematicOffset(data: FitData, component: Component): Message[] {
+  const names = component === 'horizontal' ? ['east', 'north'] : ['up'];
+  return data.components.flatMap((column, k) => {
+    const byDay = clusteredMean(column, data.day);
+    const byMark = data.mark === null ? null : clusteredMean(column, data.mark);
+    const error = Math.hypot(byDay.standardError, byMark?.standardError ?? 0);
+    if (!(Math.abs(byDay.mean) > 3 * error)) return [];
+    return [
+      message(
+        'warning',
+        'systematic-offset',
+        `The mean ${names[k]} error is ${byDay.mean.toFixed(1)} mm with a standard error of ${error.toFixed(1)} mm: a systematic offset. Check transformation, antenna heights and base coordinates; it stays in the absolute errors.`,
+      ),
+    ];
+  });
+}
+
+function mostFrequent(list: readonly string[]): { name: string; count: number } {
+  const counts = new Map<string, number>();
+  for (const name of list) counts.set(name, (counts.get(name) ?? 0) + 1);
+  return [...counts].reduce((best, [name, count]) => (count > best.count ? { name, count } : best), {
+    name: '',
+    count: 0,
+  });
+}
+
+/** Ratio of east to north RMS outside 0.6 … 1.67: the quantile of equal axes is then too small. */
+export function axisNote(data: FitData): Message[] {
+  const [east, north] = data.components;
+  if (east === undefined || north === undefined) return [];
+  const rms = (column: Float64Array): number =>
+    Math.sqrt(column.reduce((sum, value) => sum + value * value, 0) / column.length);
+  const ratio = rms(east) / rms(north);
+  if (ratio >= 0.6 && ratio <= 1.67) return [];
+  return [
+    message(
+      'warning',
+      'unequal-axes',
+      `East and north errors differ (RMS ratio ${ratio.toFixed(2)}): radial limits from equal axes are up to 13 % too small. Look for a cause that acts in one direction.`,
+    ),
+  ];
+}

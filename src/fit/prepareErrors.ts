@@ -1,0 +1,76 @@
+import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import { inputError } from '../logs/index.js';
+import type { SquaredErrors } from './estimate.js';
+import type { Component } from './forms.js';
+
+/** The columns of one component, in an order that does not depend on the order of rows. */
+export interface FitData extends SquaredErrors {
+  readonly day: readonly string[];
+  /** Signed components, mm: east and north, or up. */
+  readonly components: readonly Float64Array[];
+  readonly mark: readonly string[] | null;
+  readonly setup: readonly string[] | null;
+  /** Rows without a value of this component (marks known in plan only or height only). */
+  readonly withoutValue: number;
+}
+
+/**
+ * @throws InputError when a column is missing, a length is zero or missing, or no row has the component
+ */
+export function prepareErrors(errors: ErrorsInput, component: Component): FitData {
+  const columns = errorColumns(errors);
+  const neededFor = `component "${component}"`;
+  const names = component === 'horizontal' ? ['east', 'north'] : ['up'];
+  const values = names.map((name) => columns.numbers(name, neededFor));
+  const lengths = columns.numbers('baselineKm', 'every fit');
+  const days = columns.texts('day', 'every fit');
+  const optional = (name: string): string[] | null => {
+    try {
+      return columns.texts(name, 'a note');
+    } catch {
+      return null;
+    }
+  };
+  const marks = optional('mark');
+  const setups = optional('setup');
+  const rows = Array.from(lengths.keys());
+  const used = rows.filter((i) => values.every((column) => !Number.isNaN(column[i]!)));
+  if (used.length === 0) {
+    throw inputError(
+      'no-errors',
+      `Expected occupations with ${component} errors, came none of ${rows.length}. Check that marks have coordinates and rows are fixed.`,
+    );
+  }
+  const bad = used.find((i) => !(lengths[i]! > 0 && Number.isFinite(lengths[i]!)));
+  if (bad !== undefined) {
+    throw inputError(
+      'no-baseline',
+      `Expected baseline lengths above 0 km, came ${lengths[bad]} in row ${bad + 1} of the errors. Leave out shots on the base itself.`,
+    );
+  }
+  // Sums depend on order in the last digits: a fixed order makes equal data give equal bytes.
+  const square = (i: number): number => values.reduce((sum, column) => sum + column[i]! ** 2, 0);
+  used.sort(
+    (i, j) =>
+      compare(days[i]!, days[j]!) ||
+      lengths[i]! - lengths[j]! ||
+      square(i) - square(j) ||
+      compareSigns(values, i, j),
+  );
+  const pick = (list: readonly string[] | null): string[] | null => list && used.map((i) => list[i]!);
+  return {
+    y: Float64Array.from(used, square),
+    l: Float64Array.from(used, (i) => lengths[i]! ** 2),
+    w: new Float64Array(used.length).fill(1),
+    day: used.map((i) => days[i]!),
+    components: values.map((column) => Float64Array.from(used, (i) => column[i]!)),
+    mark: pick(marks),
+    setup: pick(setups),
+    withoutValue: rows.length - used.length,
+  };
+}
+
+const compare = (a: string, b: string): number => (a < b ? -1 : a > b ? 1 : 0);
+
+const compareSigns = (values: readonly Float64Array[], i: number, j: number): number =>
+  values.reduce((order, column) => order || column[i]! - column[j]!, 0);
