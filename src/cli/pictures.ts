@@ -1,0 +1,52 @@
+import {
+  type ChartSpec,
+  errorByBaselineChart,
+  markMapChart,
+  markMeansChart,
+  renderSvg,
+} from '../charts/index.js';
+import type { Component } from '../fit/index.js';
+import type { ReportPicture, ReportPictures } from '../report/index.js';
+import { LENGTH_EDGES_KM, summarizeBy } from '../split/index.js';
+import type { StudyRun } from '../study/index.js';
+
+/** The charts of a run, drawn: for the report, and as files by name. */
+export async function drawPictures(
+  run: StudyRun,
+): Promise<{ pictures: ReportPictures; files: readonly (readonly [name: string, svg: string])[] }> {
+  const files: [string, string][] = [];
+  const draw = async (name: string, chart: ChartSpec | null): Promise<ReportPicture | null> => {
+    if (chart === null) return null;
+    const svg = await renderSvg(chart);
+    files.push([name, svg]);
+    return { svg, description: chart.description };
+  };
+  const { marks } = run.results;
+  const horizontal = await draw('horizontal-error', errorChart(run, 'horizontal'));
+  const vertical = await draw('vertical-error', errorChart(run, 'vertical'));
+  const maps: ReportPicture[] = [];
+  for (const [k, baseName] of run.results.bases.entries()) {
+    const ofBase = marks.filter(({ base }) => base === baseName);
+    // A name of a base may hold anything: files are numbered instead.
+    const picture = await draw(
+      `map-${k + 1}`,
+      ofBase.length === 0 ? null : markMapChart({ marks: ofBase, baseName }),
+    );
+    if (picture !== null) maps.push(picture);
+  }
+  const markMeans = await draw('mark-means', marks.length === 0 ? null : markMeansChart({ marks }));
+  return { pictures: { horizontal, vertical, maps, markMeans }, files };
+}
+
+function errorChart({ errors, models, results }: StudyRun, component: Component): ChartSpec | null {
+  const model = models.find((candidate) => candidate.component === component);
+  if (model === undefined) return null;
+  const rule = results.rules.find((candidate) => candidate.component === component);
+  return errorByBaselineChart({
+    errors,
+    model,
+    bins: summarizeBy(errors, { column: 'baselineKm', edges: LENGTH_EDGES_KM }),
+    ...(results.specSheet === null ? {} : { specSheet: results.specSheet }),
+    ...(rule === undefined ? {} : { tolerance: rule, rule }),
+  });
+}

@@ -1,0 +1,55 @@
+/** The files of a starter study, by name. */
+export const STARTER_FILES: Readonly<Record<string, string>> = {
+  'study.yaml': `# yaml-language-server: $schema=./study.schema.json
+# Only "marks", "bases" and "logs" are required. Paths are relative to this file.
+
+title: Check shots
+
+# Zone of your days, as an IANA name. Without it a day is the local mean solar day at the base.
+# timeZone: Europe/Lisbon
+
+# Coordinates of marks, bases and logs: geographic (degrees, WGS 84), geocentric (metres),
+# or a proj string such as "+proj=utm +zone=29 +ellps=GRS80". Heights are ellipsoidal.
+coordinates: geographic
+
+marks: marks.csv
+bases: bases.csv
+logs:
+  - files: logs/*.csv
+    # Where your export has other headers or codes, say so:
+    # layout:
+    #   kind: delimited
+    #   columns: {mark: Point, latitude: Lat, longitude: Lon, height: Ellipsoid height}
+    #   fixValues: {"RTK fix": fixed, "RTK float": float}
+
+# What your clients demand; each line becomes a rule. Horizontal limits are radial.
+tolerances:
+  - {component: horizontal, limitMm: 25, share: 0.95}
+  - {component: vertical, limitMm: 40, share: 0.95}
+
+# What the data sheet of your receivers says, to be compared with what your shots show. State what its
+# words mean: form (root-sum-square | linear-sum), axis (radial | per-axis), level (rms | 68 | 95).
+# specSheet: {horizontal: {constantMm: 8, ppm: 1}, vertical: {constantMm: 15, ppm: 1}, form: linear-sum, axis: radial, level: rms}
+`,
+  'marks.csv': `# One row a mark: coordinates from an independent source, not from the base that is tested.
+# Replace the example. A blank coordinate means not known.
+mark,latitude,longitude,height,source
+EXAMPLE,44.310886625,-18.400700010,133.7214,static session
+`,
+  'bases.csv': `# One row a base point. mounting: pillar (keeps its place overnight) or tripod (a new setup every day).
+base,latitude,longitude,height,mounting
+EXAMPLE-BASE,44.312640518,-18.405217364,148.2163,tripod
+`,
+  'README.md': `# A check-shot study
+
+1. Put your marks and bases into \`marks.csv\` and \`bases.csv\`.
+2. Put your exported logs into \`logs/\`: delimited text with a header that names at least
+   \`time,mark,latitude,longitude,height\`; \`base\`, \`rover\`, \`crew\`, \`fix\`, \`satellites\`, \`pdop\`, \`age\` help.
+   Times are ISO 8601 with \`Z\`, an offset, or in the \`timeZone\` of \`study.yaml\`.
+3. Look at \`study.yaml\`: tolerances, spec sheet, zone.
+4. \`npx ppmwise check study.yaml\` reads and accounts for every row.
+5. \`npx ppmwise run study.yaml\` fits, derives the rules and writes \`results/report.html\`.
+
+Fifteen days with near and far marks are the least for a rule; thirty are sensible.
+`,
+};

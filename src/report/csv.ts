@@ -1,0 +1,17 @@
+import type { Cell } from './tables.js';
+
+/** Rows as RFC 4180 text; a number that is not known is a blank cell. */
+export function csvText(header: readonly string[], rows: Iterable<readonly Cell[]>): string {
+  const lines = [header.map(csvCell).join(',')];
+  for (const row of rows) lines.push(row.map(csvCell).join(','));
+  return `${lines.join('\n')}\n`;
+}
+
+/** One line of a CSV file. */
+export const csvLine = (row: readonly Cell[]): string => `${row.map(csvCell).join(',')}\n`;
+
+function csvCell(cell: Cell): string {
+  if (cell === null || (typeof cell === 'number' && Number.isNaN(cell))) return '';
+  const text = String(cell);
+  return /[",\n\r]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text;
+}

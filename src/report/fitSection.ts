@@ -1,0 +1,83 @@
+import { type SpecSheet, specSheetSigmaMm } from '../rule/index.js';
+import type { FitResult, LengthClass, Results } from '../study/index.js';
+import { count, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
+import { type Html, html } from './html.js';
+import { type Column, table } from './table.js';
+import { componentTitle } from './words.js';
+
+/** How the errors grow with distance: charts, fitted models and what was measured by length. */
+export function fitSection(
+  results: Results,
+  charts: { readonly horizontal: Html | null; readonly vertical: Html | null },
+): Html {
+  const { fits, lengthClasses, specSheet } = results;
+  if (fits.length === 0)
+    return html`<section id="fit"><h2>How errors grow with distance</h2><p>No fit was possible.</p></section>\n`;
+  return html`<section id="fit"><h2>How errors grow with distance</h2>
+${charts.horizontal}${charts.vertical}
+${fitTable(fits)}
+${fits.map(fitRemarks)}
+${lengthTable(lengthClasses, specSheet)}
+</section>
+`;
+}
+
+function fitTable(fits: readonly FitResult[]): Html {
+  const level = percent(fits[0]!.confidence);
+  const columns: Column<FitResult>[] = [
+    { head: 'Component', cell: ({ component }) => componentTitle(component), text: true },
+    { head: 'Constant, mm', cell: ({ constantMm }) => withLimits(constantMm, mm) },
+    { head: 'ppm, mm per km', cell: (fit) => withLimits(fit.ppm, ppm) },
+    { head: 'Spread is', cell: ({ basis }) => basis, text: true },
+    { head: 'Occupations', cell: ({ occupations }) => count(occupations) },
+    { head: 'Days', cell: ({ days }) => count(days) },
+  ];
+  return table(
+    `Own error model, spread² = constant² + (ppm × distance)², with ${level} intervals`,
+    fits,
+    columns,
+  );
+}
+
+function fitRemarks(fit: FitResult): Html {
+  const { low, high } = fit.ppmIfIndependent;
+  const independent =
+    low === null || high === null
+      ? null
+      : html` If every shot were independent the ppm would seem to lie between ${ppm(low)} and ${ppm(high)}: shots of one day are alike, so days are counted instead.`;
+  const influential =
+    fit.mostInfluentialDay === null
+      ? null
+      : html` The day that moves the ppm most is ${fit.mostInfluentialDay.day}: without it the ppm is ${ppm(fit.mostInfluentialDay.ppmWithout)}.`;
+  return html`<p class="small">${componentTitle(fit.component)}: interval by ${fit.interval}; errors counted from the
+published coordinates (${fit.reference}).${independent}${influential}</p>
+`;
+}
+
+function lengthTable(classes: readonly LengthClass[], spec: SpecSheet | null): Html {
+  const rms = (interval: LengthClass['horizontalRmsMm']): string =>
+    interval === null ? NOT_GIVEN : withLimits(interval, mm);
+  const columns: Column<LengthClass>[] = [
+    { head: 'Distance, km', cell: ({ fromKm, toKm }) => `${fromKm} to ${toKm}`, text: true },
+    { head: 'Occupations', cell: ({ occupations }) => count(occupations) },
+    { head: 'Days', cell: ({ days }) => count(days) },
+    { head: 'Visits without a fix', cell: ({ visitsWithoutFix }) => count(visitsWithoutFix) },
+    { head: 'Radial RMS, mm', cell: ({ horizontalRmsMm, tooFew }) => mark(rms(horizontalRmsMm), tooFew) },
+    { head: 'Vertical RMS, mm', cell: ({ verticalRmsMm, tooFew }) => mark(rms(verticalRmsMm), tooFew) },
+  ];
+  if (spec !== null) {
+    const stated =
+      (component: 'horizontal' | 'vertical') =>
+      ({ baselineKm }: LengthClass): string =>
+        mm(specSheetSigmaMm(spec, component, baselineKm));
+    columns.push(
+      { head: 'Spec sheet, radial', cell: stated('horizontal') },
+      { head: 'Spec sheet, vertical', cell: stated('vertical') },
+    );
+  }
+  return html`${table('Measured by distance (shown, not fitted)', classes, columns)}
+<p class="small">* too few: fewer than 10 occupations or 3 days; the figure describes these occupations and nothing more.${spec === null ? null : ' The spec sheet is for ideal conditions, converted to the same kind of spread.'}</p>
+`;
+}
+
+const mark = (text: string, tooFew: boolean): string => (tooFew && text !== NOT_GIVEN ? `${text} *` : text);

@@ -1,0 +1,43 @@
+import { formatMessage, type Message } from '../logs/index.js';
+import type { Results } from '../study/index.js';
+import { count, plural } from './format.js';
+import { fitSentence, ruleSentence } from './words.js';
+
+/** What a run found, in a few lines for a terminal. */
+export function summaryText(results: Results): string {
+  return [
+    results.study.title,
+    '',
+    ...results.rules.map(ruleSentence),
+    ...(results.rules.length === 0 ? ['No rule.'] : []),
+    '',
+    ...results.fits.map(fitSentence),
+    ...(results.fits.length === 0 ? ['No fit.'] : []),
+    '',
+    ...accountLines(results),
+    ...messageLines(results.messages),
+  ].join('\n');
+}
+
+/** The account of rows, visits and occupations. */
+export function accountLines({ rows, visits, occupations, days, period }: Results): string[] {
+  const list = (counts: object): string =>
+    Object.entries(counts)
+      .map(([reason, n]) => `${reason} ${count(n as number)}`)
+      .join(', ');
+  const when = period === null ? '' : `, ${period.from} to ${period.to}`;
+  return [
+    `Rows: ${count(rows.read)} read = ${count(rows.used)} used + ${count(rows.read - rows.used)} set aside${list(rows.setAside) && ` (${list(rows.setAside)})`}.`,
+    `Visits: ${count(visits.withFix)} with a fix, ${count(visits.withoutFix)} without.`,
+    `Occupations: ${count(occupations.formed)} formed, ${count(occupations.used)} used${list(occupations.setAside) && ` (set aside: ${list(occupations.setAside)})`}, on ${plural(days, 'day')}${when}.`,
+  ];
+}
+
+/** Errors and warnings one by one, remarks by their number. */
+export function messageLines(messages: readonly Message[]): string[] {
+  const told = messages.filter(({ severity }) => severity !== 'info');
+  const remarks = messages.length - told.length;
+  const lines = told.map(formatMessage);
+  if (remarks > 0) lines.push(`${plural(remarks, 'remark')} in the report.`);
+  return lines.length === 0 ? [] : ['', ...lines];
+}

@@ -1,0 +1,61 @@
+import type { Rule } from '../rule/index.js';
+import type { FitResult } from '../study/index.js';
+import { kmDown, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
+
+/** Printed with every result. */
+export const CAUTIONS: readonly string[] = [
+  'The rule holds for positions that the receiver called fixed, at the sites, seasons, receivers, crews and procedures in the data, and for nothing else.',
+  'It is no substitute for redundant checks, for local codes, for the accuracy standards of clients and of the law, or for the judgement of a licensed surveyor.',
+  'Positions that the safety of people hangs on need independent verification.',
+];
+
+/** What the words of the report mean. */
+export const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
+  ['base', 'the point on which the base receiver runs; distances are counted from it'],
+  ['baseline', 'the straight line from base to rover; its length in km'],
+  ['mark', 'a point with known coordinates'],
+  ['visit', "a crew's stay at a mark, with or without a fix"],
+  ['occupation', 'consecutive fixed positions of one visit, averaged; the unit that is analysed'],
+  ['error', 'measured minus known, in mm'],
+  ['constant', 'the part of the spread that does not depend on distance, mm'],
+  ['ppm', 'the part that grows with distance: 1 ppm is 1 mm per km'],
+  ['radial RMS', 'root of the mean of east² + north²; about 63 % of positions are within it'],
+  ['vertical RMS', 'root of the mean of up²; about 68 % of positions are within it'],
+  ['root-sum-square', 'constant and ppm part are added as squares: spread² = constant² + (ppm × distance)²'],
+  ['tolerance', 'a limit and the share of positions that must be within it'],
+  [
+    'maximum baseline',
+    'the distance from the base up to which a tolerance holds, with the stated confidence',
+  ],
+];
+
+export const componentTitle = (component: Rule['component']): string =>
+  component === 'horizontal' ? 'Horizontal (radial)' : 'Vertical (ellipsoidal heights)';
+
+const positions = (rule: Rule): string =>
+  `${percent(rule.share)} of ${rule.component} positions within ${mmLimit(rule.limitMm)}`;
+
+const mmLimit = (limitMm: number): string => `${Number(limitMm.toFixed(1))} mm`;
+
+/** A rule as one sentence that can stand in a method statement. */
+export function ruleSentence(rule: Rule): string {
+  const { maximumBaselineKm: limit, reason } = rule;
+  if (limit === null) return `No rule for ${positions(rule)}: ${reason}.`;
+  if (limit === 0) return `${capital(positions(rule))} cannot be promised at any distance: ${reason}.`;
+  const stated = `Up to ${kmDown(limit)} km from the base: ${positions(rule)}, with ${percent(rule.confidence)} confidence over all days together`;
+  return reason === null ? `${stated}.` : `${stated}. ${capital(reason)}.`;
+}
+
+/** A fit as one sentence. */
+export function fitSentence(fit: FitResult): string {
+  const level = percent(fit.confidence);
+  const constant = `${withLimits(fit.constantMm, mm)} mm`;
+  const distance = withLimits(fit.ppm, ppm);
+  const form =
+    distance === NOT_GIVEN
+      ? `${constant} at all distances in the data`
+      : `${constant} and ${distance} ppm, added as squares`;
+  return `${componentTitle(fit.component)}: ${form} (${fit.basis}; ${level} intervals in brackets).`;
+}
+
+const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

@@ -1,0 +1,133 @@
+import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import { type Component, type ErrorModel, sigmaAtMm, sigmaUpperLimitMm } from '../fit/index.js';
+import { longestSupportedKm } from './supportedLength.js';
+import { type Tolerance, toleranceFactor } from './tolerance.js';
+
+/** How far from the base a tolerance holds, and on what that rests. */
+export interface Rule {
+  readonly component: Component;
+  readonly limitMm: number;
+  readonly share: number;
+  readonly dayShare: number;
+  readonly confidence: number;
+  /** `pooled`: over all days together; how many single days meet it is not judged. */
+  readonly method: 'pooled';
+  /** Lower confidence limit of the maximum baseline, km; 0 or null with a reason. */
+  readonly maximumBaselineKm: number | null;
+  /** The same from the estimates without their uncertainty, never beyond the supported length. */
+  readonly bestEstimateKm: number | null;
+  /** Lower limit of the rule over all days together. */
+  readonly allDaysKm: number | null;
+  readonly longestSupportedKm: number | null;
+  /** Why the maximum baseline is 0, null, or cut at the supported length; null otherwise. */
+  readonly reason: string | null;
+  /** Where and when the rule was found, and nothing beyond. */
+  readonly conditions: RuleConditions;
+}
+
+export interface RuleConditions {
+  readonly occupations: number;
+  readonly days: number;
+  readonly from: string;
+  readonly to: string;
+  readonly marks: readonly string[];
+  readonly bases: readonly string[];
+}
+
+/** Below these numbers a rule would promise what the data do not hold. */
+const FEWEST_DAYS = 15;
+const LEAST_INFORMATION = 15;
+/** An RMS says little of rarer errors: beyond this share a Gaussian factor is too small on days that differ. */
+const LARGEST_SHARE = 0.95;
+const STEP_KM = 0.1;
+
+/**
+ * The largest length at which the one-sided upper limit of the spread still holds the tolerance, scanned outward in
+ * steps of 0.1 km and stopped at the first length that fails, never beyond the supported length.
+ * @param errors the errors to which the model was fitted, with `day`, `mark`, `base` and `baselineKm`
+ * @throws InputError when a column is missing
+ */
+export function maximumBaseline(errors: ErrorsInput, model: ErrorModel, tolerance: Tolerance): Rule {
+  const supportedKm = longestSupportedKm(errors);
+  const common = {
+    ...tolerance,
+    method: 'pooled',
+    longestSupportedKm: supportedKm,
+    conditions: conditionsOf(errors),
+  } as const;
+  const reason = whyNoRule(model, tolerance, supportedKm);
+  if (reason !== null || supportedKm === null) {
+    return { ...common, maximumBaselineKm: null, bestEstimateKm: null, allDaysKm: null, reason };
+  }
+  const factor = toleranceFactor(tolerance.component, tolerance.share);
+  const allowedMm = tolerance.limitMm / factor;
+  const best = lengthWithin(model.variance.displayA, model.variance.displayB, allowedMm);
+  const bestEstimateKm = best === null ? 0 : Math.min(best, supportedKm);
+  const holds = (km: number): boolean => sigmaUpperLimitMm(model, km, tolerance.confidence)! <= allowedMm;
+  let steps = 0;
+  while ((steps + 1) * STEP_KM <= supportedKm && holds((steps + 1) * STEP_KM)) steps += 1;
+  const reached = Math.round(steps) / 10;
+  const capped = (steps + 1) * STEP_KM > supportedKm && holds(supportedKm);
+  const maximumBaselineKm = capped ? supportedKm : reached;
+  return {
+    ...common,
+    maximumBaselineKm,
+    bestEstimateKm,
+    allDaysKm: maximumBaselineKm,
+    reason: capped
+      ? cappedReason(supportedKm)
+      : maximumBaselineKm === 0
+        ? zeroReason(model, tolerance, allowedMm)
+        : null,
+  };
+}
+
+/** Length at which √(A + B L²) reaches the allowed σ; null when A alone exceeds it, Infinity when B is 0. */
+export function lengthWithin(A: number, B: number, allowedMm: number): number | null {
+  const room = allowedMm ** 2 - A;
+  if (room <= 0) return null;
+  return B === 0 ? Number.POSITIVE_INFINITY : Math.sqrt(room / B);
+}
+
+function whyNoRule(model: ErrorModel, { share }: Tolerance, supportedKm: number | null): string | null {
+  if (model.uncertainty === null) return 'the fit has no interval';
+  if (model.days < FEWEST_DAYS) {
+    return `${model.days} days are too few: a rule needs ${FEWEST_DAYS} days`;
+  }
+  if (share > LARGEST_SHARE) {
+    return `a share of ${percent(share)} cannot be derived from an RMS: errors of bad days are rarer and larger than a Gaussian factor allows for`;
+  }
+  if (supportedKm === null) return 'no length has 20 occupations on 5 days and 2 marks at or beyond it';
+  if (model.information.number < LEAST_INFORMATION) {
+    return `the shots say too little of distance (information number ${model.information.number.toFixed(0)}, a rule needs ${LEAST_INFORMATION}): add days with far shots`;
+  }
+  return null;
+}
+
+const percent = (share: number): string => `${Number((100 * share).toFixed(1))} %`;
+
+const cappedReason = (km: number): string =>
+  `at least ${(Math.floor(km * 10) / 10).toFixed(1)} km: the tolerance holds as far as the data reach, and nothing is known beyond`;
+
+function zeroReason(model: ErrorModel, { share, limitMm }: Tolerance, allowedMm: number): string {
+  const needed = `${percent(share)} within ${limitMm} mm needs a ${model.basis} of ${allowedMm.toFixed(1)} mm`;
+  const constant = sigmaAtMm(model, 0);
+  return constant > allowedMm
+    ? `the constant alone exceeds the tolerance: ${needed}, the constant is ${constant.toFixed(1)} mm`
+    : `the upper limit of the constant exceeds the tolerance: ${needed}; more days narrow the limit`;
+}
+
+function conditionsOf(errors: ErrorsInput): RuleConditions {
+  const columns = errorColumns(errors);
+  const distinct = (name: string): string[] =>
+    [...new Set(columns.texts(name, 'the conditions of a rule'))].sort();
+  const days = distinct('day');
+  return {
+    occupations: columns.length,
+    days: days.length,
+    from: days[0] ?? '',
+    to: days.at(-1) ?? '',
+    marks: distinct('mark'),
+    bases: distinct('base'),
+  };
+}

@@ -1,0 +1,28 @@
+import { type ErrorsInput, errorColumns } from '../errors/index.js';
+
+/** Data at or beyond a length without which no rule reaches it (rules of thumb). */
+const FEWEST_OCCUPATIONS = 20;
+const FEWEST_DAYS = 5;
+const FEWEST_MARKS = 2;
+
+/**
+ * The longest length with at least 20 occupations on 5 days and 2 marks at or beyond it, km; null when there is none.
+ * @throws InputError when `day`, `mark` or `baselineKm` is missing
+ */
+export function longestSupportedKm(errors: ErrorsInput): number | null {
+  const columns = errorColumns(errors);
+  const needed = 'the supported length';
+  const lengths = columns.numbers('baselineKm', needed);
+  const days = columns.texts('day', needed);
+  const marks = columns.texts('mark', needed);
+  const farthestFirst = Array.from(lengths.keys()).sort((i, j) => lengths[j]! - lengths[i]!);
+  const [seenDays, seenMarks] = [new Set<string>(), new Set<string>()];
+  for (const [k, i] of farthestFirst.entries()) {
+    seenDays.add(days[i]!);
+    seenMarks.add(marks[i]!);
+    const enough =
+      k + 1 >= FEWEST_OCCUPATIONS && seenDays.size >= FEWEST_DAYS && seenMarks.size >= FEWEST_MARKS;
+    if (enough) return lengths[i]!;
+  }
+  return null;
+}

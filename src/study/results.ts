@@ -1,0 +1,85 @@
+import type { Component, EstimateWithLimits, Form } from '../fit/index.js';
+import type { Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
+import type { Rule, SpecSheet } from '../rule/index.js';
+import type { Interval, MarkMean } from '../split/index.js';
+
+/** One fitted model, as `results.json` states it. */
+export interface FitResult {
+  readonly component: Component;
+  readonly reference: 'absolute';
+  /** Whether the constant was put together from repeatability and the marks' own errors. */
+  readonly composed: boolean;
+  readonly form: Form;
+  readonly screened: boolean;
+  /** The rules of this component rest on this fit; true for exactly one fit of each component. */
+  readonly basisOfRule: boolean;
+  readonly basis: 'radial RMS' | 'vertical RMS';
+  readonly confidence: number;
+  readonly constantMm: EstimateWithLimits;
+  readonly ppm: EstimateWithLimits;
+  /** The interval of the ppm if every shot were independent: too narrow. */
+  readonly ppmIfIndependent: EstimateWithLimits;
+  /** Name of the method behind the intervals. */
+  readonly interval: string;
+  /** Σ w B² (l - l̄)²/μ²: about the number of shots that speak of distance. */
+  readonly informationNumber: number;
+  readonly occupations: number;
+  readonly days: number;
+  readonly marks: number | null;
+  readonly shortestKm: number;
+  readonly longestKm: number;
+  /** The day whose absence changes the ppm most; null when no day can be left out. */
+  readonly mostInfluentialDay: { readonly day: string; readonly ppmWithout: number } | null;
+  readonly notes: readonly string[];
+}
+
+/** Measured spread by class of baseline length. Shown, never fitted. */
+export interface LengthClass {
+  readonly fromKm: number;
+  readonly toKm: number;
+  readonly baselineKm: number;
+  readonly occupations: number;
+  readonly days: number;
+  readonly visitsWithoutFix: number;
+  readonly horizontalRmsMm: Interval | null;
+  readonly verticalRmsMm: Interval | null;
+  readonly tooFew: boolean;
+}
+
+/** The account of one log file. */
+export interface FileResult {
+  readonly file: string;
+  /** SHA-256 of its bytes. */
+  readonly sha256: string;
+  readonly read: number;
+  readonly used: number;
+  readonly setAside: Readonly<Partial<Record<RowReason, ReasonCount>>>;
+}
+
+/** Everything a run found: the value from which every output is written. `results.json` is this, in JSON. */
+export interface Results {
+  readonly version: 1;
+  readonly study: { readonly title: string; readonly timeZone: string | null; readonly seed: number };
+  readonly messages: readonly Message[];
+  readonly rows: {
+    readonly read: number;
+    readonly used: number;
+    readonly setAside: Readonly<Partial<Record<RowReason, number>>>;
+  };
+  readonly files: readonly FileResult[];
+  readonly visits: { readonly withFix: number; readonly withoutFix: number };
+  readonly occupations: {
+    readonly formed: number;
+    readonly used: number;
+    readonly setAside: Readonly<Partial<Record<OccupationReason, number>>>;
+  };
+  /** Days with at least one used occupation. */
+  readonly days: number;
+  readonly period: { readonly from: string; readonly to: string } | null;
+  readonly bases: readonly string[];
+  readonly fits: readonly FitResult[];
+  readonly lengthClasses: readonly LengthClass[];
+  readonly marks: readonly MarkMean[];
+  readonly rules: readonly Rule[];
+  readonly specSheet: SpecSheet | null;
+}

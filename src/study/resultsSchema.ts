@@ -1,0 +1,141 @@
+import { z } from 'zod';
+import { OCCUPATION_REASONS, ROW_REASONS } from '../logs/index.js';
+import type { Results } from './results.js';
+
+const component = z.enum(['horizontal', 'vertical']);
+const form = z.enum(['root-sum-square', 'linear-sum']);
+const count = z.number().int().gte(0);
+const nullable = z.number().nullable();
+const limits = z.strictObject({ estimate: nullable, low: nullable, high: nullable });
+const interval = z.strictObject({ estimate: z.number(), low: nullable, high: nullable });
+const day = z.string();
+
+const message = z.strictObject({
+  code: z.string().describe('Stable name of the kind of message.'),
+  severity: z.enum(['error', 'warning', 'info']),
+  text: z.string(),
+  file: z.string().nullable(),
+  row: count.nullable().describe('Line of the file, from 1, the header included.'),
+  column: z.string().nullable(),
+});
+
+const fit = z.strictObject({
+  component,
+  reference: z.literal('absolute'),
+  composed: z.boolean(),
+  form,
+  screened: z.boolean(),
+  basisOfRule: z.boolean().describe('The rules of this component rest on this fit.'),
+  basis: z.enum(['radial RMS', 'vertical RMS']),
+  confidence: z.number(),
+  constantMm: limits,
+  ppm: limits.describe('Root-mean-square over the days observed, mm per km.'),
+  ppmIfIndependent: limits.describe('If every shot were independent: too narrow.'),
+  interval: z.string(),
+  informationNumber: z.number(),
+  occupations: count,
+  days: count,
+  marks: count.nullable(),
+  shortestKm: z.number(),
+  longestKm: z.number(),
+  mostInfluentialDay: z.strictObject({ day, ppmWithout: z.number() }).nullable(),
+  notes: z.array(z.string()),
+});
+
+const lengthClass = z.strictObject({
+  fromKm: z.number(),
+  toKm: z.number(),
+  baselineKm: z.number(),
+  occupations: count,
+  days: count,
+  visitsWithoutFix: count,
+  horizontalRmsMm: interval.nullable(),
+  verticalRmsMm: interval.nullable(),
+  tooFew: z.boolean(),
+});
+
+const mark = z.strictObject({
+  mark: z.string(),
+  base: z.string(),
+  baselineKm: z.number(),
+  azimuthDeg: z.number(),
+  occupations: count,
+  days: count,
+  east: nullable,
+  north: nullable,
+  up: nullable,
+  se: z.strictObject({ east: nullable, north: nullable, up: nullable }),
+});
+
+const rule = z.strictObject({
+  component,
+  limitMm: z.number(),
+  share: z.number(),
+  dayShare: z.number(),
+  confidence: z.number(),
+  method: z.literal('pooled'),
+  maximumBaselineKm: nullable.describe('Lower confidence limit; 0 or null with a reason.'),
+  bestEstimateKm: nullable,
+  allDaysKm: nullable,
+  longestSupportedKm: nullable,
+  reason: z.string().nullable(),
+  conditions: z.strictObject({
+    occupations: count,
+    days: count,
+    from: day,
+    to: day,
+    marks: z.array(z.string()),
+    bases: z.array(z.string()),
+  }),
+});
+
+const constantAndPpm = z.strictObject({ constantMm: z.number(), ppm: z.number() });
+
+/** Schema of `results.json`; its type is {@link Results}. */
+export const resultsSchema = z.strictObject({
+  version: z.literal(1),
+  study: z.strictObject({ title: z.string(), timeZone: z.string().nullable(), seed: z.number() }),
+  messages: z.array(message),
+  rows: z.strictObject({ read: count, used: count, setAside: z.partialRecord(z.enum(ROW_REASONS), count) }),
+  files: z.array(
+    z.strictObject({
+      file: z.string(),
+      sha256: z.string(),
+      read: count,
+      used: count,
+      setAside: z.partialRecord(z.enum(ROW_REASONS), z.strictObject({ count, firstRows: z.array(count) })),
+    }),
+  ),
+  visits: z.strictObject({ withFix: count, withoutFix: count }),
+  occupations: z.strictObject({
+    formed: count,
+    used: count,
+    setAside: z.partialRecord(z.enum(OCCUPATION_REASONS), count),
+  }),
+  days: count,
+  period: z.strictObject({ from: day, to: day }).nullable(),
+  bases: z.array(z.string()),
+  fits: z.array(fit),
+  lengthClasses: z.array(lengthClass),
+  marks: z.array(mark),
+  rules: z.array(rule),
+  specSheet: z
+    .strictObject({
+      horizontal: constantAndPpm,
+      vertical: constantAndPpm,
+      form,
+      axis: z.enum(['radial', 'per-axis']),
+      level: z.enum(['rms', '68', '95']),
+    })
+    .nullable(),
+});
+
+type DeepReadonly<T> = T extends object ? { readonly [K in keyof T]: DeepReadonly<T[K]> } : T;
+type Same<A, B> = [A, B] extends [B, A] ? true : never;
+/** Schema and type say the same: this line does not compile when they part. */
+export const SCHEMA_IS_TYPE: Same<DeepReadonly<z.output<typeof resultsSchema>>, DeepReadonly<Results>> = true;
+
+/** The JSON Schema of `results.json`. */
+export function resultsJsonSchema(): object {
+  return { ...z.toJSONSchema(resultsSchema), title: 'ppmwise results' };
+}

@@ -1,0 +1,99 @@
+import { type Control, readBases, readMarks } from '../control/index.js';
+import {
+  computeErrors,
+  formOccupations,
+  type OccupationError,
+  type SetAsideOccupation,
+  type Visit,
+} from '../errors/index.js';
+import type { ErrorModel } from '../fit/index.js';
+import { type Message, readLogs, type SetAsideRow } from '../logs/index.js';
+import { maximumBaseline } from '../rule/index.js';
+import { markMeans } from '../split/index.js';
+import { fitComponents, fitResult } from './fitComponents.js';
+import { leaveOutDays } from './leaveOutDays.js';
+import { lengthClasses } from './lengthClasses.js';
+import type { Results } from './results.js';
+import type { Study } from './study.js';
+import { summarizeRun } from './summarizeRun.js';
+
+export interface RunOptions {
+  /** Is given every set-aside row as soon as it is known. */
+  readonly onSetAside?: ((row: SetAsideRow) => void) | undefined;
+  /** Is told of rows read, now and then. */
+  readonly onProgress?: ((rowsRead: number) => void) | undefined;
+}
+
+/** What reading alone gives: everything up to the errors, with its account. */
+export interface StudyErrors {
+  readonly control: Control;
+  readonly errors: readonly OccupationError[];
+  readonly setAside: readonly SetAsideOccupation[];
+  readonly visits: readonly Visit[];
+  /** Results without fits and rules. */
+  readonly results: Results;
+}
+
+/** A whole run: the results and the tables they rest on. */
+export interface StudyRun extends StudyErrors {
+  readonly models: readonly ErrorModel[];
+}
+
+/**
+ * Reads control and logs, forms occupations and computes their errors; fits nothing.
+ * @throws InputError when marks or bases cannot be read
+ */
+export async function readStudyErrors(study: Study, options: RunOptions = {}): Promise<StudyErrors> {
+  const marks = await readMarks(study.marks);
+  const bases = await readBases(study.bases);
+  const control: Control = { marks: marks.marks, bases: bases.bases };
+  const formed = await formOccupations(readLogs(study.logs, study), control, { ...study, ...options });
+  const computed = computeErrors(formed.occupations, control);
+  const { errors, setAside, messages } = leaveOutDays(computed, study);
+  const results = await summarizeRun(study, control, {
+    formed,
+    errors,
+    setAside,
+    messages: [...marks.messages, ...bases.messages, ...formed.messages, ...messages],
+  });
+  return { control, errors, setAside, visits: formed.visits, results };
+}
+
+/**
+ * The whole job: logs → occupations → errors → fits → rules. What cannot be given is null or absent, with a message.
+ * @throws InputError when marks or bases cannot be read
+ */
+export async function runStudy(study: Study, options: RunOptions = {}): Promise<StudyRun> {
+  const read = await readStudyErrors(study, options);
+  const { errors } = read;
+  const { models, messages } = fitComponents(errors, study);
+  const rules = study.tolerances.flatMap((tolerance) =>
+    models
+      .filter(({ component }) => component === tolerance.component)
+      .map((model) => maximumBaseline(errors, model, tolerance)),
+  );
+  const results: Results = {
+    ...read.results,
+    messages: [...read.results.messages, ...messages, ...ruleMessages(rules.length)],
+    fits: models.map((model) => fitResult(model, errors)),
+    lengthClasses: lengthClasses(errors, read.visits, read.control, study.confidence),
+    marks: markMeans(errors),
+    rules,
+    specSheet: study.specSheet,
+  };
+  return { ...read, models, results };
+}
+
+const ruleMessages = (rules: number): Message[] =>
+  rules === 0
+    ? []
+    : [
+        {
+          code: 'rule-over-all-days',
+          severity: 'info',
+          text: 'The rules hold over all days together. How many single days meet them is not judged here: on a worse day fewer positions hold the tolerance.',
+          file: null,
+          row: null,
+          column: null,
+        },
+      ];

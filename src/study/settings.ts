@@ -1,0 +1,132 @@
+import { z } from 'zod';
+import { COLUMN_ROLES } from '../logs/index.js';
+import { isTimeZone } from '../time/index.js';
+
+/*
+ * The study file as a schema. Descriptions become the help that editors show and the reference page, so each key says
+ * what it means, its unit and its default.
+ */
+
+const day = z.string().regex(/^\d{4}-\d{2}-\d{2}$/, 'a day like 2025-03-01');
+const share = z.number().gt(0).lt(1);
+const columns = z
+  .partialRecord(z.enum(COLUMN_ROLES), z.string().min(1))
+  .describe('Role → header, where the file does not spell the role itself.');
+const coordinates = z
+  .string()
+  .min(1)
+  .describe('`geographic` (degrees, WGS 84), `geocentric` (metres) or a proj string of a projection.');
+
+const controlFile = z.union([
+  z.string().min(1),
+  z.strictObject({
+    file: z.string().min(1),
+    coordinates: coordinates.optional(),
+    columns: columns.optional(),
+  }),
+]);
+
+const layout = z.strictObject({
+  kind: z.literal('delimited'),
+  delimiter: z
+    .string()
+    .min(1)
+    .optional()
+    .describe('`comma`, `semicolon`, `tab`, `pipe` or the character; without it the header decides.'),
+  comment: z.string().min(1).optional().describe('Lines that begin with this are passed over; default `#`.'),
+  columns: columns.optional(),
+  fixValues: z
+    .record(z.string(), z.enum(['fixed', 'float', 'other']))
+    .optional()
+    .describe('Text or number in the fix column → its meaning.'),
+});
+
+const log = z.strictObject({
+  files: z
+    .union([z.string().min(1), z.array(z.string().min(1)).min(1)])
+    .describe('A pattern or a list of patterns, relative to the study file.'),
+  layout: layout.optional(),
+  coordinates: coordinates.optional(),
+});
+
+const tolerance = z
+  .strictObject({
+    component: z.enum(['horizontal', 'vertical']).describe('Horizontal limits are radial.'),
+    limitMm: z.number().positive().optional(),
+    limitFeet: z.number().positive().optional().describe('Instead of limitMm; one foot is 304.8 mm.'),
+    share: share.default(0.95).describe("Share of a day's positions within the limit."),
+    dayShare: share.default(0.9).describe('Share of days on which that must hold.'),
+    confidence: z.number().gte(0.5).lt(1).default(0.95).describe('Confidence of the rule, one-sided.'),
+  })
+  .refine(({ limitMm, limitFeet }) => (limitMm === undefined) !== (limitFeet === undefined), {
+    message: 'one of limitMm and limitFeet',
+  });
+
+const constantAndPpm = z.strictObject({ constantMm: z.number().gte(0), ppm: z.number().gte(0) });
+
+const specSheet = z.strictObject({
+  horizontal: constantAndPpm,
+  vertical: constantAndPpm,
+  form: z.enum(['root-sum-square', 'linear-sum']),
+  axis: z.enum(['radial', 'per-axis']).describe('Whether the horizontal figure is radial or of one axis.'),
+  level: z
+    .enum(['rms', '68', '95'])
+    .or(z.literal(68))
+    .or(z.literal(95))
+    .describe('What share the figures hold: rms, 68 or 95 %.'),
+});
+
+/** The schema of a study file. */
+export const studySchema = z.strictObject({
+  title: z.string().min(1).default('Check shots').describe('Heads every report.'),
+  timeZone: z
+    .string()
+    .refine(isTimeZone, { message: 'an IANA time zone like Europe/Lisbon or Etc/GMT+1' })
+    .optional()
+    .describe('Zone of days and of log times without an offset; without it days are local mean solar days.'),
+  coordinates: coordinates.default('geographic'),
+  heights: z
+    .strictObject({ kind: z.literal('ellipsoidal') })
+    .default({ kind: 'ellipsoidal' })
+    .describe('All heights are ellipsoidal.'),
+  marks: controlFile.describe('File of the marks: mark and coordinates.'),
+  bases: controlFile.describe('File of the bases: base, coordinates and mounting.'),
+  logs: z.array(log).min(1),
+  period: z
+    .strictObject({ from: day, to: day })
+    .refine(({ from, to }) => from <= to, { message: 'a first day not after the last' })
+    .optional()
+    .describe('Days that belong to the study; without it all do.'),
+  model: z
+    .strictObject({
+      form: z.literal('root-sum-square').default('root-sum-square'),
+      reference: z
+        .enum(['auto', 'absolute'])
+        .default('auto')
+        .describe('What errors are counted from; `auto` takes the published coordinates.'),
+      confidence: z.number().gt(0.5).lt(1).default(0.95).describe('Level of the two-sided intervals.'),
+    })
+    .default({ form: 'root-sum-square', reference: 'auto', confidence: 0.95 }),
+  occupations: z
+    .strictObject({ gapSeconds: z.number().positive().default(60) })
+    .default({ gapSeconds: 60 })
+    .describe('A longer gap begins a new visit.'),
+  tolerances: z.array(tolerance).default([]).describe('What clients demand; each becomes a rule.'),
+  specSheet: specSheet.optional().describe('The spec sheet to compare with.'),
+  leaveOutDays: z
+    .array(day)
+    .default([])
+    .describe('Days named here take no part in fits; the report says so.'),
+  seed: z.number().int().gte(0).default(1).describe('Seed of everything random.'),
+});
+
+/** A study file as written, all defaults filled in. */
+export type StudySettings = z.output<typeof studySchema>;
+
+/** The JSON Schema of a study file, for editors. */
+export function studyJsonSchema(): object {
+  return {
+    ...z.toJSONSchema(studySchema, { io: 'input', unrepresentable: 'any' }),
+    title: 'ppmwise study file',
+  };
+}

@@ -1,0 +1,23 @@
+import type { ControlFile } from '../control/index.js';
+import type { LogFile } from '../logs/index.js';
+import type { SpecSheet, Tolerance } from '../rule/index.js';
+
+/** A study ready to run: settings with every default filled in, files found. */
+export interface Study {
+  /** Absolute path of the study file and of its folder. */
+  readonly file: string;
+  readonly folder: string;
+  readonly title: string;
+  readonly timeZone: string | null;
+  readonly marks: ControlFile;
+  readonly bases: ControlFile;
+  readonly logs: readonly LogFile[];
+  readonly period: { readonly from: string; readonly to: string } | null;
+  readonly gapSeconds: number;
+  /** Level of the two-sided intervals. */
+  readonly confidence: number;
+  readonly tolerances: readonly Tolerance[];
+  readonly specSheet: SpecSheet | null;
+  readonly leaveOutDays: readonly string[];
+  readonly seed: number;
+}
