@@ -41,11 +41,14 @@ export function modelLimits(
   const a = contrastEstimate(A, B, terms, robust, A_ALONE);
   const b = contrastEstimate(A, B, terms, robust, B_ALONE);
   const useScore = informationNumber < SCORE_BELOW;
+  // A score interval wholly below zero would claim a ppm of exactly zero: chance alone allows more than that.
+  const scoreOr = (otherwise: readonly [number, number]): readonly [number, number] => {
+    const limits = scoreLimits(data, data.day, A, B, confidence);
+    return limits[1] > 0 ? limits : otherwise;
+  };
   const constant = rooted(displayA, varianceLimits(a, confidence));
-  const ppm = rooted(
-    displayB,
-    useScore ? scoreLimits(data, data.day, A, B, confidence) : varianceLimits(b, confidence),
-  );
+  const robustLimits = varianceLimits(b, confidence);
+  const ppm = rooted(displayB, useScore ? scoreOr(robustLimits) : robustLimits);
   const naive = naiveCovariance(terms, data.components.length as 1 | 2);
   const ifIndependent = varianceLimits(
     { value: B, standardError: Math.sqrt(naive[2]), degreesOfFreedom: Math.max(1, data.y.length - 2) },

@@ -41,6 +41,12 @@ export function prepareErrors(errors: ErrorsInput, component: Component): FitDat
       `Expected occupations with ${component} errors, came none of ${rows.length}. Check that marks have coordinates and rows are fixed.`,
     );
   }
+  if (used.every((i) => values.every((column) => column[i] === 0))) {
+    throw inputError(
+      'no-errors',
+      `Expected measured positions, came ${component} errors of exactly 0 in every occupation. The log repeats the known coordinates: export what was measured.`,
+    );
+  }
   const bad = used.find((i) => !(lengths[i]! > 0 && Number.isFinite(lengths[i]!)));
   if (bad !== undefined) {
     throw inputError(

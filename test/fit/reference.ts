@@ -15,9 +15,20 @@ export interface ReferenceRow {
 
 /** Rows of a reference data set under the names this library uses. */
 export function referenceErrors(name: string): ReferenceRow[] {
-  const [, ...lines] = readFileSync(new URL(`${name}.csv`, FOLDER), 'utf8').trim().split('\n');
+  const [, ...lines] = readFileSync(new URL(`${name}.csv`, FOLDER), 'utf8')
+    .trim()
+    .split('\n');
   return lines.map((line) => {
-    const [day, base, mark, , km, east, north, up] = line.split(',') as [string, string, string, string, string, string, string, string];
+    const [day, base, mark, , km, east, north, up] = line.split(',') as [
+      string,
+      string,
+      string,
+      string,
+      string,
+      string,
+      string,
+      string,
+    ];
     return {
       day,
       base,
