@@ -1,0 +1,16 @@
+/*
+ * Speed and memory, printed, never asserted: machines are noisy, so ratios are taken within one run.
+ * `npm run bench` runs all parts, `npm run bench -- fit` those named.
+ */
+import { benchDemo } from './demo.js';
+import { benchFit } from './fit.js';
+import { benchRead } from './read.js';
+
+const PARTS = { demo: benchDemo, read: benchRead, fit: benchFit };
+
+const wanted = process.argv.slice(2);
+for (const [name, part] of Object.entries(PARTS)) {
+  if (wanted.length > 0 && !wanted.includes(name)) continue;
+  console.log(`\n## ${name}`);
+  await part();
+}
