@@ -19,7 +19,8 @@ export const km = (value: number | null): string => (value === null ? NOT_GIVEN 
 /** A maximum baseline, rounded down: rounding up would promise what was not shown. */
 export const kmDown = (value: number): string => (Math.floor(value * 10 + 1e-9) / 10).toFixed(1);
 
-export const percent = (share: number): string => `${Number((100 * share).toFixed(1))} %`;
+/** `95 %`, which does not part at the end of a line. */
+export const percent = (share: number): string => `${Number((100 * share).toFixed(1))}\u00a0%`;
 
 export const count = (value: number): string => value.toLocaleString('en-US').replaceAll(',', '\u202f');
 

@@ -33,3 +33,6 @@ function insert(part: Part): string {
 
 /** HTML made by this project itself, such as a style sheet. */
 export const trusted = (text: string): Html => new Html(text);
+
+/** A date, kept on one line. */
+export const date = (day: string): Html => html`<span class="date">${day}</span>`;

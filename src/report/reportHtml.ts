@@ -2,7 +2,7 @@ import type { Results } from '../study/index.js';
 import { accountSection, messagesSection } from './accountSection.js';
 import { fitSection } from './fitSection.js';
 import { plural } from './format.js';
-import { type Html, html, trusted } from './html.js';
+import { date, type Html, html, trusted } from './html.js';
 import { marksSection } from './marksSection.js';
 import { ruleSection } from './ruleSection.js';
 import { REPORT_STYLE } from './style.js';
@@ -29,8 +29,8 @@ export function reportHtml(results: Results, pictures: ReportPictures): string {
   const figure = (picture: ReportPicture | null): Html | null => picture && pictureHtml(picture);
   const lead =
     period === null
-      ? 'No occupation could be used.'
-      : `RTK check shots from ${period.from} to ${period.to}: ${plural(occupations.used, 'occupation')} of known marks on ${plural(days, 'day')}.`;
+      ? html`No occupation could be used.`
+      : html`RTK check shots from ${date(period.from)} to ${date(period.to)}: ${plural(occupations.used, 'occupation')} of known marks on ${plural(days, 'day')}.`;
   return html`<!doctype html>
 <html lang="en">
 <head>

@@ -3,7 +3,7 @@ export const REPORT_STYLE = `
 :root { --ink: #22303c; --water: #2b6c8f; --ochre: #b9812b; --brick: #9c4a33; --mist: #dfe6ea; }
 * { box-sizing: border-box; }
 body { margin: 0; color: var(--ink); background: #fff; font: 16px/1.55 Georgia, 'Times New Roman', serif; }
-main { max-width: 46rem; margin: 0 auto; padding: 2.5rem 1.25rem 4rem; }
+main { max-width: 50rem; margin: 0 auto; padding: 2.5rem 1.25rem 4rem; }
 h1 { font-size: 1.9rem; line-height: 1.2; margin: 0 0 .3rem; }
 h2 { font-size: 1.3rem; margin: 2.6rem 0 .6rem; padding-top: .6rem; border-top: 2px solid var(--ink); break-after: avoid; }
 h3 { font-size: 1.05rem; margin: 1.6rem 0 .4rem; break-after: avoid; }
@@ -17,9 +17,9 @@ p { margin: .5rem 0; }
 .scroll { overflow-x: auto; margin: .8rem 0; }
 table { border-collapse: collapse; width: 100%; font: .86rem/1.4 'Helvetica Neue', Arial, sans-serif; font-variant-numeric: tabular-nums; }
 caption { text-align: left; font-weight: bold; padding: .2rem 0 .4rem; }
-th, td { padding: .3rem .55rem; border-bottom: 1px solid var(--mist); text-align: left; vertical-align: top; }
+th, td { padding: .3rem .4rem; border-bottom: 1px solid var(--mist); text-align: left; vertical-align: top; }
 th { border-bottom: 1.5px solid var(--ink); }
-td.number, th.number { text-align: right; white-space: nowrap; }
+td.number { text-align: right; white-space: nowrap; } th.number { text-align: right; } .date { white-space: nowrap; }
 tr { break-inside: avoid; }
 thead { display: table-header-group; }
 .small, .note { font: .86rem/1.45 'Helvetica Neue', Arial, sans-serif; color: #4a5a66; }
@@ -36,7 +36,8 @@ dt { font-weight: bold; } dd { margin: 0; }
 @media print {
   @page { margin: 18mm 16mm; }
   body { font-size: 10.5pt; } main { max-width: none; padding: 0; }
-  figure, .scroll { overflow: visible; } figure img { min-width: 0; }
+  figure, .scroll { overflow: visible; } figure img { min-width: 0; width: auto; max-width: 100%; max-height: 102mm; margin: 0 auto; }
+  table { break-inside: avoid; } caption { break-after: avoid; }
   h2 { margin-top: 1.6rem; } table { font-size: 8.6pt; }
   a { color: inherit; text-decoration: none; }
 }

@@ -33,17 +33,24 @@ export const componentTitle = (component: Rule['component']): string =>
   component === 'horizontal' ? 'Horizontal (radial)' : 'Vertical (ellipsoidal heights)';
 
 const positions = (rule: Rule): string =>
-  `${percent(rule.share)} of ${rule.component} positions within ${mmLimit(rule.limitMm)}`;
+  `${percent(rule.share)} of ${rule.component} positions within ${Number(rule.limitMm.toFixed(1))}\u00a0mm`;
 
-const mmLimit = (limitMm: number): string => `${Number(limitMm.toFixed(1))} mm`;
+/** A rule in two parts: how far, and what holds there or why nothing does. */
+export function ruleParts(rule: Rule): { readonly head: string; readonly body: string } {
+  const { maximumBaselineKm: limit, reason } = rule;
+  if (limit === null) return { head: 'No rule', body: `for ${positions(rule)}: ${reason}.` };
+  if (limit === 0) return { head: 'At no distance', body: `can be promised ${positions(rule)}: ${reason}.` };
+  const body = `${positions(rule)}, with ${percent(rule.confidence)} confidence over all days together.`;
+  return {
+    head: `Up to ${kmDown(limit)}\u00a0km from the base`,
+    body: reason === null ? body : `${body} ${capital(reason)}.`,
+  };
+}
 
 /** A rule as one sentence that can stand in a method statement. */
 export function ruleSentence(rule: Rule): string {
-  const { maximumBaselineKm: limit, reason } = rule;
-  if (limit === null) return `No rule for ${positions(rule)}: ${reason}.`;
-  if (limit === 0) return `${capital(positions(rule))} cannot be promised at any distance: ${reason}.`;
-  const stated = `Up to ${kmDown(limit)} km from the base: ${positions(rule)}, with ${percent(rule.confidence)} confidence over all days together`;
-  return reason === null ? `${stated}.` : `${stated}. ${capital(reason)}.`;
+  const { head, body } = ruleParts(rule);
+  return rule.maximumBaselineKm ? `${head}: ${body}` : `${head} ${body}`;
 }
 
 /** A fit as one sentence. */
@@ -58,4 +65,4 @@ export function fitSentence(fit: FitResult): string {
   return `${componentTitle(fit.component)}: ${form} (${fit.basis}; ${level} intervals in brackets).`;
 }
 
-const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
+export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
