@@ -90,10 +90,11 @@ export function lengthWithin(A: number, B: number, allowedMm: number): number | 
 }
 
 function whyNoRule(model: ErrorModel, { share }: Tolerance, supportedKm: number | null): string | null {
-  if (model.uncertainty === null) return 'the fit has no interval';
   if (model.days < FEWEST_DAYS) {
-    return `${model.days} days are too few: a rule needs ${FEWEST_DAYS} days`;
+    return `${model.days} ${model.days === 1 ? 'day is' : 'days are'} too few: a rule needs ${FEWEST_DAYS} days`;
   }
+  if (!model.variance.converged) return 'the fit did not converge';
+  if (model.uncertainty === null) return 'the distances are too alike to separate mm and ppm';
   if (share > LARGEST_SHARE) {
     return `a share of ${percent(share)} cannot be derived from an RMS: errors of bad days are rarer and larger than a Gaussian factor allows for`;
   }

@@ -1,0 +1,1 @@
+export { type Showable, show } from './show.js';

@@ -1,0 +1,57 @@
+import type { ColumnTable } from 'arquero';
+import { type ChartSpec, renderPng } from '../charts/index.js';
+import { type DisplayBundle, runningCell } from './kernel.js';
+import { isColumnTable, textTable } from './tableCells.js';
+import { tableHtml } from './tableHtml.js';
+import { tableText } from './tableText.js';
+
+/** What {@link show} can show: a chart, a table, records, or a text. */
+export type Showable = ChartSpec | ColumnTable | readonly object[] | string;
+
+/** Longer tables are cut, so that a notebook stays readable. */
+const MOST_ROWS = 20;
+/** Pixels of a picture for each pixel on the page. */
+const SCALE = 2;
+
+/**
+ * Shows a chart, a table or a text below the running cell of a notebook; anywhere else writes the table, or the words
+ * of the chart, to the standard output. Tables are cut after 20 rows and say how many more there are.
+ * @throws TypeError when it is something else
+ */
+export async function show(what: Showable): Promise<void> {
+  // asked before drawing: while a picture is made another cell could begin
+  const send = runningCell();
+  if (send === null) process.stdout.write(`${plainText(what)}\n`);
+  else send(await bundleOf(what));
+}
+
+/** A thing in all the forms that a notebook is given. */
+async function bundleOf(what: Showable): Promise<DisplayBundle> {
+  const plain = { 'text/plain': plainText(what) };
+  if (typeof what === 'string') return { data: plain, metadata: {} };
+  if (isChart(what)) {
+    const png = await renderPng(what, SCALE);
+    return {
+      data: { 'image/png': png.toString('base64'), ...plain },
+      metadata: { 'image/png': sizeOnPage(png) },
+    };
+  }
+  return { data: { 'text/html': tableHtml(textTable(what, MOST_ROWS)), ...plain }, metadata: {} };
+}
+
+function plainText(what: Showable): string {
+  if (typeof what === 'string') return what;
+  if (isChart(what)) return [what.title, ...what.subtitle, what.description].join('\n');
+  if (isColumnTable(what) || Array.isArray(what)) return tableText(textTable(what, MOST_ROWS));
+  throw new TypeError(
+    `Expected a chart, a table, an array of records or a text to show, came ${JSON.stringify(what) ?? typeof what}. Hand in one of these.`,
+  );
+}
+
+const isChart = (what: Showable): what is ChartSpec =>
+  typeof what === 'object' && what !== null && 'vegaLite' in what;
+
+/** Width and height from the header of a PNG (ISO/IEC 15948, chunk IHDR), in pixels of the page. */
+function sizeOnPage(png: Buffer): { readonly width: number; readonly height: number } {
+  return { width: png.readUInt32BE(16) / SCALE, height: png.readUInt32BE(20) / SCALE };
+}

@@ -1,0 +1,173 @@
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { table } from 'arquero';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { type ChartSpec, markMeansChart } from '../../src/charts/index.js';
+import { show } from '../../src/notebook/index.js';
+
+interface Sent {
+  readonly data: Record<string, string>;
+  readonly metadata: Record<string, { width: number; height: number }>;
+}
+
+const chart = (): ChartSpec =>
+  markMeansChart({
+    marks: [
+      {
+        mark: 'M1',
+        base: 'B1',
+        baselineKm: 3,
+        azimuthDeg: 40,
+        occupations: 9,
+        days: 4,
+        east: 1,
+        north: 2,
+        up: 3,
+        se: { east: 1, north: 1, up: 1 },
+      },
+    ],
+  });
+
+const rows = (count: number): object[] =>
+  Array.from({ length: count }, (_, i) => ({ mark: `M${i + 1}`, occupations: i, east: i / 3 }));
+
+afterEach(() => {
+  vi.restoreAllMocks();
+});
+
+describe('show in a terminal', () => {
+  const written = async (what: Parameters<typeof show>[0]): Promise<string> => {
+    const write = vi.spyOn(process.stdout, 'write').mockReturnValue(true);
+    await show(what);
+    return write.mock.calls.map(([text]) => String(text)).join('');
+  };
+
+  it('writes tables in columns, numbers to the right with the same decimals', async () => {
+    const text = await written([
+      { mark: 'M1', occupations: 9, east: 1.23456 },
+      { mark: 'M12', occupations: 104, east: -12.5 },
+    ]);
+    expect(text).toBe(
+      ['mark  occupations    east', 'M1              9    1.23', 'M12           104  -12.50', ''].join('\n'),
+    );
+  });
+
+  it('writes an arquero table as it writes the same records', async () => {
+    const records = await written([{ a: 1, b: 'x' }]);
+    vi.restoreAllMocks();
+    expect(await written(table({ a: [1], b: ['x'] }))).toBe(records);
+  });
+
+  it('cuts after 20 rows and says how many more there are', async () => {
+    const lines = (await written(rows(55))).trimEnd().split('\n');
+    expect(lines).toHaveLength(22);
+    expect(lines.at(-1)).toBe('… 35 more rows');
+    vi.restoreAllMocks();
+    expect(await written(rows(21))).toContain('… 1 more row\n');
+    vi.restoreAllMocks();
+    expect(await written(rows(20))).not.toContain('more');
+    vi.restoreAllMocks();
+    expect(await written([])).toBe('no rows\n');
+  });
+
+  it('writes estimates with their limits, nested records as columns, and what is missing as a dash', async () => {
+    const text = await written([
+      { rms: { estimate: 8.12345, low: 7, high: 9.5 }, se: { east: 0.1, up: null }, p: 0.00001, day: null },
+      { rms: { estimate: 8, low: null, high: null }, se: { east: Number.NaN, up: 2 }, p: 0.5, day: 'a' },
+    ]);
+    expect(text.split('\n').map((line) => line.split(/ {2,}/).filter((cell) => cell !== ''))).toEqual([
+      ['rms', 'se.east', 'se.up', 'p', 'day'],
+      ['8.123 (7.000 to 9.500)', '0.100', '–', '0.00001', '–'],
+      ['8.000', '–', '2', '0.500', 'a'],
+      [],
+    ]);
+  });
+
+  it('writes texts as they are, and of a chart what it says', async () => {
+    expect(await written('a mm + b ppm')).toBe('a mm + b ppm\n');
+    vi.restoreAllMocks();
+    const { title, description } = chart();
+    const text = await written(chart());
+    expect(text).toContain(title);
+    expect(text).toContain(description);
+  });
+
+  it('refuses what it cannot show', async () => {
+    await expect(show(7 as unknown as string)).rejects.toThrow(
+      'Expected a chart, a table, an array of records or a text to show, came 7.',
+    );
+    await expect(show(undefined as unknown as string)).rejects.toThrow('came undefined.');
+  });
+});
+
+describe('show in a cell of a notebook', () => {
+  const mainScript = process.argv[1]!;
+  let folder = '';
+  let sent: Sent[] = [];
+  let kernel: { lastWriteDisplayData: ((content: Sent, update: boolean) => void) | null };
+
+  beforeEach(() => {
+    // a kernel is found where the main script would find it: beside itself
+    folder = mkdtempSync(join(tmpdir(), 'kernel-'));
+    mkdirSync(join(folder, 'node_modules/tslab/dist'), { recursive: true });
+    writeFileSync(join(folder, 'node_modules/tslab/dist/jupyter.js'), 'exports.lastWriteDisplayData = null;');
+    process.argv[1] = join(folder, 'run-notebook.cjs');
+    kernel = createRequire(process.argv[1])('tslab/dist/jupyter.js');
+    sent = [];
+    kernel.lastWriteDisplayData = (content, update) => {
+      expect(update).toBe(false);
+      sent.push(content);
+    };
+  });
+
+  afterEach(() => {
+    process.argv[1] = mainScript;
+    rmSync(folder, { recursive: true });
+  });
+
+  it('sends a chart once, as a picture with its size and as words', async () => {
+    await show(chart());
+    expect(sent).toHaveLength(1);
+    const { data, metadata } = sent[0]!;
+    expect(Object.keys(data)).toEqual(['image/png', 'text/plain']);
+    const png = Buffer.from(data['image/png']!, 'base64');
+    expect(png.subarray(1, 4).toString()).toBe('PNG');
+    expect(metadata['image/png']!.width).toBe(png.readUInt32BE(16) / 2);
+    expect(data['text/plain']).toContain(chart().title);
+  });
+
+  it('sends a table as HTML with numbers to the right, and as text', async () => {
+    await show(rows(55));
+    const { data } = sent[0]!;
+    expect(Object.keys(data)).toEqual(['text/html', 'text/plain']);
+    expect(data['text/html']).toMatch(/<td style="text-align: right;[^"]*">0\.333<\/td>/);
+    expect(data['text/html']).toMatch(/<td style="text-align: left;[^"]*">M20<\/td>/);
+    expect(data['text/html']).not.toContain('M21');
+    expect(data['text/html']).toContain('<p>… 35 more rows</p>');
+    expect(data['text/plain']).toContain('… 35 more rows');
+  });
+
+  it('escapes names of columns and values', async () => {
+    await show([{ '<i>': '<script>alert("1")</script>&' }]);
+    const html = sent[0]!.data['text/html']!;
+    expect(html).not.toContain('<script');
+    expect(html).not.toContain('<i>');
+    expect(html).toContain('&lt;script&gt;alert(&quot;1&quot;)&lt;/script&gt;&amp;');
+    expect(html).toContain('&lt;i&gt;');
+  });
+
+  it('sends texts as texts', async () => {
+    await show('a mm + b ppm');
+    expect(sent).toEqual([{ data: { 'text/plain': 'a mm + b ppm' }, metadata: {}, transient: {} }]);
+  });
+
+  it('writes to the terminal when the kernel runs no cell', async () => {
+    kernel.lastWriteDisplayData = null;
+    const write = vi.spyOn(process.stdout, 'write').mockReturnValue(true);
+    await show('quiet');
+    expect(write).toHaveBeenCalledWith('quiet\n');
+    expect(sent).toEqual([]);
+  });
+});
