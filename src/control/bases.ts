@@ -1,5 +1,5 @@
 import type { Geodetic } from '../geodesy/index.js';
-import { InputError, inputError, type Message, message } from '../logs/index.js';
+import { InputError, inputError, type Message, message, quoted } from '../logs/index.js';
 import { type ControlFile, readControlRows } from './readControl.js';
 
 /** How a base receiver is put up: a pillar keeps its place overnight, a tripod is a new setup every day. */
@@ -27,7 +27,7 @@ export async function readBases(control: ControlFile): Promise<{ bases: Bases; m
         message(
           'error',
           'base-without-coordinates',
-          `Base "${name}" lacks a coordinate, and every baseline starts there. Fill in all three.`,
+          `Base ${quoted(name)} lacks a coordinate, and every baseline starts there. Fill in all three.`,
           { file, row },
         ),
       );
@@ -39,7 +39,7 @@ export async function readBases(control: ControlFile): Promise<{ bases: Bases; m
         message(
           'error',
           'unknown-mounting',
-          `Expected "tripod" or "pillar", came ${JSON.stringify(text('mounting'))}. A blank cell means tripod.`,
+          `Expected "tripod" or "pillar", came ${quoted(text('mounting'))}. A blank cell means tripod.`,
           { file, row, column: 'mounting' },
         ),
       );

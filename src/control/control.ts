@@ -1,5 +1,5 @@
 import { type LocalFrame, localFrame } from '../geodesy/index.js';
-import { nearestName } from '../logs/index.js';
+import { DID_YOU_MEAN, nearestName, quoted } from '../logs/index.js';
 import type { Base, Bases } from './bases.js';
 import type { Mark, Marks } from './marks.js';
 
@@ -36,7 +36,7 @@ export function matchBase(control: Control, name: string): Match<Base> {
 
 function unknownName(what: string, name: string, known: Iterable<string>): string {
   const near = nearestName(name, known);
-  return `no ${what} is named ${JSON.stringify(name)}${near === null ? '' : ` (did you mean ${JSON.stringify(near)}?)`}`;
+  return `no ${what} is named ${quoted(name)}${near === null ? '' : ` (${DID_YOU_MEAN} ${quoted(near)}?)`}`;
 }
 
 /**

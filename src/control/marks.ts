@@ -1,5 +1,5 @@
 import type { Geodetic } from '../geodesy/index.js';
-import { InputError, inputError, type Message, message } from '../logs/index.js';
+import { InputError, inputError, type Message, message, quoted } from '../logs/index.js';
 import { type ControlFile, readControlRows } from './readControl.js';
 
 /** A point with known coordinates. */
@@ -19,17 +19,28 @@ export type Marks = ReadonlyMap<string, Mark>;
 
 /** @throws InputError when the file cannot be understood or names no mark */
 export async function readMarks(control: ControlFile): Promise<{ marks: Marks; messages: Message[] }> {
-  const { rows, messages } = await readControlRows(control, 'mark');
+  const sigmas = ['horizontalSigmaMm', 'verticalSigmaMm'] as const;
+  const { rows, messages } = await readControlRows(control, 'mark', sigmas);
   const marks = new Map<string, Mark>();
   const errors: Message[] = [];
-  for (const { row, name, position, text, number } of rows) {
-    // Half a plan position is no position: latitude and longitude are known together or not at all.
-    if (Number.isNaN(position.latitudeDeg) !== Number.isNaN(position.longitudeDeg)) {
+  for (const { row, name, position, half, text, number } of rows) {
+    if (half) {
       errors.push(
         message(
           'error',
           'half-a-position',
-          `Mark "${name}" has only one of its two plan coordinates. Fill in both, or neither when the plan position is not known.`,
+          `Mark ${quoted(name)} has only some of the coordinates that belong together. Fill in all of them, or none when the place is not known.`,
+          { file: control.file, row },
+        ),
+      );
+      continue;
+    }
+    if (Object.values(position).every(Number.isNaN)) {
+      errors.push(
+        message(
+          'error',
+          'mark-without-coordinates',
+          `Mark ${quoted(name)} has no coordinates. Fill in its plan position, its height or both, or remove the row.`,
           { file: control.file, row },
         ),
       );

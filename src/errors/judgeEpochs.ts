@@ -4,21 +4,56 @@ import { FIXED, NO_POSITION, RECORD, RECORD_WIDTH } from './epochRecord.js';
 /** What becomes of an epoch: `used` in an occupation, or the reason why not. */
 export type Verdict = 'used' | Extract<RowReason, 'not-fixed' | 'no-position' | 'duplicate' | 'conflicting'>;
 
+/** Place of each name in alphabetical order: names are numbered as they are met, which depends on what is read first. */
+export interface NameRanks {
+  readonly file: ArrayLike<number>;
+  readonly crew: ArrayLike<number>;
+}
+
+/** What tells rows of the same time apart, before the place where they stand. */
+const MEASURED = [
+  RECORD.state,
+  RECORD.eastM,
+  RECORD.northM,
+  RECORD.upM,
+  RECORD.satellites,
+  RECORD.pdop,
+  RECORD.ageSeconds,
+  RECORD.horizontalSigmaM,
+  RECORD.verticalSigmaM,
+] as const;
+
 /**
- * Offsets of the records of one key in time order; rows at the same time stand in the order of file and row, so that
- * the order in which logs were read does not matter.
+ * Offsets of the records of one key in time order. Rows of the same time stand in the order of what they say, and only
+ * rows that say the same in that of file name and row: the order in which logs were read or cut does not matter.
  */
-export function timeOrder(records: Float64Array): Int32Array {
+export function timeOrder(records: Float64Array, ranks: NameRanks): Int32Array {
   const count = records.length / RECORD_WIDTH;
   const order = Int32Array.from({ length: count }, (_, k) => k * RECORD_WIDTH);
-  const compare = (a: number, b: number): number =>
-    records[a + RECORD.utcMs]! - records[b + RECORD.utcMs]! ||
-    records[a + RECORD.file]! - records[b + RECORD.file]! ||
-    records[a + RECORD.row]! - records[b + RECORD.row]!;
+  const rank = (names: ArrayLike<number>, at: number): number => names[records[at]!]!;
+  const compare = (a: number, b: number): number => {
+    const time = records[a + RECORD.utcMs]! - records[b + RECORD.utcMs]!;
+    if (time !== 0) return time;
+    for (const field of MEASURED) {
+      const difference = compareNumbers(records[a + field]!, records[b + field]!);
+      if (difference !== 0) return difference;
+    }
+    return (
+      rank(ranks.crew, a + RECORD.crew) - rank(ranks.crew, b + RECORD.crew) ||
+      rank(ranks.file, a + RECORD.file) - rank(ranks.file, b + RECORD.file) ||
+      records[a + RECORD.row]! - records[b + RECORD.row]!
+    );
+  };
   for (let k = 1; k < count; k++) {
     if (compare(order[k - 1]!, order[k]!) > 0) return order.sort(compare);
   }
   return order;
+}
+
+/** Ascending, NaN last. */
+function compareNumbers(a: number, b: number): number {
+  if (Number.isNaN(a) || Number.isNaN(b)) return Number(Number.isNaN(a)) - Number(Number.isNaN(b));
+  return a - b;
 }
 
 /** A tenth of a millimetre: two rows that agree within it are the same position written twice. */

@@ -1,4 +1,4 @@
-import { type Message, message } from '../logs/index.js';
+import { type Message, message, quoted } from '../logs/index.js';
 import { median } from '../stats/index.js';
 import type { OccupationError, SetAsideOccupation } from './computeErrors.js';
 
@@ -36,18 +36,38 @@ function farOffMarks(errors: readonly OccupationError[]): Message[] {
     return { mark, list, east, north, up, size: Math.hypot(east, north, up) };
   });
   if (offsets.length === 0) return [];
-  const usual = median(offsets.map(({ size }) => size));
+  // The lower of the two middle ones: of two marks the better one says what is usual.
+  const usual = offsets.map(({ size }) => size).sort((x, y) => x - y)[(offsets.length - 1) >> 1]!;
+  if (usual > SMALLEST_MM) return [allFarOff(usual, offsets.length)];
   return offsets
     .filter(({ size }) => size > SMALLEST_MM && size > TIMES_USUAL * usual)
     .map(({ mark, list, east, north, up, size }) => {
-      const signed = (value: number): string => `${value < 0 ? '−' : '+'}${Math.abs(value).toFixed(0)}`;
       const days = new Set(list.map(({ day }) => day)).size;
+      const rest = `medians of ${counted(list.length, 'occupation')} on ${counted(days, 'day')}`;
       return message(
         'warning',
         'mark-far-off',
-        `Mark "${mark}" is measured ${(size / 1000).toFixed(3)} m from its known coordinates (east ${signed(east)}, north ${signed(north)}, up ${signed(up)} mm, medians of ${list.length} occupations on ${days} ${days === 1 ? 'day' : 'days'}), other marks ${usual.toFixed(0)} mm. It is kept and spoils the fit: check its coordinates, its name and its frame.`,
+        `Mark ${quoted(mark)} is measured ${(size / 1000).toFixed(3)} m from its known coordinates (east ${signed(east)}, north ${signed(north)}, up ${signed(up)} mm, ${rest}), other marks ${usual.toFixed(0)} mm. It is kept and spoils the fit: check its coordinates, its name and its frame.`,
       );
     });
+}
+
+/** Whole millimetres with their sign; what rounds to nothing has none. */
+function signed(valueMm: number): string {
+  const whole = Math.round(valueMm);
+  return `${whole < 0 ? '−' : whole > 0 ? '+' : ''}${Math.abs(whole)}`;
+}
+
+const counted = (count: number, what: string): string => `${count} ${what}${count === 1 ? '' : 's'}`;
+
+/** Offsets of most marks are no matter of single marks. */
+function allFarOff(usualMm: number, marks: number): Message {
+  const which = marks === 1 ? 'The only mark is' : `At least half of the ${marks} marks are`;
+  return message(
+    'warning',
+    'marks-far-off',
+    `${which} measured ${(usualMm / 1000).toFixed(3)} m or more from the known coordinates. Nothing is set aside for it, and it spoils the fit: check the coordinates of the base, the frames of base and marks, the kind of heights and the antenna heights.`,
+  );
 }
 
 function farOffOccupations(
@@ -59,7 +79,7 @@ function farOffOccupations(
   const { error } = setAside[0]!;
   const size = Math.hypot(error.east || 0, error.north || 0, error.up || 0) / 1000;
   const count = setAside.length === 1 ? '1 occupation is' : `${setAside.length} of ${all} occupations are`;
-  const first = `the first, on mark "${error.mark}", by ${size.toFixed(1)} m`;
+  const first = `the first, on mark ${quoted(error.mark)}, by ${size.toFixed(1)} m`;
   const remedy =
     setAside.length > WHOLE_STUDY_SHARE * all
       ? 'So many have one cause: check units, coordinate system, height system, and the coordinates of marks and bases.'

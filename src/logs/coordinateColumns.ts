@@ -7,41 +7,84 @@ export type CoordinateSystem = string;
 /** Which columns carry coordinates in a system and how their three numbers become geographic ones. */
 export interface CoordinateColumns {
   readonly roles: readonly [ColumnRole, ColumnRole, ColumnRole];
-  /** Three numbers in the order of `roles`; throws RangeError with the remedy when they are outside the system's range. */
+  /** So many of the roles, from the first, are known together or not at all: a plan position, or all three. */
+  readonly together: 2 | 3;
+  /**
+   * Three numbers in the order of `roles`; a height may be NaN (not known) where it stands apart from the plan.
+   * @throws CoordinateFault for numbers outside the system's range
+   */
   readonly toGeodetic: (first: number, second: number, third: number) => Geodetic;
+}
+
+/** Coordinates that cannot be: what was expected and came, and which of the three is to blame. */
+export class CoordinateFault extends RangeError {
+  constructor(
+    text: string,
+    readonly index: 0 | 1 | 2,
+  ) {
+    super(text);
+  }
 }
 
 /** @throws Error when a proj string is not understood */
 export function coordinateColumns(system: CoordinateSystem): CoordinateColumns {
   if (system === 'geographic') {
-    return { roles: ['latitude', 'longitude', 'height'], toGeodetic: geographic };
+    return { roles: ['latitude', 'longitude', 'height'], together: 2, toGeodetic: geographic };
   }
-  if (system === 'geocentric') {
-    return {
-      roles: ['x', 'y', 'z'],
-      toGeodetic: (xM, yM, zM) => {
-        const radiusM = Math.hypot(xM, yM, zM);
-        if (radiusM < 6.3e6 || radiusM > 6.5e6) {
-          throw new RangeError(
-            `expected geocentric metres on the earth's surface, came ${(radiusM / 1000).toFixed(1)} km from its centre`,
-          );
-        }
-        return geocentricToGeodetic({ xM, yM, zM });
-      },
-    };
-  }
+  if (system === 'geocentric') return { roles: ['x', 'y', 'z'], together: 3, toGeodetic: geocentric };
   const { inverse } = projection(system);
   return {
     roles: ['easting', 'northing', 'height'],
-    toGeodetic: (eastingM, northingM, heightM) => ({ ...inverse({ eastingM, northingM }), heightM }),
+    together: 2,
+    toGeodetic: (eastingM, northingM, heightM) => {
+      checkHeight(heightM);
+      try {
+        return { ...inverse({ eastingM, northingM }), heightM };
+      } catch {
+        // The projection says no more than this, in words of its own.
+        throw new CoordinateFault(
+          `expected a place within the reach of the projection, came easting ${eastingM} and northing ${northingM}`,
+          0,
+        );
+      }
+    },
   };
 }
 
 function geographic(latitudeDeg: number, longitudeDeg: number, heightM: number): Geodetic {
-  if (Math.abs(latitudeDeg) > 90)
-    throw new RangeError(`expected a latitude from -90 to 90 degrees, came ${latitudeDeg}`);
-  if (longitudeDeg < -180 || longitudeDeg > 360) {
-    throw new RangeError(`expected a longitude from -180 to 360 degrees, came ${longitudeDeg}`);
+  if (Math.abs(latitudeDeg) > 90) {
+    const swapped = Math.abs(longitudeDeg) <= 90 ? ' (are latitude and longitude swapped?)' : '';
+    throw new CoordinateFault(`expected a latitude from -90 to 90 degrees, came ${latitudeDeg}${swapped}`, 0);
   }
+  if (longitudeDeg < -180 || longitudeDeg > 360) {
+    throw new CoordinateFault(`expected a longitude from -180 to 360 degrees, came ${longitudeDeg}`, 1);
+  }
+  checkHeight(heightM);
   return { latitudeDeg, longitudeDeg: longitudeDeg > 180 ? longitudeDeg - 360 : longitudeDeg, heightM };
+}
+
+const SMALLEST_RADIUS_M = 6.3e6;
+const LARGEST_RADIUS_M = 6.5e6;
+
+function geocentric(xM: number, yM: number, zM: number): Geodetic {
+  const radiusM = Math.hypot(xM, yM, zM);
+  if (!(radiusM >= SMALLEST_RADIUS_M && radiusM <= LARGEST_RADIUS_M)) {
+    throw new CoordinateFault(
+      `expected geocentric metres near the earth's surface, came ${xM}, ${yM}, ${zM}`,
+      0,
+    );
+  }
+  return geocentricToGeodetic({ xM, yM, zM });
+}
+
+const LOWEST_M = -10_000;
+const HIGHEST_M = 100_000;
+
+function checkHeight(heightM: number): void {
+  if (heightM < LOWEST_M || heightM > HIGHEST_M) {
+    throw new CoordinateFault(
+      `expected a height from ${LOWEST_M} to ${HIGHEST_M} metres, came ${heightM}`,
+      2,
+    );
+  }
 }

@@ -1,22 +1,15 @@
-import { DELIMITERS, splitCells } from './cells.js';
-import { readLines } from './lines.js';
+import { splitCells } from './cells.js';
+import {
+  chooseDelimiter,
+  type DelimitedHeader,
+  type DelimitedOptions,
+  looksLikeHeader,
+  understandHeader,
+} from './header.js';
+import { LONGEST_LINE, readLines } from './lines.js';
 import { InputError, inputError, type Message, message } from './messages.js';
-import { suggestion } from './nearestName.js';
-import { COLUMN_ROLES, type ColumnRole, roleOfHeader } from './roles.js';
 
-/** How a delimited file is to be understood. */
-export interface DelimitedOptions {
-  /** Name or character; without it the delimiter under which most headers are known is taken. */
-  readonly delimiter?: string | undefined;
-  /** Lines that begin with this are comments. */
-  readonly comment?: string | undefined;
-  /** Role → header, where a file does not spell the role itself. */
-  readonly columns?: Readonly<Partial<Record<ColumnRole, string>>> | undefined;
-  /** Roles without which no row can be used. */
-  readonly required: readonly ColumnRole[];
-}
-
-/** A data line and its cells; null cells when a quote does not close or the number of cells is not the header's. */
+/** A data line and its cells; null cells when the line cannot be cut into the columns of the header. */
 export interface DelimitedRow {
   readonly row: number;
   readonly cells: readonly string[] | null;
@@ -24,23 +17,18 @@ export interface DelimitedRow {
   readonly fault: string;
 }
 
-/** The header of a file: where each role stands, or why no row can be read. */
-export interface DelimitedHeader {
-  readonly positions: ReadonlyMap<ColumnRole, number>;
-  readonly headers: ReadonlyMap<ColumnRole, string>;
-  readonly width: number;
-  readonly readable: boolean;
-  readonly messages: readonly Message[];
-}
-
+/** Rows under one header. */
 export interface DelimitedBatch {
   readonly header: DelimitedHeader;
   readonly rows: readonly DelimitedRow[];
+  /** What is new to tell, of the header and of the file as a whole. */
+  readonly messages: readonly Message[];
 }
 
 /**
- * The data rows of a delimited text file as a stream of batches. Blank lines, comments and repeated headers are no
- * rows. When the header cannot be understood every line is a row without cells, so that the account adds up.
+ * The data rows of a delimited text file as a stream of batches. Blank lines, comments and headers are no rows. A
+ * header that comes again further down with other columns (joined files) holds from there on, and this is told. When a
+ * header cannot be understood every line below it is a row without cells, so that the account adds up.
  * @param file name of the file in messages
  */
 export async function* readDelimited(
@@ -48,144 +36,162 @@ export async function* readDelimited(
   file: string,
   options: DelimitedOptions,
 ): AsyncGenerator<DelimitedBatch> {
-  const comment = options.comment ?? '#';
-  let header: DelimitedHeader | null = null;
-  let headerLine = '';
-  let delimiter = ',';
-  for await (const batch of readLines(path)) {
-    const rows: DelimitedRow[] = [];
-    for (let i = 0; i < batch.lines.length; i++) {
-      const line = batch.lines[i]!;
-      if (line.trim() === '' || line.startsWith(comment)) continue;
-      const row = batch.firstLine + i;
-      if (header === null) {
-        delimiter = chooseDelimiter(line, options.delimiter);
-        header = understandHeader(line, delimiter, row, file, options);
-        headerLine = line;
-        if (header.positions.size > 0) continue;
-      } else if (line === headerLine && header.positions.size > 0) continue;
-      rows.push(header.readable ? dataRow(line, delimiter, row, header.width) : unreadableRow(row));
+  const reader = new DelimitedReader(file, options);
+  for await (const { firstLine, lines } of readLines(path)) {
+    for (let i = 0; i < lines.length; i++) {
+      const done = reader.take(lines[i]!, firstLine + i);
+      if (done !== null) yield done;
     }
-    if (header !== null) yield { header, rows };
+    const batch = reader.batch();
+    if (batch !== null) yield batch;
   }
 }
 
-const unreadableRow = (row: number): DelimitedRow => ({
-  row,
-  cells: null,
-  fault: 'the header of the file was not understood',
-});
+class DelimitedReader {
+  readonly #comment: string;
+  #header: DelimitedHeader | null = null;
+  #headerLine = '';
+  #delimiter = ',';
+  /** Where a number stands in every ordinary row: cheaper to look at than the whole line. */
+  #numberAt = -1;
+  #rows: DelimitedRow[] = [];
+  #messages: Message[] = [];
+  #toldEncoding = false;
 
-function dataRow(line: string, delimiter: string, row: number, width: number): DelimitedRow {
-  const cells = splitCells(line, delimiter);
-  if (cells === null) return { row, cells, fault: 'a quote opens and does not close in this line' };
-  while (cells.length > width && cells.at(-1) === '') cells.pop();
-  if (cells.length === width) return { row, cells, fault: '' };
-  return { row, cells: null, fault: `expected ${width} cells as in the header, came ${cells.length}` };
+  constructor(
+    readonly file: string,
+    readonly options: DelimitedOptions,
+  ) {
+    this.#comment = options.comment ?? '#';
+  }
+
+  /** Takes one line; gives back the rows so far when the line is a header that changes the columns. */
+  take(line: string, row: number): DelimitedBatch | null {
+    if (line.trim() === '' || line.startsWith(this.#comment)) return null;
+    const header = this.#header;
+    if (header === null) {
+      this.#begin(line, row);
+      this.#messages.push(...this.#header!.messages);
+      // A first line without any name of a column is data without a header, so it counts as a row.
+      if (this.#header!.positions.size === 0) this.#rows.push(unreadable(row, NO_HEADER));
+      return null;
+    }
+    if (header.positions.size === 0) {
+      const cells = splitCells(line, chooseDelimiter(line, this.options));
+      if (cells !== null && looksLikeHeader(cells, this.options)) return this.#change(line, row);
+    } else if (line === this.#headerLine) return null;
+    const cells = splitCells(line, this.#delimiter);
+    if (cells !== null && !startsLikeNumber(cells[this.#numberAt]) && looksLikeHeader(cells, this.options)) {
+      const next = understandHeader(line, this.#delimiter, row, this.file, this.options);
+      return sameColumns(next, header) ? null : this.#change(line, row);
+    }
+    this.#tellEncoding(line, row);
+    this.#rows.push(
+      header.readable ? dataRow(line, cells, row, header, this.#delimiter) : unreadable(row, NO_HEADER),
+    );
+    return null;
+  }
+
+  /** The rows and messages since the last batch; null before the first header. */
+  batch(): DelimitedBatch | null {
+    if (this.#header === null) return null;
+    const batch = { header: this.#header, rows: this.#rows, messages: this.#messages };
+    this.#rows = [];
+    this.#messages = [];
+    return batch;
+  }
+
+  #begin(line: string, row: number): void {
+    this.#delimiter = chooseDelimiter(line, this.options);
+    this.#header = understandHeader(line, this.#delimiter, row, this.file, this.options);
+    this.#headerLine = line;
+    this.#numberAt = this.#header.positions.get(this.options.required.at(-1)!) ?? -1;
+  }
+
+  #change(line: string, row: number): DelimitedBatch | null {
+    const before = this.batch();
+    this.#begin(line, row);
+    this.#messages.push(
+      message(
+        'warning',
+        'changed-header',
+        'Expected rows under the first header, came a header with other columns: the rows below it are read by it. Check that this file was joined on purpose.',
+        { file: this.file, row },
+      ),
+      ...this.#header!.messages,
+    );
+    return before;
+  }
+
+  #tellEncoding(line: string, row: number): void {
+    if (this.#toldEncoding || this.#header!.positions.size === 0 || !line.includes('\ufffd')) return;
+    this.#toldEncoding = true;
+    this.#messages.push(
+      message(
+        'warning',
+        'not-utf8',
+        'Expected text in UTF-8, came bytes that are not: letters are lost, and a name that holds one may match no mark or the wrong one. Save the file as UTF-8.',
+        { file: this.file, row },
+      ),
+    );
+  }
 }
 
-function chooseDelimiter(line: string, wanted: string | undefined): string {
-  if (wanted !== undefined) return DELIMITERS[wanted] ?? wanted;
-  const known = (delimiter: string): number =>
-    (splitCells(line, delimiter) ?? []).filter((cell) => roleOfHeader(cell) !== null).length;
-  return Object.values(DELIMITERS).reduce((best, next) => (known(next) > known(best) ? next : best));
+const NO_HEADER = 'the header above this row was not understood';
+
+const unreadable = (row: number, fault: string): DelimitedRow => ({ row, cells: null, fault });
+
+const startsLikeNumber = (cell: string | undefined): boolean => cell !== undefined && /^[-+.\d]/.test(cell);
+
+function sameColumns(a: DelimitedHeader, b: DelimitedHeader): boolean {
+  return (
+    a.width === b.width &&
+    a.positions.size === b.positions.size &&
+    [...a.positions].every(([role, index]) => b.positions.get(role) === index)
+  );
 }
 
-function understandHeader(
+function dataRow(
   line: string,
-  delimiter: string,
+  cells: string[] | null,
   row: number,
-  file: string,
-  options: DelimitedOptions,
-): DelimitedHeader {
-  const cells = splitCells(line, delimiter) ?? [];
-  const positions = new Map<ColumnRole, number>();
-  const headers = new Map<ColumnRole, string>();
-  const messages: Message[] = [];
-  const error = (code: string, text: string, column?: string): void => {
-    messages.push(message('error', code, text, column === undefined ? { file, row } : { file, row, column }));
-  };
-  const renamed = new Map(Object.entries(options.columns ?? {}).map(([role, name]) => [name, role]));
-  const ignored: string[] = [];
-  cells.forEach((cell, index) => {
-    const role = (renamed.get(cell) as ColumnRole | undefined) ?? roleOfHeader(cell);
-    if (role === null) ignored.push(cell);
-    else if (positions.has(role)) {
-      error(
-        'repeated-column',
-        `Two columns, "${headers.get(role)}" and "${cell}", have the role ${role}. Rename the one that is not meant.`,
-        cell,
-      );
-    } else {
-      positions.set(role, index);
-      headers.set(role, cell);
-    }
-  });
-  if (positions.size === 0) {
-    const [code, text] = describeHeaderless(line, options.required);
-    error(code, text);
-    return { positions, headers, width: cells.length, readable: false, messages };
+  header: DelimitedHeader,
+  delimiter: string,
+): DelimitedRow {
+  if (line.length > LONGEST_LINE) return unreadable(row, `the line has more than ${LONGEST_LINE} characters`);
+  if (line.includes('\u0000')) return unreadable(row, 'the line holds zero bytes, which text does not');
+  if (cells === null) {
+    return unreadable(row, 'a quote does not close in this line, or text follows a closing quote');
   }
-  for (const [role, name] of Object.entries(options.columns ?? {}) as [ColumnRole, string][]) {
-    if (cells.includes(name)) continue;
-    error(
-      'missing-column',
-      `The layout names a column "${name}" for ${role}, the file has none.${suggestion(name, cells)} Correct the layout or the header.`,
-      name,
-    );
-  }
-  for (const role of options.required) {
-    if (positions.has(role) || options.columns?.[role] !== undefined) continue;
-    const near = suggestion(role, ignored);
-    error(
-      'missing-column',
-      `Expected a column "${role}", came ${quoted(cells)}.${near} Add the column or name it in the layout.`,
-      role,
-    );
-  }
-  if (ignored.length > 0) {
-    const near = ignored.map((name) => suggestion(name, COLUMN_ROLES)).find((text) => text !== '') ?? '';
-    messages.push(
-      message('info', 'ignored-column', `Columns that are no role are not read: ${quoted(ignored)}.${near}`, {
-        file,
-        row,
-        column: ignored[0]!,
-      }),
-    );
-  }
-  const readable = messages.every(({ severity }) => severity !== 'error');
-  return { positions, headers, width: cells.length, readable, messages };
+  const { width, namedWidth } = header;
+  while (cells.length > width && cells.at(-1) === '') cells.pop();
+  if (cells.length >= namedWidth && cells.length <= width) return { row, cells, fault: '' };
+  const split =
+    cells.length > width && delimiter === ',' ? ' (does a decimal comma cut numbers in two?)' : '';
+  return unreadable(row, `expected ${width} cells as in the header, came ${cells.length}${split}`);
 }
-
-function describeHeaderless(line: string, required: readonly string[]): [code: string, text: string] {
-  // Control characters and undecodable bytes do not stand in a list of coordinates.
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: these are the ones to be found
-  if (/[\u0000-\u0008\u000e-\u001f\ufffd]/.test(line)) {
-    return [
-      'not-text',
-      'Expected delimited text, came binary data. Export the positions as text (CSV) and name that file.',
-    ];
-  }
-  const came = line.length > 60 ? `${line.slice(0, 60)}…` : line;
-  return [
-    'no-header',
-    `Expected a header that names the columns ${quoted(required)}, came ${JSON.stringify(came)}. Write the names of the columns into the first line.`,
-  ];
-}
-
-const quoted = (names: readonly string[]): string => names.map((name) => JSON.stringify(name)).join(', ');
 
 /** A whole delimited file in memory, for marks and bases; throws InputError when its header is not understood. */
 export async function readDelimitedTable(
   path: string,
   file: string,
   options: DelimitedOptions,
-): Promise<{ header: DelimitedHeader; rows: DelimitedRow[] }> {
+): Promise<{ header: DelimitedHeader; rows: DelimitedRow[]; messages: Message[] }> {
   let header: DelimitedHeader | null = null;
   const rows: DelimitedRow[] = [];
+  const messages: Message[] = [];
   for await (const batch of readDelimited(path, file, options)) {
-    header = batch.header;
+    if (header !== null && batch.header !== header && header.readable) {
+      const { row } = batch.messages[0]!;
+      throw inputError(
+        'changed-header',
+        'Expected one header, came a second one with other columns. Give the rows below it a file of their own.',
+        { file, row: row! },
+      );
+    }
+    header ??= batch.header;
     rows.push(...batch.rows);
+    messages.push(...batch.messages);
   }
   if (header === null) {
     throw inputError(
@@ -195,5 +201,5 @@ export async function readDelimitedTable(
     );
   }
   if (!header.readable) throw new InputError(header.messages.filter(({ severity }) => severity === 'error'));
-  return { header, rows };
+  return { header, rows, messages };
 }

@@ -6,14 +6,15 @@ export {
   totalAccount,
 } from './account.js';
 export { DELIMITERS } from './cells.js';
-export { type CoordinateColumns, type CoordinateSystem, coordinateColumns } from './coordinateColumns.js';
 export {
-  type DelimitedHeader,
-  type DelimitedOptions,
-  type DelimitedRow,
-  readDelimitedTable,
-} from './delimited.js';
+  type CoordinateColumns,
+  CoordinateFault,
+  type CoordinateSystem,
+  coordinateColumns,
+} from './coordinateColumns.js';
+export { type DelimitedRow, readDelimitedTable } from './delimited.js';
 export { type EpochBag, EpochStore } from './epochStore.js';
+export type { DelimitedHeader, DelimitedOptions } from './header.js';
 export {
   formatMessage,
   InputError,
@@ -21,6 +22,7 @@ export {
   type Message,
   message,
   type Place,
+  quoted,
   type Severity,
 } from './messages.js';
 export { nearestName, suggestion } from './nearestName.js';
@@ -36,4 +38,4 @@ export {
   type SetAsideRow,
 } from './reasons.js';
 export { COLUMN_ROLES, type ColumnRole, roleOfHeader } from './roles.js';
-export { RowMessages } from './rowMessages.js';
+export { DID_YOU_MEAN, RowMessages } from './rowMessages.js';

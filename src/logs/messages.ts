@@ -34,10 +34,28 @@ export function message(severity: Severity, code: string, text: string, place: P
   };
 }
 
-/** One line: `logs/a.csv:17 [latitude] error: …`. */
+/** One line: `logs/a.csv:17 [latitude] error: …`, without control characters that a terminal would obey. */
 export function formatMessage(m: Message): string {
   const where = `${m.file ?? ''}${m.row === null ? '' : `:${m.row}`}${m.column === null ? '' : ` [${m.column}]`}`;
-  return `${where === '' ? '' : `${where.trim()} `}${m.severity}: ${m.text}`;
+  const line = `${where === '' ? '' : `${where.trim()} `}${m.severity}: ${m.text}`;
+  return line.replace(/\p{Cc}/gu, '\ufffd');
+}
+
+const LONGEST_SHOWN = 60;
+
+/** A text as it came, in quotes, cut when it is long. */
+export function quoted(text: string): string {
+  return text.length > LONGEST_SHOWN
+    ? `${JSON.stringify(text.slice(0, LONGEST_SHOWN))}…`
+    : JSON.stringify(text);
+}
+
+const MOST_LISTED = 20;
+
+/** Texts as they came, in quotes; of a long list the first ones and how many more there are. */
+export function quotedList(texts: readonly string[]): string {
+  const more = texts.length - MOST_LISTED;
+  return `${texts.slice(0, MOST_LISTED).map(quoted).join(', ')}${more > 0 ? ` and ${more} more` : ''}`;
 }
 
 /** Thrown for a user's mistake that stops the work: it carries messages and never shows a stack trace. */

@@ -3,7 +3,7 @@
  * (words, `NaN`, `0x1F`, `1,5`).
  */
 export function parseNumber(cell: string): number | null {
-  if (cell === '') return Number.NaN;
+  if (cell.trim() === '') return Number.NaN;
   const value = Number(cell);
   if (!Number.isFinite(value)) return null;
   const second = cell.charCodeAt(1);

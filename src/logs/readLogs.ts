@@ -1,8 +1,10 @@
 import { type CoordinateSystem, coordinateColumns } from './coordinateColumns.js';
 import { readDelimited } from './delimited.js';
-import { type Message, message } from './messages.js';
+import { FileNotes } from './fileNotes.js';
+import type { DelimitedHeader } from './header.js';
+import type { Message } from './messages.js';
 import type { Fix, Position } from './position.js';
-import { type CellFault, positionReader } from './readPosition.js';
+import { positionReader } from './readPosition.js';
 import type { SetAsideRow } from './reasons.js';
 import type { ColumnRole } from './roles.js';
 
@@ -56,18 +58,20 @@ async function* readLog(log: LogFile, options: ReadLogsOptions): AsyncGenerator<
   const fixValues = new Map<string, Fix>([
     ['fixed', 'fixed'],
     ['float', 'float'],
-    ...Object.entries(layout.fixValues ?? {}).map(([text, fix]): [string, Fix] => [text.toLowerCase(), fix]),
+    ...Object.entries(layout.fixValues ?? {}).map(([text, fix]): [string, Fix] => [
+      text.trim().toLowerCase(),
+      fix,
+    ]),
   ]);
   const notes = new FileNotes(file);
-  let read: ReturnType<typeof positionReader> | null = null;
   const required: ColumnRole[] = ['time', 'mark', ...coordinates.roles];
+  let header: DelimitedHeader | null = null;
+  let read: ReturnType<typeof positionReader> | null = null;
   for await (const batch of readDelimited(path, file, { ...layout, required })) {
-    const messages: Message[] = [];
-    if (read === null) {
-      const { header } = batch;
+    if (read === null || batch.header !== header) {
+      header = batch.header;
       read = positionReader({ file, header, coordinates, timeZone: options.timeZone, fixValues });
-      messages.push(...header.messages);
-      if (header.readable && !header.positions.has('fix')) messages.push(notes.noFixColumn());
+      notes.see(header);
     }
     const positions: Position[] = [];
     const setAside: SetAsideRow[] = [];
@@ -76,57 +80,11 @@ async function* readLog(log: LogFile, options: ReadLogsOptions): AsyncGenerator<
       if (outcome.kind === 'set-aside') setAside.push(outcome.row);
       else {
         positions.push(outcome.position);
-        if (outcome.faults.length > 0) notes.add(outcome.faults);
+        notes.add(outcome);
       }
     }
-    yield { file, rowsRead: batch.rows.length, positions, setAside, messages };
+    notes.rows += batch.rows.length;
+    yield { file, rowsRead: batch.rows.length, positions, setAside, messages: batch.messages };
   }
-  const messages = read === null ? [notes.empty()] : notes.messages();
-  yield { file, rowsRead: 0, positions: [], setAside: [], messages };
-}
-
-/** What is told of a file once, however many rows it concerns. */
-class FileNotes {
-  readonly #faults = new Map<string, { first: CellFault; count: number }>();
-
-  constructor(readonly file: string) {}
-
-  add(faults: readonly CellFault[]): void {
-    for (const fault of faults) {
-      const entry = this.#faults.get(fault.column);
-      if (entry === undefined) this.#faults.set(fault.column, { first: fault, count: 1 });
-      else entry.count += 1;
-    }
-  }
-
-  noFixColumn(): Message {
-    return message(
-      'info',
-      'no-fix-column',
-      'The log has no column "fix": every row counts as fixed. Export the state of the fix where the controller can.',
-      { file: this.file },
-    );
-  }
-
-  empty(): Message {
-    return message(
-      'warning',
-      'empty-log',
-      'Expected a header and positions, came an empty file. Export it again.',
-      {
-        file: this.file,
-      },
-    );
-  }
-
-  messages(): Message[] {
-    return [...this.#faults].map(([column, { first, count }]) =>
-      message(
-        'warning',
-        'unread-value',
-        `Expected a number, came ${JSON.stringify(first.cell)}: ${count === 1 ? 'the row is' : `${count} rows are`} used without this value. Leave the cell blank where nothing is known.`,
-        { file: this.file, row: first.row, column },
-      ),
-    );
-  }
+  yield { file, rowsRead: 0, positions: [], setAside: [], messages: notes.messages() };
 }

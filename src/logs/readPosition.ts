@@ -1,6 +1,8 @@
 import { localToUtc, parseIsoTime } from '../time/index.js';
-import type { CoordinateColumns } from './coordinateColumns.js';
-import type { DelimitedHeader, DelimitedRow } from './delimited.js';
+import { type CoordinateColumns, CoordinateFault } from './coordinateColumns.js';
+import type { DelimitedRow } from './delimited.js';
+import type { DelimitedHeader } from './header.js';
+import { quoted } from './messages.js';
 import { parseNumber } from './numbers.js';
 import type { Fix, Position } from './position.js';
 import type { SetAsideRow } from './reasons.js';
@@ -15,7 +17,13 @@ export interface CellFault {
 
 /** What one row came to: a position, or the reason why there is none. */
 export type RowOutcome =
-  | { readonly kind: 'position'; readonly position: Position; readonly faults: readonly CellFault[] }
+  | {
+      readonly kind: 'position';
+      readonly position: Position;
+      readonly faults: readonly CellFault[];
+      /** The cell of the fix column when nobody has said what it means. */
+      readonly unknownFix: string | null;
+    }
   | { readonly kind: 'set-aside'; readonly row: SetAsideRow };
 
 export interface PositionReaderOptions {
@@ -63,10 +71,7 @@ export function positionReader(options: PositionReaderOptions): (row: DelimitedR
     for (const [k, index] of [firstAt, secondAt, thirdAt].entries()) {
       const value = parseNumber(text(index));
       if (value === null) {
-        return unreadable(
-          name(coordinates.roles[k]!),
-          `expected a number, came ${JSON.stringify(text(index))}`,
-        );
+        return unreadable(name(coordinates.roles[k]!), notANumber(text(index)));
       }
       numbers.push(value);
     }
@@ -77,7 +82,8 @@ export function positionReader(options: PositionReaderOptions): (row: DelimitedR
       try {
         ({ latitudeDeg, longitudeDeg, heightM } = coordinates.toGeodetic(latitudeDeg, longitudeDeg, heightM));
       } catch (error) {
-        return unreadable(name(coordinates.roles[0]), (error as Error).message);
+        if (!(error instanceof CoordinateFault)) throw error;
+        return unreadable(name(coordinates.roles[error.index]), error.message);
       }
     }
 
@@ -89,6 +95,8 @@ export function positionReader(options: PositionReaderOptions): (row: DelimitedR
       return Number.NaN;
     }) as [number, number, number, number, number];
 
+    const fixText = text(columns.fix).toLowerCase();
+    const fix = columns.fix < 0 ? 'fixed' : fixValues.get(fixText);
     const position: Position = {
       file,
       row,
@@ -98,7 +106,7 @@ export function positionReader(options: PositionReaderOptions): (row: DelimitedR
       setup: text(columns.setup),
       rover: text(columns.rover),
       crew: text(columns.crew),
-      fix: columns.fix < 0 ? 'fixed' : (fixValues.get(text(columns.fix).toLowerCase()) ?? 'other'),
+      fix: fix ?? 'other',
       latitudeDeg,
       longitudeDeg,
       heightM,
@@ -108,15 +116,31 @@ export function positionReader(options: PositionReaderOptions): (row: DelimitedR
       horizontalSigmaM: values[3],
       verticalSigmaM: values[4],
     };
-    return { kind: 'position', position, faults };
+    const unknownFix = fix === undefined && blank === 0 ? text(columns.fix) : null;
+    return { kind: 'position', position, faults, unknownFix };
   };
 }
+
+function notANumber(cell: string): string {
+  const comma = /^[-+]?\d+,\d+$/.test(cell) ? ' with a decimal comma; export with decimal points' : '';
+  return `expected a number, came ${quoted(cell)}${comma}`;
+}
+
+/** Satellite positioning is not older, and the tables of time zones reach farther. */
+const FIRST_YEAR = 1980;
+const LAST_YEAR = 2099;
+const FIRST_MS = Date.UTC(FIRST_YEAR, 0, 1);
+const END_MS = Date.UTC(LAST_YEAR + 1, 0, 1);
 
 /** UTC milliseconds, or what is wrong with the text. */
 function readTime(text: string, timeZone: string | null): number | string {
   const time = parseIsoTime(text);
+  const came = `came ${quoted(text)}`;
+  const ms = time.kind === 'instant' ? time.utcMs : time.kind === 'local' ? time.wallMs : FIRST_MS;
+  if (ms < FIRST_MS || ms >= END_MS) {
+    return `expected a time in the years ${FIRST_YEAR} to ${LAST_YEAR}, ${came}`;
+  }
   if (time.kind === 'instant') return time.utcMs;
-  const came = `came ${JSON.stringify(text)}`;
   if (time.kind === 'date') return `expected a date with a time of day like 2025-03-01T10:15:00Z, ${came}`;
   if (time.kind === 'invalid') return `expected a time like 2025-03-01T10:15:00Z, ${came}`;
   if (timeZone === null) {

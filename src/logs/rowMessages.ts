@@ -1,43 +1,98 @@
 import { type Message, message } from './messages.js';
 import type { RowReason, SetAsideRow } from './reasons.js';
 
-/** Set-aside rows of these reasons speak for themselves in the account; the others get a message. */
-const TOLD: ReadonlySet<RowReason> = new Set(['unreadable', 'unknown-mark', 'unknown-base', 'conflicting']);
-
-const REMEDIES: Partial<Record<RowReason, string>> = {
+/** Set-aside rows of these reasons get a message; the others speak for themselves in the account. */
+const REMEDIES = {
   unreadable: 'Correct the rows or export them again.',
   'unknown-mark': 'Add the mark to the marks file or correct the name.',
   'unknown-base': 'Add the base to the bases file or correct the name.',
   conflicting:
-    'One rover cannot be at two places: both are set aside. Look for a wrong mark name or a joined file.',
-};
+    'One rover cannot be at two places: all of them are set aside. Look for a wrong mark name or a joined file.',
+} satisfies Partial<Record<RowReason, string>>;
+type ToldReason = keyof typeof REMEDIES;
 
-/** One message for all rows of a file that were set aside for the same reason, column and finding. */
+/** A log full of ordinary points has thousands of names that are no marks: so many are told one by one. */
+const MOST_NAMES = 20;
+
+interface Group {
+  first: SetAsideRow;
+  count: number;
+  /** How many there are is told of names; other findings are told file by file. */
+  readonly files: Set<string>;
+}
+
+/**
+ * One message for all rows that were set aside for the same finding: of a name that is not known over all files, of
+ * anything else in each file. Their order does not depend on the order in which rows come.
+ */
 export class RowMessages {
-  readonly #groups = new Map<string, { first: SetAsideRow; count: number }>();
+  readonly #groups = new Map<string, Group>();
 
   add(row: SetAsideRow): void {
-    if (!TOLD.has(row.reason)) return;
-    // Unreadable values differ from row to row: the first one stands for all of its column.
-    const finding = row.reason === 'unreadable' ? (row.column ?? row.detail) : row.detail;
-    const key = [row.file, row.reason, finding].join('\u0000');
+    if (!(row.reason in REMEDIES)) return;
+    const key = [row.reason, ...finding(row)].join('\u0000');
     const group = this.#groups.get(key);
-    if (group === undefined) this.#groups.set(key, { first: row, count: 1 });
+    if (group === undefined) this.#groups.set(key, { first: row, count: 1, files: new Set([row.file]) });
     else {
       group.count += 1;
-      if (row.row < group.first.row) group.first = row;
+      group.files.add(row.file);
+      if (byPlace(row, group.first) < 0) group.first = row;
     }
   }
 
   messages(): Message[] {
-    return [...this.#groups.values()].map(({ first, count }) => {
-      const rows = count === 1 ? '1 row is' : `${count} rows are`;
-      return message(
-        'warning',
-        first.reason,
-        `${rows} set aside as ${first.reason}: ${first.detail}. ${REMEDIES[first.reason]}`,
-        { file: first.file, row: first.row, ...(first.column === null ? {} : { column: first.column }) },
-      );
+    const groups = [...this.#groups.values()].sort((a, b) => byPlace(a.first, b.first));
+    return (Object.keys(REMEDIES) as ToldReason[]).flatMap((reason) => {
+      const ofReason = groups.filter(({ first }) => first.reason === reason);
+      if (!isName(reason) || ofReason.length <= MOST_NAMES) return ofReason.map(groupMessage);
+      // Names that were probably meant to be a known one are worth more than the rest.
+      const likely = ofReason.filter(({ first }) => first.detail.includes(DID_YOU_MEAN));
+      const others = ofReason.filter((group) => !likely.includes(group));
+      const ranked = [...likely, ...others];
+      return [...ranked.slice(0, MOST_NAMES).map(groupMessage), restMessage(ranked.slice(MOST_NAMES))];
     });
   }
+}
+
+/** Stands in the detail of a name that is near a known one. */
+export const DID_YOU_MEAN = 'did you mean';
+
+const isName = (reason: RowReason): boolean => reason === 'unknown-mark' || reason === 'unknown-base';
+
+/** What rows of one message have in common. Unreadable values differ from row to row: their column counts. */
+function finding({ file, reason, column, detail }: SetAsideRow): string[] {
+  if (isName(reason)) return [detail];
+  if (reason !== 'unreadable') return [file, detail];
+  return [file, column ?? detail.replace(/\d+/g, '')];
+}
+
+function byPlace(a: SetAsideRow, b: SetAsideRow): number {
+  return a.file === b.file ? a.row - b.row : a.file < b.file ? -1 : 1;
+}
+
+const areRows = (count: number): string => (count === 1 ? '1 row is' : `${count} rows are`);
+
+const inFiles = (count: number): string => (count === 1 ? '' : `, in ${count} files`);
+
+function groupMessage({ first, count, files }: Group): Message {
+  const remedy = REMEDIES[first.reason as ToldReason];
+  return message(
+    'warning',
+    first.reason,
+    `${areRows(count)} set aside as ${first.reason}${inFiles(files.size)}: ${first.detail}. ${remedy}`,
+    { file: first.file, row: first.row, ...(first.column === null ? {} : { column: first.column }) },
+  );
+}
+
+/** The many names beyond those told one by one. */
+function restMessage(groups: readonly Group[]): Message {
+  const [{ first }] = groups as [Group];
+  const count = groups.reduce((total, group) => total + group.count, 0);
+  const files = new Set(groups.flatMap((group) => [...group.files])).size;
+  return message(
+    'warning',
+    first.reason,
+    `${areRows(count)} set aside as ${first.reason} for ${groups.length} further ${groups.length === 1 ? 'name' : 'names'}${inFiles(files)}: here ${first.detail}. Nothing is wrong where these are ordinary points and no check shots.`,
+    { file: first.file, row: first.row },
+  );
 }

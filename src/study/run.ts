@@ -77,7 +77,10 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     messages: [...read.results.messages, ...messages, ...ruleMessages(rules.length)],
     fits: models.map((model) => fitResult(model, errors)),
     lengthClasses: lengthClasses(errors, read.visits, read.control, study.confidence),
-    marks: markMeans(errors),
+    // A mark on the base itself has no direction; 0 leaves it in the middle of a map.
+    marks: markMeans(errors).map((mark) =>
+      Number.isNaN(mark.azimuthDeg) ? { ...mark, azimuthDeg: 0 } : mark,
+    ),
     rules,
     specSheet: study.specSheet,
   };

@@ -1,13 +1,16 @@
 import { z } from 'zod';
 import { COLUMN_ROLES } from '../logs/index.js';
-import { isTimeZone } from '../time/index.js';
+import { isTimeZone, parseIsoTime } from '../time/index.js';
 
 /*
  * The study file as a schema. Descriptions become the help that editors show and the reference page, so each key says
  * what it means, its unit and its default.
  */
 
-const day = z.string().regex(/^\d{4}-\d{2}-\d{2}$/, 'a day like 2025-03-01');
+const day = z
+  .string()
+  .regex(/^\d{4}-\d{2}-\d{2}$/, { message: 'a day like 2025-03-01', abort: true })
+  .refine((text) => parseIsoTime(text).kind === 'date', { message: 'a day that exists' });
 const share = z.number().gt(0).lt(1);
 const columns = z
   .partialRecord(z.enum(COLUMN_ROLES), z.string().min(1))

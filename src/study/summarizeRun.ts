@@ -3,7 +3,7 @@ import { createReadStream } from 'node:fs';
 import type { Control } from '../control/index.js';
 import type { FormedOccupations, OccupationError, SetAsideOccupation } from '../errors/index.js';
 import { type Message, type OccupationReason, totalAccount } from '../logs/index.js';
-import type { Results } from './results.js';
+import type { FileResult, Results } from './results.js';
 import type { Study } from './study.js';
 
 /** What reading gave, before any fit. */
@@ -21,12 +21,12 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
   const withoutFix = formed.visits.filter(({ fixedRows }) => fixedRows === 0).length;
   const counts: Partial<Record<OccupationReason, number>> = {};
   for (const { reason } of setAside) counts[reason] = (counts[reason] ?? 0) + 1;
-  const files = await Promise.all(
-    formed.files.map(async (account) => ({
-      ...account,
-      sha256: await sha256(study.logs.find(({ file }) => file === account.file)!.path),
-    })),
-  );
+  const files: FileResult[] = [];
+  // One after the other: a study may have more logs than a process may have open files.
+  for (const account of formed.files) {
+    const { path } = study.logs.find(({ file }) => file === account.file)!;
+    files.push({ ...account, sha256: await sha256(path) });
+  }
   return {
     version: 1,
     study: { title: study.title, timeZone: study.timeZone, seed: study.seed },

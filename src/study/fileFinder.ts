@@ -1,0 +1,104 @@
+import { statSync } from 'node:fs';
+import { relative, resolve } from 'node:path';
+import { globSync } from 'tinyglobby';
+import type { ControlFile } from '../control/index.js';
+import {
+  type CoordinateSystem,
+  coordinateColumns,
+  type LogFile,
+  type Message,
+  message,
+  quoted,
+} from '../logs/index.js';
+import type { Path, PlaceOf } from './places.js';
+import type { StudySettings } from './settings.js';
+
+/** Finds the files that a study names, and gathers what is wrong with them. */
+export class FileFinder {
+  readonly mistakes: Message[] = [];
+
+  constructor(
+    readonly settings: StudySettings,
+    readonly folder: string,
+    readonly placeOf: PlaceOf,
+  ) {}
+
+  /** The marks or bases file; null when it is not there. */
+  control(key: 'marks' | 'bases'): ControlFile | null {
+    const entry = this.settings[key];
+    const inline = typeof entry === 'string';
+    const { file, coordinates, columns } = inline
+      ? { file: entry, coordinates: undefined, columns: undefined }
+      : entry;
+    const system = this.#system(coordinates, [key, 'coordinates']);
+    const path = resolve(this.folder, file);
+    if (!isFile(path)) {
+      this.#mistake(
+        'missing-file',
+        `Expected the ${key} file ${quoted(file)} in the folder of the study file, there is none. Create it or correct the name.`,
+        inline ? [key] : [key, 'file'],
+      );
+      return null;
+    }
+    return { path, file: relative(this.folder, path), coordinates: system, columns };
+  }
+
+  logs(): LogFile[] {
+    const found = new Map<string, LogFile>();
+    this.settings.logs.forEach(({ files, layout, coordinates }, k) => {
+      const system = this.#system(coordinates, ['logs', k, 'coordinates']);
+      for (const pattern of [files].flat()) {
+        const paths = this.#matches(pattern);
+        if (paths.length === 0) {
+          this.#mistake(
+            'no-log',
+            `Expected log files that match ${quoted(pattern)} in the folder of the study file, there are none. Put the exported logs there or correct the pattern, such as "logs/*.csv".`,
+            ['logs', k, 'files'],
+          );
+        }
+        for (const path of paths) {
+          // A file that two patterns match is one file: its rows must not count twice.
+          if (found.has(path)) continue;
+          found.set(path, {
+            path,
+            file: relative(this.folder, path),
+            layout: layout ?? { kind: 'delimited' },
+            coordinates: system,
+          });
+        }
+      }
+    });
+    return [...found.values()];
+  }
+
+  #matches(pattern: string): string[] {
+    // A name may hold characters that mean something in a pattern, such as brackets.
+    const literal = resolve(this.folder, pattern);
+    if (isFile(literal)) return [literal];
+    return globSync(pattern, { cwd: this.folder, absolute: true, expandDirectories: false }).sort();
+  }
+
+  #system(own: CoordinateSystem | undefined, path: Path): CoordinateSystem {
+    const system = own ?? this.settings.coordinates;
+    const key = own === undefined ? ['coordinates'] : path;
+    try {
+      coordinateColumns(system);
+    } catch (error) {
+      const reason = (error as Error).message.replace(/\.$/, '');
+      this.#mistake(
+        'unknown-coordinates',
+        `Expected "geographic", "geocentric" or a proj string, came ${quoted(system)}: ${reason}. Correct it.`,
+        key,
+      );
+    }
+    return system;
+  }
+
+  #mistake(code: string, text: string, path: Path): void {
+    const told = message('error', code, text, this.placeOf(path));
+    const again = this.mistakes.some(({ text: before, row }) => before === text && row === told.row);
+    if (!again) this.mistakes.push(told);
+  }
+}
+
+const isFile = (path: string): boolean => statSync(path, { throwIfNoEntry: false })?.isFile() ?? false;
