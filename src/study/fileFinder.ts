@@ -48,7 +48,11 @@ export class FileFinder {
     this.settings.logs.forEach(({ files, layout, coordinates }, k) => {
       const system = this.#system(coordinates, ['logs', k, 'coordinates']);
       for (const pattern of [files].flat()) {
-        const paths = this.#matches(pattern);
+        const paths = globSync(pattern, {
+          cwd: this.folder,
+          absolute: true,
+          expandDirectories: false,
+        }).sort();
         if (paths.length === 0) {
           this.#mistake(
             'no-log',
@@ -69,13 +73,6 @@ export class FileFinder {
       }
     });
     return [...found.values()];
-  }
-
-  #matches(pattern: string): string[] {
-    // A name may hold characters that mean something in a pattern, such as brackets.
-    const literal = resolve(this.folder, pattern);
-    if (isFile(literal)) return [literal];
-    return globSync(pattern, { cwd: this.folder, absolute: true, expandDirectories: false }).sort();
   }
 
   #system(own: CoordinateSystem | undefined, path: Path): CoordinateSystem {

@@ -165,20 +165,14 @@ describe('small studies', () => {
   });
 
   it('with a mark on the base itself stay sound', async () => {
-    const { base } = campaign;
-    const marks = marksWith(([name, ...cells], k) =>
-      k === 0
-        ? [
-            name!,
-            String(base.latitudeDeg),
-            String(base.longitudeDeg),
-            String(base.heightM),
-            ...cells.slice(3),
-          ]
-        : [name!, ...cells],
-    );
-    const { results } = await run({ marks });
+    // The base is said to stand on the first mark: errors stay what they are, its baseline has no length.
+    const { results } = await run({
+      bases: basesText([{ ...campaign.base, ...campaign.marks[0]!, name: 'B1' }]),
+    });
     expectSound(results);
+    const [onBase] = results.marks;
+    expect([onBase!.mark, onBase!.baselineKm, onBase!.azimuthDeg]).toEqual([campaign.marks[0]!.name, 0, 0]);
+    expect(onBase!.occupations).toBeGreaterThan(0);
   });
 
   it('without a row that can be used say so and fit nothing', async () => {
