@@ -2,11 +2,17 @@ import { type LocalFrame, localFrame } from '../geodesy/index.js';
 import { DID_YOU_MEAN, nearestName, quoted } from '../logs/index.js';
 import type { Base, Bases } from './bases.js';
 import type { Mark, Marks } from './marks.js';
+import type { MarkTimes } from './markTimes.js';
+import type { NameRules } from './names.js';
 
 /** Everything that is known beforehand: marks and bases. */
 export interface Control {
   readonly marks: Marks;
   readonly bases: Bases;
+  /** How logs name marks; without it names are taken as they stand. */
+  readonly names?: NameRules | undefined;
+  /** Log → stays on marks, for logs whose rows name none. */
+  readonly markTimes?: ReadonlyMap<string, MarkTimes> | undefined;
 }
 
 /** The point named, or what to tell about a name that is not known. */

@@ -1,4 +1,7 @@
 export { type Base, type Bases, type Mounting, readBases } from './bases.js';
 export { type Control, type Match, markFrame, matchBase, matchMark } from './control.js';
 export { type Mark, type Marks, readMarks } from './marks.js';
+export { type MarkInterval, type MarkTimes, markAt, readMarkTimes } from './markTimes.js';
+export { matchRowNames, type NameRules, type RowNames } from './names.js';
+export { NearestMark } from './nearestMark.js';
 export type { ControlFile } from './readControl.js';

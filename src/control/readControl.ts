@@ -5,13 +5,13 @@ import {
   type CoordinateSystem,
   coordinateColumns,
   type DelimitedHeader,
-  type DelimitedRow,
   InputError,
   type Message,
   message,
   parseNumber,
   quoted,
   readDelimitedTable,
+  type TableRow,
 } from '../logs/index.js';
 
 /** Where a table of points with known coordinates stands and in which system it is written. */
@@ -116,7 +116,7 @@ export async function readControlRows(
   return { rows: result, messages };
 }
 
-function cellOf(header: DelimitedHeader, data: DelimitedRow, role: ColumnRole): string {
+function cellOf(header: DelimitedHeader, data: TableRow, role: ColumnRole): string {
   const index = header.positions.get(role);
   return index === undefined ? '' : data.cells![index]!;
 }

@@ -17,9 +17,11 @@ export const RECORD = {
   file: 10,
   row: 11,
   crew: 12,
+  /** Epochs that the row is the mean of. */
+  epochs: 13,
 } as const;
 
-export const RECORD_WIDTH = 13;
+export const RECORD_WIDTH = 14;
 export const FIXED = 0;
 export const NOT_FIXED = 1;
 export const NO_POSITION = 2;
@@ -27,7 +29,7 @@ export const NO_POSITION = 2;
 const stateOf = (fix: Fix, hasPosition: boolean): number =>
   hasPosition ? (fix === 'fixed' ? FIXED : NOT_FIXED) : NO_POSITION;
 
-/** Fills `record`; `local` is null when the row has no coordinates. */
+/** Fills `record`; a row without a time of day stands at the beginning of its day. `local` is null when the row has no coordinates. */
 export function writeRecord(
   record: Float64Array,
   position: Position,
@@ -35,7 +37,7 @@ export function writeRecord(
   fileIndex: number,
   crewIndex: number,
 ): void {
-  record[RECORD.utcMs] = position.utcMs;
+  record[RECORD.utcMs] = position.dateOnly === '' ? position.utcMs : Date.parse(position.dateOnly);
   record[RECORD.eastM] = local?.eastM ?? Number.NaN;
   record[RECORD.northM] = local?.northM ?? Number.NaN;
   record[RECORD.upM] = local?.upM ?? Number.NaN;
@@ -48,4 +50,5 @@ export function writeRecord(
   record[RECORD.file] = fileIndex;
   record[RECORD.row] = position.row;
   record[RECORD.crew] = crewIndex;
+  record[RECORD.epochs] = position.epochs;
 }

@@ -1,12 +1,4 @@
-import {
-  type Base,
-  type Control,
-  type Mark,
-  type Match,
-  markFrame,
-  matchBase,
-  matchMark,
-} from '../control/index.js';
+import { type Base, type Control, type Mark, type Match, markFrame, matchBase } from '../control/index.js';
 import { geodeticToGeocentric, type LocalFrame } from '../geodesy/index.js';
 import {
   EpochStore,
@@ -21,7 +13,9 @@ import {
 import { type DayOf, dayFunction } from './days.js';
 import { RECORD, RECORD_WIDTH, writeRecord } from './epochRecord.js';
 import type { FormedOccupations, FormOccupationsOptions } from './formOccupations.js';
-import { judgeEpochs, type NameRanks, timeOrder } from './judgeEpochs.js';
+import { judgeDatedRows, judgeEpochs, type NameRanks, timeOrder } from './judgeEpochs.js';
+import { MarkFinder } from './markFinder.js';
+import { markMoving } from './movingEpochs.js';
 import { Names, remembered } from './names.js';
 import type { Occupation, Visit } from './occupation.js';
 import { VisitBuilder, type VisitKey } from './visitBuilder.js';
@@ -30,6 +24,8 @@ import { VisitBuilder, type VisitKey } from './visitBuilder.js';
 interface KeyContext {
   readonly key: VisitKey;
   readonly frame: LocalFrame;
+  /** False for rows with a date and no time of day. */
+  readonly timed: boolean;
 }
 
 interface Place {
@@ -54,7 +50,8 @@ export class EpochSorter {
   readonly #crewNames = new Names();
   readonly #record = new Float64Array(RECORD_WIDTH);
   readonly #dayOf: DayOf;
-  readonly #markOf: (name: string) => Match<Mark>;
+  readonly #marks: MarkFinder;
+  #nearestMarkM: number | null = null;
   readonly #baseOf: (name: string) => Match<Base>;
 
   constructor(
@@ -64,7 +61,7 @@ export class EpochSorter {
   ) {
     this.#store = new EpochStore(RECORD_WIDTH, (options.epochsInMemory ?? 300_000) * RECORD_WIDTH);
     this.#dayOf = dayFunction(control, options.timeZone ?? null);
-    this.#markOf = remembered((name) => matchMark(control, name));
+    this.#marks = new MarkFinder(control);
     this.#baseOf = remembered((name) => matchBase(control, name));
   }
 
@@ -72,6 +69,7 @@ export class EpochSorter {
     this.#account.open(batch.file);
     this.#account.read(batch.file, batch.rowsRead);
     this.#messages.push(...batch.messages);
+    this.#nearestMarkM = batch.nearestMarkM ?? null;
     for (const row of batch.setAside) this.#setAside(row);
     for (const position of batch.positions) this.#sort(position);
   }
@@ -85,11 +83,13 @@ export class EpochSorter {
       const builder = new VisitBuilder({
         ...context,
         gapMs: this.gapMs,
-        dayOf: (utcMs) => this.#dayOf(utcMs, context.key.base),
+        windowMs: this.options.windowSeconds == null ? null : this.options.windowSeconds * 1000,
+        dayOf: (utcMs) =>
+          context.timed ? this.#dayOf(utcMs, context.key.base) : new Date(utcMs).toISOString().slice(0, 10),
         fileNames: this.#fileNames.list,
         crewNames: this.#crewNames.list,
       });
-      for (const records of days()) this.#reduceDay(records, builder, ranks);
+      for (const records of days()) this.#reduceDay(records, context.timed, builder, ranks);
       builder.close();
       visits.push(...builder.visits);
       occupations.push(...builder.occupations);
@@ -116,8 +116,9 @@ export class EpochSorter {
     }
     const { mark, base, day } = place;
     const setup = position.setup || setupName(base, day);
-    const key = `${position.rover}\u0000${mark.name}\u0000${base.name}\u0000${setup}`;
-    const { frame } = this.#context(key, position.rover, mark, base, setup);
+    const timed = position.dateOnly === '';
+    const key = [position.rover, mark.name, base.name, setup, timed ? 'timed' : 'dated'].join(SEPARATOR);
+    const { frame } = this.#context(key, { rover: position.rover, mark, base, setup, timed });
     const local = Number.isNaN(position.latitudeDeg) ? null : frame.toLocal(geodeticToGeocentric(position));
     if (local !== null && Math.hypot(local.eastM, local.northM, local.upM) > FARTHEST_M) {
       const detail = `a position is more than ${FARTHEST_M / 1000} km from its mark; look for swapped columns, another coordinate system, a wrong mark`;
@@ -131,41 +132,53 @@ export class EpochSorter {
       this.#fileNames.index(file),
       this.#crewNames.index(position.crew),
     );
-    this.#store.add(key, Math.floor(position.utcMs / 86_400_000), this.#record);
+    this.#store.add(key, Math.floor(this.#record[RECORD.utcMs]! / 86_400_000), this.#record);
   }
 
   /** The mark, base and day of a position, or why it belongs to none. */
   #place(position: Position): Place | Rejection {
     const base = this.#baseOf(position.base);
     if (base.kind === 'unknown') return { reason: 'unknown-base', detail: base.detail };
-    const mark = this.#markOf(position.mark);
+    const mark = this.#marks.find(position, this.#nearestMarkM);
     if (mark.kind === 'unknown') return { reason: 'unknown-mark', detail: mark.detail };
-    const day = this.#dayOf(position.utcMs, base.point.name);
+    const day = position.dateOnly || this.#dayOf(position.utcMs, base.point.name);
     const { period } = this.options;
     const outside = period && (day < period.from || day > period.to);
     if (outside) return { reason: 'outside-study', detail: `day ${day}` };
     return { mark: mark.point, base: base.point, day };
   }
 
-  #context(key: string, rover: string, mark: Mark, base: Base, setup: string): KeyContext {
+  #context(
+    key: string,
+    {
+      rover,
+      mark,
+      base,
+      setup,
+      timed,
+    }: { rover: string; mark: Mark; base: Base; setup: string; timed: boolean },
+  ): KeyContext {
     let context = this.#contexts.get(key);
     if (context === undefined) {
       context = {
         key: { rover, mark: mark.name, base: base.name, setup },
         frame: markFrame(mark, base),
+        timed,
       };
       this.#contexts.set(key, context);
     }
     return context;
   }
 
-  #reduceDay(records: Float64Array, builder: VisitBuilder, ranks: NameRanks): void {
+  #reduceDay(records: Float64Array, timed: boolean, builder: VisitBuilder, ranks: NameRanks): void {
     const order = timeOrder(records, ranks);
-    const verdicts = judgeEpochs(records, order);
+    const verdicts = timed ? judgeEpochs(records, order) : judgeDatedRows(records, order);
+    if (timed) markMoving(records, order, verdicts);
     for (let k = 0; k < order.length; k++) {
       const offset = order[k]!;
       const verdict = verdicts[k]!;
-      builder.add(records, offset, verdict);
+      // A rover that passes a mark does not visit it.
+      if (verdict !== 'moving') builder.add(records, offset, verdict);
       const file = this.#fileNames.list[records[offset + RECORD.file]!]!;
       if (verdict === 'used') this.#account.used(file, 1);
       else {
@@ -182,6 +195,9 @@ export class EpochSorter {
   }
 }
 
+/** Between the parts of a key: stands in no name. */
+const SEPARATOR = '\u0000';
+
 /** No rover works so far from its base: the coordinates are not what they are said to be, and no mean is formed of them. */
 const FARTHEST_M = 1_000_000;
 
@@ -191,8 +207,13 @@ const setupName = (base: Base, day: string): string =>
 
 function byStart(a: Visit | Occupation, b: Visit | Occupation): number {
   const compare = (x: string, y: string): number => (x < y ? -1 : x > y ? 1 : 0);
+  const [startA, startB] = [a.startMs, b.startMs].map((ms) => (Number.isNaN(ms) ? Number.MAX_VALUE : ms)) as [
+    number,
+    number,
+  ];
   return (
-    a.startMs - b.startMs ||
+    compare(a.day, b.day) ||
+    startA - startB ||
     compare(a.rover, b.rover) ||
     compare(a.mark, b.mark) ||
     compare(a.base, b.base) ||

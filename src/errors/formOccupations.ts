@@ -10,6 +10,8 @@ export interface FormOccupationsOptions {
   readonly period?: { readonly from: string; readonly to: string } | null | undefined;
   /** A longer gap begins a new visit; default 60. */
   readonly gapSeconds?: number | undefined;
+  /** Cuts long occupations into shots of this length; default none. */
+  readonly windowSeconds?: number | null | undefined;
   /** Is given every set-aside row as soon as it is known, so that long lists need not stay in memory. */
   readonly onSetAside?: ((row: SetAsideRow) => void) | undefined;
   /** Epochs that wait in memory before they go to a temporary file; default 300 000. */
@@ -41,9 +43,9 @@ export async function formOccupations(
   control: Control,
   options: FormOccupationsOptions = {},
 ): Promise<FormedOccupations> {
-  const { gapSeconds = 60 } = options;
-  if (!(gapSeconds > 0)) {
-    throw new RangeError(`gapSeconds: expected a number above 0, received ${gapSeconds}`);
+  const { gapSeconds = 60, windowSeconds = null } = options;
+  for (const [name, seconds] of Object.entries({ gapSeconds, windowSeconds: windowSeconds ?? 1 })) {
+    if (!(seconds > 0)) throw new RangeError(`${name}: expected a number above 0, received ${seconds}`);
   }
   const sorter = new EpochSorter(control, options, gapSeconds * 1000);
   try {

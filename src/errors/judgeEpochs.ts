@@ -2,7 +2,9 @@ import type { RowReason } from '../logs/index.js';
 import { FIXED, NO_POSITION, RECORD, RECORD_WIDTH } from './epochRecord.js';
 
 /** What becomes of an epoch: `used` in an occupation, or the reason why not. */
-export type Verdict = 'used' | Extract<RowReason, 'not-fixed' | 'no-position' | 'duplicate' | 'conflicting'>;
+export type Verdict =
+  | 'used'
+  | Extract<RowReason, 'not-fixed' | 'no-position' | 'duplicate' | 'conflicting' | 'moving'>;
 
 /** Place of each name in alphabetical order: names are numbered as they are met, which depends on what is read first. */
 export interface NameRanks {
@@ -64,10 +66,7 @@ const SAME_POSITION_M = 1e-4;
  * used and the others are duplicates; with other coordinates all of them are conflicting.
  */
 export function judgeEpochs(records: Float64Array, order: Int32Array): Verdict[] {
-  const verdicts = Array.from(order, (offset): Verdict => {
-    const state = records[offset + RECORD.state];
-    return state === FIXED ? 'used' : state === NO_POSITION ? 'no-position' : 'not-fixed';
-  });
+  const verdicts = byState(records, order);
   const timeAt = (k: number): number => records[order[k]! + RECORD.utcMs]!;
   for (let start = 0; start < order.length; ) {
     let end = start + 1;
@@ -77,6 +76,33 @@ export function judgeEpochs(records: Float64Array, order: Int32Array): Verdict[]
   }
   return verdicts;
 }
+
+/**
+ * Judges records that have a date and no time of day, in the order of {@link timeOrder}: equal coordinates on one day
+ * are one position written twice, different ones are different shots.
+ */
+export function judgeDatedRows(records: Float64Array, order: Int32Array): Verdict[] {
+  const verdicts = byState(records, order);
+  let last = -1;
+  order.forEach((offset, k) => {
+    if (verdicts[k] !== 'used') return;
+    if (last >= 0 && samePosition(records, offset, last)) verdicts[k] = 'duplicate';
+    else last = offset;
+  });
+  return verdicts;
+}
+
+function byState(records: Float64Array, order: Int32Array): Verdict[] {
+  return Array.from(order, (offset): Verdict => {
+    const state = records[offset + RECORD.state];
+    return state === FIXED ? 'used' : state === NO_POSITION ? 'no-position' : 'not-fixed';
+  });
+}
+
+const samePosition = (records: Float64Array, a: number, b: number): boolean =>
+  [RECORD.eastM, RECORD.northM, RECORD.upM].every(
+    (field) => Math.abs(records[a + field]! - records[b + field]!) <= SAME_POSITION_M,
+  );
 
 function judgeSameTime(
   records: Float64Array,
@@ -89,10 +115,6 @@ function judgeSameTime(
   for (let k = start; k < end; k++) if (verdicts[k] === 'used') fixed.push(k);
   const [first] = fixed;
   if (first === undefined) return;
-  const same = fixed.every((k) =>
-    [RECORD.eastM, RECORD.northM, RECORD.upM].every(
-      (field) => Math.abs(records[order[k]! + field]! - records[order[first]! + field]!) <= SAME_POSITION_M,
-    ),
-  );
+  const same = fixed.every((k) => samePosition(records, order[k]!, order[first]!));
   for (const k of fixed) if (!same || k !== first) verdicts[k] = same ? 'duplicate' : 'conflicting';
 }

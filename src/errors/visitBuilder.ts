@@ -15,7 +15,12 @@ export interface VisitKey {
 export interface VisitBuilderOptions {
   readonly key: VisitKey;
   readonly frame: LocalFrame;
+  /** A longer gap begins a new visit. */
   readonly gapMs: number;
+  /** Cuts long occupations into shots of this length; null leaves them whole. */
+  readonly windowMs: number | null;
+  /** False for rows with a date alone: each is a visit of its own, and its times are NaN. */
+  readonly timed: boolean;
   readonly dayOf: (utcMs: number) => string;
   readonly fileNames: readonly string[];
   readonly crewNames: readonly string[];
@@ -62,15 +67,18 @@ export class VisitBuilder {
   /** One record at `offset`; a duplicate or conflicting row shows presence but does not enter a mean. */
   add(records: Float64Array, offset: number, verdict: Verdict): void {
     const utcMs = records[offset + RECORD.utcMs]!;
-    const { gapMs, fileNames, crewNames } = this.options;
-    if (this.#visit !== null && utcMs - this.#visit.endMs > gapMs) this.#closeVisit();
+    const { gapMs, windowMs, timed, fileNames, crewNames } = this.options;
+    const gap = (endMs: number): boolean => !timed || utcMs - endMs > gapMs;
+    if (this.#visit !== null && gap(this.#visit.endMs)) this.#closeVisit();
     const crew = crewNames[records[offset + RECORD.crew]!]!;
     this.#visit ??= { startMs: utcMs, endMs: utcMs, rows: 0, fixedRows: 0, crew };
     this.#visit.endMs = utcMs;
     this.#visit.rows += 1;
     if (records[offset + RECORD.state] === FIXED) this.#visit.fixedRows += 1;
     if (verdict !== 'used') return;
-    if (this.#occupation !== null && utcMs - this.#occupation.endMs > gapMs) this.#closeOccupation();
+    const open = this.#occupation;
+    const full = open !== null && windowMs !== null && utcMs - open.startMs >= windowMs;
+    if (open !== null && (full || gap(open.endMs))) this.#closeOccupation();
     this.#occupation ??= {
       startMs: utcMs,
       endMs: utcMs,
@@ -81,7 +89,7 @@ export class VisitBuilder {
       means: AVERAGED.map(() => new RunningMean()),
     };
     this.#occupation.endMs = utcMs;
-    this.#occupation.epochs += 1;
+    this.#occupation.epochs += records[offset + RECORD.epochs]!;
     for (let k = 0; k < AVERAGED.length; k++) this.#occupation.means[k]!.add(records[offset + AVERAGED[k]!]!);
   }
 
@@ -97,8 +105,23 @@ export class VisitBuilder {
     const { rover, mark, base, setup } = this.options.key;
     const { crew, startMs, endMs, rows, fixedRows } = this.#visit;
     const day = this.options.dayOf(startMs);
-    this.visits.push({ rover, mark, base, setup, crew, day, startMs, endMs, rows, fixedRows });
+    this.visits.push({
+      rover,
+      mark,
+      base,
+      setup,
+      crew,
+      day,
+      startMs: this.#known(startMs),
+      endMs: this.#known(endMs),
+      rows,
+      fixedRows,
+    });
     this.#visit = null;
+  }
+
+  #known(utcMs: number): number {
+    return this.options.timed ? utcMs : Number.NaN;
   }
 
   #closeOccupation(): void {
@@ -114,8 +137,8 @@ export class VisitBuilder {
       setup,
       crew,
       day: this.options.dayOf(startMs),
-      startMs,
-      endMs,
+      startMs: this.#known(startMs),
+      endMs: this.#known(endMs),
       epochs,
       position: geocentricToGeodetic(this.options.frame.toGeocentric({ eastM, northM, upM })),
       scatterEastMm: means[0]!.standardDeviation * 1000,

@@ -4,6 +4,7 @@ export const DELIMITERS: Readonly<Record<string, string>> = {
   semicolon: ';',
   tab: '\t',
   pipe: '|',
+  blanks: ' ',
 };
 
 /**
@@ -12,6 +13,7 @@ export const DELIMITERS: Readonly<Record<string, string>> = {
  * @returns null when a quote opens and does not close, or text follows a closing quote
  */
 export function splitCells(line: string, delimiter: string): string[] | null {
+  if (delimiter === ' ') return splitAtBlanks(line);
   if (!line.includes('"')) return line.split(delimiter).map((cell) => cell.trim());
   const cells: string[] = [];
   let at = 0;
@@ -32,6 +34,29 @@ export function splitCells(line: string, delimiter: string): string[] | null {
     at = end + delimiter.length;
   }
 }
+
+/** A blank as delimiter means runs of blanks and tabs, none of them at the ends of the line. */
+function splitAtBlanks(line: string): string[] | null {
+  if (!line.includes('"')) return line.trim().split(/[ \t]+/);
+  const cells: string[] = [];
+  for (let at = 0; ; ) {
+    while (at < line.length && isBlank(line[at]!)) at++;
+    if (at >= line.length) return cells;
+    const quoted = quotedCell(line, at);
+    if (quoted === null) return null;
+    if (quoted.end >= 0) {
+      if (quoted.end < line.length && !isBlank(line[quoted.end]!)) return null;
+      cells.push(quoted.text.trim());
+      at = quoted.end;
+    } else {
+      const end = line.slice(at).search(/[ \t]/);
+      cells.push(line.slice(at, end < 0 ? line.length : at + end));
+      at = end < 0 ? line.length : at + end;
+    }
+  }
+}
+
+const isBlank = (character: string): boolean => character === ' ' || character === '\t';
 
 /** The quoted text that begins at `at` and where it ends; end −1 when none begins there, null when it does not close. */
 function quotedCell(line: string, at: number): { text: string; end: number } | null {

@@ -1,6 +1,6 @@
 import type { DelimitedHeader } from './header.js';
 import { type Message, message, quoted } from './messages.js';
-import type { CellFault, RowOutcome } from './readPosition.js';
+import type { CellFault, RowOutcome } from './rowPosition.js';
 
 /** Different texts of the fix column that are remembered, and of them those that are told. */
 const MOST_FIX_TEXTS = 1000;
@@ -18,9 +18,10 @@ export class FileNotes {
 
   constructor(readonly file: string) {}
 
-  see(header: DelimitedHeader): void {
+  /** @param fixIsKnown the layout states the fix of all rows */
+  see(header: DelimitedHeader, fixIsKnown: boolean): void {
     this.#headers += 1;
-    if (header.readable && !header.positions.has('fix')) this.#noFixColumn = true;
+    if (header.readable && !header.positions.has('fix') && !fixIsKnown) this.#noFixColumn = true;
     this.#fixColumn = header.headers.get('fix') ?? this.#fixColumn;
   }
 

@@ -1,9 +1,8 @@
 import { parseIsoTime } from '../time/index.js';
 import { DELIMITERS, splitCells } from './cells.js';
 import { type Message, message, quoted, quotedList } from './messages.js';
-import { suggestion } from './nearestName.js';
 import { parseNumber } from './numbers.js';
-import { COLUMN_ROLES, type ColumnRole, roleOfHeader } from './roles.js';
+import { type ColumnRole, roleOfHeader } from './roles.js';
 
 /** How a delimited file is to be understood. */
 export interface DelimitedOptions {
@@ -12,9 +11,19 @@ export interface DelimitedOptions {
   /** Lines that begin with this are comments. */
   readonly comment?: string | undefined;
   /** Role → header, where a file does not spell the role itself. */
-  readonly columns?: Readonly<Partial<Record<ColumnRole, string>>> | undefined;
+  readonly columns?: Readonly<Partial<Record<ColumnRole, string | number>>> | undefined;
+  /** Character of the decimal mark; default a point. */
+  readonly decimal?: string | undefined;
+  /** False when the first line is data already. */
+  readonly header?: boolean | undefined;
+  /** Lines at the top that are passed over. */
+  readonly skipLines?: number | undefined;
   /** Roles without which no row can be used. */
   readonly required: readonly ColumnRole[];
+  /** Of each of these groups one role is needed; `what` names the group in a message. */
+  readonly requiredOneOf?:
+    | readonly { readonly what: string; readonly roles: readonly ColumnRole[] }[]
+    | undefined;
 }
 
 /** The header of a file: where each role stands, or why no row can be read. */
@@ -24,6 +33,10 @@ export interface DelimitedHeader {
   /** Number of cells, with and without columns at the end that have no name. */
   readonly width: number;
   readonly namedWidth: number;
+  /** Fewest cells of a row that can be used: all that is needed and one more, so that none of it can be cut off. */
+  readonly leastWidth: number;
+  /** The last column is a description, which may hold the delimiter. */
+  readonly lastIsText: boolean;
   readonly readable: boolean;
   readonly messages: readonly Message[];
 }
@@ -32,13 +45,25 @@ export interface DelimitedHeader {
 export function chooseDelimiter(line: string, options: DelimitedOptions): string {
   const { delimiter: wanted } = options;
   if (wanted !== undefined) return Object.hasOwn(DELIMITERS, wanted) ? DELIMITERS[wanted]! : wanted;
+  if (options.header === false) return mostFrequentDelimiter(line);
   const known = (delimiter: string): number =>
     (splitCells(line, delimiter) ?? []).filter((cell) => spellsRole(cell, options)).length;
-  return Object.values(DELIMITERS).reduce((best, next) => (known(next) > known(best) ? next : best));
+  const marks = Object.values(DELIMITERS).filter((delimiter) => delimiter !== DELIMITERS.blanks);
+  const best = marks.reduce((first, next) => (known(next) > known(first) ? next : first));
+  // Names of columns may hold blanks: they part columns only where nothing else does.
+  const parted = (splitCells(line, best) ?? []).length > 2;
+  return parted || known(' ') <= known(best) ? best : ' ';
+}
+
+/** Without names of columns the delimiter that cuts the line into most cells; blanks only when no other cuts it. */
+function mostFrequentDelimiter(line: string): string {
+  const cuts = (delimiter: string): number => splitCells(line, delimiter)?.length ?? 0;
+  const marks = [',', ';', '\t', '|'].reduce((best, next) => (cuts(next) > cuts(best) ? next : best));
+  return cuts(marks) > 2 ? marks : ' ';
 }
 
 const spellsRole = (cell: string, { columns }: DelimitedOptions): boolean =>
-  roleOfHeader(cell) !== null || (columns !== undefined && Object.values(columns).includes(cell));
+  roleOfHeader(cell) !== null || Object.values(columns ?? {}).includes(cell);
 
 /** Whether cells are names of columns, not data: none is a number or a time, and more than half spell a role. */
 export function looksLikeHeader(cells: readonly string[], options: DelimitedOptions): boolean {
@@ -50,82 +75,10 @@ export function looksLikeHeader(cells: readonly string[], options: DelimitedOpti
 const isNoValue = (cell: string): boolean =>
   parseNumber(cell) === null && parseIsoTime(cell).kind === 'invalid';
 
-/** Finds the roles in a header; columns that the layout names go before columns that spell a role. */
-export function understandHeader(
-  line: string,
-  delimiter: string,
-  row: number,
-  file: string,
-  options: DelimitedOptions,
-): DelimitedHeader {
-  const cells = splitCells(line, delimiter) ?? [];
-  const positions = new Map<ColumnRole, number>();
-  const headers = new Map<ColumnRole, string>();
-  const messages: Message[] = [];
-  const error = (code: string, text: string, column: string): void => {
-    messages.push(message('error', code, text, { file, row, column }));
-  };
-  const found = (role: ColumnRole, index: number): void => {
-    const [cell, before] = [cells[index]!, headers.get(role)];
-    if (before !== undefined) {
-      const text = `Two columns, ${quoted(before)} and ${quoted(cell)}, have the role ${role}. Rename the one that is not meant.`;
-      error('repeated-column', text, cell);
-      return;
-    }
-    positions.set(role, index);
-    headers.set(role, cell);
-  };
-  const named = new Map(Object.entries(options.columns ?? {}) as [ColumnRole, string][]);
-  for (const [role, name] of named) {
-    cells.forEach((cell, index) => {
-      if (cell === name.trim()) found(role, index);
-    });
-  }
-  const taken = new Set(positions.values());
-  const ignored: string[] = [];
-  cells.forEach((cell, index) => {
-    if (taken.has(index) || cell === '') return;
-    const role = roleOfHeader(cell);
-    if (role === null || named.has(role)) ignored.push(cell);
-    else found(role, index);
-  });
-  const width = cells.length;
-  const namedWidth = cells.findLastIndex((cell) => cell !== '') + 1;
-  if (positions.size === 0) {
-    const headerless = describeHeaderless(line, options);
-    return { positions, headers, width, namedWidth, readable: false, messages: [headerless(file, row)] };
-  }
-  for (const [role, name] of named) {
-    if (positions.has(role)) continue;
-    error(
-      'missing-column',
-      `The layout names a column ${quoted(name)} for ${role}, the file has none.${suggestion(name, cells)} Correct the layout or the header.`,
-      name,
-    );
-  }
-  for (const role of options.required) {
-    if (positions.has(role) || named.has(role)) continue;
-    error(
-      'missing-column',
-      `Expected a column "${role}", came ${quotedList(cells)}.${suggestion(role, ignored)} Add the column or name it in the layout.`,
-      role,
-    );
-  }
-  if (ignored.length > 0) {
-    const missing = COLUMN_ROLES.filter((role) => !positions.has(role));
-    const near = ignored.map((name) => suggestion(name, missing)).find((text) => text !== '') ?? '';
-    const remedy = near === '' ? '' : `${near} Correct the header or name the column in the layout if so.`;
-    const text = `Columns that are no role are not read: ${quotedList(ignored)}.${remedy}`;
-    messages.push(message('info', 'ignored-column', text, { file, row, column: ignored[0]! }));
-  }
-  const readable = messages.every(({ severity }) => severity !== 'error');
-  return { positions, headers, width, namedWidth, readable, messages };
-}
-
 /** Why nothing in a first line is the name of a column. */
-function describeHeaderless(
+export function describeHeaderless(
   line: string,
-  { required, columns }: DelimitedOptions,
+  { required, requiredOneOf, columns }: DelimitedOptions,
 ): (file: string, row: number) => Message {
   const tell =
     (code: string, text: string) =>
@@ -147,7 +100,8 @@ function describeHeaderless(
       'Expected delimited text, came binary data. Export the positions as text (CSV) and name that file.',
     );
   }
-  const names = required.map((role) => columns?.[role] ?? role);
+  const groups = (requiredOneOf ?? []).map(({ roles }) => roles[0]!);
+  const names = [...groups, ...required].map((role) => String(columns?.[role] ?? role));
   return tell(
     'no-header',
     `Expected a header that names the columns ${quotedList(names)}, came ${quoted(line)}. Write the names of the columns into the first line.`,

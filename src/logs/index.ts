@@ -5,6 +5,7 @@ export {
   type TotalAccount,
   totalAccount,
 } from './account.js';
+export { ENCODINGS, type Encoding } from './byteChunks.js';
 export { DELIMITERS } from './cells.js';
 export {
   type CoordinateColumns,
@@ -12,9 +13,9 @@ export {
   type CoordinateSystem,
   coordinateColumns,
 } from './coordinateColumns.js';
-export { type DelimitedRow, readDelimitedTable } from './delimited.js';
 export { type EpochBag, EpochStore } from './epochStore.js';
 export type { DelimitedHeader, DelimitedOptions } from './header.js';
+export type { DelimitedLayout, LogLayout, LogUnits, NmeaLayout } from './layout.js';
 export {
   formatMessage,
   InputError,
@@ -28,7 +29,8 @@ export {
 export { nearestName, suggestion } from './nearestName.js';
 export { parseNumber } from './numbers.js';
 export type { Fix, Position } from './position.js';
-export { type LogBatch, type LogFile, type LogLayout, type ReadLogsOptions, readLogs } from './readLogs.js';
+export { readDelimitedTable, type TableRow } from './readDelimited.js';
+export { type LogBatch, type LogFile, type ReadLogsOptions, readLogs } from './readLogs.js';
 export {
   OCCUPATION_REASONS,
   type OccupationReason,

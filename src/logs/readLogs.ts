@@ -1,22 +1,14 @@
 import { type CoordinateSystem, coordinateColumns } from './coordinateColumns.js';
-import { readDelimited } from './delimited.js';
+import { valuesFromFileName } from './fileName.js';
 import { FileNotes } from './fileNotes.js';
-import type { DelimitedHeader } from './header.js';
-import type { Message } from './messages.js';
+import { type DelimitedLayout, decimalCharacter, type LogLayout } from './layout.js';
+import { inputError, type Message } from './messages.js';
+import { readNmea } from './nmea/readNmea.js';
 import type { Fix, Position } from './position.js';
-import { positionReader } from './readPosition.js';
+import { readDelimited } from './readDelimited.js';
 import type { SetAsideRow } from './reasons.js';
 import type { ColumnRole } from './roles.js';
-
-/** How the logs of one group are written. Everything has a default. */
-export interface LogLayout {
-  readonly kind: 'delimited';
-  readonly delimiter?: string | undefined;
-  readonly comment?: string | undefined;
-  readonly columns?: Readonly<Partial<Record<ColumnRole, string>>> | undefined;
-  /** Text of the fix column → its meaning; `fixed` and `float` in any case are understood without it. */
-  readonly fixValues?: Readonly<Record<string, Fix>> | undefined;
-}
+import { rowPosition } from './rowPosition.js';
 
 export interface LogFile {
   readonly path: string;
@@ -24,6 +16,10 @@ export interface LogFile {
   readonly file: string;
   readonly layout: LogLayout;
   readonly coordinates: CoordinateSystem;
+  /** A position that names no known mark belongs to the nearest one within this distance, m. */
+  readonly nearestMarkM?: number | null | undefined;
+  /** Marks may come from a list of times instead of the rows. */
+  readonly marksByTime?: boolean | undefined;
 }
 
 /** A stretch of one log. `rowsRead = positions + setAside`. */
@@ -34,6 +30,8 @@ export interface LogBatch {
   readonly setAside: readonly SetAsideRow[];
   /** Messages about the file as a whole, each sent once. */
   readonly messages: readonly Message[];
+  /** A position that names no known mark belongs to the nearest one within this distance, m. */
+  readonly nearestMarkM?: number | null | undefined;
 }
 
 export interface ReadLogsOptions {
@@ -44,47 +42,116 @@ export interface ReadLogsOptions {
 /**
  * Positions of the logs, as a stream in the order of files and rows. A file is opened when its turn comes, and
  * memory does not depend on the length of a log.
+ * @throws InputError for a layout that cannot be: an unknown time format or zone, a faulty pattern
  */
 export async function* readLogs(
   files: readonly LogFile[],
   options: ReadLogsOptions,
 ): AsyncGenerator<LogBatch> {
-  for (const file of files) yield* readLog(file, options);
+  for (const log of files) {
+    const values = layoutValues(log);
+    const batches =
+      log.layout.kind === 'nmea'
+        ? readNmeaLog(log, values)
+        : readDelimitedLog(log, log.layout, values, options);
+    for await (const batch of batches) yield { ...batch, nearestMarkM: log.nearestMarkM };
+  }
 }
 
-async function* readLog(log: LogFile, options: ReadLogsOptions): AsyncGenerator<LogBatch> {
-  const { file, path, layout } = log;
-  const coordinates = coordinateColumns(log.coordinates);
-  const fixValues = new Map<string, Fix>([
-    ['fixed', 'fixed'],
-    ['float', 'float'],
-    ...Object.entries(layout.fixValues ?? {}).map(([text, fix]): [string, Fix] => [
-      text.trim().toLowerCase(),
-      fix,
-    ]),
-  ]);
+type Values = Readonly<Partial<Record<ColumnRole, string>>>;
+
+/** Values that stand in no column: constants, and what the name of the file gives. */
+function layoutValues({ file, layout }: LogFile): Values {
+  const fromName = layout.fromFileName === undefined ? {} : valuesFromFileName(layout.fromFileName, file);
+  return { ...layout.constants, ...fromName };
+}
+
+async function* readNmeaLog(log: LogFile, values: Values): AsyncGenerator<LogBatch> {
+  const { mark = '', base = '', setup = '', rover = '', crew = '', date = null } = values;
+  for await (const batch of readNmea({ path: log.path, file: log.file, date })) {
+    const positions = batch.positions.map((position) => ({ ...position, mark, base, setup, rover, crew }));
+    yield { ...batch, positions };
+  }
+}
+
+async function* readDelimitedLog(
+  log: LogFile,
+  layout: DelimitedLayout,
+  values: Values,
+  options: ReadLogsOptions,
+): AsyncGenerator<LogBatch> {
+  const { file, path } = log;
+  const coordinates = coordinateColumns(layout.coordinates ?? log.coordinates);
   const notes = new FileNotes(file);
-  const required: ColumnRole[] = ['time', 'mark', ...coordinates.roles];
-  let header: DelimitedHeader | null = null;
-  let read: ReturnType<typeof positionReader> | null = null;
-  for await (const batch of readDelimited(path, file, { ...layout, required })) {
-    if (read === null || batch.header !== header) {
-      header = batch.header;
-      read = positionReader({ file, header, coordinates, timeZone: options.timeZone, fixValues });
-      notes.see(header);
-    }
-    const positions: Position[] = [];
-    const setAside: SetAsideRow[] = [];
-    for (const row of batch.rows) {
-      const outcome = read(row);
-      if (outcome.kind === 'set-aside') setAside.push(outcome.row);
+  const known = (roles: readonly ColumnRole[]): boolean => roles.some((role) => values[role] !== undefined);
+  const named = known(NAME_ROLES) || log.nearestMarkM != null || log.marksByTime === true;
+  const required = coordinates.roles.filter((role) => values[role] === undefined);
+  const requiredOneOf = [
+    ...(known(TIME_ROLES) ? [] : [{ what: 'the time', roles: TIME_ROLES }]),
+    ...(named ? [] : [{ what: 'the mark', roles: NAME_ROLES }]),
+  ];
+  let read: ReturnType<typeof rowPosition> | null = null;
+  let batch = new Collected();
+  const sink = {
+    header(header: Parameters<typeof notes.see>[0]) {
+      const { timeZone } = options;
+      read = positionsOr(file, () =>
+        rowPosition({ file, header, layout, coordinates, timeZone, fixValues: fixMeanings(layout), values }),
+      );
+      notes.see(header, values.fix !== undefined);
+    },
+    row(row: number, cells: Parameters<NonNullable<typeof read>>[1]) {
+      const outcome = read!(row, cells);
+      batch.rowsRead += 1;
+      if (outcome.kind === 'set-aside') batch.setAside.push(outcome.row);
       else {
-        positions.push(outcome.position);
+        batch.positions.push(outcome.position);
         notes.add(outcome);
       }
-    }
-    notes.rows += batch.rows.length;
-    yield { file, rowsRead: batch.rows.length, positions, setAside, messages: batch.messages };
+    },
+    fault(row: number, detail: string) {
+      batch.rowsRead += 1;
+      batch.setAside.push({ file, row, reason: 'unreadable', column: null, detail });
+    },
+    message(told: Message) {
+      batch.messages.push(told);
+    },
+  };
+  const delimited = { ...layout, decimal: decimalCharacter(layout.decimal), required, requiredOneOf };
+  for await (const _ of readDelimited(path, file, delimited, sink)) {
+    const { rowsRead, positions, setAside, messages } = batch;
+    batch = new Collected();
+    notes.rows += rowsRead;
+    yield { file, rowsRead, positions, setAside, messages };
   }
   yield { file, rowsRead: 0, positions: [], setAside: [], messages: notes.messages() };
+}
+
+const NAME_ROLES: readonly ColumnRole[] = ['mark', 'pointNumber', 'description'];
+const TIME_ROLES: readonly ColumnRole[] = ['time', 'date', 'start', 'gpsWeek'];
+
+class Collected {
+  rowsRead = 0;
+  readonly positions: Position[] = [];
+  readonly setAside: SetAsideRow[] = [];
+  readonly messages: Message[] = [];
+}
+
+/** A fault of the layout itself is the user's mistake. */
+function positionsOr<T>(file: string, make: () => T): T {
+  try {
+    return make();
+  } catch (error) {
+    const fault = (error as Error).message.replace(/\.$/, '');
+    throw inputError('bad-layout', `The layout of this log cannot be used: ${fault}. Correct it.`, { file });
+  }
+}
+
+function fixMeanings({ fixValues }: DelimitedLayout): ReadonlyMap<string, Fix> {
+  const given = Object.entries(fixValues ?? {});
+  return new Map<string, Fix>([
+    ['fixed', 'fixed'],
+    ['float', 'float'],
+    ...given.map(([text, fix]): [string, Fix] => [text.trim().toLowerCase(), fix]),
+  ]);
 }

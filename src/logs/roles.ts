@@ -1,6 +1,14 @@
 /** What a column can be. The same words serve logs, marks, bases and the study file. */
 export const COLUMN_ROLES = [
   'time',
+  'date',
+  'timeOfDay',
+  'gpsWeek',
+  'gpsSeconds',
+  'start',
+  'end',
+  'pointNumber',
+  'description',
   'mark',
   'base',
   'setup',
@@ -14,6 +22,8 @@ export const COLUMN_ROLES = [
   'x',
   'y',
   'z',
+  'antennaHeight',
+  'epochs',
   'fix',
   'satellites',
   'pdop',
@@ -28,14 +38,132 @@ export const COLUMN_ROLES = [
 ] as const;
 export type ColumnRole = (typeof COLUMN_ROLES)[number];
 
-const plain = (header: string): string => header.toLowerCase().replace(/\([^)]*\)|[\s_-]/g, '');
+const plain = (header: string): string => header.toLowerCase().replace(/\([^)]*\)|\[[^\]]*\]|[\s_.:#-]/g, '');
+
+/** Spellings usual in the trade beside the names of the roles themselves, without blanks and punctuation. */
+const SPELLINGS: Readonly<Partial<Record<ColumnRole, readonly string[]>>> = {
+  time: [
+    'datetime',
+    'timestamp',
+    'utc',
+    'utctime',
+    'epochtime',
+    'timeutc',
+    'datetimeutc',
+    'localtime',
+    'gpstime',
+  ],
+  date: ['day', 'surveydate', 'obsdate'],
+  timeOfDay: ['clock', 'clocktime', 'hhmmss', 'timeofday'],
+  gpsWeek: ['week', 'gpsweekno', 'weekno'],
+  gpsSeconds: ['sow', 'tow', 'secondsofweek', 'gpsseconds', 'gpssow', 'gpstow', 'weekseconds'],
+  start: ['starttime', 'from', 'begin'],
+  end: ['endtime', 'to'],
+  pointNumber: [
+    'point',
+    'pt',
+    'pointno',
+    'ptno',
+    'pointid',
+    'ptid',
+    'pointname',
+    'pno',
+    'number',
+    'no',
+    'id',
+    'name',
+  ],
+  description: ['desc', 'code', 'remark', 'remarks', 'comment', 'note', 'featurecode'],
+  mark: ['markname', 'checkpoint', 'controlpoint', 'station', 'monument'],
+  base: ['basename', 'basestation', 'baseid', 'referencestation', 'reference'],
+  rover: ['roverid', 'receiver', 'receiverid', 'serial', 'serialno', 'serialnumber'],
+  crew: ['party', 'observer', 'surveyor', 'operator'],
+  latitude: ['lat', 'phi', 'geolat', 'latdeg', 'latitudedeg', 'latitudewgs84'],
+  longitude: ['lon', 'long', 'lng', 'lambda', 'geolon', 'londeg', 'longitudedeg', 'longitudewgs84'],
+  height: [
+    'h',
+    'hgt',
+    'ht',
+    'hae',
+    'ellheight',
+    'ellht',
+    'ellipsoidheight',
+    'ellipsoidalheight',
+    'ellheightm',
+    'elev',
+    'elevation',
+    'el',
+    'altitude',
+    'alt',
+  ],
+  easting: ['e', 'east', 'eastings', 'eastingm'],
+  northing: ['n', 'north', 'northings', 'northingm'],
+  x: ['xgeocentric', 'ecefx', 'xecef'],
+  y: ['ygeocentric', 'ecefy', 'yecef'],
+  z: ['zgeocentric', 'ecefz', 'zecef'],
+  antennaHeight: ['rod', 'rodheight', 'poleheight', 'antheight', 'antht', 'hi', 'ih', 'targetheight'],
+  epochs: ['count', 'epochcount', 'observations', 'obs', 'samples', 'measurements', 'numepochs'],
+  fix: [
+    'fixtype',
+    'fixstatus',
+    'fixquality',
+    'solution',
+    'solutiontype',
+    'quality',
+    'status',
+    'q',
+    'fixmode',
+  ],
+  satellites: [
+    'sats',
+    'sat',
+    'sv',
+    'svs',
+    'nsat',
+    'nsats',
+    'numsats',
+    'numsat',
+    'satcount',
+    'satellitesused',
+  ],
+  ageSeconds: ['age', 'correctionage', 'ageofcorrections', 'diffage', 'ages'],
+  horizontalSigma: [
+    'hrms',
+    'hsigma',
+    'hprec',
+    'hzprec',
+    'hprecision',
+    'horizontalprecision',
+    'horizontalaccuracy',
+    'haccuracy',
+    'hacc',
+    'sigmah',
+  ],
+  verticalSigma: [
+    'vrms',
+    'vsigma',
+    'vprec',
+    'vprecision',
+    'verticalprecision',
+    'verticalaccuracy',
+    'vaccuracy',
+    'vacc',
+    'sigmav',
+  ],
+};
 
 const BY_PLAIN_NAME = new Map<string, ColumnRole>([
+  ...(Object.entries(SPELLINGS) as [ColumnRole, readonly string[]][]).flatMap(([role, spellings]) =>
+    spellings.map((spelling): [string, ColumnRole] => [spelling, role]),
+  ),
+  // The name of a role always means that role.
   ...COLUMN_ROLES.map((role): [string, ColumnRole] => [plain(role), role]),
-  ['age', 'ageSeconds'],
 ]);
 
-/** The role a header spells, in any case and with any of `_`, `-`, blank and a unit in brackets; else null. */
+/**
+ * The role that a header spells: its name or a usual spelling of the trade, in any case and with any of `_`, `-`, `.`,
+ * blank and a unit in brackets; else null.
+ */
 export function roleOfHeader(header: string): ColumnRole | null {
   return BY_PLAIN_NAME.get(plain(header)) ?? null;
 }

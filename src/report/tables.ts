@@ -12,7 +12,8 @@ export interface ReportTable {
 
 const digits = (value: number, places: number): Cell =>
   Number.isFinite(value) ? Number(value.toFixed(places)) : null;
-const iso = (ms: number): string => new Date(ms).toISOString();
+/** Blank for a shot that has a date and no time of day. */
+const iso = (ms: number): Cell => (Number.isNaN(ms) ? null : new Date(ms).toISOString());
 
 const ERROR_COLUMNS: readonly [head: string, cell: (error: OccupationError) => Cell][] = [
   ['day', (e) => e.day],

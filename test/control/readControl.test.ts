@@ -126,9 +126,9 @@ describe('readMarks', () => {
   });
 
   it('tells of columns that it does not read', async () => {
-    const { messages } = await readMarks(source([`${HEADER},remark`, 'A,47,8,500,by the gate']));
+    const { messages } = await readMarks(source([`${HEADER},owner`, 'A,47,8,500,by the gate']));
     expect(messages.map(formatMessage)).toEqual([
-      'points.csv:1 [remark] info: Columns that are no role are not read: "remark".',
+      'points.csv:1 [owner] info: Columns that are no role are not read: "owner".',
     ]);
   });
 });

@@ -52,7 +52,7 @@ const spoil =
 const FAULTS: Readonly<Record<string, Fault>> = {
   blankLatitude: spoil('latitude', '', 'no-position'),
   blankHeight: spoil('height', ' ', 'no-position'),
-  blankTime: spoil('time', '', 'unreadable'),
+  blankTime: spoil('time', '', 'outside-study'),
   wordInLongitude: spoil('longitude', 'west', 'unreadable'),
   nan: spoil('height', 'NaN', 'unreadable'),
   wordInPdop: spoil('pdop', 'good', 'used'),

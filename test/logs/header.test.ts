@@ -20,7 +20,11 @@ describe('roleOfHeader', () => {
     ['Horizontal-Sigma (m)', 'horizontalSigma'],
     ['Age', 'ageSeconds'],
     ['age seconds', 'ageSeconds'],
-    ['lat', null],
+    ['Lat.', 'latitude'],
+    ['Ell. height [m]', 'height'],
+    ['Pt No', 'pointNumber'],
+    ['# Sats', 'satellites'],
+    ['wheelbarrow', null],
     ['', null],
     ['constructor', null],
   ])('%j is %j', (header, role) => {
@@ -61,8 +65,8 @@ describe('the delimiter', () => {
       CELLS.join(';').replace('500.0', '500,0'),
     ]);
     expect(setAside.map(({ column, detail }) => `${column}: ${detail}`)).toEqual([
-      'latitude: expected a number, came "47,01" with a decimal comma; export with decimal points',
-      'height: expected a number, came "500,0" with a decimal comma; export with decimal points',
+      'latitude: expected a number, came "47,01" with a decimal comma; state decimal: comma in the layout',
+      'height: expected a number, came "500,0" with a decimal comma; state decimal: comma in the layout',
     ]);
   });
 });
@@ -234,26 +238,33 @@ describe('a file that is no log', () => {
       'Expected delimited text, came binary data. Export the positions as text (CSV) and name that file.',
     );
   });
+});
 
-  it.each(['utf16le', 'utf16be'])('in %s says how to save it', async (encoding) => {
-    const bytes = Buffer.from(`\ufeff${ROLES.join(',')}\r\n${CELLS.join(',')}\r\n`, 'utf16le');
-    if (encoding === 'utf16be') bytes.swap16();
-    const { messages, positions } = await readText(folder, bytes);
-    expect(positions).toEqual([]);
-    expect(messages[0]!.text).toBe(
-      'Expected text in UTF-8, came what looks like UTF-16. Open the file in an editor and save it as UTF-8.',
-    );
+describe('the encoding', () => {
+  const text = [ROLES.join(','), CELLS.join(','), CELLS.join(',').replace('CP1', 'Mühle')].join('\r\n');
+  const marks = async (bytes: Uint8Array, options?: ReadOptions) => {
+    const { positions, messages } = await readText(folder, bytes, options);
+    return [positions.map(({ mark }) => mark), messages.map(({ code }) => code)];
+  };
+  it('is seen: UTF-8, with and without a byte-order mark, and UTF-16 in both orders', async () => {
+    const utf16 = (mark: string) => Buffer.from(`${mark}${text}`, 'utf16le');
+    for (const bytes of [
+      Buffer.from(text),
+      Buffer.from(`\ufeff${text}`),
+      utf16('\ufeff'),
+      utf16('\ufeff').swap16(),
+    ]) {
+      expect(await marks(bytes)).toEqual([['CP1', 'Mühle'], []]);
+    }
   });
-
-  it('with letters of another encoding says once that they are lost', async () => {
-    const text = [ROLES.join(','), CELLS.join(','), CELLS.join(',').replace('CP1', 'Mühle')];
-    const { messages, positions } = await readText(
-      folder,
-      Buffer.from(text.concat(text).join('\n'), 'latin1'),
-    );
-    expect(positions).toHaveLength(4);
-    expect(messages.map(formatMessage)).toEqual([
-      'log.csv:3 warning: Expected text in UTF-8, came bytes that are not: letters are lost, and a name that holds one may match no mark or the wrong one. Save the file as UTF-8.',
+  it('of one byte a letter is guessed with a message, or stated', async () => {
+    const bytes = Buffer.from(text, 'latin1');
+    expect(await marks(bytes)).toEqual([['CP1', 'Mühle'], ['guessed-encoding']]);
+    expect(await marks(bytes, { layout: { encoding: 'latin1' } })).toEqual([['CP1', 'Mühle'], []]);
+    expect(await marks(bytes, { layout: { encoding: 'utf-8' } })).toEqual([
+      ['CP1', 'M\ufffdhle'],
+      ['not-utf8'],
     ]);
+    expect(await marks(Buffer.from(text, 'utf16le'))).toEqual([['CP1', 'Mühle'], ['guessed-encoding']]);
   });
 });

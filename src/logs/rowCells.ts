@@ -1,0 +1,32 @@
+import { parseNumber } from './numbers.js';
+
+/** The cells of one data row by index, from 0. An index below 0 or beyond the row is a blank cell. */
+export interface RowCells {
+  /** Text of a cell, trimmed. */
+  readonly text: (index: number) => string;
+  /** Number of a cell: NaN when blank, null when it is no plain number. */
+  readonly number: (index: number) => number | null;
+}
+
+/** How numbers are written: the decimal mark, a point or one other character. */
+export type DecimalMark = string;
+
+/** Cells that were cut out of a line of text. */
+export class TextCells implements RowCells {
+  constructor(
+    readonly cells: readonly string[],
+    readonly decimal: DecimalMark = '.',
+  ) {}
+
+  text(index: number): string {
+    return this.cells[index] ?? '';
+  }
+
+  number(index: number): number | null {
+    const cell = this.text(index);
+    if (this.decimal === '.') return parseNumber(cell);
+    // With another mark a point would be a thousands separator or a slip: neither is guessed.
+    if (cell.includes('.')) return null;
+    return parseNumber(cell.replace(this.decimal, '.'));
+  }
+}

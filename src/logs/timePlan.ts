@@ -1,0 +1,77 @@
+import { gpsWeekToUtcMs, type TimeLayout, type TimeOutcome, timeReader } from '../time/index.js';
+import type { ColumnRole } from './roles.js';
+import type { RowCells } from './rowCells.js';
+
+/** When a row was measured: a moment, a day without a time of day, nothing at all, or a text that is no time. */
+export type RowTime = TimeOutcome | { readonly kind: 'missing' };
+
+/** Reads the time of a row, and names the column to blame when there is none. */
+export interface TimePlan {
+  readonly column: ColumnRole;
+  readonly read: (cells: RowCells) => RowTime;
+}
+
+/** Text of a role in a row: its cell, or the constant where the cell is blank or there is no column. */
+export type TextOf = (role: ColumnRole, cells: RowCells) => string;
+
+/**
+ * Chooses how time is written by the columns that are there: week and seconds of GPS, date and time of day apart, one
+ * time, the start of an averaged shot, a date alone, or nothing.
+ * @throws Error for a format or zone that is not understood
+ */
+export function timePlan(
+  has: (role: ColumnRole) => boolean,
+  textOf: TextOf,
+  layout: TimeLayout,
+  defaultZone: string | null,
+): TimePlan {
+  if (has('gpsWeek') && has('gpsSeconds')) return gpsPlan(textOf);
+  const read = timeReader(layout, defaultZone);
+  const single = (role: ColumnRole): TimePlan => ({
+    column: role,
+    read: (cells) => readText(textOf(role, cells), read),
+  });
+  if (has('date') && has('timeOfDay')) {
+    const [dateFormat] = layout.format?.split(' ') ?? [];
+    const dateLayout = dateFormat === undefined ? {} : { format: dateFormat };
+    return jointPlan(textOf, read, timeReader(dateLayout, defaultZone));
+  }
+  for (const role of ['time', 'start', 'date'] as const) if (has(role)) return single(role);
+  return { column: 'time', read: () => ({ kind: 'missing' }) };
+}
+
+function readText(text: string, read: (text: string) => TimeOutcome): RowTime {
+  return text === '' ? { kind: 'missing' } : read(text);
+}
+
+/** Date and time of day joined by one blank; a row without a time of day keeps its date. */
+function jointPlan(
+  textOf: TextOf,
+  read: (text: string) => TimeOutcome,
+  readDate: (text: string) => TimeOutcome,
+): TimePlan {
+  return {
+    column: 'timeOfDay',
+    read: (cells) => {
+      const [date, timeOfDay] = [textOf('date', cells), textOf('timeOfDay', cells)];
+      if (date === '') return { kind: 'missing' };
+      return timeOfDay === '' ? readDate(date) : read(`${date} ${timeOfDay}`);
+    },
+  };
+}
+
+function gpsPlan(textOf: TextOf): TimePlan {
+  return {
+    column: 'gpsSeconds',
+    read: (cells) => {
+      const [week, seconds] = [textOf('gpsWeek', cells), textOf('gpsSeconds', cells)];
+      if (week === '' || seconds === '') return { kind: 'missing' };
+      const outcome = gpsWeekToUtcMs(Number(week), Number(seconds));
+      if (outcome.kind !== 'ambiguous') return outcome;
+      return {
+        kind: 'invalid',
+        detail: `expected a full GPS week of at least 1024, came ${week}, which may mean several eras; add the multiple of 1024 that was left out`,
+      };
+    },
+  };
+}
