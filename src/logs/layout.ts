@@ -37,7 +37,7 @@ export interface DelimitedLayout extends CommonLayout {
   readonly encoding?: Encoding | undefined;
   /** Role → header, or number of the column from 1. */
   readonly columns?: Readonly<Partial<Record<ColumnRole, string | number>>> | undefined;
-  readonly units?: LogLengthUnit | Partial<LogUnits> | undefined;
+  readonly units?: LogLengthUnit | { readonly [K in keyof LogUnits]?: LogUnits[K] | undefined } | undefined;
   /** Overrides that of the log entry. */
   readonly coordinates?: CoordinateSystem | undefined;
   /** Whether heights are those of the mark or of the antenna; default mark. */

@@ -32,6 +32,7 @@ export const COLUMN_ROLES = [
   'verticalSigma',
   'horizontalSigmaMm',
   'verticalSigmaMm',
+  'alias',
   'source',
   'sky',
   'mounting',

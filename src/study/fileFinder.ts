@@ -13,9 +13,17 @@ import {
 import type { Path, PlaceOf } from './places.js';
 import type { StudySettings } from './settings.js';
 
+/** A file and its name in messages. */
+export interface NamedFile {
+  readonly path: string;
+  readonly file: string;
+}
+
 /** Finds the files that a study names, and gathers what is wrong with them. */
 export class FileFinder {
   readonly mistakes: Message[] = [];
+  /** Path of a log → number of its entry in the study file. */
+  readonly #entryOf = new Map<string, number>();
 
   constructor(
     readonly settings: StudySettings,
@@ -43,9 +51,64 @@ export class FileFinder {
     return { path, file: relative(this.folder, path), coordinates: system, columns };
   }
 
+  /** The pattern of names; null without one. */
+  namePattern(): RegExp | null {
+    const { marks } = this.settings;
+    const pattern = typeof marks === 'string' ? undefined : marks.names?.pattern;
+    if (pattern === undefined) return null;
+    const path = ['marks', 'names', 'pattern'];
+    try {
+      const expression = new RegExp(pattern);
+      // A match against nothing but an added empty alternative tells how many groups there are.
+      if (new RegExp(`${pattern}|`).exec('')!.length > 1) return expression;
+      this.#mistake(
+        'bad-pattern',
+        `Expected a pattern with a group for the mark, such as "CHK (\\d+)", came ${quoted(pattern)}. Put the name of the mark in brackets.`,
+        path,
+      );
+    } catch (error) {
+      const fault = (error as Error).message.replace(/\.$/, '');
+      this.#mistake(
+        'bad-pattern',
+        `Expected a regular expression, came ${quoted(pattern)}: ${fault}. Correct it.`,
+        path,
+      );
+    }
+    return null;
+  }
+
+  aliases(): NamedFile | null {
+    const { marks } = this.settings;
+    const name = typeof marks === 'string' ? undefined : marks.names?.aliases;
+    return name === undefined ? null : this.#file(name, ['marks', 'names', 'aliases']);
+  }
+
+  /** Lists of stays, by log. */
+  markTimes(logs: readonly LogFile[]): Map<string, NamedFile> {
+    const lists = new Map<string, NamedFile>();
+    this.settings.logs.forEach(({ markTimes }, k) => {
+      const list = markTimes === undefined ? null : this.#file(markTimes, ['logs', k, 'markTimes']);
+      if (list === null) return;
+      for (const { file } of logs.filter((log) => this.#entryOf.get(log.path) === k)) lists.set(file, list);
+    });
+    return lists;
+  }
+
+  #file(name: string, path: Path): NamedFile | null {
+    const found = resolve(this.folder, name);
+    if (isFile(found)) return { path: found, file: relative(this.folder, found) };
+    this.#mistake(
+      'missing-file',
+      `Expected the file ${quoted(name)} in the folder of the study file, there is none. Create it or correct the name.`,
+      path,
+    );
+    return null;
+  }
+
+  /** The logs; those without a layout have theirs recognised from their first lines. */
   logs(): LogFile[] {
     const found = new Map<string, LogFile>();
-    this.settings.logs.forEach(({ files, layout, coordinates }, k) => {
+    this.settings.logs.forEach(({ files, layout, coordinates, nearestMarkM, markTimes }, k) => {
       const system = this.#system(coordinates, ['logs', k, 'coordinates']);
       for (const pattern of [files].flat()) {
         const paths = globSync(pattern, {
@@ -63,11 +126,14 @@ export class FileFinder {
         for (const path of paths) {
           // A file that two patterns match is one file: its rows must not count twice.
           if (found.has(path)) continue;
+          this.#entryOf.set(path, k);
           found.set(path, {
             path,
             file: relative(this.folder, path),
             layout: layout ?? { kind: 'delimited' },
             coordinates: system,
+            nearestMarkM: nearestMarkM ?? null,
+            marksByTime: markTimes !== undefined,
           });
         }
       }

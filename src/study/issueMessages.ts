@@ -60,6 +60,9 @@ function expectations(issue: Issue): string[] {
     case 'too_big':
       return [`a number ${issue.inclusive ? 'of at most' : 'below'} ${issue.maximum}`];
     case 'invalid_union':
+      // A union told apart by one key names the values of that key.
+      if ('options' in issue)
+        return (issue.options as unknown[]).map((value) => JSON.stringify(String(value)));
       return issue.errors.flat().flatMap(expectations);
     default:
       return [issue.message];

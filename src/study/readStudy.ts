@@ -26,6 +26,7 @@ export async function readStudy(path: string): Promise<Study> {
   const { settings, placeOf } = parseStudyText(await readFile(file, 'utf8'), path);
   const finder = new FileFinder(settings, dirname(file), placeOf);
   const [marks, bases, logs] = [finder.control('marks'), finder.control('bases'), finder.logs()];
+  const [namePattern, aliases, markTimes] = [finder.namePattern(), finder.aliases(), finder.markTimes(logs)];
   if (finder.mistakes.length > 0 || marks === null || bases === null) throw new InputError(finder.mistakes);
   return {
     file,
@@ -34,9 +35,13 @@ export async function readStudy(path: string): Promise<Study> {
     timeZone: settings.timeZone ?? null,
     marks,
     bases,
+    namePattern,
+    aliases,
+    markTimes,
     logs,
     period: settings.period ?? null,
     gapSeconds: settings.occupations.gapSeconds,
+    windowSeconds: settings.occupations.windowSeconds ?? null,
     confidence: settings.model.confidence,
     tolerances: settings.tolerances.map(tolerance),
     specSheet: settings.specSheet === undefined ? null : specSheet(settings.specSheet),

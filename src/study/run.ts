@@ -1,4 +1,4 @@
-import { type Control, readBases, readMarks } from '../control/index.js';
+import type { Control } from '../control/index.js';
 import {
   computeErrors,
   formOccupations,
@@ -13,6 +13,7 @@ import { markMeans } from '../split/index.js';
 import { fitComponents, fitResult } from './fitComponents.js';
 import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
+import { loadControl } from './loadControl.js';
 import type { Results } from './results.js';
 import type { Study } from './study.js';
 import { summarizeRun } from './summarizeRun.js';
@@ -44,9 +45,7 @@ export interface StudyRun extends StudyErrors {
  * @throws InputError when marks or bases cannot be read
  */
 export async function readStudyErrors(study: Study, options: RunOptions = {}): Promise<StudyErrors> {
-  const marks = await readMarks(study.marks);
-  const bases = await readBases(study.bases);
-  const control: Control = { marks: marks.marks, bases: bases.bases };
+  const { control, messages: controlMessages } = await loadControl(study);
   const formed = await formOccupations(readLogs(study.logs, study), control, { ...study, ...options });
   const computed = computeErrors(formed.occupations, control);
   const { errors, setAside, messages } = leaveOutDays(computed, study);
@@ -54,7 +53,7 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
     formed,
     errors,
     setAside,
-    messages: [...marks.messages, ...bases.messages, ...formed.messages, ...messages],
+    messages: [...controlMessages, ...formed.messages, ...messages],
   });
   return { control, errors, setAside, visits: formed.visits, results };
 }

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { COLUMN_ROLES } from '../logs/index.js';
+import { COLUMN_ROLES, ENCODINGS } from '../logs/index.js';
 import { isTimeZone, parseIsoTime } from '../time/index.js';
 
 /*
@@ -29,20 +29,93 @@ const controlFile = z.union([
   }),
 ]);
 
-const layout = z.strictObject({
+const marksFile = z.union([
+  z.string().min(1),
+  z.strictObject({
+    file: z.string().min(1),
+    coordinates: coordinates.optional(),
+    columns: columns.optional(),
+    names: z
+      .strictObject({
+        pattern: z
+          .string()
+          .min(1)
+          .optional()
+          .describe('Regular expression whose first group is the mark, for point numbers and descriptions.'),
+        aliases: z.string().min(1).optional().describe('File with the columns alias and mark.'),
+      })
+      .optional(),
+  }),
+]);
+
+const lengthUnit = z.enum(['metre', 'international-foot', 'us-survey-foot']);
+
+const valuesOutsideColumns = {
+  constants: z
+    .partialRecord(z.enum(COLUMN_ROLES), z.union([z.string(), z.number()]).transform(String))
+    .optional()
+    .describe('Role → value, where the file has no such column or the cell is blank.'),
+  fromFileName: z
+    .string()
+    .min(1)
+    .optional()
+    .describe('Regular expression whose named groups are roles, matched against the name of the file.'),
+};
+
+const delimitedLayout = z.strictObject({
   kind: z.literal('delimited'),
   delimiter: z
     .string()
     .min(1)
     .optional()
-    .describe('`comma`, `semicolon`, `tab`, `pipe` or the character; without it the header decides.'),
+    .describe('`comma`, `semicolon`, `tab`, `pipe`, `blanks` or the character; without it the file decides.'),
+  decimal: z.string().min(1).optional().describe('`point`, `comma` or the character; default point.'),
+  header: z.boolean().optional().describe('Whether the first line names the columns; default true.'),
+  skipLines: z.number().int().gte(0).optional().describe('Lines at the top to pass over; default 0.'),
   comment: z.string().min(1).optional().describe('Lines that begin with this are passed over; default `#`.'),
-  columns: columns.optional(),
+  encoding: z.enum(ENCODINGS).optional().describe('Without it the first bytes decide.'),
+  columns: z
+    .partialRecord(z.enum(COLUMN_ROLES), z.union([z.string().min(1), z.number().int().gte(1)]))
+    .optional()
+    .describe('Role → header, or number of the column from 1.'),
+  units: z
+    .union([
+      lengthUnit,
+      z.strictObject({
+        length: lengthUnit.optional(),
+        height: lengthUnit.optional(),
+        angle: z.enum(['degrees', 'dms']).optional(),
+      }),
+    ])
+    .optional()
+    .describe('Unit of all lengths, or of plane, heights and angles apart; default metre and degrees.'),
+  coordinates: coordinates.optional(),
+  heightOf: z.enum(['mark', 'antenna']).optional().describe('What the heights are those of; default mark.'),
+  time: z
+    .strictObject({
+      format: z
+        .string()
+        .min(1)
+        .optional()
+        .describe('Tokens `yyyy MM dd HH hh mm ss SSS a`, `day-of-year` or `excel`; default ISO 8601.'),
+      zone: z
+        .union([z.string().min(1), z.number()])
+        .transform(String)
+        .optional()
+        .describe('IANA zone, `UTC` or an offset like "+02:00"; default the timeZone of the study.'),
+      scale: z.enum(['utc', 'gps']).optional().describe('`gps` takes off the leap seconds.'),
+    })
+    .optional(),
   fixValues: z
     .record(z.string(), z.enum(['fixed', 'float', 'other']))
     .optional()
     .describe('Text or number in the fix column → its meaning.'),
+  ...valuesOutsideColumns,
 });
+
+const nmeaLayout = z.strictObject({ kind: z.literal('nmea'), ...valuesOutsideColumns });
+
+const layout = z.discriminatedUnion('kind', [delimitedLayout, nmeaLayout]);
 
 const log = z.strictObject({
   files: z
@@ -50,6 +123,16 @@ const log = z.strictObject({
     .describe('A pattern or a list of patterns, relative to the study file.'),
   layout: layout.optional(),
   coordinates: coordinates.optional(),
+  nearestMarkM: z
+    .number()
+    .positive()
+    .optional()
+    .describe('A position that names no known mark belongs to the nearest one within this distance, m.'),
+  markTimes: z
+    .string()
+    .min(1)
+    .optional()
+    .describe('File with the columns mark, start, end (and rover): where the rover stood when.'),
 });
 
 const tolerance = z
@@ -92,7 +175,7 @@ export const studySchema = z.strictObject({
     .strictObject({ kind: z.literal('ellipsoidal') })
     .default({ kind: 'ellipsoidal' })
     .describe('All heights are ellipsoidal.'),
-  marks: controlFile.describe('File of the marks: mark and coordinates.'),
+  marks: marksFile.describe('File of the marks: mark and coordinates.'),
   bases: controlFile.describe('File of the bases: base, coordinates and mounting.'),
   logs: z.array(log).min(1),
   period: z
@@ -111,9 +194,15 @@ export const studySchema = z.strictObject({
     })
     .default({ form: 'root-sum-square', reference: 'auto', confidence: 0.95 }),
   occupations: z
-    .strictObject({ gapSeconds: z.number().positive().default(60) })
-    .default({ gapSeconds: 60 })
-    .describe('A longer gap begins a new visit.'),
+    .strictObject({
+      gapSeconds: z.number().positive().default(60).describe('A longer gap begins a new visit.'),
+      windowSeconds: z
+        .number()
+        .positive()
+        .optional()
+        .describe('Cuts long static occupations into shots of this length; default no cutting.'),
+    })
+    .default({ gapSeconds: 60 }),
   tolerances: z.array(tolerance).default([]).describe('What clients demand; each becomes a rule.'),
   specSheet: specSheet.optional().describe('The spec sheet to compare with.'),
   leaveOutDays: z

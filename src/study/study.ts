@@ -11,9 +11,15 @@ export interface Study {
   readonly timeZone: string | null;
   readonly marks: ControlFile;
   readonly bases: ControlFile;
+  /** How logs name marks. */
+  readonly namePattern: RegExp | null;
+  readonly aliases: { readonly path: string; readonly file: string } | null;
+  /** Log → list of stays on marks. */
+  readonly markTimes: ReadonlyMap<string, { readonly path: string; readonly file: string }>;
   readonly logs: readonly LogFile[];
   readonly period: { readonly from: string; readonly to: string } | null;
   readonly gapSeconds: number;
+  readonly windowSeconds: number | null;
   /** Level of the two-sided intervals. */
   readonly confidence: number;
   readonly tolerances: readonly Tolerance[];

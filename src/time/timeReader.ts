@@ -11,11 +11,11 @@ import { zoneClock } from './zoneClock.js';
 /** How the times of a log are written. */
 export interface TimeLayout {
   /** As of compileTimeFormat; missing or `iso`: ISO 8601. */
-  readonly format?: string;
+  readonly format?: string | undefined;
   /** Zone of times written without an offset: IANA name, `UTC`, or an offset such as `+02:00` or `-3`. */
-  readonly zone?: string;
+  readonly zone?: string | undefined;
   /** `gps`: the clock runs on GPS time, ahead of UTC by the leap seconds since 1980. Default `utc`. */
-  readonly scale?: 'utc' | 'gps';
+  readonly scale?: 'utc' | 'gps' | undefined;
 }
 
 export type TimeOutcome =

@@ -93,8 +93,8 @@ describe('a key', () => {
     expect(log('  - files: a.csv\n    layout: {kind: delimited, columns: {mrk: Point}}')).toEqual([
       ':5 [logs[0].layout.columns.mrk] The key "mrk" is not known. Did you mean "mark"? Correct or remove it.',
     ]);
-    expect(log('  - files: a.csv\n    layout: {kind: nmea}')).toEqual([
-      ':5 [logs[0].layout.kind] Expected "delimited", came "nmea". Correct it.',
+    expect(log('  - files: a.csv\n    layout: {kind: spreadsheet}')).toEqual([
+      ':5 [logs[0].layout.kind] Expected "delimited" or "nmea", came "spreadsheet". Correct it.',
     ]);
     expect(log('  - files: a.csv\n    layout:\n      kind: delimited\n      fixValues: {4: fix}')).toEqual([
       ':7 [logs[0].layout.fixValues.4] Expected "fixed" or "float" or "other", came "fix". Correct it.',
