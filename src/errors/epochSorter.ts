@@ -1,5 +1,5 @@
-import { type Base, type Control, type Mark, type Match, markFrame, matchBase } from '../control/index.js';
-import { geodeticToGeocentric, type LocalFrame } from '../geodesy/index.js';
+import type { Control } from '../control/index.js';
+import { geodeticToGeocentric } from '../geodesy/index.js';
 import {
   EpochStore,
   type LogBatch,
@@ -7,37 +7,17 @@ import {
   type Position,
   RowAccount,
   RowMessages,
-  type RowReason,
   type SetAsideRow,
 } from '../logs/index.js';
 import { type DayOf, dayFunction } from './days.js';
 import { RECORD, RECORD_WIDTH, writeRecord } from './epochRecord.js';
 import type { FormedOccupations, FormOccupationsOptions } from './formOccupations.js';
 import { judgeDatedRows, judgeEpochs, type NameRanks, timeOrder } from './judgeEpochs.js';
-import { MarkFinder } from './markFinder.js';
 import { markMoving } from './movingEpochs.js';
-import { Names, remembered } from './names.js';
+import { Names } from './names.js';
 import type { Occupation, Visit } from './occupation.js';
-import { VisitBuilder, type VisitKey } from './visitBuilder.js';
-
-/** What the epochs of one rover, mark and setup share while they wait. */
-interface KeyContext {
-  readonly key: VisitKey;
-  readonly frame: LocalFrame;
-  /** False for rows with a date and no time of day. */
-  readonly timed: boolean;
-}
-
-interface Place {
-  readonly mark: Mark;
-  readonly base: Base;
-  readonly day: string;
-}
-
-interface Rejection {
-  readonly reason: RowReason;
-  readonly detail: string;
-}
+import { Placer } from './placer.js';
+import { VisitBuilder } from './visitBuilder.js';
 
 /** Sorts positions by rover, mark and setup until all are there, then cuts them into visits and occupations. */
 export class EpochSorter {
@@ -45,14 +25,12 @@ export class EpochSorter {
   readonly #account = new RowAccount();
   readonly #rowMessages = new RowMessages();
   readonly #messages: Message[] = [];
-  readonly #contexts = new Map<string, KeyContext>();
   readonly #fileNames = new Names();
   readonly #crewNames = new Names();
   readonly #record = new Float64Array(RECORD_WIDTH);
   readonly #dayOf: DayOf;
-  readonly #marks: MarkFinder;
+  readonly #placer: Placer;
   #nearestMarkM: number | null = null;
-  readonly #baseOf: (name: string) => Match<Base>;
 
   constructor(
     readonly control: Control,
@@ -61,8 +39,7 @@ export class EpochSorter {
   ) {
     this.#store = new EpochStore(RECORD_WIDTH, (options.epochsInMemory ?? 300_000) * RECORD_WIDTH);
     this.#dayOf = dayFunction(control, options.timeZone ?? null);
-    this.#marks = new MarkFinder(control);
-    this.#baseOf = remembered((name) => matchBase(control, name));
+    this.#placer = new Placer(control, this.#dayOf, options.period ?? null);
   }
 
   take(batch: LogBatch): void {
@@ -79,7 +56,7 @@ export class EpochSorter {
     const occupations: Occupation[] = [];
     const ranks: NameRanks = { file: this.#fileNames.ranks(), crew: this.#crewNames.ranks() };
     for (const { key, days } of this.#store.bags()) {
-      const context = this.#contexts.get(key)!;
+      const context = this.#placer.context(key);
       const builder = new VisitBuilder({
         ...context,
         gapMs: this.gapMs,
@@ -109,16 +86,12 @@ export class EpochSorter {
 
   #sort(position: Position): void {
     const { file, row } = position;
-    const place = this.#place(position);
+    const place = this.#placer.place(position, this.#nearestMarkM);
     if ('reason' in place) {
       this.#setAside({ file, row, reason: place.reason, column: null, detail: place.detail });
       return;
     }
-    const { mark, base, day } = place;
-    const setup = position.setup || setupName(base, day);
-    const timed = position.dateOnly === '';
-    const key = [position.rover, mark.name, base.name, setup, timed ? 'timed' : 'dated'].join(SEPARATOR);
-    const { frame } = this.#context(key, { rover: position.rover, mark, base, setup, timed });
+    const { key, frame } = place;
     const local = Number.isNaN(position.latitudeDeg) ? null : frame.toLocal(geodeticToGeocentric(position));
     if (local !== null && Math.hypot(local.eastM, local.northM, local.upM) > FARTHEST_M) {
       const detail = `a position is more than ${FARTHEST_M / 1000} km from its mark; look for swapped columns, another coordinate system, a wrong mark`;
@@ -133,41 +106,6 @@ export class EpochSorter {
       this.#crewNames.index(position.crew),
     );
     this.#store.add(key, Math.floor(this.#record[RECORD.utcMs]! / 86_400_000), this.#record);
-  }
-
-  /** The mark, base and day of a position, or why it belongs to none. */
-  #place(position: Position): Place | Rejection {
-    const base = this.#baseOf(position.base);
-    if (base.kind === 'unknown') return { reason: 'unknown-base', detail: base.detail };
-    const mark = this.#marks.find(position, this.#nearestMarkM);
-    if (mark.kind === 'unknown') return { reason: 'unknown-mark', detail: mark.detail };
-    const day = position.dateOnly || this.#dayOf(position.utcMs, base.point.name);
-    const { period } = this.options;
-    const outside = period && (day < period.from || day > period.to);
-    if (outside) return { reason: 'outside-study', detail: `day ${day}` };
-    return { mark: mark.point, base: base.point, day };
-  }
-
-  #context(
-    key: string,
-    {
-      rover,
-      mark,
-      base,
-      setup,
-      timed,
-    }: { rover: string; mark: Mark; base: Base; setup: string; timed: boolean },
-  ): KeyContext {
-    let context = this.#contexts.get(key);
-    if (context === undefined) {
-      context = {
-        key: { rover, mark: mark.name, base: base.name, setup },
-        frame: markFrame(mark, base),
-        timed,
-      };
-      this.#contexts.set(key, context);
-    }
-    return context;
   }
 
   #reduceDay(records: Float64Array, timed: boolean, builder: VisitBuilder, ranks: NameRanks): void {
@@ -195,15 +133,8 @@ export class EpochSorter {
   }
 }
 
-/** Between the parts of a key: stands in no name. */
-const SEPARATOR = '\u0000';
-
 /** No rover works so far from its base: the coordinates are not what they are said to be, and no mean is formed of them. */
 const FARTHEST_M = 1_000_000;
-
-/** A tripod is put up anew each day; a pillar is not. */
-const setupName = (base: Base, day: string): string =>
-  base.mounting === 'pillar' ? base.name : `${base.name} ${day}`;
 
 function byStart(a: Visit | Occupation, b: Visit | Occupation): number {
   const compare = (x: string, y: string): number => (x < y ? -1 : x > y ? 1 : 0);

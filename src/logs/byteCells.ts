@@ -77,6 +77,11 @@ export class ByteCells implements RowCells {
     return this.#remembered(start, end);
   }
 
+  uniqueText(index: number): string {
+    if (index < 0 || index >= this.#count) return '';
+    return this.#bytes.toString('utf8', this.#starts[index]!, this.#ends[index]!).trim();
+  }
+
   number(index: number): number | null {
     if (index < 0 || index >= this.#count) return Number.NaN;
     const bytes = this.#bytes;

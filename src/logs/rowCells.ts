@@ -4,6 +4,8 @@ import { parseNumber } from './numbers.js';
 export interface RowCells {
   /** Text of a cell, trimmed. */
   readonly text: (index: number) => string;
+  /** The same for a cell whose text hardly ever comes twice, such as a time: it is not remembered. */
+  readonly uniqueText: (index: number) => string;
   /** Number of a cell: NaN when blank, null when it is no plain number. */
   readonly number: (index: number) => number | null;
 }
@@ -20,6 +22,10 @@ export class TextCells implements RowCells {
 
   text(index: number): string {
     return this.cells[index] ?? '';
+  }
+
+  uniqueText(index: number): string {
+    return this.text(index);
   }
 
   number(index: number): number | null {
