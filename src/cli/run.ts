@@ -27,7 +27,7 @@ export function runCommand(done: (code: number) => void): Command {
       const study = await readStudy(studyFile);
       const folder = flags.out === undefined ? join(study.folder, 'results') : resolve(flags.out);
       await prepareFolder(folder, flags.force ?? false);
-      const rows = setAsideFile(join(folder, 'tables', 'set-aside-rows.csv'));
+      const rows = setAsideFile(join(folder, 'tables', 'set-aside.csv'));
       const progress = rowCounter();
       const run = await runStudy(study, { onSetAside: rows.add, onProgress: progress.tell }).finally(
         async () => {

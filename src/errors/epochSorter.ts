@@ -3,6 +3,7 @@ import { geodeticToGeocentric } from '../geodesy/index.js';
 import {
   EpochStore,
   type LogBatch,
+  type LogResolution,
   type Message,
   type Position,
   RowAccount,
@@ -27,6 +28,7 @@ export class EpochSorter {
   readonly #messages: Message[] = [];
   readonly #fileNames = new Names();
   readonly #crewNames = new Names();
+  readonly #resolutions = new Map<string, LogResolution>();
   readonly #record = new Float64Array(RECORD_WIDTH);
   readonly #dayOf: DayOf;
   readonly #placer: Placer;
@@ -47,6 +49,7 @@ export class EpochSorter {
     this.#account.read(batch.file, batch.rowsRead);
     this.#messages.push(...batch.messages);
     this.#nearestMarkM = batch.nearestMarkM ?? null;
+    if (batch.resolution) this.#resolutions.set(batch.file, batch.resolution);
     for (const row of batch.setAside) this.#setAside(row);
     for (const position of batch.positions) this.#sort(position);
   }
@@ -76,6 +79,7 @@ export class EpochSorter {
       occupations: occupations.sort(byStart),
       visits: visits.sort(byStart),
       files: this.#account.accounts(),
+      resolutions: this.#resolutions,
       messages,
     };
   }

@@ -1,5 +1,5 @@
 import type { Control } from '../control/index.js';
-import type { FileAccount, LogBatch, Message, SetAsideRow } from '../logs/index.js';
+import type { FileAccount, LogBatch, LogResolution, Message, SetAsideRow } from '../logs/index.js';
 import { EpochSorter } from './epochSorter.js';
 import type { Occupation, Visit } from './occupation.js';
 
@@ -26,6 +26,8 @@ export interface FormedOccupations {
   readonly visits: readonly Visit[];
   /** The account of each file: `read = used + Σ setAside`. */
   readonly files: readonly FileAccount[];
+  /** File → the steps in which its positions are written. */
+  readonly resolutions: ReadonlyMap<string, LogResolution>;
   readonly messages: readonly Message[];
 }
 

@@ -8,3 +8,4 @@ export { type ErrorColumns, type ErrorsInput, errorColumns } from './errorColumn
 export { errorTable } from './errorTable.js';
 export { type FormedOccupations, type FormOccupationsOptions, formOccupations } from './formOccupations.js';
 export type { Occupation, Visit } from './occupation.js';
+export { type StaticShots, staticMessage, staticShots } from './staticShots.js';

@@ -39,5 +39,6 @@ export {
   type RowReason,
   type SetAsideRow,
 } from './reasons.js';
+export { type LogResolution, roundingSigmaMm } from './resolution.js';
 export { COLUMN_ROLES, type ColumnRole, roleOfHeader } from './roles.js';
 export { DID_YOU_MEAN, RowMessages } from './rowMessages.js';

@@ -7,6 +7,7 @@ import { readNmea } from './nmea/readNmea.js';
 import type { Fix, Position } from './position.js';
 import { readDelimited } from './readDelimited.js';
 import type { SetAsideRow } from './reasons.js';
+import { type LogResolution, ResolutionMeter } from './resolution.js';
 import type { ColumnRole } from './roles.js';
 import { rowPosition } from './rowPosition.js';
 
@@ -32,6 +33,8 @@ export interface LogBatch {
   readonly messages: readonly Message[];
   /** A position that names no known mark belongs to the nearest one within this distance, m. */
   readonly nearestMarkM?: number | null | undefined;
+  /** In what steps the positions are written; comes with the last batch of a file. */
+  readonly resolution?: LogResolution | null | undefined;
 }
 
 export interface ReadLogsOptions {
@@ -91,6 +94,7 @@ async function* readDelimitedLog(
     ...(named ? [] : [{ what: 'the mark', roles: NAME_ROLES }]),
   ];
   let read: ReturnType<typeof rowPosition> | null = null;
+  let meter: ResolutionMeter | null = null;
   let batch = new Collected();
   const sink = {
     header(header: Parameters<typeof notes.see>[0]) {
@@ -99,6 +103,7 @@ async function* readDelimitedLog(
         rowPosition({ file, header, layout, coordinates, timeZone, fixValues: fixMeanings(layout), values }),
       );
       notes.see(header, values.fix !== undefined);
+      meter = new ResolutionMeter(header, coordinates.roles, layout);
     },
     row(row: number, cells: Parameters<NonNullable<typeof read>>[1]) {
       const outcome = read!(row, cells);
@@ -107,6 +112,7 @@ async function* readDelimitedLog(
       else {
         batch.positions.push(outcome.position);
         notes.add(outcome);
+        meter!.add(row, cells);
       }
     },
     fault(row: number, detail: string) {
@@ -124,7 +130,11 @@ async function* readDelimitedLog(
     notes.rows += rowsRead;
     yield { file, rowsRead, positions, setAside, messages };
   }
-  yield { file, rowsRead: 0, positions: [], setAside: [], messages: notes.messages() };
+  // Assigned in a callback, which the compiler does not follow.
+  const measured = meter as ResolutionMeter | null;
+  const messages = [...notes.messages(), ...(measured?.messages(file) ?? [])];
+  const resolution = measured?.resolution() ?? null;
+  yield { file, rowsRead: 0, positions: [], setAside: [], messages, resolution };
 }
 
 const NAME_ROLES: readonly ColumnRole[] = ['mark', 'pointNumber', 'description'];

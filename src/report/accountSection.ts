@@ -1,8 +1,9 @@
 import { type Message, REASON_WORDS } from '../logs/index.js';
-import type { Results } from '../study/index.js';
-import { count, plural } from './format.js';
+import type { FileResult, Results } from '../study/index.js';
+import { count, mm, NOT_GIVEN, plural } from './format.js';
 import { type Html, html } from './html.js';
 import { table } from './table.js';
+import { setAsideWords } from './words.js';
 
 type Reason = keyof typeof REASON_WORDS;
 
@@ -38,16 +39,26 @@ ${table('Account of each file', files, [
   { head: 'File', cell: ({ file }) => file, text: true },
   { head: 'Read', cell: ({ read }) => count(read) },
   { head: 'Used', cell: ({ used }) => count(used) },
-  {
-    head: 'Set aside',
-    cell: ({ setAside }) =>
-      Object.entries(setAside)
-        .map(([reason, { count: n }]) => `${reason} ${count(n)}`)
-        .join(', ') || 'none',
-    text: true,
-  },
+  { head: 'Set aside', cell: ({ setAside }) => setAsideWords(setAside) || 'none', text: true },
+  { head: 'Steps, mm', cell: ({ resolution }) => steps(resolution) },
 ])}
-</section>
+${roundingWords(results)}</section>
+`;
+}
+
+/** Steps of plan and height in which a log is written. */
+const steps = (resolution: FileResult['resolution']): string =>
+  resolution === null
+    ? NOT_GIVEN
+    : `${step(resolution.horizontalStepMm)} / ${step(resolution.verticalStepMm)}`;
+
+const step = (mm: number): string =>
+  mm < 0.1 ? 'below 0.1' : Number(mm.toPrecision(2)).toLocaleString('en-US');
+
+function roundingWords({ roundingMm }: Results): Html | null {
+  if (roundingMm === null) return null;
+  return html`<p class="small">Steps are those of plan and height in which positions are written. Their rounding adds
+${mm(roundingMm.horizontal)} mm to the horizontal and ${mm(roundingMm.vertical)} mm to the vertical constant, as squares.</p>
 `;
 }
 

@@ -1,7 +1,7 @@
 import { formatMessage, type Message } from '../logs/index.js';
-import type { Results } from '../study/index.js';
+import type { FileResult, Results } from '../study/index.js';
 import { count, plural } from './format.js';
-import { fitSentence, ruleSentence } from './words.js';
+import { fitSentence, ruleSentence, setAsideWords } from './words.js';
 
 /** What a run found, in a few lines for a terminal. */
 export function summaryText(results: Results): string {
@@ -19,18 +19,30 @@ export function summaryText(results: Results): string {
   ].join('\n');
 }
 
-/** The account of rows, visits and occupations. */
-export function accountLines({ rows, visits, occupations, days, period }: Results): string[] {
+/** Files beyond this many stand in the report only. */
+const MOST_FILES = 12;
+
+/** The account of rows, visits and occupations, and of each file. */
+export function accountLines({ rows, files, visits, occupations, days, period }: Results): string[] {
   const list = (counts: object): string =>
     Object.entries(counts)
       .map(([reason, n]) => `${reason} ${count(n as number)}`)
       .join(', ');
   const when = period === null ? '' : `, ${period.from} to ${period.to}`;
+  const told = files.slice(0, MOST_FILES).map(fileLine);
+  if (files.length > MOST_FILES)
+    told.push(`  and ${plural(files.length - MOST_FILES, 'more file')} in the report`);
   return [
     `Rows: ${count(rows.read)} read = ${count(rows.used)} used + ${count(rows.read - rows.used)} set aside${list(rows.setAside) && ` (${list(rows.setAside)})`}.`,
+    ...told,
     `Visits: ${count(visits.withFix)} with a fix, ${count(visits.withoutFix)} without.`,
     `Occupations: ${count(occupations.formed)} formed, ${count(occupations.used)} used${list(occupations.setAside) && ` (set aside: ${list(occupations.setAside)})`}, on ${plural(days, 'day')}${when}.`,
   ];
+}
+
+function fileLine({ file, read, used, setAside }: FileResult): string {
+  const reasons = setAsideWords(setAside);
+  return `  ${file}: ${count(read)} read, ${count(used)} used${reasons === '' ? '' : `; ${reasons}`}`;
 }
 
 /** Errors and warnings one by one, remarks by their number. */

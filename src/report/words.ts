@@ -1,6 +1,6 @@
 import type { Rule } from '../rule/index.js';
-import type { FitResult } from '../study/index.js';
-import { kmDown, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
+import type { FileResult, FitResult } from '../study/index.js';
+import { count, kmDown, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
 
 /** Printed with every result. */
 export const CAUTIONS: readonly string[] = [
@@ -66,3 +66,13 @@ export function fitSentence(fit: FitResult): string {
 }
 
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
+
+/** What was set aside of a file: each reason, how many rows, and the first lines. */
+export function setAsideWords(setAside: FileResult['setAside']): string {
+  return Object.entries(setAside)
+    .map(([reason, { count: rows, firstRows }]) => {
+      const lines = `${firstRows.length === 1 ? 'line' : 'lines'} ${firstRows.join(', ')}${rows > firstRows.length ? ', …' : ''}`;
+      return `${reason} ${count(rows)} (${lines})`;
+    })
+    .join(', ');
+}

@@ -1,5 +1,6 @@
+import type { StaticShots } from '../errors/index.js';
 import type { Component, EstimateWithLimits, Form } from '../fit/index.js';
-import type { Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
+import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
 import type { Rule, SpecSheet } from '../rule/index.js';
 import type { Interval, MarkMean } from '../split/index.js';
 
@@ -51,6 +52,8 @@ export interface FileResult {
   readonly file: string;
   /** SHA-256 of its bytes. */
   readonly sha256: string;
+  /** Steps in which its positions are written, mm; null when nothing could be read. */
+  readonly resolution: LogResolution | null;
   readonly read: number;
   readonly used: number;
   readonly setAside: Readonly<Partial<Record<RowReason, ReasonCount>>>;
@@ -67,6 +70,10 @@ export interface Results {
     readonly setAside: Readonly<Partial<Record<RowReason, number>>>;
   };
   readonly files: readonly FileResult[];
+  /** What rounding of the coarsest log adds to the constant, mm: radial, and vertical; null without positions. */
+  readonly roundingMm: { readonly horizontal: number; readonly vertical: number } | null;
+  /** Static occupations cut into shots, and about how many of these are independent; null without windowSeconds. */
+  readonly staticShots: StaticShots | null;
   readonly visits: { readonly withFix: number; readonly withoutFix: number };
   readonly occupations: {
     readonly formed: number;

@@ -101,11 +101,16 @@ export const resultsSchema = z.strictObject({
     z.strictObject({
       file: z.string(),
       sha256: z.string(),
+      resolution: z.strictObject({ horizontalStepMm: z.number(), verticalStepMm: z.number() }).nullable(),
       read: count,
       used: count,
       setAside: z.partialRecord(z.enum(ROW_REASONS), z.strictObject({ count, firstRows: z.array(count) })),
     }),
   ),
+  roundingMm: z.strictObject({ horizontal: z.number(), vertical: z.number() }).nullable(),
+  staticShots: z
+    .strictObject({ occupations: count, shots: count, windowSeconds: z.number(), independent: nullable })
+    .nullable(),
   visits: z.strictObject({ withFix: count, withoutFix: count }),
   occupations: z.strictObject({
     formed: count,

@@ -1,8 +1,20 @@
 import { createHash } from 'node:crypto';
 import { createReadStream } from 'node:fs';
 import type { Control } from '../control/index.js';
-import type { FormedOccupations, OccupationError, SetAsideOccupation } from '../errors/index.js';
-import { type Message, type OccupationReason, totalAccount } from '../logs/index.js';
+import {
+  type FormedOccupations,
+  type OccupationError,
+  type SetAsideOccupation,
+  staticMessage,
+  staticShots,
+} from '../errors/index.js';
+import {
+  type LogResolution,
+  type Message,
+  type OccupationReason,
+  roundingSigmaMm,
+  totalAccount,
+} from '../logs/index.js';
 import type { FileResult, Results } from './results.js';
 import type { Study } from './study.js';
 
@@ -25,14 +37,21 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
   // One after the other: a study may have more logs than a process may have open files.
   for (const account of formed.files) {
     const { path } = study.logs.find(({ file }) => file === account.file)!;
-    files.push({ ...account, sha256: await sha256(path) });
+    files.push({
+      ...account,
+      sha256: await sha256(path),
+      resolution: formed.resolutions.get(account.file) ?? null,
+    });
   }
+  const shots = study.windowSeconds === null ? null : staticShots(errors, study.windowSeconds);
   return {
     version: 1,
     study: { title: study.title, timeZone: study.timeZone, seed: study.seed },
-    messages,
+    messages: [...messages, ...(shots === null ? [] : staticMessage(shots))],
     rows: totalAccount(formed.files),
     files,
+    roundingMm: rounding([...formed.resolutions.values()]),
+    staticShots: shots,
     visits: { withFix: formed.visits.length - withoutFix, withoutFix },
     occupations: { formed: formed.occupations.length, used: errors.length, setAside: counts },
     days: days.length,
@@ -43,6 +62,17 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     marks: [],
     rules: [],
     specSheet: study.specSheet,
+  };
+}
+
+/** What the rounding of the coarsest log adds to the constant: both axes of the plan count. */
+function rounding(resolutions: readonly LogResolution[]): Results['roundingMm'] {
+  if (resolutions.length === 0) return null;
+  const coarsest = (step: keyof LogResolution): number =>
+    Math.max(...resolutions.map((found) => found[step]));
+  return {
+    horizontal: Math.SQRT2 * roundingSigmaMm(coarsest('horizontalStepMm')),
+    vertical: roundingSigmaMm(coarsest('verticalStepMm')),
   };
 }
 

@@ -87,7 +87,7 @@ describe('demo and run', () => {
   });
   it('lists every set-aside row with its place', () => {
     const results = JSON.parse(readFileSync(join(out, 'results.json'), 'utf8'));
-    const rows = readFileSync(join(out, 'tables/set-aside-rows.csv'), 'utf8').trim().split('\n').slice(1);
+    const rows = readFileSync(join(out, 'tables/set-aside.csv'), 'utf8').trim().split('\n').slice(1);
     expect(rows).toHaveLength(results.rows.read - results.rows.used);
     for (const row of rows)
       expect(row).toMatch(/^logs\/2025-0[345]\.csv,\d+,(duplicate|not-fixed|unknown-mark),/);

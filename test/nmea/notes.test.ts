@@ -28,18 +28,19 @@ describe('what is told of an NMEA log', () => {
   });
 
   // 1e-5 minutes are 18.6 mm: a minute of arc is 1855.3 m on the equator (semi-axis 6378137 m times π / 10800).
+  // Sigma of rounding: step / √12.
   it.each([
-    [4, 'warning', 'steps of 186 mm'],
-    [5, 'warning', 'steps of 18.6 mm'],
-    [6, 'info', 'steps of 1.86 mm'],
-  ])('%i decimals of a minute: %s', async (decimals, severity, steps) => {
+    [4, 'warning', 'steps of 186 mm', '54'],
+    [5, 'warning', 'steps of 18.6 mm', '5.4'],
+    [6, 'info', 'steps of 1.86 mm', '0.54'],
+  ])('%i decimals of a minute: %s', async (decimals, severity, steps, sigma) => {
     expect(await told(withDecimals(decimals))).toEqual([
       [
         severity,
         'resolution',
         1,
         'latitude',
-        `Expected at least 7 decimals of a minute, came coordinates that have ${decimals} decimals of a minute: ${steps}, in 10 of 10 rows. Record more decimals, for rounding is part of every error found here.`,
+        `Expected at least 7 decimals of a minute, came coordinates that have ${decimals} decimals of a minute: ${steps}, in 10 of 10 rows; a constant below ${sigma} mm an axis cannot show. Record more decimals, for rounding is part of every error found here.`,
       ],
     ]);
   });
@@ -52,7 +53,7 @@ describe('what is told of an NMEA log', () => {
         'resolution',
         1,
         'height',
-        'Expected at least 3 decimals of a metre, came heights that have 2 decimals of a metre: steps of 10 mm, in 10 of 10 rows. Record more decimals, for rounding is part of every error found here.',
+        'Expected at least 3 decimals of a metre, came heights that have 2 decimals of a metre: steps of 10 mm, in 10 of 10 rows; a constant below 2.9 mm an axis cannot show. Record more decimals, for rounding is part of every error found here.',
       ],
     ]);
   });

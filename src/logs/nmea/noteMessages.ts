@@ -1,6 +1,7 @@
+import type { Resolution } from '../decimalCounter.js';
 import { LONGEST_LINE } from '../lines.js';
 import { type Message, message, quoted } from '../messages.js';
-import type { Resolution } from './resolution.js';
+import { coarseColumn, HEIGHTS, MINUTES } from '../resolution.js';
 import type { SentenceFault } from './sentence.js';
 
 /** How often something came, and the line where it came first. */
@@ -104,42 +105,10 @@ export function changedStation(file: string, firstRows: ReadonlyMap<string, numb
   return message('warning', 'station-changed', text, { file, row: stations[1]![1] });
 }
 
-/** A minute of arc on the equator of WGS 84 (semi-axis 6378137 m), mm; a minute of latitude has 1843 m to 1862 m. */
-const MINUTE_MM = (6_378_137_000 * Math.PI) / 180 / 60;
-
 /** Coordinates rounded to more than a millimetre; null when they are finer. */
-export function coarseMinutes(file: string, resolution: Resolution | null): Message | null {
-  return coarse(file, resolution, {
-    column: 'latitude',
-    what: 'coordinates',
-    unit: 'minute',
-    unitMm: MINUTE_MM,
-  });
-}
+export const coarseMinutes = (file: string, resolution: Resolution | null): Message | null =>
+  coarseColumn(file, resolution, MINUTES);
 
 /** Heights rounded to more than a millimetre; null when they are finer. */
-export function coarseHeights(file: string, resolution: Resolution | null): Message | null {
-  return coarse(file, resolution, { column: 'height', what: 'heights', unit: 'metre', unitMm: 1000 });
-}
-
-const FINE_MM = 1;
-const COARSE_MM = 5;
-
-function coarse(
-  file: string,
-  resolution: Resolution | null,
-  { column, what, unit, unitMm }: { column: string; what: string; unit: string; unitMm: number },
-): Message | null {
-  if (resolution === null) return null;
-  const { decimals, count, total, firstRow } = resolution;
-  const stepMm = unitMm / 10 ** decimals;
-  if (stepMm <= FINE_MM) return null;
-  const enough = Math.ceil(Math.log10(unitMm / FINE_MM));
-  const step = stepMm < 1e5 ? `${Number(stepMm.toPrecision(3))} mm` : `${Math.round(stepMm / 1000)} m`;
-  const text = `Expected at least ${enough} decimals of a ${unit}, came ${what} that have ${decimals} decimals of a ${unit}: steps of ${step}, in ${count} of ${total} rows. Record more decimals, for rounding is part of every error found here.`;
-  return message(stepMm > COARSE_MM ? 'warning' : 'info', 'resolution', text, {
-    file,
-    row: firstRow,
-    column,
-  });
-}
+export const coarseHeights = (file: string, resolution: Resolution | null): Message | null =>
+  coarseColumn(file, resolution, HEIGHTS);

@@ -1,4 +1,6 @@
+import { DecimalCounter } from '../decimalCounter.js';
 import type { Message } from '../messages.js';
+import { HEIGHTS, type LogResolution, MINUTES, stepMm } from '../resolution.js';
 import {
   changedStation,
   coarseHeights,
@@ -13,7 +15,6 @@ import {
   unreadValue,
 } from './noteMessages.js';
 import type { GgaRow } from './readGga.js';
-import { DecimalCounter } from './resolution.js';
 import type { FaultySentence, SentenceFault } from './sentence.js';
 
 /** Different reference stations that are remembered. */
@@ -65,6 +66,13 @@ export class NmeaNotes {
     // Without corrections the number of the station is left over from before, or zero.
     if (fix === 'other' || station === '' || this.#stations.size >= MOST_STATIONS) return;
     if (!this.#stations.has(station)) this.#stations.set(station, row);
+  }
+
+  /** In what steps the positions are written; null before the first. */
+  resolution(): LogResolution | null {
+    const [minutes, heights] = [this.#minutes.resolution(), this.#heights.resolution()];
+    if (minutes === null || heights === null) return null;
+    return { horizontalStepMm: stepMm(minutes, MINUTES), verticalStepMm: stepMm(heights, HEIGHTS) };
   }
 
   /**

@@ -85,6 +85,7 @@ class NmeaReader {
     const batch = this.batch();
     return {
       ...batch,
+      resolution: this.#notes.resolution(),
       messages: this.#notes.messages(this.#rowsRead, this.#joiner.firstStatedDifferenceMs),
     };
   }
