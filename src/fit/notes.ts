@@ -60,6 +60,15 @@ export function dataNotes(data: FitData, component: Component): Message[] {
       ),
     );
   }
+  if (data.withoutBaseline > 0) {
+    notes.push(
+      message(
+        'info',
+        'on-the-base',
+        `${data.withoutBaseline} ${data.withoutBaseline === 1 ? 'occupation is' : 'occupations are'} on the base itself and take no part in the fit. Take near shots some hundred metres away.`,
+      ),
+    );
+  }
   return [...notes, ...systematicOffset(data, component)];
 }
 

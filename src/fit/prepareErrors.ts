@@ -12,10 +12,12 @@ export interface FitData extends SquaredErrors {
   readonly setup: readonly string[] | null;
   /** Rows without a value of this component (marks known in plan only or height only). */
   readonly withoutValue: number;
+  /** Rows on the base itself, or without a length, which take no part. */
+  readonly withoutBaseline: number;
 }
 
 /**
- * @throws InputError when a column is missing, a length is zero or missing, or no row has the component
+ * @throws InputError when a column is missing, or no row has the component and a length above 0
  */
 export function prepareErrors(errors: ErrorsInput, component: Component): FitData {
   const columns = errorColumns(errors);
@@ -47,32 +49,35 @@ export function prepareErrors(errors: ErrorsInput, component: Component): FitDat
       `Expected measured positions, came ${component} errors of exactly 0 in every occupation. The log repeats the known coordinates: export what was measured.`,
     );
   }
-  const bad = used.find((i) => !(lengths[i]! > 0 && Number.isFinite(lengths[i]!)));
-  if (bad !== undefined) {
+  // A shot on the base itself has no baseline: it tells of the constant only by a length that cannot be divided by.
+  const measured = used.filter((i) => lengths[i]! > 0 && Number.isFinite(lengths[i]!));
+  if (measured.length === 0) {
     throw inputError(
       'no-baseline',
-      `Expected baseline lengths above 0 km, came ${lengths[bad]} in row ${bad + 1} of the errors. Leave out shots on the base itself.`,
+      `Expected baseline lengths above 0 km, came none of ${used.length}. Take shots away from the base.`,
     );
   }
+  const withoutBaseline = used.length - measured.length;
   // Sums depend on order in the last digits: a fixed order makes equal data give equal bytes.
   const square = (i: number): number => values.reduce((sum, column) => sum + column[i]! ** 2, 0);
-  used.sort(
+  measured.sort(
     (i, j) =>
       compare(days[i]!, days[j]!) ||
       lengths[i]! - lengths[j]! ||
       square(i) - square(j) ||
       compareSigns(values, i, j),
   );
-  const pick = (list: readonly string[] | null): string[] | null => list && used.map((i) => list[i]!);
+  const pick = (list: readonly string[] | null): string[] | null => list && measured.map((i) => list[i]!);
   return {
-    y: Float64Array.from(used, square),
-    l: Float64Array.from(used, (i) => lengths[i]! ** 2),
-    w: new Float64Array(used.length).fill(1),
-    day: used.map((i) => days[i]!),
-    components: values.map((column) => Float64Array.from(used, (i) => column[i]!)),
+    y: Float64Array.from(measured, square),
+    l: Float64Array.from(measured, (i) => lengths[i]! ** 2),
+    w: new Float64Array(measured.length).fill(1),
+    day: measured.map((i) => days[i]!),
+    components: values.map((column) => Float64Array.from(measured, (i) => column[i]!)),
     mark: pick(marks),
     setup: pick(setups),
     withoutValue: rows.length - used.length,
+    withoutBaseline,
   };
 }
 

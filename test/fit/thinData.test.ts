@@ -193,10 +193,16 @@ describe('misuse', () => {
       'Expected a column "north" in the errors, needed for component "horizontal", came "day", "baselineKm", "east". Add the column or change the option.',
     );
   });
-  it('refuses lengths of zero and empty tables', () => {
-    expect(() => fitErrorModel([{ day: 'd', baselineKm: 0, up: 1 }], { component: 'vertical' })).toThrow(
-      'above 0 km',
-    );
+  it('leaves out shots on the base itself and says so, and refuses them alone', () => {
+    const onBase = [{ day: 'd', baselineKm: 0, up: 1 }];
+    expect(() => fitErrorModel(onBase, { component: 'vertical' })).toThrow('came none of 1');
+    const model = fitErrorModel([...made(10, SPREAD, 8, 1), { ...made(1, [1], 8, 1)[0]!, baselineKm: 0 }], {
+      component: 'vertical',
+    });
+    expect(model.occupations).toBe(10 * SPREAD.length);
+    expect(model.notes.map(({ code }) => code)).toContain('on-the-base');
+  });
+  it('refuses empty tables', () => {
     expect(() => fitErrorModel([], { component: 'vertical' })).toThrow('came none of 0');
   });
 });
