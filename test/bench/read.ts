@@ -1,57 +1,78 @@
 import { execFileSync } from 'node:child_process';
-import { closeSync, mkdtempSync, openSync, rmSync, writeSync } from 'node:fs';
+import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { writeDelimitedLog, writeNmeaLog } from './makeLogs.js';
 
-const MARKS = 12;
-const HEADER = 'time,base,mark,rover,crew,latitude,longitude,height,fix,satellites,pdop,age\n';
+/** One reading in a process of its own, so that its time and its peak memory are its own. */
+interface Reading {
+  readonly cpuSeconds: number;
+  readonly wallSeconds: number;
+  readonly peakMb: number;
+  readonly read: number;
+  readonly used: number;
+  readonly occupations: number;
+}
 
 /**
- * Reads, joins and reduces logs in one pass, each in a process of its own so that its peak memory is its own: check
- * shots (five epochs a visit) of growing length, and one static log at 1 Hz of growing length on a single mark.
+ * Reads, joins and reduces logs in one pass: check shots of five epochs, stays of three minutes, one static log on a
+ * single mark, and NMEA sentences, each of growing length. Then the same file of check shots by an embedded SQL engine's
+ * CSV reader, in the same run. Built code is measured: `npm run bench` builds first.
  */
 export async function benchRead(): Promise<void> {
   const folder = mkdtempSync(join(tmpdir(), 'ppmwise-bench-'));
+  const log = join(folder, 'log.csv');
   try {
-    for (const kind of ['check shots', 'static log'] as const) {
-      for (const rows of [250_000, 1_000_000, 4_000_000]) {
-        const log = join(folder, 'log.csv');
-        writeLog(log, rows, kind === 'check shots' ? 5 : rows);
-        const worker = fileURLToPath(new URL('./readWorker.ts', import.meta.url));
-        const output = execFileSync(process.execPath, ['--import', 'tsx', worker, log, String(MARKS)], {
-          encoding: 'utf8',
-        });
-        const { seconds, peakMb, occupations, read, used } = JSON.parse(output);
-        console.log(
-          `${kind}, ${rows} rows: ${seconds.toFixed(2)} s, ${Math.round(rows / seconds)} rows/s, peak ${peakMb.toFixed(0)} MB, ${read} read, ${used} used, ${occupations} occupations`,
-        );
+    for (const [kind, epochs, sizes] of [
+      ['check shots of 5 epochs', 5, [250_000, 1_000_000]],
+      ['stays of 3 minutes at 1 Hz', 180, [1_000_000, 10_000_000]],
+      ['one static log at 1 Hz', Number.POSITIVE_INFINITY, [1_000_000, 4_000_000]],
+    ] as const) {
+      for (const rows of sizes) {
+        writeDelimitedLog(log, rows, epochs);
+        const ours = read('delimited', log);
+        tell(`${kind}, ${rows} rows × 12 columns`, rows, ours);
+        if (epochs === 5 && rows === 1_000_000) compareWithSql(log, ours);
       }
+    }
+    for (const epochs of [250_000, 1_000_000]) {
+      const sentences = writeNmeaLog(log, epochs);
+      tell(`NMEA, ${sentences} sentences`, sentences, read('nmea', log));
     }
   } finally {
     rmSync(folder, { recursive: true, force: true });
   }
 }
 
-export const markLatitude = (mark: number): number => 44.3 + 0.02 * (mark + 1);
+function read(kind: 'delimited' | 'nmea' | 'rows', log: string): Reading {
+  const worker = fileURLToPath(new URL('./readWorker.mjs', import.meta.url));
+  return JSON.parse(execFileSync(process.execPath, [worker, kind, log], { encoding: 'utf8' }));
+}
 
-function writeLog(path: string, rows: number, epochsPerVisit: number): void {
-  const file = openSync(path, 'w');
-  writeSync(file, HEADER);
-  const start = Date.UTC(2025, 2, 3, 8);
-  let text = '';
-  let time = start;
-  for (let k = 0; k < rows; k++) {
-    const visit = Math.floor(k / epochsPerVisit);
-    const mark = visit % MARKS;
-    time += k % epochsPerVisit === 0 && k > 0 ? 120_000 : 1000;
-    const latitude = (markLatitude(mark) + ((k % 17) - 8) * 1e-8).toFixed(9);
-    text += `${new Date(time).toISOString().slice(0, 19)}Z,B,M${mark},R1,north,${latitude},-18.400700010,${(133.7 + (k % 13) / 1000).toFixed(4)},fixed,21,1.4,2.0\n`;
-    if (text.length > 1 << 20) {
-      writeSync(file, text);
-      text = '';
-    }
+function tell(
+  what: string,
+  rows: number,
+  { cpuSeconds, wallSeconds, peakMb, read: n, used, occupations }: Reading,
+): void {
+  console.log(
+    `${what}: ${cpuSeconds.toFixed(2)} s of CPU, ${wallSeconds.toFixed(2)} s wall, ${Math.round(rows / wallSeconds)} a second, peak ${peakMb.toFixed(0)} MB; ${n} read, ${used} used, ${occupations} occupations`,
+  );
+}
+
+/** The CSV reader of DuckDB, one thread, into columns of JavaScript. */
+function compareWithSql(log: string, ours: Reading): void {
+  try {
+    const worker = fileURLToPath(new URL('./sqlWorker.mjs', import.meta.url));
+    const output = execFileSync(process.execPath, [worker, log], {
+      encoding: 'utf8',
+      stdio: ['ignore', 'pipe', 'pipe'],
+    });
+    const { cpuSeconds, rows } = JSON.parse(output) as { cpuSeconds: number; rows: number };
+    console.log(
+      `  DuckDB reads the same ${rows} rows into columns in ${cpuSeconds.toFixed(2)} s of CPU: ours takes ${(read('rows', log).cpuSeconds / cpuSeconds).toFixed(2)} times that for reading alone, ${(ours.cpuSeconds / cpuSeconds).toFixed(2)} times with joining and reducing`,
+    );
+  } catch (error) {
+    console.log(`  no comparison: DuckDB did not run (${(error as Error).message.split('\n')[0]})`);
   }
-  writeSync(file, text);
-  closeSync(file);
 }

@@ -1,0 +1,46 @@
+// One reading of a log by the built code, from rows to errors of occupations; prints what it took as JSON.
+import { computeErrors, formOccupations, readLogs } from '../../dist/index.js';
+
+const [kind, path] = process.argv.slice(2);
+const marks = new Map(
+  Array.from({ length: 12 }, (_, k) => {
+    const name = `M${k}`;
+    const position = { latitudeDeg: 44.3 + 0.02 * (k + 1), longitudeDeg: -18.40070001, heightM: 133.7 };
+    return [
+      name,
+      { name, position, horizontalSigmaMm: Number.NaN, verticalSigmaMm: Number.NaN, source: '', sky: '' },
+    ];
+  }),
+);
+const base = {
+  name: 'B',
+  position: { latitudeDeg: 44.3, longitudeDeg: -18.4, heightM: 100 },
+  mounting: 'pillar',
+};
+const layout = kind === 'nmea' ? { kind, constants: { mark: 'M0' } } : { kind: 'delimited' };
+const file = { path, file: 'log', layout, coordinates: 'geographic' };
+
+const start = performance.now();
+const before = process.cpuUsage();
+const control = { marks, bases: new Map([['B', base]]) };
+// `rows` reads alone: positions are made and let go.
+if (kind === 'rows') {
+  let positions = 0;
+  for await (const batch of readLogs([file], { timeZone: null })) positions += batch.positions.length;
+  const { user, system } = process.cpuUsage(before);
+  console.log(JSON.stringify({ cpuSeconds: (user + system) / 1e6, read: positions }));
+  process.exit();
+}
+const { occupations, files } = await formOccupations(readLogs([file], { timeZone: null }), control);
+computeErrors(occupations, control);
+const { user, system } = process.cpuUsage(before);
+console.log(
+  JSON.stringify({
+    cpuSeconds: (user + system) / 1e6,
+    wallSeconds: (performance.now() - start) / 1000,
+    peakMb: process.resourceUsage().maxRSS / 1024,
+    read: files[0].read,
+    used: files[0].used,
+    occupations: occupations.length,
+  }),
+);
