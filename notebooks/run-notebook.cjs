@@ -28,7 +28,7 @@ if (files.length > 1) {
     });
     if (run.status !== 0) process.exit(run.status ?? 1);
   }
-} else runNotebook(files[0]);
+} else void runNotebook(files[0]);
 
 async function runNotebook(file) {
   if (!fs.existsSync(file)) fail(`Expected a notebook, there is no file ${file}. Correct the name.`);
