@@ -51,11 +51,37 @@ describe('README', () => {
   });
 });
 
+/** Every key of a JSON Schema, however deep. */
+function nestedKeys(node: unknown): string[] {
+  if (node === null || typeof node !== 'object') return [];
+  return Object.entries(node).flatMap(([key, value]) => [
+    ...(key === 'properties' ? Object.keys(value as object) : []),
+    ...nestedKeys(value),
+  ]);
+}
+
+describe("the contributor's guide", () => {
+  it('names only sources that exist', () => {
+    for (const [, name] of read('DEVELOPERS.md').matchAll(/`((?:[\w-]+\/)*[\w-]+\.ts)`/g)) {
+      const found = readdirSync(join(REPOSITORY, 'src'), { recursive: true, encoding: 'utf8' });
+      const tests = readdirSync(join(REPOSITORY, 'test'), { recursive: true, encoding: 'utf8' }).map(
+        (file) => `test/${file}`,
+      );
+      const known = [...found.map((file) => `src/${file}`), ...tests];
+      expect(
+        known.some((file) => file.endsWith(`/${name}`) || file === name),
+        name,
+      ).toBe(true);
+    }
+  });
+});
+
 describe('the study file page', () => {
   it('lists every key of the schema and every reason in use', () => {
     const page = read('docs/study-file.md');
     const { properties } = studyJsonSchema() as { properties: object };
-    for (const key of Object.keys(properties)) expect(page, key).toContain(`\`${key}\``);
+    for (const key of [...Object.keys(properties), ...nestedKeys(properties)])
+      expect(page, key).toContain(key);
     for (const reason of ROW_REASONS.filter((name) => !['moving', 'not-single-base'].includes(name)))
       expect(page).toContain(`\`${reason}\``);
   });

@@ -12,11 +12,18 @@ export interface MapMark extends PlanPoint {
   readonly north: number | null;
   /** Area of its circle, px². */
   readonly sizePx2: number;
+  /** False for marks beyond those that a plan can name: they are only dots. */
+  readonly named: boolean;
 }
+
+/** More names than these cannot be read on a plan. */
+export const MOST_NAMED = 60;
 
 /** Marks with their places; circles grow mildly with the number of occupations. */
 export function mapMarks(marks: readonly MarkMean[]): MapMark[] {
   const most = marks.reduce((a, { occupations }) => Math.max(a, occupations), 1);
+  const sizes = marks.map((mark) => meanHorizontalMm(mark) ?? 0).sort((a, b) => b - a);
+  const leastNamedMm = sizes[MOST_NAMED - 1] ?? 0;
   return marks.map(({ mark, baselineKm, azimuthDeg, occupations, east, north }) => ({
     mark,
     ...planPoint(baselineKm, azimuthDeg),
@@ -24,6 +31,7 @@ export function mapMarks(marks: readonly MarkMean[]): MapMark[] {
     east,
     north,
     sizePx2: 45 + 95 * Math.sqrt(occupations / most),
+    named: marks.length <= MOST_NAMED || (meanHorizontalMm({ east, north }) ?? 0) >= leastNamedMm,
   }));
 }
 

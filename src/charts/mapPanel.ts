@@ -26,8 +26,10 @@ export function panelLabels({ frame, baseName, marks, enlargedKm, pxPerMm }: Map
   readonly small: readonly MapMark[];
   readonly labels: MapLabels;
 } {
-  const full = marks.filter((mark) => enlargedKm === null || distanceKm(mark) > enlargedKm);
-  const small = marks.filter((mark) => !full.includes(mark));
+  const isFull = (mark: MapMark): boolean =>
+    mark.named && (enlargedKm === null || distanceKm(mark) > enlargedKm);
+  const full = marks.filter(isFull);
+  const small = marks.filter((mark) => !isFull(mark));
   return { full, small, labels: mapLabels(frame, baseName, full, small, pxPerMm) };
 }
 

@@ -2,7 +2,7 @@ import { inputError } from '../logs/index.js';
 import type { MarkMean } from '../split/index.js';
 import { type ChartSpec, chartSpec } from './chartSpec.js';
 import { frameAround, frameOfRadius } from './mapFrame.js';
-import { type MapMark, mapMarks, meanHorizontalMm } from './mapMarks.js';
+import { type MapMark, MOST_NAMED, mapMarks, meanHorizontalMm } from './mapMarks.js';
 import { type MapPanel, mapPanelView, panelLabels } from './mapPanel.js';
 import { roundStep } from './mapRings.js';
 import { counted, countWords } from './words.js';
@@ -126,6 +126,9 @@ function subtitle(own: readonly MarkMean[]): string[] {
     few === many
       ? `Circles: marks, ${few} occupations each. Square: the base.`
       : `Circles: marks, larger with more occupations (${few} to ${many}). Square: the base.`,
+    ...(own.length > MOST_NAMED
+      ? [`Named: the ${MOST_NAMED} marks with the largest mean error; the others are dots.`]
+      : []),
   ];
 }
 

@@ -36,12 +36,26 @@ export function markMeansChart({ marks }: MarkMeansInput): ChartSpec {
       'Expected at least one mark, came none. Hand in the means of measured marks.',
     );
   }
-  const ordered = [...marks].sort((a, b) => a.baselineKm - b.baselineKm || (a.mark < b.mark ? -1 : 1));
+  const ordered = largestMeans(marks).sort(
+    (a, b) => a.baselineKm - b.baselineKm || (a.mark < b.mark ? -1 : 1),
+  );
   const labels = rowLabels(ordered);
   const panels = AXES.map((axis) => meanRows(ordered, labels, axis));
   const domain = commonDomain(panels.flat());
   const views = AXES.map((axis, k) => panelView(axis, panels[k]!, labels, domain, k === 0));
-  return chartSpec(title(marks), subtitle(marks), description(marks), { hconcat: views, spacing: 22 });
+  return chartSpec(title(marks), subtitle(marks, ordered.length), description(marks), {
+    hconcat: views,
+    spacing: 22,
+  });
+}
+
+/** More rows than these are no picture any more: of many marks those with the largest means are drawn. */
+const MOST_ROWS = 60;
+
+function largestMeans(marks: readonly MarkMean[]): MarkMean[] {
+  if (marks.length <= MOST_ROWS) return [...marks];
+  const size = (mark: MarkMean): number => Math.hypot(...AXES.map((axis) => mark[axis] ?? 0));
+  return [...marks].sort((a, b) => size(b) - size(a) || (a.mark < b.mark ? -1 : 1)).slice(0, MOST_ROWS);
 }
 
 /** `M01  0.4 km`; with the base where one mark was measured from several. */
@@ -148,11 +162,13 @@ function title(marks: readonly MarkMean[]): string {
     : `Mean error of ${counted(marks.length, 'mark')}: largest ${most.axis} ${signedNumber(most.mean)} mm at ${most.mark}`;
 }
 
-function subtitle(marks: readonly MarkMean[]): string[] {
+function subtitle(marks: readonly MarkMean[], drawn: number): string[] {
   const single = marks.some(({ days }) => days < 2);
   return [
     `Measured minus known; bars: two standard errors to either side, counted by days, not by shots${single ? '; no bar: one day only' : ''}`,
-    'Marks in order of distance from the base',
+    drawn < marks.length
+      ? `The ${drawn} marks with the largest means of ${marks.length}, in order of distance from the base`
+      : 'Marks in order of distance from the base',
   ];
 }
 

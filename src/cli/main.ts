@@ -3,6 +3,7 @@ import { Command, CommanderError } from 'commander';
 import { formatMessage, InputError } from '../logs/index.js';
 import { checkCommand } from './check.js';
 import { demoCommand } from './demo.js';
+import { layoutCommand } from './layout.js';
 import { newCommand } from './new.js';
 import { packageVersion } from './package.js';
 import { runCommand } from './run.js';
@@ -22,7 +23,13 @@ async function main(argv: readonly string[]): Promise<number> {
     .version(packageVersion())
     .exitOverride()
     .showHelpAfterError('Run with --help to see how it is called.');
-  for (const command of [runCommand(done), checkCommand(done), demoCommand(done), newCommand(done)]) {
+  for (const command of [
+    runCommand(done),
+    checkCommand(done),
+    layoutCommand(done),
+    demoCommand(done),
+    newCommand(done),
+  ]) {
     program.addCommand(command.exitOverride().showHelpAfterError('Run with --help to see how it is called.'));
   }
   try {

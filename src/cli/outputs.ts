@@ -1,41 +1,32 @@
 import { existsSync, readdirSync, readFileSync, rmSync, statSync } from 'node:fs';
-import { mkdir, writeFile } from 'node:fs/promises';
+import { copyFile, mkdir, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { inputError } from '../logs/index.js';
 import { csvText, reportHtml, reportTables } from '../report/index.js';
 import type { Results, StudyRun } from '../study/index.js';
 import { drawPictures } from './pictures.js';
 
-/** Names that a run writes in its folder; nothing else there is ever touched. */
-const OWN_FILES = ['results.json', 'report.html'];
+/** Folders that belong to a result: those of an old one are replaced whole, so that no stale table stays behind. */
 const OWN_FOLDERS = ['tables', 'charts'];
 
 /**
- * Makes the folder ready: an old result of ppmwise is removed, anything else needs --force.
+ * Checks that results may be written into a folder: it is new, empty, holds an old result, or --force is given. Nothing is
+ * changed yet.
  * @throws InputError when something else is in the way
  */
-export async function prepareFolder(folder: string, force: boolean): Promise<void> {
-  if (existsSync(folder)) {
-    if (!statSync(folder).isDirectory()) {
-      throw inputError(
-        'in-the-way',
-        `Expected a folder for the results, came a file. Name another folder with --out.`,
-        {
-          file: folder,
-        },
-      );
-    }
-    if (readdirSync(folder).length > 0 && !force && !isOwnResult(folder)) {
-      throw inputError(
-        'in-the-way',
-        'The folder holds something that is no result of ppmwise. Name another folder with --out, or write into it with --force.',
-        { file: folder },
-      );
-    }
+export function checkFolder(folder: string, force: boolean): void {
+  if (!existsSync(folder)) return;
+  if (!statSync(folder).isDirectory()) {
+    const text = 'Expected a folder for the results, came a file. Name another folder with --out.';
+    throw inputError('in-the-way', text, { file: folder });
   }
-  for (const name of [...OWN_FILES, ...OWN_FOLDERS])
-    rmSync(join(folder, name), { recursive: true, force: true });
-  for (const name of OWN_FOLDERS) await mkdir(join(folder, name), { recursive: true });
+  if (readdirSync(folder).length > 0 && !force && !isOwnResult(folder)) {
+    throw inputError(
+      'in-the-way',
+      'The folder holds something that is no result of ppmwise. Name another folder with --out, or write into it with --force.',
+      { file: folder },
+    );
+  }
 }
 
 function isOwnResult(folder: string): boolean {
@@ -49,8 +40,17 @@ function isOwnResult(folder: string): boolean {
   }
 }
 
-/** Writes everything of a run: results, report, tables, charts. */
-export async function writeOutputs(run: StudyRun, folder: string): Promise<void> {
+/**
+ * Writes everything of a run: results, report, tables, charts. Other files in the folder are never touched.
+ * @param setAsideRows file with the set-aside rows, which becomes one of the tables
+ */
+export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: string): Promise<void> {
+  const old = existsSync(folder) && isOwnResult(folder);
+  for (const name of OWN_FOLDERS) {
+    if (old) rmSync(join(folder, name), { recursive: true, force: true });
+    await mkdir(join(folder, name), { recursive: true });
+  }
+  await copyFile(setAsideRows, join(folder, 'tables', 'set-aside.csv'));
   for (const { name, header, rows } of reportTables(run)) {
     await writeFile(join(folder, 'tables', `${name}.csv`), csvText(header, rows));
   }

@@ -45,7 +45,11 @@ function errorChart({ errors, models, results }: StudyRun, component: Component)
   return errorByBaselineChart({
     errors,
     model,
-    bins: summarizeBy(errors, { column: 'baselineKm', edges: LENGTH_EDGES_KM }),
+    bins: summarizeBy(
+      errors,
+      { column: 'baselineKm', edges: LENGTH_EDGES_KM },
+      { confidence: model.confidence },
+    ),
     ...(results.specSheet === null ? {} : { specSheet: results.specSheet }),
     ...(rule === undefined ? {} : { tolerance: rule, rule }),
   });

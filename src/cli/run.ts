@@ -2,7 +2,7 @@ import { join, resolve } from 'node:path';
 import { Command } from 'commander';
 import { summaryText } from '../report/index.js';
 import { readStudy, runStudy } from '../study/index.js';
-import { prepareFolder, resultsText, writeOutputs } from './outputs.js';
+import { checkFolder, resultsText, writeOutputs } from './outputs.js';
 import { rowCounter } from './progress.js';
 import { setAsideFile } from './setAsideFile.js';
 
@@ -26,21 +26,20 @@ export function runCommand(done: (code: number) => void): Command {
     .action(async (studyFile: string, flags: RunFlags) => {
       const study = await readStudy(studyFile);
       const folder = flags.out === undefined ? join(study.folder, 'results') : resolve(flags.out);
-      await prepareFolder(folder, flags.force ?? false);
-      const rows = setAsideFile(join(folder, 'tables', 'set-aside.csv'));
+      checkFolder(folder, flags.force ?? false);
+      const rows = setAsideFile();
       const progress = rowCounter();
-      const run = await runStudy(study, { onSetAside: rows.add, onProgress: progress.tell }).finally(
-        async () => {
-          progress.clear();
-          await rows.close();
-        },
-      );
-      await writeOutputs(run, folder);
-      process.stdout.write(
-        flags.json
-          ? resultsText(run.results)
-          : `${summaryText(run.results)}\n\nReport: ${join(folder, 'report.html')}\n`,
-      );
-      done(run.results.fits.length > 0 ? 0 : 1);
+      try {
+        const run = await runStudy(study, { onSetAside: rows.add, onProgress: progress.tell }).finally(
+          progress.clear,
+        );
+        await rows.close();
+        await writeOutputs(run, folder, rows.path);
+        const summary = `${summaryText(run.results)}\n\nReport: ${join(folder, 'report.html')}\n`;
+        process.stdout.write(flags.json ? resultsText(run.results) : summary);
+        done(run.results.fits.length > 0 ? 0 : 1);
+      } finally {
+        rows.remove();
+      }
     });
 }

@@ -7,6 +7,7 @@ export type ErrorsInput = ColumnTable | readonly object[];
 /** Reads columns out of a table or an array of records, and says which option asked for one that is missing. */
 export interface ErrorColumns {
   readonly length: number;
+  readonly has: (name: string) => boolean;
   /** @throws InputError when the column is missing */
   readonly numbers: (name: string, neededFor: string) => Float64Array;
   /** @throws InputError when the column is missing */
@@ -29,6 +30,7 @@ export function errorColumns(input: ErrorsInput): ErrorColumns {
   };
   return {
     length: source.length,
+    has: (name) => source.length > 0 && source.names().includes(name),
     numbers: (name, neededFor) => Float64Array.from(column(name, neededFor) as ArrayLike<number>, Number),
     texts: (name, neededFor) => Array.from(column(name, neededFor), String),
   };

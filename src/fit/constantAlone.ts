@@ -13,7 +13,7 @@ export function constantAlone(
   withInterval: boolean,
 ): Pick<
   ErrorModel,
-  'variance' | 'information' | 'uncertainty' | 'constantMm' | 'ppm' | 'ppmIfIndependent' | 'interval'
+  'variance' | 'informationNumber' | 'uncertainty' | 'constantMm' | 'ppm' | 'ppmIfIndependent' | 'interval'
 > {
   const { mean, standardError, days } = clusteredMean(data.y, data.day);
   const limits = withInterval
@@ -29,7 +29,7 @@ export function constantAlone(
       converged: true,
       iterations: 0,
     },
-    information: { number: 0, perOccupation: 0 },
+    informationNumber: 0,
     uncertainty: null,
     constantMm: {
       estimate: Math.sqrt(mean),

@@ -3,7 +3,6 @@ import type { Symmetric2 } from '../stats/index.js';
 import type { ClusterTerms } from './clusterCovariance.js';
 import type { VarianceEstimate } from './estimate.js';
 import type { Component, Form } from './forms.js';
-import type { DistanceInformation } from './information.js';
 
 /** An estimate with the limits of its interval; null is what the data cannot defend, and a note says why. */
 export interface EstimateWithLimits {
@@ -42,7 +41,8 @@ export interface ErrorModel {
   /** Unconstrained and displayed A = a² (mm²) and B = b² (ppm²). */
   readonly variance: VarianceEstimate;
   readonly uncertainty: ModelUncertainty | null;
-  readonly information: DistanceInformation;
+  /** About the number of shots that speak of distance, see informationNumber. */
+  readonly informationNumber: number;
   readonly occupations: number;
   readonly days: number;
   readonly marks: number | null;

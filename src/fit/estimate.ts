@@ -33,8 +33,12 @@ const TOLERANCE = 1e-12;
  * Iteratively reweighted least squares with three safeguards: μ stays positive by halving the step; the step is halved
  * for good when Q = Σ w (log μ + y/μ) rises, since the plain iteration can fall into a cycle; A is held at a floor of a
  * thousandth of the mean square while the data push it below.
+ * @param start a solution nearby, from which fewer steps are needed; default half of the mean square each
  */
-export function estimateVariance({ y, l, w }: SquaredErrors): VarianceEstimate {
+export function estimateVariance(
+  { y, l, w }: SquaredErrors,
+  start?: { readonly A: number; readonly B: number },
+): VarianceEstimate {
   const n = y.length;
   const total = w.reduce((sum, value) => sum + value, 0);
   const yMean = dot(w, y) / total;
@@ -48,7 +52,7 @@ export function estimateVariance({ y, l, w }: SquaredErrors): VarianceEstimate {
   const ones = new Float64Array(n).fill(1);
   const v = new Float64Array(n);
 
-  let [A, B] = [yMean / 2, yMean / 2];
+  let [A, B] = startingPoint(start, yMean, scale, xMax);
   let [step, held, converged] = [1, false, false];
   let q = objective(y, x, w, A, B);
   let iterations = 0;
@@ -96,6 +100,19 @@ export function estimateVariance({ y, l, w }: SquaredErrors): VarianceEstimate {
   if (B < 0) [displayA, displayB] = [yMean, 0];
   if (constantAtFloor) [displayA, displayB] = [0, meanRatio(y, l, w)];
   return { A, B: B / scale, displayA, displayB, constantAtFloor, converged, iterations };
+}
+
+/** On the scaled length; a start that would make μ small or negative somewhere is not taken. */
+function startingPoint(
+  start: { readonly A: number; readonly B: number } | undefined,
+  yMean: number,
+  scale: number,
+  xMax: number,
+): [A: number, B: number] {
+  const half = yMean / 2;
+  if (start === undefined) return [half, half];
+  const [A, B] = [start.A, start.B * scale];
+  return A > 0.01 * yMean && A + B * xMax > 0.01 * yMean ? [A, B] : [half, half];
 }
 
 interface Point {

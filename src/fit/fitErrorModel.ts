@@ -4,8 +4,8 @@ import { clusterTerms, covariance } from './clusterCovariance.js';
 import { constantAlone, tooAlikeNote } from './constantAlone.js';
 import type { ErrorModel } from './errorModel.js';
 import { estimateVariance } from './estimate.js';
-import { distanceInformation } from './information.js';
-import { modelLimits } from './modelLimits.js';
+import { informationNumber } from './information.js';
+import { constantNote, modelLimits, tellsPpm } from './modelLimits.js';
 import { axisNote, dataNotes } from './notes.js';
 import { type FitOptions, resolveFitOptions } from './options.js';
 import { type FitData, prepareErrors } from './prepareErrors.js';
@@ -13,7 +13,14 @@ import { type FitData, prepareErrors } from './prepareErrors.js';
 /** From 4 days on there is an interval at all. */
 const FEWEST_DAYS = 4;
 /** The farthest shot must be this many times as far as the nearest for mm and ppm to be told apart. */
-export const LEAST_LENGTH_RATIO = 3;
+const LEAST_LENGTH_RATIO = 3;
+
+/** @param l squared lengths */
+export function tooAlike(l: Float64Array): boolean {
+  const shortest = l.reduce((a, b) => Math.min(a, b));
+  const longest = l.reduce((a, b) => Math.max(a, b));
+  return longest < LEAST_LENGTH_RATIO ** 2 * shortest;
+}
 
 /**
  * Fits σ² = a² + b² L² to the errors of occupations and gives a and b with intervals that count days, not shots.
@@ -35,9 +42,9 @@ export function fitErrorModel(errors: ErrorsInput, options: FitOptions): ErrorMo
   const notes = [...dataNotes(data, component), ...axisNote(data)];
   const shortestKm = lengths.reduce((a, b) => Math.min(a, b));
   const longestKm = lengths.reduce((a, b) => Math.max(a, b));
-  const tooAlike = longestKm < LEAST_LENGTH_RATIO * shortestKm;
+  const alike = tooAlike(data.l);
   const withInterval = days >= FEWEST_DAYS;
-  const core = tooAlike
+  const core = alike
     ? { ...constantAlone(data, confidence, withInterval), notes: [tooAlikeNote()] }
     : distanceModel(data, confidence, withInterval);
   return {
@@ -59,26 +66,31 @@ export function fitErrorModel(errors: ErrorsInput, options: FitOptions): ErrorMo
 
 function distanceModel(data: FitData, confidence: number, withInterval: boolean) {
   const variance = estimateVariance(data);
-  const information = distanceInformation(data, variance.displayA, variance.displayB);
+  const number = informationNumber(data, variance.displayA, variance.displayB);
   if (!withInterval || !variance.converged) {
     const point = (value: number) => ({ estimate: Math.sqrt(value), low: null, high: null });
+    const { constantAtFloor, converged } = variance;
     return {
       variance,
-      information,
+      informationNumber: number,
       uncertainty: null,
       constantMm: point(variance.displayA),
-      ppm: point(variance.displayB),
+      ppm: tellsPpm(number) ? point(variance.displayB) : { estimate: null, low: null, high: null },
       ppmIfIndependent: { estimate: null, low: null, high: null },
       interval: 'none',
-      notes: variance.converged ? [] : [notConverged()],
+      notes: [
+        ...(converged ? [] : [notConverged()]),
+        ...(constantAtFloor ? [constantNote()] : []),
+        ...(tellsPpm(number) ? [] : [ppmUnknown()]),
+      ],
     };
   }
   const terms = clusterTerms(data, data.day, variance.A, variance.B);
   return {
     variance,
-    information,
+    informationNumber: number,
     uncertainty: { terms, covariance: covariance(terms, 'CR3') },
-    ...modelLimits(data, variance, terms, information.number, confidence),
+    ...modelLimits(data, variance, terms, number, confidence),
   };
 }
 
@@ -87,4 +99,11 @@ const notConverged = (): Message =>
     'warning',
     'not-converged',
     'The fit did not converge; its numbers are the last step and have no intervals. Look at the chart for errors of another kind than the rest.',
+  );
+
+const ppmUnknown = (): Message =>
+  message(
+    'warning',
+    'ppm-unknown',
+    'The shots say too little of distance for a ppm. Add days, and shots farther from the base.',
   );

@@ -13,7 +13,7 @@ export type { ErrorModel, EstimateWithLimits, ModelUncertainty, Reference } from
 export { estimateVariance, type SquaredErrors, type VarianceEstimate } from './estimate.js';
 export { fitErrorModel } from './fitErrorModel.js';
 export { type Component, type Form, spreadMm } from './forms.js';
-export { type DistanceInformation, distanceInformation } from './information.js';
+export { informationNumber } from './information.js';
 export { type ContrastEstimate, contrastEstimate, varianceLimits, varianceUpperLimit } from './intervals.js';
 export type { FitOptions } from './options.js';
 export { scoreLimits } from './scoreInterval.js';

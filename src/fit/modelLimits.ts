@@ -3,7 +3,7 @@ import type { Vector2 } from '../stats/index.js';
 import { type ClusterTerms, covariance, dominantDay, naiveCovariance } from './clusterCovariance.js';
 import type { EstimateWithLimits } from './errorModel.js';
 import type { VarianceEstimate } from './estimate.js';
-import { contrastEstimate, usesLogScale, varianceLimits } from './intervals.js';
+import { type ContrastEstimate, contrastEstimate, usesLogScale, varianceLimits } from './intervals.js';
 import type { FitData } from './prepareErrors.js';
 import { scoreLimits } from './scoreInterval.js';
 
@@ -40,32 +40,47 @@ export function modelLimits(
   const robust = covariance(terms, 'CR3');
   const a = contrastEstimate(A, B, terms, robust, A_ALONE);
   const b = contrastEstimate(A, B, terms, robust, B_ALONE);
-  const useScore = informationNumber < SCORE_BELOW;
-  // A score interval wholly below zero would claim a ppm of exactly zero: chance alone allows more than that.
-  const scoreOr = (otherwise: readonly [number, number]): readonly [number, number] => {
-    const limits = scoreLimits(data, data.day, A, B, confidence);
-    return limits[1] > 0 ? limits : otherwise;
-  };
   const constant = rooted(displayA, varianceLimits(a, confidence));
-  const robustLimits = varianceLimits(b, confidence);
-  const ppm = rooted(displayB, useScore ? scoreOr(robustLimits) : robustLimits);
+  const { limits, interval } = ppmLimits(data, A, B, b, informationNumber, confidence);
+  const ppm = rooted(displayB, limits);
   const naive = naiveCovariance(terms, data.components.length as 1 | 2);
   const ifIndependent = varianceLimits(
     { value: B, standardError: Math.sqrt(naive[2]), degreesOfFreedom: Math.max(1, data.y.length - 2) },
     confidence,
   );
   const upperOnly = informationNumber < UPPER_LIMIT_BELOW;
-  const scale = usesLogScale(b) ? 'log' : 'raw';
+  const high = Number.isFinite(ppm.high) ? ppm.high : null;
   return {
     constantMm: constantAtFloor ? { ...constant, estimate: 0, low: 0 } : constant,
-    ppm: upperOnly ? { estimate: null, low: 0, high: ppm.high } : ppm,
+    ppm: upperOnly || high === null ? { estimate: null, low: high === null ? null : 0, high } : ppm,
     ppmIfIndependent: { ...rooted(displayB, ifIndependent), estimate: upperOnly ? null : ppm.estimate },
-    interval: useScore ? 'inverted day score' : `CR3 by day, Satterthwaite, ${scale} scale`,
+    interval,
     notes: [
       ...(constantAtFloor ? [constantNote()] : []),
-      ...ppmNote(informationNumber, scale === 'log', ppm.high),
+      ...ppmNote(informationNumber, ppm.low ?? 0, high, confidence),
       ...dominanceNote(terms),
     ],
+  };
+}
+
+/** Limits of B and the name of the method behind them. */
+function ppmLimits(
+  data: FitData,
+  A: number,
+  B: number,
+  estimate: ContrastEstimate,
+  informationNumber: number,
+  confidence: number,
+): { readonly limits: readonly [number, number]; readonly interval: string } {
+  if (informationNumber < SCORE_BELOW) {
+    const limits = scoreLimits(data, data.day, A, B, confidence);
+    // A score interval wholly below zero would claim a ppm of exactly zero: chance alone allows more than that.
+    if (limits[1] > 0) return { limits, interval: 'inverted day score' };
+  }
+  const scale = usesLogScale(estimate) ? 'log' : 'raw';
+  return {
+    limits: varianceLimits(estimate, confidence),
+    interval: `CR3 by day, Satterthwaite, ${scale} scale`,
   };
 }
 
@@ -81,29 +96,40 @@ function rooted(
   };
 }
 
-const constantNote = (): Message =>
+export const constantNote = (): Message =>
   message(
     'warning',
     'constant-not-identified',
     'No short shots: the constant part is not identified, only its upper limit. Add shots close to the base.',
   );
 
-function ppmNote(informationNumber: number, clearlyPositive: boolean, high: number): Message[] {
+/** What must be said of a ppm before it is used. */
+function ppmNote(informationNumber: number, low: number, high: number | null, confidence: number): Message[] {
+  if (high === null) {
+    return [
+      message(
+        'warning',
+        'ppm-without-limit',
+        'The shots say nothing of distance: neither a ppm nor an upper limit of it can be given. Add days, and shots farther from the base.',
+      ),
+    ];
+  }
+  const upper = `the upper end of its ${Number((100 * confidence).toFixed(1))} % interval is ${high.toFixed(2)} ppm`;
   if (informationNumber < UPPER_LIMIT_BELOW) {
     return [
       message(
         'warning',
         'ppm-upper-limit-only',
-        `The shots say too little of distance for a ppm; it is below ${high.toFixed(2)} ppm. Add shots farther from the base.`,
+        `The shots say too little of distance for a ppm; ${upper}. Add shots farther from the base.`,
       ),
     ];
   }
-  if (!clearlyPositive) {
+  if (low <= 0) {
     return [
       message(
         'warning',
         'ppm-not-distinguishable',
-        `The ppm is not distinguishable from zero; its upper limit is ${high.toFixed(2)} ppm. Add days with shots farther from the base.`,
+        `The ppm is not distinguishable from zero; ${upper}. Add days with shots farther from the base.`,
       ),
     ];
   }
@@ -124,7 +150,10 @@ function dominanceNote(terms: ClusterTerms): Message[] {
     message(
       'warning',
       'one-day-dominates',
-      `Day ${day} alone carries most of the information on distance. Compare the fit without it, and add days with far shots.`,
+      `Day ${day} alone carries most of what is known of the constant or of the ppm. Compare the fit without it, and add days with both near and far shots.`,
     ),
   ];
 }
+
+/** Below this information number no estimate of the ppm is shown, with or without an interval. */
+export const tellsPpm = (informationNumber: number): boolean => informationNumber >= UPPER_LIMIT_BELOW;

@@ -14,7 +14,7 @@ export function dataNotes(data: FitData, component: Component): Message[] {
   if (days < 4) {
     add(
       'too-few-days',
-      `${days} ${days === 1 ? 'day is' : 'days are'} too few for an uncertainty; shown values describe only these days. Add days: 8 give an interval, 15 a rule.`,
+      `${days} ${days === 1 ? 'day is' : 'days are'} too few for an uncertainty; shown values describe only these days. Add days: from 4 on there is an interval, from 15 on a rule.`,
     );
   } else if (days < 8) {
     add(
@@ -114,7 +114,7 @@ export function axisNote(data: FitData): Message[] {
     message(
       'warning',
       'unequal-axes',
-      `East and north errors differ (RMS ratio ${ratio.toFixed(2)}): radial limits from equal axes are up to 13 % too small. Look for a cause that acts in one direction.`,
+      `East and north errors differ (RMS ${rms(east).toFixed(1)} and ${rms(north).toFixed(1)} mm): radial limits from equal axes would be too small, and the larger factor of a single axis is used. Look for a cause that acts in one direction.`,
     ),
   ];
 }

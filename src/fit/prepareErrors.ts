@@ -26,13 +26,8 @@ export function prepareErrors(errors: ErrorsInput, component: Component): FitDat
   const values = names.map((name) => columns.numbers(name, neededFor));
   const lengths = columns.numbers('baselineKm', 'every fit');
   const days = columns.texts('day', 'every fit');
-  const optional = (name: string): string[] | null => {
-    try {
-      return columns.texts(name, 'a note');
-    } catch {
-      return null;
-    }
-  };
+  const optional = (name: string): string[] | null =>
+    columns.has(name) ? columns.texts(name, 'a note') : null;
   const marks = optional('mark');
   const setups = optional('setup');
   const rows = Array.from(lengths.keys());

@@ -5,7 +5,7 @@ import type { SquaredErrors } from './estimate.js';
  * Interval of B = b² by inverting the self-normalised day score, for data that hold little information on distance:
  * for a trial B the constant is fitted, the day scores of B are freed of the constant, and B is kept while their sum
  * over its day-clustered error stays within Student t with G - 1. Cut at 0.
- * @returns limits in ppm²
+ * @returns limits in ppm²; an upper limit of Infinity when no B is rejected
  */
 export function scoreLimits(
   data: SquaredErrors,
@@ -44,6 +44,8 @@ function boundary(
       break;
     }
     if (!inside(far)) break;
+    // With few days the score is bounded by their number: what is not rejected this far out never is.
+    if (far > 1e4 * Math.abs(reach)) return Number.POSITIVE_INFINITY;
     [near, far] = [far, far + (far - start) + reach / 4];
   }
   for (let k = 0; k < 80; k++) {

@@ -1,6 +1,6 @@
 import type { ErrorsInput } from '../errors/index.js';
 import { estimateVariance } from './estimate.js';
-import { LEAST_LENGTH_RATIO } from './fitErrorModel.js';
+import { tooAlike } from './fitErrorModel.js';
 import { type FitOptions, resolveFitOptions } from './options.js';
 import { prepareErrors } from './prepareErrors.js';
 
@@ -17,18 +17,14 @@ export interface FitWithoutDay {
  */
 export function fitWithoutEachDay(errors: ErrorsInput, options: FitOptions): FitWithoutDay[] {
   const data = prepareErrors(errors, resolveFitOptions(options).component);
+  const whole = tooAlike(data.l) ? undefined : estimateVariance(data);
   return [...new Set(data.day)].map((day) => {
     const keep = data.day.flatMap((other, i) => (other === day ? [] : [i]));
     const pick = (column: Float64Array): Float64Array => Float64Array.from(keep, (i) => column[i]!);
     const [y, l, w] = [pick(data.y), pick(data.l), pick(data.w)];
-    const [shortest, longest] = [
-      l.reduce((a, b) => Math.min(a, b), Number.POSITIVE_INFINITY),
-      l.reduce((a, b) => Math.max(a, b), 0),
-    ];
-    if (!(longest >= LEAST_LENGTH_RATIO ** 2 * shortest)) return { day, constantMm: null, ppm: null };
-    const { displayA, displayB, converged } = estimateVariance({ y, l, w });
-    return converged
-      ? { day, constantMm: Math.sqrt(displayA), ppm: Math.sqrt(displayB) }
-      : { day, constantMm: null, ppm: null };
+    const none = { day, constantMm: null, ppm: null };
+    if (l.length === 0 || tooAlike(l)) return none;
+    const { displayA, displayB, converged } = estimateVariance({ y, l, w }, whole);
+    return converged ? { day, constantMm: Math.sqrt(displayA), ppm: Math.sqrt(displayB) } : none;
   });
 }

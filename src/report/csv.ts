@@ -1,6 +1,6 @@
 import type { Cell } from './tables.js';
 
-/** Rows as RFC 4180 text; a number that is not known is a blank cell. */
+/** Rows as comma-separated text with the quoting of RFC 4180 and LF line ends; what is not known is a blank cell. */
 export function csvText(header: readonly string[], rows: Iterable<readonly Cell[]>): string {
   const lines = [header.map(csvCell).join(',')];
   for (const row of rows) lines.push(row.map(csvCell).join(','));
@@ -12,6 +12,7 @@ export const csvLine = (row: readonly Cell[]): string => `${row.map(csvCell).joi
 
 function csvCell(cell: Cell): string {
   if (cell === null || (typeof cell === 'number' && Number.isNaN(cell))) return '';
-  const text = String(cell);
+  // Six decimals hold every figure here to its last useful digit, and not the noise of the arithmetic.
+  const text = String(typeof cell === 'number' ? Number(cell.toFixed(6)) : cell);
   return /[",\n\r]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text;
 }

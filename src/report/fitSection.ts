@@ -75,8 +75,19 @@ function lengthTable(classes: readonly LengthClass[], spec: SpecSheet | null): H
       { head: 'Spec sheet, vertical', cell: stated('vertical') },
     );
   }
+  const starred = classes.some(({ tooFew, occupations }) => tooFew && occupations > 0);
+  const notes = [
+    ...(starred
+      ? [
+          '* too few: fewer than 10 occupations or 3 days; the figure describes these occupations and nothing more.',
+        ]
+      : []),
+    ...(spec === null
+      ? []
+      : ['The spec sheet is for ideal conditions, converted to the same kind of spread.']),
+  ];
   return html`${table('Measured by distance (shown, not fitted)', classes, columns)}
-<p class="small">* too few: fewer than 10 occupations or 3 days; the figure describes these occupations and nothing more.${spec === null ? null : ' The spec sheet is for ideal conditions, converted to the same kind of spread.'}</p>
+<p class="small">${notes.join(' ')}</p>
 `;
 }
 

@@ -6,7 +6,7 @@ import { date, type Html, html, trusted } from './html.js';
 import { marksSection } from './marksSection.js';
 import { ruleSection } from './ruleSection.js';
 import { REPORT_STYLE } from './style.js';
-import { CAUTIONS, GLOSSARY } from './words.js';
+import { CAUTIONS, GLOSSARY, LIMITS } from './words.js';
 
 /** A drawn chart: an SVG picture and what it shows, in words. */
 export interface ReportPicture {
@@ -50,7 +50,7 @@ ${accountSection(results)}
 ${messagesSection(results)}
 ${METHOD}
 <section id="glossary"><h2>Words</h2><dl>${GLOSSARY.map(([word, meaning]) => html`<dt>${word}</dt><dd>${meaning}</dd>\n`)}</dl></section>
-<section id="cautions"><h2>Cautions</h2><div class="cautions">${CAUTIONS.map((caution) => html`<p>${caution}</p>`)}</div></section>
+<section id="cautions"><h2>Cautions</h2><div class="cautions">${[...CAUTIONS, ...LIMITS].map((caution) => html`<p>${caution}</p>`)}</div></section>
 </main>
 </body>
 </html>

@@ -2,23 +2,20 @@ import type { Rule } from '../rule/index.js';
 import type { Results } from '../study/index.js';
 import { km, kmDown, NOT_GIVEN, plural } from './format.js';
 import { date, type Html, html, trusted } from './html.js';
-import { capital, ruleParts } from './words.js';
+import { capital, ruleParts, unseenDays, whyNoRule } from './words.js';
 
 /** The rules, before everything else. */
-export function ruleSection({ rules, fits }: Results): Html {
+export function ruleSection(results: Results): Html {
+  const { rules } = results;
   if (rules.length === 0) {
-    const why =
-      fits.length === 0
-        ? 'no fit was possible; the messages below say why'
-        : 'the study file states no tolerance';
-    return html`<section id="rule"><h2>How far from the base</h2><p>There is no rule: ${why}.</p></section>\n`;
+    return html`<section id="rule"><h2>How far from the base</h2><p>There is no rule: ${whyNoRule(results)}.</p></section>\n`;
   }
   return html`<section id="rule"><h2>How far from the base</h2>
 <ul class="rules">
 ${rules.map(ruleItem)}</ul>
-${conditions(rules[0]!)}
-<p class="small">The distance is a lower limit: with the stated confidence the true one is at least as long. It is
-rounded down. It holds over all days together, so on a worse day fewer positions are within the limit.</p>
+${conditionsOfComponents(rules)}
+<p class="small">The distance is a lower limit, found from the days observed and rounded down. It holds over all days together,
+so on a worse day fewer positions are within the limit. ${rules[0]!.conditions.days > 0 ? unseenDays(rules[0]!.conditions.days) : null}</p>
 </section>
 `;
 }
@@ -33,8 +30,22 @@ function ruleItem(rule: Rule): Html {
 `;
 }
 
-function conditions({ conditions: c }: Rule): Html {
+/** What the rules rest on; said once where both components rest on the same. */
+function conditionsOfComponents(rules: readonly Rule[]): Html[] {
+  const first = rules.filter(
+    (rule, k) => rules.findIndex(({ component }) => component === rule.component) === k,
+  );
+  const alike = first.every(
+    ({ conditions: c }) => JSON.stringify(c) === JSON.stringify(first[0]!.conditions),
+  );
+  return alike
+    ? [conditions(first[0]!, 'These rules')]
+    : first.map((rule) => conditions(rule, `The ${rule.component} rules`));
+}
+
+function conditions({ conditions: c }: Rule, what: string): Html {
+  if (c.occupations === 0) return html`<p>${what} rest on no occupation.</p>`;
   const bases = c.bases.length === 0 ? NOT_GIVEN : c.bases.join(', ');
-  return html`<p>These rules rest on ${plural(c.occupations, 'occupation')} of ${plural(c.marks.length, 'mark')} on
+  return html`<p>${what} rest on ${plural(c.occupations, 'occupation')} of ${plural(c.marks.length, 'mark')} on
 ${plural(c.days, 'day')} from ${date(c.from)} to ${date(c.to)}, measured from ${c.bases.length === 1 ? 'base' : 'bases'} ${bases}.</p>`;
 }

@@ -6,7 +6,6 @@ body { margin: 0; color: var(--ink); background: #fff; font: 16px/1.55 Georgia, 
 main { max-width: 50rem; margin: 0 auto; padding: 2.5rem 1.25rem 4rem; }
 h1 { font-size: 1.9rem; line-height: 1.2; margin: 0 0 .3rem; }
 h2 { font-size: 1.3rem; margin: 2.6rem 0 .6rem; padding-top: .6rem; border-top: 2px solid var(--ink); break-after: avoid; }
-h3 { font-size: 1.05rem; margin: 1.6rem 0 .4rem; break-after: avoid; }
 p { margin: .5rem 0; }
 .lead { color: #4a5a66; margin-bottom: 1.6rem; }
 .rules { list-style: none; margin: 1rem 0; padding: 0; }
@@ -22,9 +21,9 @@ th { border-bottom: 1.5px solid var(--ink); }
 td.number { text-align: right; white-space: nowrap; } th.number { text-align: right; } .date { white-space: nowrap; }
 tr { break-inside: avoid; }
 thead { display: table-header-group; }
-.small, .note { font: .86rem/1.45 'Helvetica Neue', Arial, sans-serif; color: #4a5a66; }
+.small { font: .86rem/1.45 'Helvetica Neue', Arial, sans-serif; color: #4a5a66; }
 figure { margin: 1.2rem 0; break-inside: avoid; overflow-x: auto; }
-figure img { width: 100%; min-width: 34rem; height: auto; display: block; }
+figure img { width: 100%; min-width: 27rem; height: auto; display: block; }
 dl { display: grid; grid-template-columns: max-content 1fr; gap: .25rem 1rem; }
 dt { font-weight: bold; } dd { margin: 0; }
 .messages li { margin: .35rem 0; overflow-wrap: anywhere; }
@@ -39,6 +38,5 @@ dt { font-weight: bold; } dd { margin: 0; }
   figure, .scroll { overflow: visible; } figure img { min-width: 0; width: auto; max-width: 100%; max-height: 102mm; margin: 0 auto; }
   table { break-inside: avoid; } caption { break-after: avoid; }
   h2 { margin-top: 1.6rem; } table { font-size: 8.6pt; }
-  a { color: inherit; text-decoration: none; }
 }
 `;

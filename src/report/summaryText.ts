@@ -1,7 +1,7 @@
 import { formatMessage, type Message } from '../logs/index.js';
 import type { FileResult, Results } from '../study/index.js';
 import { count, plural } from './format.js';
-import { fitSentence, ruleSentence, setAsideWords } from './words.js';
+import { fitSentence, ruleSentence, setAsideWords, whyNoRule } from './words.js';
 
 /** What a run found, in a few lines for a terminal. */
 export function summaryText(results: Results): string {
@@ -9,7 +9,7 @@ export function summaryText(results: Results): string {
     results.study.title,
     '',
     ...results.rules.map(ruleSentence),
-    ...(results.rules.length === 0 ? ['No rule.'] : []),
+    ...(results.rules.length === 0 ? [`There is no rule: ${whyNoRule(results)}.`] : []),
     '',
     ...results.fits.map(fitSentence),
     ...(results.fits.length === 0 ? ['No fit.'] : []),

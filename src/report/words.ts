@@ -1,5 +1,5 @@
 import type { Rule } from '../rule/index.js';
-import type { FileResult, FitResult } from '../study/index.js';
+import type { FileResult, FitResult, Results } from '../study/index.js';
 import { count, kmDown, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
 
 /** Printed with every result. */
@@ -8,6 +8,18 @@ export const CAUTIONS: readonly string[] = [
   'It is no substitute for redundant checks, for local codes, for the accuracy standards of clients and of the law, or for the judgement of a licensed surveyor.',
   'Positions that the safety of people hangs on need independent verification.',
 ];
+
+/** What a reader must know of how the numbers of this version were found. */
+export const LIMITS: readonly string[] = [
+  'Positions that were called fixed with wrong ambiguities are not looked for: a few of them make constant and ppm larger.',
+  'Errors of the coordinates of marks are part of the errors: with few marks, or poor coordinates, they pass for ppm.',
+  'Single days, hours and the state of the ionosphere are not judged.',
+];
+
+/** Days worse than all those observed may have been missed: with none among G, they are at most about 3/G (95 %). */
+export function unseenDays(days: number): string {
+  return `All of this is said of the ${days} days observed. Days worse than any of these may be as many as ${percent(Math.min(1, 3 / days))} without one having been met.`;
+}
 
 /** What the words of the report mean. */
 export const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
@@ -39,7 +51,12 @@ const positions = (rule: Rule): string =>
 export function ruleParts(rule: Rule): { readonly head: string; readonly body: string } {
   const { maximumBaselineKm: limit, reason } = rule;
   if (limit === null) return { head: 'No rule', body: `for ${positions(rule)}: ${reason}.` };
-  if (limit === 0) return { head: 'At no distance', body: `can be promised ${positions(rule)}: ${reason}.` };
+  if (limit === 0) {
+    return {
+      head: 'At no distance from the base',
+      body: `${positions(rule)} cannot be promised: ${reason}.`,
+    };
+  }
   const body = `${positions(rule)}, with ${percent(rule.confidence)} confidence over all days together.`;
   return {
     head: `Up to ${kmDown(limit)}\u00a0km from the base`,
@@ -50,8 +67,14 @@ export function ruleParts(rule: Rule): { readonly head: string; readonly body: s
 /** A rule as one sentence that can stand in a method statement. */
 export function ruleSentence(rule: Rule): string {
   const { head, body } = ruleParts(rule);
-  return rule.maximumBaselineKm ? `${head}: ${body}` : `${head} ${body}`;
+  return rule.maximumBaselineKm === null ? `${head} ${body}` : `${head}: ${body}`;
 }
+
+/** Why a study has no rule at all. */
+export const whyNoRule = ({ fits }: Results): string =>
+  fits.length === 0
+    ? 'no fit was possible; the messages below say why'
+    : 'the study file states no tolerance';
 
 /** A fit as one sentence. */
 export function fitSentence(fit: FitResult): string {

@@ -1,5 +1,6 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
 import { type Component, type ErrorModel, sigmaAtMm, sigmaUpperLimitMm } from '../fit/index.js';
+import { componentRows } from './componentRows.js';
 import { longestSupportedKm } from './supportedLength.js';
 import { type Tolerance, toleranceFactor } from './tolerance.js';
 
@@ -48,25 +49,26 @@ const STEP_KM = 0.1;
  * @throws InputError when a column is missing
  */
 export function maximumBaseline(errors: ErrorsInput, model: ErrorModel, tolerance: Tolerance): Rule {
-  const supportedKm = longestSupportedKm(errors);
+  const supportedKm = longestSupportedKm(errors, tolerance.component);
   const common = {
     ...tolerance,
     method: 'pooled',
     longestSupportedKm: supportedKm,
-    conditions: conditionsOf(errors),
+    conditions: conditionsOf(errors, tolerance.component),
   } as const;
   const reason = whyNoRule(model, tolerance, supportedKm);
   if (reason !== null || supportedKm === null) {
     return { ...common, maximumBaselineKm: null, bestEstimateKm: null, allDaysKm: null, reason };
   }
-  const factor = toleranceFactor(tolerance.component, tolerance.share);
+  const unequal = model.notes.some(({ code }) => code === 'unequal-axes');
+  const factor = toleranceFactor(tolerance.component, tolerance.share, unequal);
   const allowedMm = tolerance.limitMm / factor;
   const best = lengthWithin(model.variance.displayA, model.variance.displayB, allowedMm);
   const bestEstimateKm = best === null ? 0 : Math.min(best, supportedKm);
   const holds = (km: number): boolean => sigmaUpperLimitMm(model, km, tolerance.confidence)! <= allowedMm;
   let steps = 0;
   while ((steps + 1) * STEP_KM <= supportedKm && holds((steps + 1) * STEP_KM)) steps += 1;
-  const reached = Math.round(steps) / 10;
+  const reached = steps / 10;
   const capped = (steps + 1) * STEP_KM > supportedKm && holds(supportedKm);
   const maximumBaselineKm = capped ? supportedKm : reached;
   return {
@@ -79,6 +81,20 @@ export function maximumBaseline(errors: ErrorsInput, model: ErrorModel, toleranc
       : maximumBaselineKm === 0
         ? zeroReason(model, tolerance, allowedMm)
         : null,
+  };
+}
+
+/** The rule of a tolerance whose component could not be fitted. */
+export function noRule(errors: ErrorsInput, tolerance: Tolerance, reason: string): Rule {
+  return {
+    ...tolerance,
+    method: 'pooled',
+    maximumBaselineKm: null,
+    bestEstimateKm: null,
+    allDaysKm: null,
+    longestSupportedKm: null,
+    reason,
+    conditions: conditionsOf(errors, tolerance.component),
   };
 }
 
@@ -99,8 +115,8 @@ function whyNoRule(model: ErrorModel, { share }: Tolerance, supportedKm: number 
     return `a share of ${percent(share)} cannot be derived from an RMS: errors of bad days are rarer and larger than a Gaussian factor allows for`;
   }
   if (supportedKm === null) return 'no length has 20 occupations on 5 days and 2 marks at or beyond it';
-  if (model.information.number < LEAST_INFORMATION) {
-    return `the shots say too little of distance (information number ${model.information.number.toFixed(0)}, a rule needs ${LEAST_INFORMATION}): add days with far shots`;
+  if (model.informationNumber < LEAST_INFORMATION) {
+    return `the shots say too little of distance (information number ${model.informationNumber.toFixed(0)}, a rule needs ${LEAST_INFORMATION}): add days with far shots`;
   }
   return null;
 }
@@ -118,13 +134,16 @@ function zeroReason(model: ErrorModel, { share, limitMm }: Tolerance, allowedMm:
     : `the upper limit of the constant exceeds the tolerance: ${needed}; more days narrow the limit`;
 }
 
-function conditionsOf(errors: ErrorsInput): RuleConditions {
+function conditionsOf(errors: ErrorsInput, component: Component): RuleConditions {
   const columns = errorColumns(errors);
-  const distinct = (name: string): string[] =>
-    [...new Set(columns.texts(name, 'the conditions of a rule'))].sort();
+  const rows = componentRows(columns, component);
+  const distinct = (name: string): string[] => {
+    const texts = columns.texts(name, 'the conditions of a rule');
+    return [...new Set(rows.map((i) => texts[i]!))].sort();
+  };
   const days = distinct('day');
   return {
-    occupations: columns.length,
+    occupations: rows.length,
     days: days.length,
     from: days[0] ?? '',
     to: days.at(-1) ?? '',

@@ -1,4 +1,6 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import type { Component } from '../fit/index.js';
+import { componentRows } from './componentRows.js';
 
 /** Data at or beyond a length without which no rule reaches it (rules of thumb). */
 const FEWEST_OCCUPATIONS = 20;
@@ -7,15 +9,16 @@ const FEWEST_MARKS = 2;
 
 /**
  * The longest length with at least 20 occupations on 5 days and 2 marks at or beyond it, km; null when there is none.
- * @throws InputError when `day`, `mark` or `baselineKm` is missing
+ * Only occupations whose error is known in the component count.
+ * @throws InputError when `day`, `mark`, `baselineKm` or a column of the component is missing
  */
-export function longestSupportedKm(errors: ErrorsInput): number | null {
+export function longestSupportedKm(errors: ErrorsInput, component: Component): number | null {
   const columns = errorColumns(errors);
   const needed = 'the supported length';
   const lengths = columns.numbers('baselineKm', needed);
   const days = columns.texts('day', needed);
   const marks = columns.texts('mark', needed);
-  const farthestFirst = Array.from(lengths.keys()).sort((i, j) => lengths[j]! - lengths[i]!);
+  const farthestFirst = componentRows(columns, component).sort((i, j) => lengths[j]! - lengths[i]!);
   const [seenDays, seenMarks] = [new Set<string>(), new Set<string>()];
   for (const [k, i] of farthestFirst.entries()) {
     seenDays.add(days[i]!);

@@ -14,7 +14,10 @@ export interface Tolerance {
 /**
  * How many σ hold a share p of Gaussian errors: √(-ln(1 - p)) times the radial RMS (Rayleigh, equal axes), or the
  * normal quantile at (1 + p)/2 times the vertical RMS.
+ * @param unequalAxes east and north differ: the normal quantile, which is safe for any ratio of the axes
  */
-export function toleranceFactor(component: Component, share: number): number {
-  return component === 'horizontal' ? Math.sqrt(-Math.log1p(-share)) : normalQuantile((1 + share) / 2);
+export function toleranceFactor(component: Component, share: number, unequalAxes = false): number {
+  return component === 'horizontal' && !unequalAxes
+    ? Math.sqrt(-Math.log1p(-share))
+    : normalQuantile((1 + share) / 2);
 }

@@ -28,7 +28,9 @@ export interface SummaryRow {
 export type SplitBy = string | { readonly column: string; readonly edges: readonly number[] };
 
 /** Classes of baseline length for tables and charts, km. */
-export const LENGTH_EDGES_KM: readonly number[] = [0, 1, 2, 3, 5, 7.5, 10, 15, 20, 30, 40, 60, 80, 100, 150];
+export const LENGTH_EDGES_KM: readonly number[] = [
+  0, 1, 2, 3, 5, 7.5, 10, 15, 20, 30, 40, 60, 80, 100, 150, 250, 500, 1000,
+];
 
 const FEWEST_OCCUPATIONS = 10;
 const FEWEST_DAYS = 3;

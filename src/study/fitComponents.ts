@@ -44,7 +44,7 @@ const title = (component: Component): string => (component === 'horizontal' ? 'H
 export function fitResult(model: ErrorModel, errors: readonly OccupationError[]): FitResult {
   const { component, reference, form, screened, basis, confidence, constantMm, ppm, ppmIfIndependent } =
     model;
-  const { interval, information, occupations, days, marks, shortestKm, longestKm, notes } = model;
+  const { interval, informationNumber, occupations, days, marks, shortestKm, longestKm, notes } = model;
   return {
     component,
     reference,
@@ -58,7 +58,7 @@ export function fitResult(model: ErrorModel, errors: readonly OccupationError[])
     ppm,
     ppmIfIndependent,
     interval,
-    informationNumber: information.number,
+    informationNumber,
     occupations,
     days,
     marks,

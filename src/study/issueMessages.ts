@@ -8,9 +8,11 @@ type Issue = z.core.$ZodIssue;
 /** What the schema found wrong with `value`, in sentences. */
 export function issueMessages(issue: Issue, value: unknown, placeOf: PlaceOf): Message[] {
   const { path } = issue;
-  if (issue.code === 'unrecognized_keys') return issue.keys.map((key) => unknownKey(key, path, placeOf));
+  if (issue.code === 'unrecognized_keys')
+    return issue.keys.map((key) => unknownKey(key, path, value, placeOf));
   // The key itself is wrong: its path ends with it.
-  if (issue.code === 'invalid_key') return [unknownKey(String(path.at(-1)), path.slice(0, -1), placeOf)];
+  if (issue.code === 'invalid_key')
+    return [unknownKey(String(path.at(-1)), path.slice(0, -1), value, placeOf)];
   if (issue.code === 'invalid_union') {
     const branch = nearestBranch(issue.errors);
     if (branch !== null) {
@@ -69,8 +71,8 @@ function expectations(issue: Issue): string[] {
   }
 }
 
-function unknownKey(key: string, path: Path, placeOf: PlaceOf): Message {
-  const known = knownKeys(path);
+function unknownKey(key: string, path: Path, value: unknown, placeOf: PlaceOf): Message {
+  const known = knownKeys(path, value);
   const allowed = known.length === 0 ? '' : ` Known here: ${known.join(', ')}.`;
   const text = `The key ${quoted(key)} is not known.${suggestion(key, known) || allowed} Correct or remove it.`;
   return message('error', 'unknown-key', text, placeOf([...path, key]));

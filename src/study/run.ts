@@ -8,7 +8,7 @@ import {
 } from '../errors/index.js';
 import type { ErrorModel } from '../fit/index.js';
 import { type Message, readLogs, type SetAsideRow } from '../logs/index.js';
-import { maximumBaseline } from '../rule/index.js';
+import { maximumBaseline, noRule } from '../rule/index.js';
 import { markMeans } from '../split/index.js';
 import { fitComponents, fitResult } from './fitComponents.js';
 import { leaveOutDays } from './leaveOutDays.js';
@@ -55,7 +55,9 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
     setAside,
     messages: [...controlMessages, ...formed.messages, ...messages],
   });
-  return { control, errors, setAside, visits: formed.visits, results };
+  const left = new Set(study.leaveOutDays);
+  const visits = formed.visits.filter(({ day }) => !left.has(day));
+  return { control, errors, setAside, visits, results };
 }
 
 /**
@@ -66,11 +68,11 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const read = await readStudyErrors(study, options);
   const { errors } = read;
   const { models, messages } = fitComponents(errors, study);
-  const rules = study.tolerances.flatMap((tolerance) =>
-    models
-      .filter(({ component }) => component === tolerance.component)
-      .map((model) => maximumBaseline(errors, model, tolerance)),
-  );
+  const rules = study.tolerances.map((tolerance) => {
+    const model = models.find(({ component }) => component === tolerance.component);
+    if (model !== undefined) return maximumBaseline(errors, model, tolerance);
+    return noRule(errors, tolerance, `no fit of the ${tolerance.component} component was possible`);
+  });
   const results: Results = {
     ...read.results,
     messages: [...read.results.messages, ...messages, ...ruleMessages(rules.length)],

@@ -114,6 +114,24 @@ describe('demo and run', () => {
     expect(ppmwise(['run', join(demo, 'study.yaml'), '--out', other, '--force']).code).toBe(0);
     expect(readFileSync(join(other, 'thesis.txt'), 'utf8')).toBe('mine');
   });
+  it("keeps the user's own files in folders named like its own, also with --force", () => {
+    const mine = join(folder, 'mine-too');
+    mkdirSync(join(mine, 'charts'), { recursive: true });
+    writeFileSync(join(mine, 'charts/site-plan.svg'), 'mine');
+    expect(ppmwise(['run', join(demo, 'study.yaml'), '--out', mine, '--force']).code).toBe(0);
+    expect(readFileSync(join(mine, 'charts/site-plan.svg'), 'utf8')).toBe('mine');
+  });
+  it('keeps the old result when a run fails, and runs again afterwards', () => {
+    const kept = join(folder, 'kept');
+    expect(ppmwise(['run', join(demo, 'study.yaml'), '--out', kept]).code).toBe(0);
+    const marks = readFileSync(join(demo, 'marks.csv'), 'utf8');
+    writeFileSync(join(demo, 'marks.csv'), 'nonsense');
+    const before = readFileSync(join(kept, 'results.json'), 'utf8');
+    expect(ppmwise(['run', join(demo, 'study.yaml'), '--out', kept]).code).toBe(2);
+    expect(readFileSync(join(kept, 'results.json'), 'utf8')).toBe(before);
+    writeFileSync(join(demo, 'marks.csv'), marks);
+    expect(ppmwise(['run', join(demo, 'study.yaml'), '--out', kept]).code).toBe(0);
+  });
   it('ends quietly when its reader closes the pipe', () => {
     const { status, stderr } = spawnSync(
       'bash',

@@ -66,10 +66,9 @@ describe('thin and odd data', () => {
   });
   it('finds no constant without short shots', () => {
     const model = fitErrorModel(made(30, [20, 25, 30, 60, 62], 0.2, 1), { component: 'vertical' });
-    if (model.variance.constantAtFloor) {
-      expect(model.constantMm).toMatchObject({ estimate: 0, low: 0 });
-      expect(model.notes.map(({ code }) => code)).toContain('constant-not-identified');
-    } else expect(model.constantMm.low).toBeLessThan(5);
+    expect(model.variance.constantAtFloor).toBe(true);
+    expect(model.constantMm).toMatchObject({ estimate: 0, low: 0 });
+    expect(model.notes.map(({ code }) => code)).toContain('constant-not-identified');
     expect(model.ppm.estimate).toBeGreaterThan(0.8);
   });
   it('says when coordinates are rounded, a day or a mark dominates, or the mean is off', () => {
@@ -163,6 +162,36 @@ describe('the score interval', () => {
     expect(used).toBeGreaterThan(30);
     // Documented coverage 0.93-0.98: fewer than 85 % of at least 31 would be chance of about one in two hundred.
     expect(held / used).toBeGreaterThan(0.85);
+  });
+});
+
+describe('what thin data cannot say', () => {
+  it('an upper limit that no trial rejects is not printed', () => {
+    // One shot a day on four days: the day score is bounded by the number of days and never rejects.
+    for (let seed = 1; seed <= 30; seed++) {
+      const rows = [1, 8, 2, 30].map((km, k) => ({
+        ...made(1, [km], 8, 1, seed + k)[0]!,
+        day: `2025-01-0${k + 1}`,
+      }));
+      const { ppm, notes } = fitErrorModel(rows, { component: 'vertical' });
+      if (ppm.high !== null) expect(ppm.high).toBeLessThan(1000);
+      else expect(notes.map(({ code }) => code)).toContain('ppm-without-limit');
+      for (const { text } of notes) expect(text).not.toMatch(/Infinity|NaN/);
+    }
+  });
+  it('a ppm from a day or two is not printed when the shots say nothing of distance', () => {
+    const model = fitErrorModel(made(1, [0.5, 2], 8, 1), { component: 'vertical' });
+    expect(model.ppm.estimate).toBeNull();
+    expect(model.notes.map(({ code }) => code)).toContain('ppm-unknown');
+  });
+  it('calls the ppm not distinguishable exactly when its interval begins at zero', () => {
+    for (let seed = 1; seed <= 60; seed++) {
+      const { ppm, notes, informationNumber } = fitErrorModel(made(12, [0.5, 1, 2, 4, 9], 8, 0.8, seed), {
+        component: 'vertical',
+      });
+      const told = notes.some(({ code }) => code === 'ppm-not-distinguishable');
+      if (informationNumber >= 5) expect(told).toBe(ppm.low === 0);
+    }
   });
 });
 

@@ -119,7 +119,7 @@ describe('a rule in words', () => {
       'No rule for 95\u00a0% of horizontal positions within 25\u00a0mm: 9 days are too few.',
     );
     expect(ruleSentence(rule({ maximumBaselineKm: 0, reason: 'the constant alone exceeds it' }))).toBe(
-      'At no distance can be promised 95\u00a0% of horizontal positions within 25\u00a0mm: the constant alone exceeds it.',
+      'At no distance from the base: 95\u00a0% of horizontal positions within 25\u00a0mm cannot be promised: the constant alone exceeds it.',
     );
   });
 });

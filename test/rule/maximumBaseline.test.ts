@@ -86,8 +86,8 @@ describe('a rule', () => {
   });
   it('never goes beyond the length that the data support, and says so', () => {
     const capped = rule(500);
-    expect(capped.maximumBaselineKm).toBe(longestSupportedKm(rows));
-    expect(capped.bestEstimateKm).toBe(longestSupportedKm(rows));
+    expect(capped.maximumBaselineKm).toBe(longestSupportedKm(rows, 'horizontal'));
+    expect(capped.bestEstimateKm).toBe(longestSupportedKm(rows, 'horizontal'));
     expect(capped.reason).toContain('nothing is known beyond');
   });
   it('is 0 with a reason when the constant alone exceeds the tolerance', () => {
@@ -110,6 +110,27 @@ describe('a rule', () => {
     expect(of(some(15)).maximumBaselineKm).toBeGreaterThan(0);
     expect(of(rows.filter(({ baselineKm }) => baselineKm < 1.5)).maximumBaselineKm).toBeNull();
   });
+  it('rests on the occupations whose error is known in its component', () => {
+    const near = rows.map((row) => (row.baselineKm > 9 ? { ...row, up: Number.NaN } : row));
+    const vertical = maximumBaseline(
+      near,
+      fitErrorModel(near, { component: 'vertical' }),
+      tolerance(200, { component: 'vertical' }),
+    );
+    expect(vertical.maximumBaselineKm!).toBeLessThanOrEqual(9);
+    expect(vertical.conditions.occupations).toBe(near.filter(({ up }) => !Number.isNaN(up)).length);
+    expect(vertical.conditions.marks.length).toBeLessThan(rule(25).conditions.marks.length);
+  });
+  it('takes the factor of a single axis when east and north differ', () => {
+    const oneSided = rows.map((row) => ({ ...row, east: row.east * 0.2 }));
+    const fit = fitErrorModel(oneSided, { component: 'horizontal' });
+    expect(fit.notes.map(({ code }) => code)).toContain('unequal-axes');
+    const { bestEstimateKm } = maximumBaseline(oneSided, fit, tolerance(18));
+    expect(bestEstimateKm).toBeCloseTo(
+      lengthWithin(fit.variance.displayA, fit.variance.displayB, 18 / 1.9599639845)!,
+      6,
+    );
+  });
   it('states its conditions', () => {
     const { conditions } = rule(25);
     expect(conditions.days).toBe(30);
@@ -120,13 +141,17 @@ describe('a rule', () => {
 
 describe('the supported length', () => {
   const shots = (mark: string, baselineKm: number, count: number, days: number) =>
-    Array.from({ length: count }, (_, k) => ({ mark, baselineKm, day: `d${k % days}` }));
+    Array.from({ length: count }, (_, k) => ({ mark, baselineKm, day: `d${k % days}`, up: 1 }));
   it('needs 20 occupations on 5 days and 2 marks at or beyond it', () => {
     const near = shots('A', 1, 30, 10);
-    expect(longestSupportedKm([...near, ...shots('B', 10, 10, 5), ...shots('C', 20, 10, 5)])).toBe(10);
-    expect(longestSupportedKm([...near, ...shots('B', 10, 40, 10)])).toBe(1);
-    expect(longestSupportedKm([...near, ...shots('B', 10, 10, 4), ...shots('C', 20, 10, 4)])).toBe(1);
-    expect(longestSupportedKm(near)).toBeNull();
+    expect(
+      longestSupportedKm([...near, ...shots('B', 10, 10, 5), ...shots('C', 20, 10, 5)], 'vertical'),
+    ).toBe(10);
+    expect(longestSupportedKm([...near, ...shots('B', 10, 40, 10)], 'vertical')).toBe(1);
+    expect(
+      longestSupportedKm([...near, ...shots('B', 10, 10, 4), ...shots('C', 20, 10, 4)], 'vertical'),
+    ).toBe(1);
+    expect(longestSupportedKm(near, 'vertical')).toBeNull();
   });
 });
 
