@@ -5,6 +5,7 @@ import {
   covariance,
   estimateVariance,
   fitErrorModel,
+  fitWithoutEachDay,
   naiveCovariance,
   varianceLimits,
 } from '../../src/fit/index.js';
@@ -83,6 +84,15 @@ describe.each(SETS)('radial errors of %s', (name) => {
     });
     // The radial square is the pooled-component fit times two.
     close(model.variance.A, 2 * H.pooled_component.A, 1e-8);
+  });
+  it('leaves out each day as R does', () => {
+    const { day, A, B } = U.jackknife;
+    const without = fitWithoutEachDay(rows, { component: 'vertical' });
+    expect(without.map((each) => each.day)).toEqual(day);
+    without.forEach(({ constantMm, ppm }, k) => {
+      close(constantMm! ** 2, A[k], 1e-7);
+      close(ppm! ** 2, B[k], 1e-7);
+    });
   });
   it('vertical fit gives the intervals of R', () => {
     const model = fitErrorModel(rows, { component: 'vertical' });
