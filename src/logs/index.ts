@@ -5,7 +5,7 @@ export {
   type TotalAccount,
   totalAccount,
 } from './account.js';
-export { ENCODINGS, type Encoding } from './byteChunks.js';
+export { ENCODINGS, type Encoding, readHead } from './byteChunks.js';
 export { DELIMITERS } from './cells.js';
 export {
   type CoordinateColumns,
@@ -39,6 +39,19 @@ export {
   type RowReason,
   type SetAsideRow,
 } from './reasons.js';
+export {
+  type AutoLayout,
+  autoLayout,
+  type Doubt,
+  layoutYaml,
+  type PreviewRow,
+  type Recognition,
+  type RecognizedLog,
+  type RecognizeOptions,
+  recognitionText,
+  recognizeLayout,
+  type UnrecognizedLog,
+} from './recognize/index.js';
 export { type LogResolution, roundingSigmaMm } from './resolution.js';
 export { COLUMN_ROLES, type ColumnRole, roleOfHeader } from './roles.js';
 export { DID_YOU_MEAN, RowMessages } from './rowMessages.js';

@@ -53,6 +53,7 @@ const SPELLINGS: Readonly<Partial<Record<ColumnRole, readonly string[]>>> = {
     'datetimeutc',
     'localtime',
     'gpstime',
+    'gpst',
   ],
   date: ['day', 'surveydate', 'obsdate'],
   timeOfDay: ['clock', 'clocktime', 'hhmmss', 'timeofday'],

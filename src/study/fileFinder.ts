@@ -2,14 +2,8 @@ import { statSync } from 'node:fs';
 import { relative, resolve } from 'node:path';
 import { globSync } from 'tinyglobby';
 import type { ControlFile } from '../control/index.js';
-import {
-  type CoordinateSystem,
-  coordinateColumns,
-  type LogFile,
-  type Message,
-  message,
-  quoted,
-} from '../logs/index.js';
+import { type CoordinateSystem, coordinateColumns, type Message, message, quoted } from '../logs/index.js';
+import type { FoundLog } from './logLayouts.js';
 import type { Path, PlaceOf } from './places.js';
 import type { StudySettings } from './settings.js';
 
@@ -22,8 +16,6 @@ export interface NamedFile {
 /** Finds the files that a study names, and gathers what is wrong with them. */
 export class FileFinder {
   readonly mistakes: Message[] = [];
-  /** Path of a log → number of its entry in the study file. */
-  readonly #entryOf = new Map<string, number>();
 
   constructor(
     readonly settings: StudySettings,
@@ -84,12 +76,12 @@ export class FileFinder {
   }
 
   /** Lists of stays, by log. */
-  markTimes(logs: readonly LogFile[]): Map<string, NamedFile> {
+  markTimes(logs: readonly FoundLog[]): Map<string, NamedFile> {
     const lists = new Map<string, NamedFile>();
     this.settings.logs.forEach(({ markTimes }, k) => {
       const list = markTimes === undefined ? null : this.#file(markTimes, ['logs', k, 'markTimes']);
       if (list === null) return;
-      for (const { file } of logs.filter((log) => this.#entryOf.get(log.path) === k)) lists.set(file, list);
+      for (const { file } of logs.filter(({ entry }) => entry === k)) lists.set(file, list);
     });
     return lists;
   }
@@ -105,9 +97,8 @@ export class FileFinder {
     return null;
   }
 
-  /** The logs; those without a layout have theirs recognised from their first lines. */
-  logs(): LogFile[] {
-    const found = new Map<string, LogFile>();
+  logs(): FoundLog[] {
+    const found = new Map<string, FoundLog>();
     this.settings.logs.forEach(({ files, layout, coordinates, nearestMarkM, markTimes }, k) => {
       const system = this.#system(coordinates, ['logs', k, 'coordinates']);
       for (const pattern of [files].flat()) {
@@ -126,11 +117,11 @@ export class FileFinder {
         for (const path of paths) {
           // A file that two patterns match is one file: its rows must not count twice.
           if (found.has(path)) continue;
-          this.#entryOf.set(path, k);
           found.set(path, {
             path,
             file: relative(this.folder, path),
-            layout: layout ?? { kind: 'delimited' },
+            layout: layout ?? null,
+            entry: k,
             coordinates: system,
             nearestMarkM: nearestMarkM ?? null,
             marksByTime: markTimes !== undefined,

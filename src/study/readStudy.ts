@@ -4,6 +4,7 @@ import { dirname, resolve } from 'node:path';
 import { InputError, inputError } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 import { FileFinder } from './fileFinder.js';
+import { logLayouts } from './logLayouts.js';
 import { parseStudyText } from './parseStudyText.js';
 import type { StudySettings } from './settings.js';
 import type { Study } from './study.js';
@@ -25,20 +26,23 @@ export async function readStudy(path: string): Promise<Study> {
   }
   const { settings, placeOf } = parseStudyText(await readFile(file, 'utf8'), path);
   const finder = new FileFinder(settings, dirname(file), placeOf);
-  const [marks, bases, logs] = [finder.control('marks'), finder.control('bases'), finder.logs()];
-  const [namePattern, aliases, markTimes] = [finder.namePattern(), finder.aliases(), finder.markTimes(logs)];
+  const [marks, bases, found] = [finder.control('marks'), finder.control('bases'), finder.logs()];
+  const [namePattern, aliases, markTimes] = [finder.namePattern(), finder.aliases(), finder.markTimes(found)];
   if (finder.mistakes.length > 0 || marks === null || bases === null) throw new InputError(finder.mistakes);
+  const timeZone = settings.timeZone ?? null;
+  const { logs, messages } = await logLayouts(found, { timeZone, heights: settings.heights?.kind });
   return {
     file,
     folder: finder.folder,
     title: settings.title,
-    timeZone: settings.timeZone ?? null,
+    timeZone,
     marks,
     bases,
     namePattern,
     aliases,
     markTimes,
     logs,
+    messages,
     period: settings.period ?? null,
     gapSeconds: settings.occupations.gapSeconds,
     windowSeconds: settings.occupations.windowSeconds ?? null,

@@ -53,7 +53,7 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
     formed,
     errors,
     setAside,
-    messages: [...controlMessages, ...formed.messages, ...messages],
+    messages: [...study.messages, ...controlMessages, ...formed.messages, ...messages],
   });
   const left = new Set(study.leaveOutDays);
   const visits = formed.visits.filter(({ day }) => !left.has(day));

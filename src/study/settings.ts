@@ -173,8 +173,8 @@ export const studySchema = z.strictObject({
   coordinates: coordinates.default('geographic'),
   heights: z
     .strictObject({ kind: z.literal('ellipsoidal') })
-    .default({ kind: 'ellipsoidal' })
-    .describe('All heights are ellipsoidal.'),
+    .optional()
+    .describe('All heights are ellipsoidal; state it where a column is named elevation.'),
   marks: marksFile.describe('File of the marks: mark and coordinates.'),
   bases: controlFile.describe('File of the bases: base, coordinates and mounting.'),
   logs: z.array(log).min(1),

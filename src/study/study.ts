@@ -1,5 +1,5 @@
 import type { ControlFile } from '../control/index.js';
-import type { LogFile } from '../logs/index.js';
+import type { LogFile, Message } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 
 /** A study ready to run: settings with every default filled in, files found. */
@@ -17,6 +17,8 @@ export interface Study {
   /** Log → list of stays on marks. */
   readonly markTimes: ReadonlyMap<string, { readonly path: string; readonly file: string }>;
   readonly logs: readonly LogFile[];
+  /** What is to be told of the layouts that were recognised. */
+  readonly messages: readonly Message[];
   readonly period: { readonly from: string; readonly to: string } | null;
   readonly gapSeconds: number;
   readonly windowSeconds: number | null;

@@ -27,7 +27,6 @@ describe('a study file', () => {
     expect(parseStudyText(NEEDED, 'study.yaml').settings).toEqual({
       title: 'Check shots',
       coordinates: 'geographic',
-      heights: { kind: 'ellipsoidal' },
       marks: 'm.csv',
       bases: 'b.csv',
       logs: [{ files: 'a.csv' }],

@@ -51,6 +51,7 @@ describe('readStudy', () => {
           marksByTime: false,
         },
       ],
+      messages: [],
       period: null,
       gapSeconds: 60,
       windowSeconds: null,

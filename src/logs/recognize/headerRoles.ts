@@ -1,0 +1,73 @@
+import { quotedList } from '../messages.js';
+import type { ColumnRole } from '../roles.js';
+import type { Column } from './columns.js';
+import type { Draft } from './draft.js';
+import { roleOfName } from './headerName.js';
+
+/** Roles that decide numbers: of two columns that spell one, neither is taken. */
+const DECIDING: ReadonlySet<ColumnRole> = new Set<ColumnRole>([
+  'time',
+  'date',
+  'timeOfDay',
+  'gpsWeek',
+  'gpsSeconds',
+  'start',
+  'mark',
+  'base',
+  'latitude',
+  'longitude',
+  'height',
+  'easting',
+  'northing',
+  'x',
+  'y',
+  'z',
+  'antennaHeight',
+  'fix',
+]);
+
+/** Gives columns the roles that their names spell. */
+export function assignByHeader(draft: Draft): void {
+  const found = new Map<ColumnRole, Column[]>();
+  for (const column of draft.columns) {
+    const role = column.name === '' ? null : roleOfName(column.name);
+    if (role !== null) found.set(role, [...(found.get(role) ?? []), column]);
+  }
+  for (const [role, columns] of found) {
+    const filled = columns.filter(({ texts }) => texts.length > 0);
+    const [first = columns[0]!, ...others] = filled;
+    if (others.length === 0) draft.assign(role, first);
+    else if (DECIDING.has(role)) askRepeated(draft, role, filled);
+    else {
+      draft.assign(role, first);
+      tellRepeated(draft, role, first, others);
+    }
+  }
+}
+
+const named = (columns: readonly Column[]): string => quotedList(columns.map(({ name }) => name));
+
+function askRepeated(draft: Draft, role: ColumnRole, columns: readonly Column[]): void {
+  draft.doubt(
+    {
+      code: 'repeated-role',
+      question: `Which column is the ${role}?`,
+      because: `The columns ${named(columns)} all spell this role.`,
+      key: `layout.columns.${role}`,
+      choices: columns.map(({ reference }) => String(reference)),
+      decisive: true,
+    },
+    columns,
+  );
+}
+
+function tellRepeated(draft: Draft, role: ColumnRole, first: Column, others: readonly Column[]): void {
+  draft.doubt({
+    code: 'repeated-role',
+    question: `Is the ${role} rightly taken from ${first.label}?`,
+    because: `The columns ${named([first, ...others])} all spell this role.`,
+    key: `layout.columns.${role}`,
+    choices: [first, ...others].map(({ reference }) => String(reference)),
+    decisive: false,
+  });
+}
