@@ -10,6 +10,7 @@ import {
   rowsByMonth,
   simulateLog,
 } from '../src/campaign/index.js';
+import { pointListText } from './pointList.js';
 import { readmeText, STUDY_TEXT } from './texts.js';
 
 const mark = (
@@ -45,12 +46,12 @@ export const DEMO_OPTIONS: CampaignOptions = {
   marks: [
     mark('CP01', 0.41, 118.4, 133.7214),
     mark('CP02', 0.93, 264.2, 171.0582),
-    mark('CP03', 1.62, 31.7, 96.4437, 'partly covered'),
+    mark('CP03', 1.62, 31.7, 96.4437, 'partly'),
     mark('CP04', 2.38, 197.1, 208.3305),
     mark('CP05', 3.34, 305.6, 61.9146),
     mark('CP06', 4.71, 82.9, 318.6027),
     mark('CP07', 6.15, 171.3, 24.5518),
-    mark('CP08', 8.12, 238.5, 455.1873, 'partly covered'),
+    mark('CP08', 8.12, 238.5, 455.1873, 'partly'),
     mark('CP09', 10.44, 12.8, 12.2469),
     mark('CP10', 13.53, 128.6, 642.7791),
     mark('CP11', 17.26, 276.1, 88.0354),
@@ -77,6 +78,7 @@ export function demoStudy(): ReadonlyMap<string, string> {
     ['marks.csv', marksText(marks, truth.settings.statedMarkSigmaMm)],
     ['bases.csv', basesText([base])],
     ...[...rowsByMonth(rows)].map(([month, own]): [string, string] => [`logs/${month}.csv`, logText(own)]),
+    ['another-layout/points-2025-03-14.txt', pointListText(rows, '2025-03-14')],
     ['truth.json', `${JSON.stringify(truth, rounded, 1)}\n`],
   ];
   const paths = ['study.yaml', ...data.map(([path]) => path), 'README.md'];

@@ -125,6 +125,8 @@ const FILES: Readonly<Record<string, string>> & { readonly log: string } = {
   'study.yaml': 'the study file, with comments: start here',
   'marks.csv': 'the marks with their known coordinates',
   'bases.csv': 'the base',
+  'another-layout/points-2025-03-14.txt':
+    'one day as another controller would export it: a point list to try recognising on',
   'truth.json': 'what the positions were made from',
   'README.md': 'this page',
   log: 'the log of that month (UTC), one row a position',

@@ -40,16 +40,29 @@ export {
   sigmaAtMm,
 } from './fit/index.js';
 export {
+  type DelimitedLayout,
+  type Doubt,
   type FileAccount,
   formatMessage,
   InputError,
   type LogBatch,
   type LogFile,
   type LogLayout,
+  type LogUnits,
+  layoutYaml,
   type Message,
+  type NmeaLayout,
   type Position,
+  type PreviewRow,
+  type Recognition,
+  type RecognizedLog,
+  type RecognizeOptions,
+  readHead,
   readLogs,
+  recognitionText,
+  recognizeLayout,
   type SetAsideRow,
+  type UnrecognizedLog,
 } from './logs/index.js';
 export * from './notebook/index.js';
 export { reportHtml, summaryText } from './report/index.js';

@@ -46,6 +46,7 @@ describe('demo and run', () => {
   it('copies a study without the program that makes it', () => {
     expect(readdirSync(demo).sort()).toEqual([
       'README.md',
+      'another-layout',
       'bases.csv',
       'logs',
       'marks.csv',
