@@ -19,9 +19,13 @@ export const RECORD = {
   crew: 12,
   /** Epochs that the row is the mean of. */
   epochs: 13,
+  /** How the log shows the rover to come and go on: CAME_MOVING and LEFT_MOVING, or 0. */
+  motion: 14,
 } as const;
 
-export const RECORD_WIDTH = 14;
+export const RECORD_WIDTH = 15;
+export const CAME_MOVING = 1;
+export const LEFT_MOVING = 2;
 export const FIXED = 0;
 export const NOT_FIXED = 1;
 export const NO_POSITION = 2;
@@ -36,6 +40,7 @@ export function writeRecord(
   local: LocalVector | null,
   fileIndex: number,
   crewIndex: number,
+  motion: number,
 ): void {
   record[RECORD.utcMs] = position.dateOnly === '' ? position.utcMs : Date.parse(position.dateOnly);
   record[RECORD.eastM] = local?.eastM ?? Number.NaN;
@@ -51,4 +56,5 @@ export function writeRecord(
   record[RECORD.row] = position.row;
   record[RECORD.crew] = crewIndex;
   record[RECORD.epochs] = position.epochs;
+  record[RECORD.motion] = motion;
 }

@@ -5,7 +5,6 @@ import {
   type LogBatch,
   type LogResolution,
   type Message,
-  type Position,
   RowAccount,
   RowMessages,
   type SetAsideRow,
@@ -14,7 +13,8 @@ import { type DayOf, dayFunction } from './days.js';
 import { RECORD, RECORD_WIDTH, writeRecord } from './epochRecord.js';
 import type { FormedOccupations, FormOccupationsOptions } from './formOccupations.js';
 import { judgeDatedRows, judgeEpochs, type NameRanks, timeOrder } from './judgeEpochs.js';
-import { markMoving } from './movingEpochs.js';
+import { MotionWatch, type Watched } from './motionWatch.js';
+import { isPassing, markMoving } from './movingEpochs.js';
 import { Names } from './names.js';
 import type { Occupation, Visit } from './occupation.js';
 import { Placer } from './placer.js';
@@ -32,7 +32,7 @@ export class EpochSorter {
   readonly #record = new Float64Array(RECORD_WIDTH);
   readonly #dayOf: DayOf;
   readonly #placer: Placer;
-  #nearestMarkM: number | null = null;
+  readonly #watch = new MotionWatch();
 
   constructor(
     readonly control: Control,
@@ -48,13 +48,18 @@ export class EpochSorter {
     this.#account.open(batch.file);
     this.#account.read(batch.file, batch.rowsRead);
     this.#messages.push(...batch.messages);
-    this.#nearestMarkM = batch.nearestMarkM ?? null;
     if (batch.resolution) this.#resolutions.set(batch.file, batch.resolution);
     for (const row of batch.setAside) this.#setAside(row);
-    for (const position of batch.positions) this.#sort(position);
+    const { nearestMarkM: reachM = null } = batch;
+    for (const position of batch.positions) {
+      // Where nearness tells the mark, the rows around a mark tell whether the rover stood there.
+      const watched = reachM === null ? { position, reachM, motion: 0 } : this.#watch.next(position, reachM);
+      if (watched !== null) this.#sort(watched);
+    }
   }
 
   reduce(): FormedOccupations {
+    for (const watched of this.#watch.rest()) this.#sort(watched);
     const visits: Visit[] = [];
     const occupations: Occupation[] = [];
     const ranks: NameRanks = { file: this.#fileNames.ranks(), crew: this.#crewNames.ranks() };
@@ -88,9 +93,9 @@ export class EpochSorter {
     this.#store.close();
   }
 
-  #sort(position: Position): void {
+  #sort({ position, reachM, motion }: Watched): void {
     const { file, row } = position;
-    const place = this.#placer.place(position, this.#nearestMarkM);
+    const place = this.#placer.place(position, reachM);
     if ('reason' in place) {
       this.#setAside({ file, row, reason: place.reason, column: null, detail: place.detail });
       return;
@@ -108,6 +113,7 @@ export class EpochSorter {
       local,
       this.#fileNames.index(file),
       this.#crewNames.index(position.crew),
+      motion,
     );
     this.#store.add(key, Math.floor(this.#record[RECORD.utcMs]! / 86_400_000), this.#record);
   }
@@ -119,8 +125,9 @@ export class EpochSorter {
     for (let k = 0; k < order.length; k++) {
       const offset = order[k]!;
       const verdict = verdicts[k]!;
-      // A rover that passes a mark does not visit it.
-      if (verdict !== 'moving') builder.add(records, offset, verdict);
+      // A rover that passes a mark does not visit it, with or without a fix.
+      const passes = verdict === 'moving' || (verdict === 'not-fixed' && isPassing(records, offset));
+      if (!passes) builder.add(records, offset, verdict);
       const file = this.#fileNames.list[records[offset + RECORD.file]!]!;
       if (verdict === 'used') this.#account.used(file, 1);
       else {

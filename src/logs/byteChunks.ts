@@ -32,7 +32,8 @@ export function detectEncoding(head: Buffer): { readonly encoding: Encoding; rea
   const many = head.length / 5;
   if (zeros[1]! > many && zeros[0]! < many / 20) return { encoding: 'utf-16le', guessed: true };
   if (zeros[0]! > many && zeros[1]! < many / 20) return { encoding: 'utf-16be', guessed: true };
-  return { encoding: isUtf8(head) ? 'utf-8' : 'latin1', guessed: !isUtf8(head) };
+  const latin1 = looksLikeLatin1(head);
+  return { encoding: latin1 ? 'latin1' : 'utf-8', guessed: latin1 };
 }
 
 const HEAD_BYTES = 1 << 16;
@@ -48,17 +49,17 @@ export async function readHead(path: string): Promise<Buffer> {
   }
 }
 
-function isUtf8(head: Buffer): boolean {
-  // The head may end inside a character: up to three bytes are left out of the judgement.
-  for (let cut = 0; cut < 4; cut++) {
-    try {
-      new TextDecoder('utf-8', { fatal: true }).decode(head.subarray(0, head.length - cut));
-      return true;
-    } catch {
-      if (head.length < 8) return false;
-    }
-  }
-  return false;
+/** Letters beyond ASCII in UTF-8. */
+const UTF8_LETTER = /[\xc2-\xdf][\x80-\xbf]|[\xe0-\xef][\x80-\xbf]{2}|[\xf0-\xf4][\x80-\xbf]{3}/g;
+
+/** Whether more bytes are no UTF-8 than letters are: a single bad byte does not turn the letters of a file into others. */
+function looksLikeLatin1(head: Buffer): boolean {
+  // The head may end inside a letter.
+  const bytes = head.toString('latin1').replace(/[\xc2-\xf4][\x80-\xbf]{0,2}$/, '');
+  const letters = bytes.match(UTF8_LETTER) ?? [];
+  const high = bytes.match(/[\x80-\xff]/g)?.length ?? 0;
+  const stray = high - letters.reduce((total, { length }) => total + length, 0);
+  return stray > letters.length;
 }
 
 /**
@@ -90,8 +91,7 @@ export async function* readLineChunks(
     }
     const end = lastLineEnd(bytes);
     if (end > 0) yield { bytes: bytes.subarray(0, end), unterminated: false };
-    rest = Buffer.from(bytes.subarray(end));
-    if (rest.length > LONGEST_LINE_BYTES) rest = rest.subarray(0, LONGEST_LINE_BYTES + 1);
+    rest = shortened(bytes.subarray(end));
   }
   const tail = decoder === null ? rest : Buffer.concat([rest, Buffer.from(decoder.decode())]);
   const last = first ? withoutMark(tail) : tail;
@@ -99,6 +99,13 @@ export async function* readLineChunks(
     const end = last.at(-1) === CR;
     yield { bytes: last, unterminated: !end };
   }
+}
+
+/** A copy of what waits for its line end; of a line that is too long the beginning, and the CR that may end it. */
+function shortened(rest: Buffer): Buffer {
+  if (rest.length <= LONGEST_LINE_BYTES + 1) return Buffer.from(rest);
+  const beginning = rest.subarray(0, LONGEST_LINE_BYTES + 1);
+  return Buffer.concat(rest.at(-1) === CR ? [beginning, Buffer.of(CR)] : [beginning]);
 }
 
 const withoutMark = (bytes: Buffer): Buffer =>

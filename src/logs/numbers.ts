@@ -3,10 +3,11 @@
  * (words, `NaN`, `0x1F`, `1,5`).
  */
 export function parseNumber(cell: string): number | null {
-  if (cell.trim() === '') return Number.NaN;
-  const value = Number(cell);
+  const text = cell.trim();
+  if (text === '') return Number.NaN;
+  const value = Number(text);
   if (!Number.isFinite(value)) return null;
-  const second = cell.charCodeAt(1);
+  const second = text.charCodeAt(1);
   // Number() also reads 0x, 0b and 0o: their second character is a letter other than the e of an exponent.
   return second > 57 && second !== 69 && second !== 101 ? null : value;
 }

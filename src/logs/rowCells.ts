@@ -1,4 +1,5 @@
 import { parseNumber } from './numbers.js';
+import type { ColumnRole } from './roles.js';
 
 /** The cells of one data row by index, from 0. An index below 0 or beyond the row is a blank cell. */
 export interface RowCells {
@@ -9,6 +10,9 @@ export interface RowCells {
   /** Number of a cell: NaN when blank, null when it is no plain number. */
   readonly number: (index: number) => number | null;
 }
+
+/** Text of a role in a row: its cell, or the constant where the cell is blank or there is no column. */
+export type TextOf = (role: ColumnRole, cells: RowCells) => string;
 
 /** How numbers are written: the decimal mark, a point or one other character. */
 export type DecimalMark = string;

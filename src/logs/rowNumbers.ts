@@ -5,7 +5,7 @@ import { type DelimitedLayout, decimalCharacter, resolvedUnits } from './layout.
 import { quoted } from './messages.js';
 import { parseNumber } from './numbers.js';
 import type { ColumnRole } from './roles.js';
-import type { RowCells } from './rowCells.js';
+import type { RowCells, TextOf } from './rowCells.js';
 
 /** For a role a function that reads its number in a row: its cell, or the constant where the cell is blank. */
 export type NumberReaders = (role: ColumnRole) => (cells: RowCells) => number | null;
@@ -48,6 +48,7 @@ export function coordinateReader(
   coordinates: CoordinateColumns,
   at: (role: ColumnRole) => number,
   numberReader: NumberReaders,
+  textOf: TextOf,
 ): (cells: RowCells) => MeasuredPosition | CoordinateRefusal {
   const units = resolvedUnits(layout.units);
   const decimal = decimalCharacter(layout.decimal);
@@ -71,7 +72,7 @@ export function coordinateReader(
     const [a, b, c] = [first(cells), second(cells), third(cells)];
     if (a === null || b === null || c === null) {
       const role = coordinates.roles[a === null ? 0 : b === null ? 1 : 2];
-      const cell = cells.text(at(role));
+      const cell = textOf(role, cells);
       const dms = isAngle(role) && units.angle === 'dms';
       return { role, detail: dms ? notAnAngle(cell) : notANumber(cell) };
     }

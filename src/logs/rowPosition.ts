@@ -62,7 +62,7 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
   const textOf = (role: ColumnRole, cells: RowCells): string =>
     cells.uniqueText(at(role)) || (values[role] ?? '');
   const numberReader = numberReaders(at, values, decimalCharacter(layout.decimal));
-  const time = timePlan(has, textOf, layout.time ?? {}, options.timeZone);
+  const time = timePlan(has, textOf, numberReader, layout.time ?? {}, options.timeZone);
   const textReader = (role: ColumnRole): ((cells: RowCells) => string) => {
     const [index, value] = [at(role), values[role] ?? ''];
     return index < 0 ? () => value : (cells) => cells.text(index) || value;
@@ -96,7 +96,7 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
     kind: 'set-aside',
     row: { file, row, reason, column: name(role), detail },
   });
-  const readCoordinates = coordinateReader(layout, coordinates, at, numberReader);
+  const readCoordinates = coordinateReader(layout, coordinates, at, numberReader, textOf);
   const antenna = layout.heightOf === 'antenna' ? metresPer(resolvedUnits(layout.units).height) : null;
   const rodReader = numberReader('antennaHeight');
   const fixIsGiven = has('fix');

@@ -1,8 +1,10 @@
 import { ByteCells } from './byteCells.js';
 import { forEachLine, type LineChunk, LONGEST_LINE_BYTES } from './byteChunks.js';
-import { splitCells } from './cells.js';
+import { DELIMITERS, splitCells } from './cells.js';
+import { fittedCells } from './fittedCells.js';
 import { chooseDelimiter, type DelimitedHeader, type DelimitedOptions, looksLikeHeader } from './header.js';
 import { type Message, message } from './messages.js';
+import { numberedWidth } from './numberedWidth.js';
 import { type RowCells, TextCells } from './rowCells.js';
 import { understandHeader, understandNumberedColumns } from './understandHeader.js';
 
@@ -35,6 +37,8 @@ export class RowReader {
   #numberAt = -1;
   #bytes: ByteCells | null = null;
   #toldEncoding = false;
+  /** The first row and what follows it, as far as it is there yet. */
+  #ahead: Buffer = Buffer.alloc(0);
 
   /** @param file name of the file in messages */
   constructor(
@@ -61,6 +65,7 @@ export class RowReader {
       }
       if (this.#bytes !== null && this.#takePlain(this.#bytes, bytes, start, end)) return;
       const cutOff = unterminated && end === bytes.length;
+      if (this.#header === null) this.#ahead = bytes.subarray(start);
       this.#takeText(bytes.toString('utf8', start, end), cutOff);
     });
     if (this.#bytes?.sawInvalid) this.#tellEncoding();
@@ -102,20 +107,31 @@ export class RowReader {
   #begin(line: string): void {
     const { options, file } = this;
     this.#delimiter = chooseDelimiter(line, options);
-    const cells = splitCells(line, this.#delimiter);
-    const numbered = options.header === false || hasOnlyNumbers(options);
-    if (numbered) {
-      const named = cells !== null && options.header !== false && !cells.some(startsLikeNumber);
-      this.#accept(
-        understandNumberedColumns(cells?.length ?? 0, this.#row, file, options),
-        named ? line : '',
-      );
-      if (!named) this.#data(line, cells, this.#header!, false);
+    if (isNumbered(options)) {
+      this.#beginNumbered(line, splitCells(line, this.#delimiter));
       return;
     }
     this.#accept(understandHeader(line, this.#delimiter, this.#row, file, options), line);
     // A first line without any name of a column is data without a header, so it counts as a row.
     if (this.#header!.positions.size === 0) this.sink.fault(this.#row, NO_HEADER);
+  }
+
+  /** The first line where the layout gives columns by number: names of columns, which are not asked, or data. */
+  #beginNumbered(line: string, cells: string[] | null): void {
+    const { options, file } = this;
+    const named = cells !== null && options.header !== false && !cells.some(startsLikeNumber);
+    const width = named ? cells.length : this.#widthAhead();
+    this.#accept(understandNumberedColumns(width, this.#row, file, options), named ? line : '');
+    if (!named) this.#data(line, cells, this.#header!, false);
+  }
+
+  #widthAhead(): number {
+    const ahead = this.#ahead;
+    const isRow = (start: number, end: number): boolean =>
+      end - start <= LONGEST_LINE_BYTES &&
+      !this.#isComment(ahead, start, end) &&
+      ahead.toString('utf8', start, end).trim() !== '';
+    return numberedWidth(ahead, isRow, this.#delimiter, this.options);
   }
 
   /** A header further down: the same columns again, or other ones. */
@@ -144,6 +160,7 @@ export class RowReader {
     const plain =
       header.readable &&
       this.#numberAt >= 0 &&
+      this.#delimiter !== DELIMITERS.blanks &&
       this.#delimiter.length === 1 &&
       this.#delimiter.charCodeAt(0) < 128 &&
       (options.decimal ?? '.') === '.';
@@ -158,9 +175,9 @@ export class RowReader {
     else this.sink.row(this.#row, new TextCells(fitted, this.options.decimal));
   }
 
-  /** A line that is no text of a log: a row that cannot be read, or the whole file when it is the first. */
+  /** A line that is no text of a log: a row that cannot be read, or the whole file where a header is expected. */
   #odd(fault: string): void {
-    if (this.#header === null) this.#begin('\u0000');
+    if (this.#header === null && !isNumbered(this.options)) this.#begin('\u0000');
     else this.sink.fault(this.#row, fault);
   }
 
@@ -180,9 +197,10 @@ export class RowReader {
 
 const startsLikeNumber = (cell: string | undefined): boolean => cell !== undefined && /^[-+.\d]/.test(cell);
 
-const hasOnlyNumbers = ({ columns }: DelimitedOptions): boolean => {
+/** Whether columns are given by number, so that no header is asked. */
+const isNumbered = ({ header, columns }: DelimitedOptions): boolean => {
   const given = Object.values(columns ?? {});
-  return given.length > 0 && given.every((column) => typeof column === 'number');
+  return header === false || (given.length > 0 && given.every((column) => typeof column === 'number'));
 };
 
 function sameColumns(a: DelimitedHeader, b: DelimitedHeader): boolean {
@@ -191,28 +209,4 @@ function sameColumns(a: DelimitedHeader, b: DelimitedHeader): boolean {
     a.positions.size === b.positions.size &&
     [...a.positions].every(([role, index]) => b.positions.get(role) === index)
   );
-}
-
-/** The cells of a data line in the columns of the header, or what is wrong with it. */
-function fittedCells(
-  line: string,
-  cells: string[] | null,
-  header: DelimitedHeader,
-  delimiter: string,
-  cutOff: boolean,
-): readonly string[] | string {
-  if (line.includes('\u0000')) return 'the line holds zero bytes, which text does not';
-  if (cells === null) return 'a quote does not close in this line, or text follows a closing quote';
-  const { width, namedWidth, leastWidth, lastIsText } = header;
-  while (cells.length > width && cells.at(-1) === '') cells.pop();
-  if (cells.length > width && lastIsText) {
-    // A description may hold the delimiter: what is left of the line belongs to it.
-    return [...cells.slice(0, width - 1), cells.slice(width - 1).join(delimiter)];
-  }
-  if (cells.length >= namedWidth && cells.length <= width) return cells;
-  // Controllers leave out blank cells at the end; a line that was cut off may end inside a number instead.
-  if (cells.length >= leastWidth && cells.length < namedWidth && !cutOff) return cells;
-  const split =
-    cells.length > width && delimiter === ',' ? ' (does a decimal comma cut numbers in two?)' : '';
-  return `expected ${width} cells as in the header, came ${cells.length}${split}`;
 }

@@ -1,6 +1,8 @@
 import { gpsWeekToUtcMs, type TimeLayout, type TimeOutcome, timeReader } from '../time/index.js';
+import { quoted } from './messages.js';
 import type { ColumnRole } from './roles.js';
-import type { RowCells } from './rowCells.js';
+import type { RowCells, TextOf } from './rowCells.js';
+import type { NumberReaders } from './rowNumbers.js';
 
 /** When a row was measured: a moment, a day without a time of day, nothing at all, or a text that is no time. */
 export type RowTime = TimeOutcome | { readonly kind: 'missing' };
@@ -11,9 +13,6 @@ export interface TimePlan {
   readonly read: (cells: RowCells) => RowTime;
 }
 
-/** Text of a role in a row: its cell, or the constant where the cell is blank or there is no column. */
-export type TextOf = (role: ColumnRole, cells: RowCells) => string;
-
 /**
  * Chooses how time is written by the columns that are there: week and seconds of GPS, date and time of day apart, one
  * time, the start of an averaged shot, a date alone, or nothing.
@@ -22,18 +21,18 @@ export type TextOf = (role: ColumnRole, cells: RowCells) => string;
 export function timePlan(
   has: (role: ColumnRole) => boolean,
   textOf: TextOf,
+  numberReader: NumberReaders,
   layout: TimeLayout,
   defaultZone: string | null,
 ): TimePlan {
-  if (has('gpsWeek') && has('gpsSeconds')) return gpsPlan(textOf);
+  if (has('gpsWeek') && has('gpsSeconds')) return gpsPlan(textOf, numberReader);
   const read = timeReader(layout, defaultZone);
   const single = (role: ColumnRole): TimePlan => ({
     column: role,
     read: (cells) => readText(textOf(role, cells), read),
   });
   if (has('date') && has('timeOfDay')) {
-    const [dateFormat] = layout.format?.split(' ') ?? [];
-    const dateLayout = dateFormat === undefined ? {} : { format: dateFormat };
+    const dateLayout = layout.format === undefined ? {} : { format: dateFormat(layout.format) };
     return jointPlan(textOf, read, timeReader(dateLayout, defaultZone));
   }
   for (const role of ['time', 'start', 'date'] as const) if (has(role)) return single(role);
@@ -60,13 +59,30 @@ function jointPlan(
   };
 }
 
-function gpsPlan(textOf: TextOf): TimePlan {
+/** The part of a format in front of the time of day: it ends at the first token of hours, minutes or seconds. */
+function dateFormat(format: string): string {
+  if (WORD_FORMATS.has(format)) return format;
+  for (const token of format.matchAll(/'(?:[^']|'')*'|[A-Za-z]/g)) {
+    if (/^[HhmsSa]$/.test(token[0])) return format.slice(0, token.index).trimEnd();
+  }
+  return format;
+}
+
+/** Formats that are not made of tokens; they read dates with and without a time of day. */
+const WORD_FORMATS = new Set(['iso', 'day-of-year', 'excel']);
+
+function gpsPlan(textOf: TextOf, numberReader: NumberReaders): TimePlan {
+  const [readWeek, readSeconds] = [numberReader('gpsWeek'), numberReader('gpsSeconds')];
   return {
     column: 'gpsSeconds',
     read: (cells) => {
-      const [week, seconds] = [textOf('gpsWeek', cells), textOf('gpsSeconds', cells)];
-      if (week === '' || seconds === '') return { kind: 'missing' };
-      const outcome = gpsWeekToUtcMs(Number(week), Number(seconds));
+      const [week, seconds] = [readWeek(cells), readSeconds(cells)];
+      if (week === null || seconds === null) {
+        const came = quoted(`${textOf('gpsWeek', cells)} ${textOf('gpsSeconds', cells)}`);
+        return { kind: 'invalid', detail: `expected a GPS week and its seconds, came ${came}` };
+      }
+      if (Number.isNaN(week) || Number.isNaN(seconds)) return { kind: 'missing' };
+      const outcome = gpsWeekToUtcMs(week, seconds);
       if (outcome.kind !== 'ambiguous') return outcome;
       return {
         kind: 'invalid',

@@ -39,7 +39,7 @@ class Columns {
       else
         this.error(
           'missing-column',
-          `The layout names column ${column} for ${role}, the first row has ${width} cells. Correct the layout.`,
+          `The layout names column ${column} for ${role}, the rows have ${width} cells. Correct the layout.`,
           role,
         );
     }
@@ -63,8 +63,12 @@ class Columns {
 
   header(width: number, namedWidth: number): DelimitedHeader {
     const { required, requiredOneOf = [] } = this.options;
-    const needed = [...required, ...requiredOneOf.flatMap(({ roles }) => roles), 'fix' as const];
-    const lastNeeded = Math.max(...needed.map((role) => this.positions.get(role) ?? -1));
+    const place = (role: ColumnRole): number => this.positions.get(role) ?? -1;
+    // Of several that serve the same purpose the first one does.
+    const firstOf = (roles: readonly ColumnRole[]): number =>
+      Math.min(...roles.map((role) => this.positions.get(role) ?? Number.POSITIVE_INFINITY));
+    const groups = requiredOneOf.map(({ roles }) => firstOf(roles)).filter(Number.isFinite);
+    const lastNeeded = Math.max(place('fix'), ...required.map(place), ...groups);
     return {
       positions: this.positions,
       headers: this.headers,

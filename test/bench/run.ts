@@ -4,9 +4,10 @@
  */
 import { benchDemo } from './demo.js';
 import { benchFit } from './fit.js';
+import { benchFuzz } from './fuzz.js';
 import { benchRead } from './read.js';
 
-const PARTS = { demo: benchDemo, read: benchRead, fit: benchFit };
+const PARTS = { demo: benchDemo, read: benchRead, fit: benchFit, fuzz: benchFuzz };
 
 const wanted = process.argv.slice(2);
 for (const [name, part] of Object.entries(PARTS)) {
