@@ -49,15 +49,17 @@ class Way {
 
   /** Whether the rover comes moving, goes on moving, and gets on. */
   goesOn(i: number): boolean {
-    const [from, to] = this.#span(i);
-    if (!this.#moves(from, i) || !this.#moves(i, to)) return false;
+    const from = this.#back(i);
+    if (!this.#moves(from, i)) return false;
+    const to = this.#ahead(i);
+    if (!this.#moves(i, to)) return false;
     return this.#metres(from, to) > Math.max(this.#metres(from, i), this.#metres(i, to));
   }
 
   /** Whether it comes and goes moving and turns between: told from a jump there and back by the epochs beside. */
   turns(i: number, inside: readonly boolean[]): boolean {
-    const [from, to] = this.#span(i);
-    return this.#moves(from, i) && this.#moves(i, to) && (inside[i - 1] === true || inside[i + 1] === true);
+    if (inside[i - 1] !== true && inside[i + 1] !== true) return false;
+    return this.#moves(this.#back(i), i) && this.#moves(i, this.#ahead(i));
   }
 
   /** Whether the epoch is the first or last of a run of a rover in motion. */
@@ -65,9 +67,8 @@ class Way {
     const [first, last] = [this.#apart(i - 1, i), this.#apart(i, i + 1)];
     const [came, left] = [this.#log(i, CAME_MOVING), this.#log(i, LEFT_MOVING)];
     if (first && last) return isPassing(this.records, this.offsets[i]!);
-    const [from, to] = this.#span(i);
-    if (first) return this.#moves(i, to) && (came || this.#movesTwice(i, i + 1, i + 2));
-    return last && this.#moves(from, i) && (left || this.#movesTwice(i - 2, i - 1, i));
+    if (first) return this.#moves(i, this.#ahead(i)) && (came || this.#movesTwice(i, i + 1, i + 2));
+    return last && this.#moves(this.#back(i), i) && (left || this.#movesTwice(i - 2, i - 1, i));
   }
 
   /** Whether the steps before and after are both those of motion. */
@@ -79,13 +80,18 @@ class Way {
     return this.#moves(a, b) && this.#moves(b, c) && this.#metres(a, c) > this.#metres(a, b);
   }
 
-  /** The first and last epoch around one that are within the span, at least its neighbours. */
-  #span(i: number): [number, number] {
+  /** The first epoch of the span before one, at least its neighbour; the epoch itself where it has none. */
+  #back(i: number): number {
     let from = i;
     while (!this.#apart(from - 1, from) && (from === i || this.#ms(from - 1, i) <= SPAN_MS)) from--;
+    return from;
+  }
+
+  /** The last epoch of the span after one, likewise. */
+  #ahead(i: number): number {
     let to = i;
     while (!this.#apart(to, to + 1) && (to === i || this.#ms(i, to + 1) <= SPAN_MS)) to++;
-    return [from, to];
+    return to;
   }
 
   #apart(a: number, b: number): boolean {

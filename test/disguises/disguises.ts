@@ -36,8 +36,8 @@ export const DISGUISES: readonly Disguise[] = [
   {
     name: '(b) semicolons, decimal commas and local time',
     log: `{files: b.txt, layout: {kind: delimited, delimiter: semicolon, decimal: comma, encoding: latin1,
-      columns: {time: Datum und Zeit, mark: Punkt, latitude: Breite, longitude: Länge, height: Höhe, fix: Lösung, description: Bemerkung},
-      time: {format: dd.MM.yyyy HH:mm:ss, zone: America/Los_Angeles}, fixValues: {fest: fixed, schwebend: float}}}`,
+      columns: {time: Date and time, description: Bemerkung},
+      time: {format: dd.MM.yyyy HH:mm:ss, zone: Atlantic/Azores}}}`,
     rows: EPOCHS,
     planStepMm: 1e-9 * DEGREE_MM,
     heightStepMm: 0.1,
@@ -45,7 +45,7 @@ export const DISGUISES: readonly Disguise[] = [
   },
   {
     name: '(c) UTM in US survey feet, antenna heights',
-    log: `{files: c.csv, coordinates: +proj=utm +zone=10 +ellps=WGS84, layout: {kind: delimited, units: us-survey-foot,
+    log: `{files: c.csv, coordinates: +proj=utm +zone=26 +ellps=WGS84, layout: {kind: delimited, units: us-survey-foot,
       heightOf: antenna, columns: {mark: Point, height: Ell Ht (ft), antennaHeight: Rod (ft), timeOfDay: Clock (UTC)},
       time: {format: MM/dd/yyyy HH:mm:ss, zone: UTC}}}`,
     rows: EPOCHS,
@@ -55,7 +55,7 @@ export const DISGUISES: readonly Disguise[] = [
   },
   {
     name: '(d) geocentric with GPS week and seconds',
-    log: '{files: d.tsv, coordinates: geocentric, layout: {kind: delimited, delimiter: tab, fixValues: {1: fixed, 2: float}}}',
+    log: '{files: d.tsv, coordinates: geocentric, layout: {kind: delimited, delimiter: tab}}',
     rows: EPOCHS,
     planStepMm: 0.1,
     heightStepMm: 0.1,
@@ -64,7 +64,7 @@ export const DISGUISES: readonly Disguise[] = [
   {
     name: '(e) comments and runs of blanks',
     log: `{files: e.txt, layout: {kind: delimited, delimiter: blanks, comment: "#", header: false,
-      columns: {date: 1, timeOfDay: 2, mark: 3, latitude: 4, longitude: 5, height: 6, fix: 7}, time: {zone: UTC}}}`,
+      columns: {time: 1, mark: 2, latitude: 3, longitude: 4, height: 5, fix: 6}}}`,
     rows: EPOCHS,
     planStepMm: 1e-8 * DEGREE_MM,
     heightStepMm: 1,
@@ -90,7 +90,7 @@ export const DISGUISES: readonly Disguise[] = [
   {
     name: '(g) degrees, minutes and seconds with a 12-hour clock',
     log: `{files: g.csv, layout: {kind: delimited, units: {angle: dms}, columns: {time: Date and time, mark: Name},
-      time: {format: MM/dd/yyyy hh:mm:ss a, zone: America/Los_Angeles}}}`,
+      time: {format: MM/dd/yyyy hh:mm:ss a, zone: Atlantic/Azores}}}`,
     rows: EPOCHS,
     planStepMm: (1e-5 * DEGREE_MM) / 3600,
     heightStepMm: 0.1,
@@ -107,7 +107,7 @@ export const DISGUISES: readonly Disguise[] = [
   },
   {
     name: '(i) point lists without header, times and base',
-    log: `{files: points_*.txt, coordinates: +proj=utm +zone=10 +ellps=WGS84, layout: {kind: delimited, header: false,
+    log: `{files: points_*.txt, coordinates: +proj=utm +zone=26 +ellps=WGS84, layout: {kind: delimited, header: false,
       columns: {pointNumber: 1, northing: 2, easting: 3, height: 4, description: 5}, constants: {base: B1},
       fromFileName: 'points_(?<date>\\d{4}-\\d{2}-\\d{2})'}}`,
     names: "names: {pattern: '^(?:CHK )?(CP\\d+)(?:-\\d+)?$'}",
@@ -121,7 +121,7 @@ export const DISGUISES: readonly Disguise[] = [
 ];
 
 /** The study file of a disguise, to be laid beside the files of test/fixtures/disguises. */
-export const studyText = ({ log, names }: Disguise): string => `timeZone: America/Los_Angeles
+export const studyText = ({ log, names }: Disguise): string => `timeZone: Atlantic/Azores
 marks: {file: marks.csv${names === undefined ? '' : `, ${names}`}}
 bases: bases.csv
 logs:

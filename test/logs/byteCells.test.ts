@@ -2,7 +2,7 @@ import { parse } from 'csv-parse/sync';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { ByteCells } from '../../src/logs/byteCells.js';
-import { forEachLine, readLineChunks } from '../../src/logs/byteChunks.js';
+import { detectEncoding, forEachLine, readLineChunks } from '../../src/logs/byteChunks.js';
 import { splitCells } from '../../src/logs/cells.js';
 import { TextCells } from '../../src/logs/rowCells.js';
 import { readText, testFolder } from '../files.js';
@@ -251,6 +251,28 @@ describe('splitCells', () => {
       }),
       { seed: SEED, numRuns: 2000 },
     );
+  });
+});
+
+describe('detectEncoding', () => {
+  const bytes = (...parts: readonly (string | number)[]) =>
+    Buffer.concat(parts.map((part) => (typeof part === 'string' ? Buffer.from(part) : Buffer.of(part))));
+
+  it('takes a file for one byte a letter only where more bytes are no UTF-8 than letters are', () => {
+    expect(detectEncoding(bytes('CP1,fixed'))).toEqual({ encoding: 'utf-8', guessed: false });
+    expect(detectEncoding(bytes('Côte,', 0xff, ',Höhe'))).toEqual({ encoding: 'utf-8', guessed: false });
+    expect(detectEncoding(bytes('H', 0xf6, 'he,L', 0xe4, 'nge'))).toEqual({
+      encoding: 'latin1',
+      guessed: true,
+    });
+    expect(detectEncoding(bytes('a', 0xff))).toEqual({ encoding: 'latin1', guessed: true });
+  });
+
+  it('does not mind where the first bytes of the file end inside a letter', () => {
+    const text = Buffer.from('測点🛰');
+    for (let end = 1; end <= text.length; end++) {
+      expect(detectEncoding(text.subarray(0, end)).encoding).toBe('utf-8');
+    }
   });
 });
 
