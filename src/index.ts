@@ -96,3 +96,4 @@ export {
   type StudyRun,
   studyJsonSchema,
 } from './study/index.js';
+export { equationOfTimeMinutes, LEAP_SECONDS_KNOWN_UNTIL, solarHour } from './time/index.js';

@@ -9,6 +9,7 @@ import {
   RowMessages,
   type SetAsideRow,
 } from '../logs/index.js';
+import { BackwardRows } from './backwardRows.js';
 import { type DayOf, dayFunction } from './days.js';
 import { RECORD, RECORD_WIDTH, writeRecord } from './epochRecord.js';
 import type { FormedOccupations, FormOccupationsOptions } from './formOccupations.js';
@@ -33,6 +34,7 @@ export class EpochSorter {
   readonly #dayOf: DayOf;
   readonly #placer: Placer;
   readonly #watch = new MotionWatch();
+  readonly #backward = new BackwardRows();
 
   constructor(
     readonly control: Control,
@@ -52,6 +54,7 @@ export class EpochSorter {
     for (const row of batch.setAside) this.#setAside(row);
     const { nearestMarkM: reachM = null } = batch;
     for (const position of batch.positions) {
+      this.#backward.see(position);
       // Where nearness tells the mark, the rows around a mark tell whether the rover stood there.
       const watched = reachM === null ? { position, reachM, motion: 0 } : this.#watch.next(position, reachM);
       if (watched !== null) this.#sort(watched);
@@ -79,7 +82,7 @@ export class EpochSorter {
       visits.push(...builder.visits);
       occupations.push(...builder.occupations);
     }
-    const messages = [...this.#messages, ...this.#rowMessages.messages()];
+    const messages = [...this.#messages, ...this.#backward.messages(), ...this.#rowMessages.messages()];
     return {
       occupations: occupations.sort(byStart),
       visits: visits.sort(byStart),

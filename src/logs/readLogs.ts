@@ -1,8 +1,9 @@
+import { LEAP_SECONDS_KNOWN_UNTIL } from '../time/index.js';
 import { type CoordinateSystem, coordinateColumns } from './coordinateColumns.js';
 import { valuesFromFileName } from './fileName.js';
 import { FileNotes } from './fileNotes.js';
 import { type DelimitedLayout, decimalCharacter, type LogLayout } from './layout.js';
-import { inputError, type Message } from './messages.js';
+import { inputError, type Message, message } from './messages.js';
 import { readNmea } from './nmea/readNmea.js';
 import type { Fix, Position } from './position.js';
 import { readDelimited } from './readDelimited.js';
@@ -95,6 +96,8 @@ async function* readDelimitedLog(
   ];
   let read: ReturnType<typeof rowPosition> | null = null;
   let meter: ResolutionMeter | null = null;
+  let latestMs = Number.NEGATIVE_INFINITY;
+  let gpsScale = layout.time?.scale === 'gps';
   let batch = new Collected();
   const sink = {
     header(header: Parameters<typeof notes.see>[0]) {
@@ -103,6 +106,7 @@ async function* readDelimitedLog(
         rowPosition({ file, header, layout, coordinates, timeZone, fixValues: fixMeanings(layout), values }),
       );
       notes.see(header, values.fix !== undefined);
+      gpsScale ||= header.positions.has('gpsWeek');
       meter = new ResolutionMeter(header, coordinates.roles, layout);
     },
     row(row: number, cells: Parameters<NonNullable<typeof read>>[1]) {
@@ -111,6 +115,7 @@ async function* readDelimitedLog(
       if (outcome.kind === 'set-aside') batch.setAside.push(outcome.row);
       else {
         batch.positions.push(outcome.position);
+        latestMs = Math.max(latestMs, outcome.position.utcMs || latestMs);
         notes.add(outcome);
         meter!.add(row, cells);
       }
@@ -132,9 +137,26 @@ async function* readDelimitedLog(
   }
   // Assigned in a callback, which the compiler does not follow.
   const measured = meter as ResolutionMeter | null;
-  const messages = [...notes.messages(), ...(measured?.messages(file) ?? [])];
+  const messages = [
+    ...notes.messages(),
+    ...(measured?.messages(file) ?? []),
+    ...(gpsScale ? leapSecondMessage(file, latestMs) : []),
+  ];
   const resolution = measured?.resolution() ?? null;
   yield { file, rowsRead: 0, positions: [], setAside: [], messages, resolution };
+}
+
+/** Times on the GPS scale need the leap seconds, and the table of them ends somewhere. */
+function leapSecondMessage(file: string, latestMs: number): Message[] {
+  if (latestMs <= Date.parse(LEAP_SECONDS_KNOWN_UNTIL)) return [];
+  return [
+    message(
+      'info',
+      'leap-seconds',
+      `The leap seconds are known until ${LEAP_SECONDS_KNOWN_UNTIL}, and later GPS times are turned with the last value. Look whether a leap second was announced since.`,
+      { file },
+    ),
+  ];
 }
 
 const NAME_ROLES: readonly ColumnRole[] = ['mark', 'pointNumber', 'description'];

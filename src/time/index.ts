@@ -1,3 +1,4 @@
+export { equationOfTimeMinutes } from './equationOfTime.js';
 export type { TimeKind } from './formatFields.js';
 export {
   GPS_WEEKS_PER_ERA,
