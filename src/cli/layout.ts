@@ -1,4 +1,5 @@
-import { statSync } from 'node:fs';
+import { existsSync, statSync } from 'node:fs';
+import { dirname, extname, join, relative } from 'node:path';
 import { Command } from 'commander';
 import {
   type CoordinateSystem,
@@ -37,10 +38,61 @@ export function layoutCommand(done: (code: number) => void): Command {
       for (const file of files) requireFile(file);
       const recognitions: Recognition[] = [];
       for (const file of files) recognitions.push(recognizeLayout(await readHead(file), file, options));
-      const texts = recognitions.map((recognition, k) => recognitionText(recognition, files[k]!));
+      const texts = alike(recognitions, files).map(({ recognition, name }) =>
+        recognitionText(recognition, name),
+      );
       process.stdout.write(flags.json ? `${JSON.stringify(recognitions, null, 2)}\n` : texts.join('\n'));
       done(recognitions.every((found) => found.kind === 'recognized' && found.complete) ? 0 : 1);
     });
+}
+
+interface Answer {
+  readonly recognition: Recognition;
+  /** What the answer is about: a file, or how many files. */
+  readonly name: string;
+}
+
+/** Files of one layout with the same questions get one answer, about a pattern that fits them. */
+function alike(recognitions: readonly Recognition[], files: readonly string[]): Answer[] {
+  const groups = new Map<string, number[]>();
+  recognitions.forEach((recognition, k) => {
+    const same =
+      recognition.kind === 'recognized'
+        ? JSON.stringify([
+            recognition.layout,
+            recognition.coordinates,
+            recognition.unsure.map(({ code, key }) => [code, key]),
+          ])
+        : `${k}`;
+    groups.set(same, [...(groups.get(same) ?? []), k]);
+  });
+  return [...groups.values()].map((members) => {
+    const [first] = members as [number];
+    const recognition = recognitions[first]!;
+    const name = files[first]!;
+    if (recognition.kind === 'unrecognized') return { recognition, name };
+    const own = members.map((k) => files[k]!);
+    const pattern = own.length === 1 ? name : commonPattern(own);
+    const file = besideStudyFile(pattern);
+    const others = own.length === 1 ? '' : ` and ${own.length - 1} more of this layout`;
+    return { recognition: { ...recognition, file }, name: `${name}${others}` };
+  });
+}
+
+/** `logs/*.csv` for files of one folder and ending, else the first of them. */
+function commonPattern(files: readonly string[]): string {
+  const [first] = files as [string];
+  const pattern = join(dirname(first), `*${extname(first)}`);
+  const fits = files.every((file) => dirname(file) === dirname(first) && extname(file) === extname(first));
+  return fits ? pattern : first;
+}
+
+/** A path as a study file in the folder of the log, or in one above it, would write it. */
+function besideStudyFile(path: string): string {
+  for (let folder = dirname(path); ; folder = dirname(folder)) {
+    if (existsSync(join(folder, 'study.yaml'))) return relative(folder, path);
+    if (folder === dirname(folder)) return path;
+  }
 }
 
 function checkedOptions({ timeZone, coordinates }: LayoutFlags): RecognizeOptions {

@@ -13,14 +13,16 @@ title: Check shots
 coordinates: geographic
 
 marks: marks.csv
+# Where logs name marks inside longer texts, such as "CHK A3 ok", a regular expression (of JavaScript) reads them out:
+# marks: {file: marks.csv, names: {pattern: "CHK (\\w+)"}}
 bases: bases.csv
 logs:
   - files: logs/*.csv
-    # Where your export has other headers or codes, say so:
+    # "npx ppmwise layout logs/FILE" prints what to put here, and asks for what a file does not say:
     # layout:
     #   kind: delimited
     #   columns: {mark: Point, latitude: Lat, longitude: Lon, height: Ellipsoid height}
-    #   fixValues: {"RTK fix": fixed, "RTK float": float}
+    #   fixValues: {1: fixed, 2: float}
 
 # What your clients demand; each line becomes a rule. Horizontal limits are radial.
 tolerances:
@@ -43,13 +45,13 @@ EXAMPLE-BASE,44.312640518,-18.405217364,148.2163,tripod
   'README.md': `# A check-shot study
 
 1. Put your marks and bases into \`marks.csv\` and \`bases.csv\`.
-2. Put your exported logs into \`logs/\`: delimited text with a header that names at least
-   \`time,mark,latitude,longitude,height\`; \`base\`, \`rover\`, \`crew\`, \`fix\`, \`satellites\`, \`pdop\`, \`age\` help.
-   Times are ISO 8601 with \`Z\`, an offset, or in the \`timeZone\` of \`study.yaml\`.
+2. Put your exported logs into \`logs/\` and let \`npx ppmwise layout logs/*\` say what it makes of them; paste its
+   answer into \`study.yaml\` where it asks for something.
 3. Look at \`study.yaml\`: tolerances, spec sheet, zone.
 4. \`npx ppmwise check study.yaml\` reads and accounts for every row.
 5. \`npx ppmwise run study.yaml\` fits, derives the rules and writes \`results/report.html\`.
 
-Fifteen days with near and far marks are the least for a rule; thirty are sensible.
+Fifteen days with near and far marks are the least for a rule, thirty are sensible. A rule reaches as far as two marks
+with 20 occupations on 5 days lie: one far mark alone cannot be told from its own error.
 `,
 };

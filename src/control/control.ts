@@ -41,8 +41,22 @@ export function matchBase(control: Control, name: string): Match<Base> {
 }
 
 function unknownName(what: string, name: string, known: Iterable<string>): string {
-  const near = nearestName(name, known);
+  const names = [...known];
+  const within = names.find((each) => holdsWord(name, each));
+  if (within !== undefined) {
+    return `no ${what} is named ${quoted(name)} (${DID_YOU_MEAN} ${quoted(within)}? A pattern under marks.names reads it out of such texts)`;
+  }
+  const near = nearestName(name, names);
   return `no ${what} is named ${quoted(name)}${near === null ? '' : ` (${DID_YOU_MEAN} ${quoted(near)}?)`}`;
+}
+
+/** Whether a name stands in a longer text as a word of its own. */
+function holdsWord(text: string, name: string): boolean {
+  const at = name === '' ? -1 : text.indexOf(name);
+  if (at < 0 || text.length === name.length) return false;
+  const isWord = (character: string | undefined): boolean =>
+    character !== undefined && /[\p{L}\p{N}]/u.test(character);
+  return !isWord(text[at - 1]) && !isWord(text[at + name.length]);
 }
 
 /**

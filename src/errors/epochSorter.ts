@@ -5,6 +5,7 @@ import {
   type LogBatch,
   type LogResolution,
   type Message,
+  quoted,
   RowAccount,
   RowMessages,
   type SetAsideRow,
@@ -106,7 +107,7 @@ export class EpochSorter {
     const { key, frame } = place;
     const local = Number.isNaN(position.latitudeDeg) ? null : frame.toLocal(geodeticToGeocentric(position));
     if (local !== null && Math.hypot(local.eastM, local.northM, local.upM) > FARTHEST_M) {
-      const detail = `a position is more than ${FARTHEST_M / 1000} km from its mark; look for swapped columns, another coordinate system, a wrong mark`;
+      const detail = `positions on mark ${quoted(place.mark)} are more than ${FARTHEST_M / 1000} km from it; if it is one mark, check its coordinates, if it is all, look for swapped columns or another coordinate system`;
       this.#setAside({ file, row, reason: 'unreadable', column: null, detail });
       return;
     }

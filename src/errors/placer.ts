@@ -28,6 +28,7 @@ export interface Rejection {
 /** A position and where it was kept. */
 export interface Kept {
   readonly position: Position;
+  readonly mark: string;
   readonly base: Base;
   readonly day: string;
   readonly key: string;
@@ -87,7 +88,7 @@ export class Placer {
     const timed = position.dateOnly === '';
     const key = [position.rover, mark.name, base.name, setup, timed ? 'timed' : 'dated'].join(SEPARATOR);
     const { frame } = this.#context(key, { rover: position.rover, mark, base, setup, timed });
-    const kept = { position, base, day, key, frame };
+    const kept = { position, mark: mark.name, base, day, key, frame };
     // Where time or place names the mark, the next row may stand on another one.
     const byText = nearestMarkM === null && this.control.markTimes?.get(position.file) === undefined;
     this.#last = byText ? kept : null;

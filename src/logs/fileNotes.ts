@@ -25,7 +25,10 @@ export class FileNotes {
     this.#fixColumn = header.headers.get('fix') ?? this.#fixColumn;
   }
 
+  #dateOnly = 0;
+
   add({ position, faults, unknownFix }: Extract<RowOutcome, { kind: 'position' }>): void {
+    if (position.dateOnly !== '') this.#dateOnly += 1;
     for (const fault of faults) {
       const entry = this.#faults.get(fault.column);
       if (entry === undefined) this.#faults.set(fault.column, { first: fault, count: 1 });
@@ -43,6 +46,7 @@ export class FileNotes {
     if (this.rows === 0) return [this.#empty()];
     return [
       ...(this.#noFixColumn ? [this.#withoutFixColumn()] : []),
+      ...(this.#dateOnly > 0 ? [this.#withoutTimeOfDay()] : []),
       ...(this.#unknownFixes.size > 0 ? [this.#unknownFix()] : []),
       ...[...this.#faults.values()].map((fault) => this.#unreadValue(fault)),
     ];
@@ -63,6 +67,15 @@ export class FileNotes {
       'info',
       'no-fix-column',
       'The log has no column "fix": every row counts as fixed. Export the state of the fix where the controller can.',
+      { file: this.file },
+    );
+  }
+
+  #withoutTimeOfDay(): Message {
+    return message(
+      'info',
+      'no-time-of-day',
+      `The log gives a date and no time of day in ${rows(this.#dateOnly)}: each is taken as an occupation of its own, and hours are not known. Export the time where the controller can.`,
       { file: this.file },
     );
   }

@@ -13,6 +13,7 @@ type ToldReason = keyof typeof REMEDIES;
 
 /** A log full of ordinary points has thousands of names that are no marks: so many are told one by one. */
 const MOST_NAMES = 20;
+const FEW_NAMES = 3;
 
 interface Group {
   first: SetAsideRow;
@@ -44,12 +45,14 @@ export class RowMessages {
     const groups = [...this.#groups.values()].sort((a, b) => byPlace(a.first, b.first));
     return (Object.keys(REMEDIES) as ToldReason[]).flatMap((reason) => {
       const ofReason = groups.filter(({ first }) => first.reason === reason);
-      if (!isName(reason) || ofReason.length <= MOST_NAMES) return ofReason.map(groupMessage);
+      if (!isName(reason) || ofReason.length <= FEW_NAMES) return ofReason.map(groupMessage);
       // Names that were probably meant to be a known one are worth more than the rest.
       const likely = ofReason.filter(({ first }) => first.detail.includes(DID_YOU_MEAN));
       const others = ofReason.filter((group) => !likely.includes(group));
-      const ranked = [...likely, ...others];
-      return [...ranked.slice(0, MOST_NAMES).map(groupMessage), restMessage(ranked.slice(MOST_NAMES))];
+      // Of names that resemble none the first few stand for all: they are mostly ordinary points.
+      const told = [...likely.slice(0, MOST_NAMES), ...others.slice(0, FEW_NAMES)];
+      const rest = ofReason.filter((group) => !told.includes(group));
+      return [...told.map(groupMessage), ...(rest.length === 0 ? [] : [restMessage(rest)])];
     });
   }
 }

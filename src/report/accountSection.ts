@@ -3,7 +3,7 @@ import type { FileResult, Results } from '../study/index.js';
 import { count, mm, NOT_GIVEN, plural } from './format.js';
 import { type Html, html } from './html.js';
 import { table } from './table.js';
-import { setAsideWords } from './words.js';
+import { groupedMessages, otherFilesWords, setAsideWords } from './words.js';
 
 type Reason = keyof typeof REASON_WORDS;
 
@@ -65,13 +65,11 @@ ${mm(roundingMm.horizontal)} mm to the horizontal and ${mm(roundingMm.vertical)}
 /** Messages, the most severe first. */
 export function messagesSection({ messages }: Results): Html {
   if (messages.length === 0) return html``;
-  const order: Readonly<Record<Message['severity'], number>> = { error: 0, warning: 1, info: 2 };
-  const sorted = [...messages].sort((a, b) => order[a.severity] - order[b.severity]);
   const place = (m: Message): string =>
     [m.file, m.row === null ? null : `line ${m.row}`, m.column].filter((part) => part !== null).join(', ');
   return html`<section id="messages"><h2>What to know before using it</h2>
 <ul class="messages">
-${sorted.map((m) => html`<li>${m.text}${place(m) === '' ? null : html` <span class="small">(${place(m)})</span>`}</li>\n`)}</ul>
+${groupedMessages(messages).map((m) => html`<li>${m.text}${otherFilesWords(m)}${place(m) === '' ? null : html` <span class="small">(${place(m)})</span>`}</li>\n`)}</ul>
 </section>
 `;
 }

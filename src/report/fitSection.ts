@@ -14,7 +14,7 @@ export function fitSection(
   if (fits.length === 0)
     return html`<section id="fit"><h2>How errors grow with distance</h2><p>No fit was possible.</p></section>\n`;
   return html`<section id="fit"><h2>How errors grow with distance</h2>
-${charts.horizontal}${charts.vertical}
+${charts.horizontal}${charts.vertical}${manyTolerances(results)}
 ${fitTable(fits)}
 ${fits.map(fitRemarks)}
 ${lengthTable(lengthClasses, specSheet)}
@@ -92,3 +92,12 @@ function lengthTable(classes: readonly LengthClass[], spec: SpecSheet | null): H
 }
 
 const mark = (text: string, tooFew: boolean): string => (tooFew && text !== NOT_GIVEN ? `${text} *` : text);
+
+/** A chart shows one tolerance; where a component has more, this says which. */
+function manyTolerances({ rules }: Results): Html | null {
+  const several = rules.some(
+    ({ component }, k) => rules.findIndex((rule) => rule.component === component) !== k,
+  );
+  if (!several) return null;
+  return html`<p class="small">Each chart shows the first tolerance of its component; the others stand in the list of rules above.</p>\n`;
+}

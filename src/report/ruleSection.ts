@@ -2,7 +2,7 @@ import type { Rule } from '../rule/index.js';
 import type { Results } from '../study/index.js';
 import { km, kmDown, NOT_GIVEN, plural } from './format.js';
 import { date, type Html, html, trusted } from './html.js';
-import { capital, ruleParts, unseenDays, whyNoRule } from './words.js';
+import { capital, ruleParts, spoiling, unseenDays, whyNoRule } from './words.js';
 
 /** The rules, before everything else. */
 export function ruleSection(results: Results): Html {
@@ -11,6 +11,7 @@ export function ruleSection(results: Results): Html {
     return html`<section id="rule"><h2>How far from the base</h2><p>There is no rule: ${whyNoRule(results)}.</p></section>\n`;
   }
   return html`<section id="rule"><h2>How far from the base</h2>
+${spoiling(results.messages).map(({ text }) => html`<p class="first">${text}</p>`)}
 <ul class="rules">
 ${rules.map(ruleItem)}</ul>
 ${conditionsOfComponents(rules)}
@@ -22,9 +23,11 @@ so on a worse day fewer positions are within the limit. ${rules[0]!.conditions.d
 
 function ruleItem(rule: Rule): Html {
   const { head, body } = ruleParts(rule);
-  const best = rule.bestEstimateKm
-    ? html`<span class="small">Best estimate without its uncertainty: ${kmDown(rule.bestEstimateKm)} km. Two marks and enough days support lengths up to ${km(rule.longestSupportedKm)} km.</span>`
-    : null;
+  // Where the data end the limit, an estimate cut there too would say nothing.
+  const best =
+    rule.bestEstimateKm && rule.reason === null
+      ? html`<span class="small">Best estimate without its uncertainty: ${kmDown(rule.bestEstimateKm)} km. Two marks and enough days support lengths up to ${km(rule.longestSupportedKm)} km.</span>`
+      : null;
   return html`<li${rule.maximumBaselineKm ? null : trusted(' class="none"')}><strong>${head}</strong>
 <span>${capital(body)}</span>${best}</li>
 `;

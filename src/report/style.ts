@@ -8,6 +8,8 @@ h1 { font-size: 1.9rem; line-height: 1.2; margin: 0 0 .3rem; }
 h2 { font-size: 1.3rem; margin: 2.6rem 0 .6rem; padding-top: .6rem; border-top: 2px solid var(--ink); break-after: avoid; }
 p { margin: .5rem 0; }
 .lead { color: #4a5a66; margin-bottom: 1.6rem; }
+/* What must be looked at before the rules are used. */
+.first { border: 1.5px solid var(--brick); padding: .5rem .8rem; break-inside: avoid; }
 .rules { list-style: none; margin: 1rem 0; padding: 0; }
 .rules li { border-left: 6px solid var(--water); padding: .5rem 0 .5rem 1rem; margin: .7rem 0; break-inside: avoid; }
 .rules li.none { border-left-color: var(--mist); }

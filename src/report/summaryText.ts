@@ -1,13 +1,22 @@
 import { formatMessage, type Message } from '../logs/index.js';
 import type { FileResult, Results } from '../study/index.js';
 import { count, plural } from './format.js';
-import { fitSentence, ruleSentence, setAsideWords, whyNoRule } from './words.js';
+import {
+  fitSentence,
+  groupedMessages,
+  otherFilesWords,
+  ruleSentence,
+  setAsideWords,
+  spoiling,
+  whyNoRule,
+} from './words.js';
 
 /** What a run found, in a few lines for a terminal. */
 export function summaryText(results: Results): string {
   return [
     results.study.title,
     '',
+    ...spoiling(results.messages).map(({ text }) => `First: ${text}`),
     ...results.rules.map(ruleSentence),
     ...(results.rules.length === 0 ? [`There is no rule: ${whyNoRule(results)}.`] : []),
     '',
@@ -45,11 +54,12 @@ function fileLine({ file, read, used, setAside }: FileResult): string {
   return `  ${file}: ${count(read)} read, ${count(used)} used${reasons === '' ? '' : `; ${reasons}`}`;
 }
 
-/** Errors and warnings one by one, remarks by their number. */
+/** Errors and warnings, the same of many files once; remarks by their number. */
 export function messageLines(messages: readonly Message[]): string[] {
-  const told = messages.filter(({ severity }) => severity !== 'info');
-  const remarks = messages.length - told.length;
-  const lines = told.map(formatMessage);
+  const grouped = groupedMessages(messages);
+  const told = grouped.filter(({ severity }) => severity !== 'info');
+  const remarks = grouped.length - told.length;
+  const lines = told.map((each) => `${formatMessage(each)}${otherFilesWords(each)}`);
   if (remarks > 0) lines.push(`${plural(remarks, 'remark')} in the report.`);
   return lines.length === 0 ? [] : ['', ...lines];
 }

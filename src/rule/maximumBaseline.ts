@@ -1,7 +1,7 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
 import { type Component, type ErrorModel, sigmaAtMm, sigmaUpperLimitMm } from '../fit/index.js';
 import { componentRows } from './componentRows.js';
-import { longestSupportedKm } from './supportedLength.js';
+import { longestSupportedKm, marksBeyond } from './supportedLength.js';
 import { type Tolerance, toleranceFactor } from './tolerance.js';
 
 /** How far from the base a tolerance holds, and on what that rests. */
@@ -77,7 +77,7 @@ export function maximumBaseline(errors: ErrorsInput, model: ErrorModel, toleranc
     bestEstimateKm,
     allDaysKm: maximumBaselineKm,
     reason: capped
-      ? cappedReason(supportedKm)
+      ? cappedReason(errors, tolerance.component, supportedKm)
       : maximumBaselineKm === 0
         ? zeroReason(model, tolerance, allowedMm)
         : null,
@@ -123,8 +123,20 @@ function whyNoRule(model: ErrorModel, { share }: Tolerance, supportedKm: number 
 
 const percent = (share: number): string => `${Number((100 * share).toFixed(1))} %`;
 
-const cappedReason = (km: number): string =>
-  `at least ${(Math.floor(km * 10) / 10).toFixed(1)} km: the tolerance holds as far as the data reach, and nothing is known beyond`;
+/** The tolerance holds as far as the data support a rule; what would carry it farther. */
+function cappedReason(errors: ErrorsInput, component: Component, km: number): string {
+  const stop = (Math.floor(km * 10) / 10).toFixed(1);
+  const beyond = marksBeyond(errors, component, km);
+  if (beyond.length === 0) {
+    return `at least ${stop} km: the tolerance holds as far as the data reach, and nothing is known beyond`;
+  }
+  const names = beyond.map(({ mark, baselineKm }) => `"${mark}" at ${baselineKm.toFixed(1)} km`).join(', ');
+  const few =
+    beyond.length === 1
+      ? `only one mark lies beyond (${names}), and one mark cannot be told from its own error`
+      : `too few shots lie beyond (${names})`;
+  return `it stops at ${stop} km because ${few}: a rule needs 2 marks with 20 occupations on 5 days at or beyond its length`;
+}
 
 function zeroReason(model: ErrorModel, { share, limitMm }: Tolerance, allowedMm: number): string {
   const needed = `${percent(share)} within ${limitMm} mm needs a ${model.basis} of ${allowedMm.toFixed(1)} mm`;

@@ -248,7 +248,7 @@ describe('rows that belong nowhere', () => {
     const { occupations, messages } = await form([at(0), at(1, swapped), at(2, antipode), at(3)]);
     expect(occupations.map(seconds)).toEqual([[0, 3, 2]]);
     expect(messages.map(({ text }) => text)).toEqual([
-      '2 rows are set aside as unreadable: a position is more than 1000 km from its mark; look for swapped columns, another coordinate system, a wrong mark. Correct the rows or export them again.',
+      '2 rows are set aside as unreadable: positions on mark "CP1" are more than 1000 km from it; if it is one mark, check its coordinates, if it is all, look for swapped columns or another coordinate system. Correct the rows or export them again.',
     ]);
   });
 });

@@ -1,3 +1,5 @@
+import { readFileSync } from 'node:fs';
+import { dirname, join } from 'node:path';
 import { Command } from 'commander';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { layoutCommand } from '../../src/cli/layout.js';
@@ -34,8 +36,15 @@ describe('ppmwise layout', () => {
   it('prints each file and gives 0 when nothing is left to state', async () => {
     const { code, out } = await layout(plain, wall, '--time-zone', 'Europe/Lisbon');
     expect(code).toBe(0);
-    expect(out).toContain(`${plain}: the layout is recognised and complete.`);
-    expect(out).toContain(`${wall}: the layout is recognised and complete.`);
+    // Both are of one layout: one answer, about a pattern that fits them.
+    expect(out).toContain(`${plain} and 1 more of this layout: the layout is recognised and complete.`);
+    expect(out).toContain(`files: ${join(dirname(plain), '*.csv')}`);
+  });
+
+  it('writes paths as the study file nearby would', async () => {
+    folder.write('study/study.yaml', '');
+    const log = folder.write('study/logs/a.csv', readFileSync(plain));
+    expect((await layout(log)).out).toContain('files: logs/a.csv');
   });
 
   it('gives 1 when something must be stated or a file is no log', async () => {

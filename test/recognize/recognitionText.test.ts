@@ -46,7 +46,8 @@ describe('layoutYaml', () => {
     expect(layoutYaml(found)).toContain(
       [
         '        # TO STATE (layout.columns.mark): Which column names the mark that was measured? The first row has "1"',
-        '        # in column 1 and "CHK" in column 5. State 1 or 5.',
+        '        # in column 1 and "CHK" in column 5; a pattern under marks.names reads a name out of a longer text.',
+        '        # State 1 or 5.',
         '        mark:',
         '      units:',
       ].join('\n'),

@@ -1,4 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest';
+import type { Message } from '../../src/logs/index.js';
 import { csvText } from '../../src/report/csv.js';
 import { kmDown, mm, percent, withLimits } from '../../src/report/format.js';
 import { html } from '../../src/report/html.js';
@@ -88,6 +89,30 @@ describe('the report', () => {
   it('says nothing undefined', () => {
     expect(page).not.toMatch(/undefined|NaN|\[object/);
     expect(summaryText(run.results)).not.toMatch(/undefined|NaN|\[object/);
+  });
+});
+
+describe('messages', () => {
+  const told = (file: string | null, code: string, text: string): Message => ({
+    code,
+    severity: 'warning',
+    text,
+    file,
+    row: 2,
+    column: null,
+  });
+  it('tell the same of many files once, and first what spoils every number', () => {
+    const messages = [
+      told('a.csv', 'unreadable', '8 rows are set aside.'),
+      told('b.csv', 'unreadable', '9 rows are set aside.'),
+      told(null, 'mark-far-off', 'Mark "A" is measured 1 m off.'),
+    ];
+    const text = summaryText({ ...run.results, messages });
+    expect(text.indexOf('First: Mark "A"')).toBeLessThan(text.indexOf('Up to'));
+    expect(text).toContain('8 rows are set aside. (the same in 1 other file)');
+    expect(text).not.toContain('9 rows');
+    const page = reportHtml({ ...run.results, messages }, NO_PICTURES);
+    expect(page.indexOf('<p class="first">Mark')).toBeLessThan(page.indexOf('<ul class="rules">'));
   });
 });
 

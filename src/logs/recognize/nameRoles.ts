@@ -41,7 +41,7 @@ export function settleMark(draft: Draft): void {
     {
       code: 'mark-column',
       question: 'Which column names the mark that was measured?',
-      because: `The first row has ${candidates.map((column) => `${quotedList(column.texts.slice(0, 1))} in ${column.label}`).join(' and ')}.`,
+      because: `The first row has ${candidates.map((column) => `${quotedList(column.texts.slice(0, 1))} in ${column.label}`).join(' and ')}; a pattern under marks.names reads a name out of a longer text.`,
       key: 'layout.columns.mark',
       choices: candidates.map(({ reference }) => String(reference)),
       decisive: true,

@@ -28,7 +28,7 @@ export function askAboutFormat(
   }
   const formats = guesses.map(({ format }) => format);
   if (new Set(formats.map(orderOf)).size > 1) {
-    const because = `Texts such as ${examples} are read by each of ${quotedList(formats)}.`;
+    const because = `In the first rows texts such as ${examples} are read by each of ${quotedList(formats)}.`;
     ask(draft, 'date-order', 'In which order are day, month and year written?', because, formats);
     return null;
   }
