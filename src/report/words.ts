@@ -125,11 +125,13 @@ const SEVERITIES: Readonly<Record<Message['severity'], number>> = { error: 0, wa
 export function groupedMessages(messages: readonly Message[]): GroupedMessage[] {
   const groups = new Map<string, { first: Message; files: Set<string> }>();
   for (const told of messages) {
-    const key =
-      told.file === null ? `${groups.size}` : `${told.code} ${told.column} ${told.text.replace(/\d+/g, '#')}`;
+    // Only other files can say the same again; what a file says twice is two things.
+    const file = told.file ?? '';
+    const alike = `${told.code} ${told.column} ${told.text.replace(/\d+/g, '#')}`;
+    const key = file === '' || groups.get(alike)?.files.has(file) ? `${groups.size}` : alike;
     const group = groups.get(key);
-    if (group === undefined) groups.set(key, { first: told, files: new Set([told.file ?? '']) });
-    else group.files.add(told.file ?? '');
+    if (group === undefined) groups.set(key, { first: told, files: new Set([file]) });
+    else group.files.add(file);
   }
   const rank = ({ severity, code }: Message): number =>
     2 * SEVERITIES[severity] + (SPOILING.has(code) ? 0 : 1);
