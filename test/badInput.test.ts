@@ -405,7 +405,7 @@ describe.concurrent('logs with faults that leave enough: exit code 0', () => {
     });
     expect(result.occupations.setAside).toEqual({ 'error-over-10-m': 1 });
     expect(messages.join('\n')).toContain(
-      `log.csv:2 warning: 1 occupation is more than 10 m from the known coordinates and set aside, the first, on mark "${mark}"`,
+      `log.csv:2 warning: 1 occupation is more than 10 m from the known coordinates and set aside: on mark "${mark}"`,
     );
   });
 

@@ -79,7 +79,13 @@ function farOffOccupations(
   const { error } = setAside[0]!;
   const size = Math.hypot(error.east || 0, error.north || 0, error.up || 0) / 1000;
   const count = setAside.length === 1 ? '1 occupation is' : `${setAside.length} of ${all} occupations are`;
-  const first = `the first, on mark ${quoted(error.mark)}, by ${size.toFixed(1)} m`;
+  const marks = new Set(setAside.map((one) => one.error.mark)).size;
+  const which =
+    setAside.length === 1
+      ? `on mark ${quoted(error.mark)}, by ${size.toFixed(1)} m`
+      : marks === 1
+        ? `all on mark ${quoted(error.mark)}, the first by ${size.toFixed(1)} m`
+        : `on ${marks} marks, the first on mark ${quoted(error.mark)}, by ${size.toFixed(1)} m`;
   const remedy =
     setAside.length > WHOLE_STUDY_SHARE * all
       ? 'So many have one cause: check units, coordinate system, height system, and the coordinates of marks and bases.'
@@ -88,7 +94,7 @@ function farOffOccupations(
     message(
       'warning',
       'error-over-10-m',
-      `${count} more than 10 m from the known coordinates and set aside, ${first}. ${remedy}`,
+      `${count} more than 10 m from the known coordinates and set aside: ${which}. ${remedy}`,
       { file: error.file, row: error.row },
     ),
   ];

@@ -302,7 +302,7 @@ describe('computeErrors', () => {
     expect(errors).toHaveLength(10);
     expect(setAside.map(({ reason, error }) => [reason, error.mark])).toEqual([['error-over-10-m', 'CP3']]);
     expect(messages.map(formatMessage)).toContain(
-      'a.csv:77 warning: 1 occupation is more than 10 m from the known coordinates and set aside, the first, on mark "CP3", by 10.0 m. Check the name of the mark and the coordinates.',
+      'a.csv:77 warning: 1 occupation is more than 10 m from the known coordinates and set aside: on mark "CP3", by 10.0 m. Check the name of the mark and the coordinates.',
     );
   });
 
@@ -310,7 +310,14 @@ describe('computeErrors', () => {
     const { setAside, messages } = await computed([...shots('CP1', 47, 3), ...shots('CP2', 47, 2)]);
     expect(setAside).toHaveLength(5);
     expect(messages.map(({ text }) => text)).toEqual([
-      '5 of 5 occupations are more than 10 m from the known coordinates and set aside, the first, on mark "CP1", by 47.0 m. So many have one cause: check units, coordinate system, height system, and the coordinates of marks and bases.',
+      '5 of 5 occupations are more than 10 m from the known coordinates and set aside: on 2 marks, the first on mark "CP1", by 47.0 m. So many have one cause: check units, coordinate system, height system, and the coordinates of marks and bases.',
+    ]);
+  });
+
+  it('names the one mark that all far occupations are on', async () => {
+    const { messages } = await computed([...shots('CP1', 0.004, 9), ...shots('CP2', 47, 2)]);
+    expect(messages.map(({ text }) => text)).toEqual([
+      '2 of 11 occupations are more than 10 m from the known coordinates and set aside: all on mark "CP2", the first by 47.0 m. Check the name of the mark and the coordinates.',
     ]);
   });
 
