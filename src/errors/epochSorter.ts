@@ -151,18 +151,22 @@ export class EpochSorter {
 /** No rover works so far from its base: the coordinates are not what they are said to be, and no mean is formed of them. */
 const FARTHEST_M = 1_000_000;
 
+/** By day, then by time (what has none comes last in its day), then by names. */
 function byStart(a: Visit | Occupation, b: Visit | Occupation): number {
-  const compare = (x: string, y: string): number => (x < y ? -1 : x > y ? 1 : 0);
-  const [startA, startB] = [a.startMs, b.startMs].map((ms) => (Number.isNaN(ms) ? Number.MAX_VALUE : ms)) as [
-    number,
-    number,
-  ];
   return (
-    compare(a.day, b.day) ||
-    startA - startB ||
-    compare(a.rover, b.rover) ||
-    compare(a.mark, b.mark) ||
-    compare(a.base, b.base) ||
-    compare(a.setup, b.setup)
+    compareText(a.day, b.day) ||
+    startOrLast(a) - startOrLast(b) ||
+    compareText(a.rover, b.rover) ||
+    compareText(a.mark, b.mark) ||
+    compareText(a.base, b.base) ||
+    compareText(a.setup, b.setup)
   );
+}
+
+const startOrLast = ({ startMs }: Visit | Occupation): number =>
+  Number.isNaN(startMs) ? Number.MAX_VALUE : startMs;
+
+/** By code units, so that no locale changes the order. */
+function compareText(x: string, y: string): number {
+  return x === y ? 0 : x < y ? -1 : 1;
 }

@@ -32,10 +32,12 @@ if (kind === 'rows') {
   process.exit();
 }
 const { occupations, files } = await formOccupations(readLogs([file], { timeZone: null }), control);
+const reduced = process.cpuUsage(before);
 computeErrors(occupations, control);
 const { user, system } = process.cpuUsage(before);
 console.log(
   JSON.stringify({
+    occupationsCpuSeconds: (reduced.user + reduced.system) / 1e6,
     cpuSeconds: (user + system) / 1e6,
     wallSeconds: (performance.now() - start) / 1000,
     peakMb: process.resourceUsage().maxRSS / 1024,
