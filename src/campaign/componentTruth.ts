@@ -59,7 +59,7 @@ export function componentTruths(
  * Expected square of a day's factor: exp(2 sd²) of the log-normal part, times 1 on ordinary days and the
  * mean square (from² + from·to + to²)/3 of a uniform factor on bad ones.
  */
-export function meanSquareDayFactor(settings: CampaignSettings): number {
+function meanSquareDayFactor(settings: CampaignSettings): number {
   const ordinary = Math.exp(2 * settings.dayFactorLogSd ** 2);
   if (settings.badDays === null) return ordinary;
   const { runs, runLength, factor } = settings.badDays;

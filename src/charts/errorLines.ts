@@ -24,7 +24,7 @@ export interface BandPoint {
 /** Lengths at which curves are drawn: 0 to the longest one. */
 const STEPS = 120;
 
-export const curveLengthsKm = (longestKm: number): number[] =>
+const curveLengthsKm = (longestKm: number): number[] =>
   Array.from({ length: STEPS + 1 }, (_, k) => (k / STEPS) * longestKm);
 
 /** The share whose curve is drawn: that of the tolerance, but none that an RMS says nothing of (above 95 %). */

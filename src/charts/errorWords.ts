@@ -4,7 +4,7 @@ import { ruleWords } from './errorTolerance.js';
 import { counted, countWords, percentWords, shortNumber } from './words.js';
 
 /** `8.1 mm + 1.02 ppm`, or what can be said where an estimate is missing. */
-export function modelWords(model: ErrorModel): string {
+function modelWords(model: ErrorModel): string {
   const { constantMm, ppm } = model;
   const constant = term(constantMm, 1, 'mm');
   if (ppm.estimate === null && ppm.high === null) {

@@ -12,7 +12,7 @@ export const COLORS = {
 export const AMOUNT_RAMP: readonly string[] = ['#e4eef3', '#bcd4e0', '#8fb6c9', '#6296b0'];
 
 /** The fallbacks have nearly the widths of the first font, for readers who do not have it. */
-export const FONT = 'DejaVu Sans, Verdana, sans-serif';
+const FONT = 'DejaVu Sans, Verdana, sans-serif';
 
 /** Font sizes in pixels; a chart of 800 pixels printed 165 mm wide shows 12 px as 7 pt. */
 export const FONT_SIZE = { title: 18, text: 13, small: 12 } as const;

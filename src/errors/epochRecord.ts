@@ -23,11 +23,23 @@ export const RECORD = {
   motion: 14,
 } as const;
 
+/** What a row measures: these are averaged over an occupation. */
+export const MEASURED = [
+  RECORD.eastM,
+  RECORD.northM,
+  RECORD.upM,
+  RECORD.satellites,
+  RECORD.pdop,
+  RECORD.ageSeconds,
+  RECORD.horizontalSigmaM,
+  RECORD.verticalSigmaM,
+] as const;
+
 export const RECORD_WIDTH = 15;
 export const CAME_MOVING = 1;
 export const LEFT_MOVING = 2;
 export const FIXED = 0;
-export const NOT_FIXED = 1;
+const NOT_FIXED = 1;
 export const NO_POSITION = 2;
 
 const stateOf = (fix: Fix, hasPosition: boolean): number =>

@@ -7,5 +7,6 @@ export {
 export { type ErrorColumns, type ErrorsInput, errorColumns } from './errorColumns.js';
 export { errorTable } from './errorTable.js';
 export { type FormedOccupations, type FormOccupationsOptions, formOccupations } from './formOccupations.js';
+export { groupIndices } from './groupIndices.js';
 export type { Occupation, Visit } from './occupation.js';
 export { type StaticShots, staticMessage, staticShots } from './staticShots.js';

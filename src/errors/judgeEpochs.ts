@@ -1,5 +1,5 @@
 import type { RowReason } from '../logs/index.js';
-import { FIXED, NO_POSITION, RECORD, RECORD_WIDTH } from './epochRecord.js';
+import { FIXED, MEASURED, NO_POSITION, RECORD, RECORD_WIDTH } from './epochRecord.js';
 
 /** What becomes of an epoch: `used` in an occupation, or the reason why not. */
 export type Verdict =
@@ -13,17 +13,7 @@ export interface NameRanks {
 }
 
 /** What tells rows of the same time apart, before the place where they stand. */
-const MEASURED = [
-  RECORD.state,
-  RECORD.eastM,
-  RECORD.northM,
-  RECORD.upM,
-  RECORD.satellites,
-  RECORD.pdop,
-  RECORD.ageSeconds,
-  RECORD.horizontalSigmaM,
-  RECORD.verticalSigmaM,
-] as const;
+const TOLD_APART_BY = [RECORD.state, ...MEASURED] as const;
 
 /**
  * Offsets of the records of one key in time order. Rows of the same time stand in the order of what they say, and only
@@ -36,7 +26,7 @@ export function timeOrder(records: Float64Array, ranks: NameRanks): Int32Array {
   const compare = (a: number, b: number): number => {
     const time = records[a + RECORD.utcMs]! - records[b + RECORD.utcMs]!;
     if (time !== 0) return time;
-    for (const field of MEASURED) {
+    for (const field of TOLD_APART_BY) {
       const difference = compareNumbers(records[a + field]!, records[b + field]!);
       if (difference !== 0) return difference;
     }

@@ -1,7 +1,7 @@
 import type { Geodetic } from '../geodesy/index.js';
 
-/** A crew's stay at a mark, with or without a fix. */
-export interface Visit {
+/** Who was where, and when. */
+interface Stay {
   readonly rover: string;
   readonly mark: string;
   readonly base: string;
@@ -11,20 +11,16 @@ export interface Visit {
   readonly day: string;
   readonly startMs: number;
   readonly endMs: number;
+}
+
+/** A crew's stay at a mark, with or without a fix. */
+export interface Visit extends Stay {
   readonly rows: number;
   readonly fixedRows: number;
 }
 
 /** Consecutive fixed positions of one visit, averaged: the unit that is analysed. */
-export interface Occupation {
-  readonly rover: string;
-  readonly mark: string;
-  readonly base: string;
-  readonly setup: string;
-  readonly crew: string;
-  readonly day: string;
-  readonly startMs: number;
-  readonly endMs: number;
+export interface Occupation extends Stay {
   /** Fixed rows that were averaged. */
   readonly epochs: number;
   /** Mean of the fixed epochs. */

@@ -1,6 +1,7 @@
 import { type Message, message, quoted } from '../logs/index.js';
 import { median } from '../stats/index.js';
 import type { OccupationError, SetAsideOccupation } from './computeErrors.js';
+import { groupIndices } from './groupIndices.js';
 
 /** A mark is named from this size on, however small the others are. */
 const SMALLEST_MM = 100;
@@ -21,13 +22,9 @@ export function suspectMarks(
 }
 
 function farOffMarks(errors: readonly OccupationError[]): Message[] {
-  const byMark = new Map<string, OccupationError[]>();
-  for (const error of errors) {
-    const list = byMark.get(error.mark);
-    if (list === undefined) byMark.set(error.mark, [error]);
-    else list.push(error);
-  }
-  const offsets = [...byMark].map(([mark, list]) => {
+  const byMark = groupIndices(errors.map(({ mark }) => mark));
+  const offsets = [...byMark].map(([mark, indices]) => {
+    const list = indices.map((i) => errors[i]!);
     const middle = (component: 'east' | 'north' | 'up'): number => {
       const known = list.map((error) => error[component]).filter((value) => !Number.isNaN(value));
       return known.length === 0 ? 0 : median(known);

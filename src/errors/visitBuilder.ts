@@ -1,5 +1,5 @@
 import { geocentricToGeodetic, type LocalFrame } from '../geodesy/index.js';
-import { FIXED, RECORD } from './epochRecord.js';
+import { FIXED, MEASURED, RECORD } from './epochRecord.js';
 import type { Verdict } from './judgeEpochs.js';
 import type { Occupation, Visit } from './occupation.js';
 import { RunningMean } from './runningMean.js';
@@ -25,17 +25,6 @@ export interface VisitBuilderOptions {
   readonly fileNames: readonly string[];
   readonly crewNames: readonly string[];
 }
-
-const AVERAGED = [
-  RECORD.eastM,
-  RECORD.northM,
-  RECORD.upM,
-  RECORD.satellites,
-  RECORD.pdop,
-  RECORD.ageSeconds,
-  RECORD.horizontalSigmaM,
-  RECORD.verticalSigmaM,
-] as const;
 
 interface OpenOccupation {
   readonly startMs: number;
@@ -86,11 +75,11 @@ export class VisitBuilder {
       crew,
       file: fileNames[records[offset + RECORD.file]!]!,
       row: records[offset + RECORD.row]!,
-      means: AVERAGED.map(() => new RunningMean()),
+      means: MEASURED.map(() => new RunningMean()),
     };
     this.#occupation.endMs = utcMs;
     this.#occupation.epochs += records[offset + RECORD.epochs]!;
-    for (let k = 0; k < AVERAGED.length; k++) this.#occupation.means[k]!.add(records[offset + AVERAGED[k]!]!);
+    for (let k = 0; k < MEASURED.length; k++) this.#occupation.means[k]!.add(records[offset + MEASURED[k]!]!);
   }
 
   /** To be called once after the last epoch. */

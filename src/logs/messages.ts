@@ -3,6 +3,10 @@
  * expected, what came and what to do; place (file, row, column) stands in its own fields, not in the text.
  */
 
+import { quoted } from '../time/index.js';
+
+export { quoted };
+
 export type Severity = 'error' | 'warning' | 'info';
 
 export interface Message {
@@ -39,15 +43,6 @@ export function formatMessage(m: Message): string {
   const where = `${m.file ?? ''}${m.row === null ? '' : `:${m.row}`}${m.column === null ? '' : ` [${m.column}]`}`;
   const line = `${where === '' ? '' : `${where.trim()} `}${m.severity}: ${m.text}`;
   return line.replace(/\p{Cc}/gu, '\ufffd');
-}
-
-const LONGEST_SHOWN = 60;
-
-/** A text as it came, in quotes, cut when it is long. */
-export function quoted(text: string): string {
-  return text.length > LONGEST_SHOWN
-    ? `${JSON.stringify(text.slice(0, LONGEST_SHOWN))}…`
-    : JSON.stringify(text);
 }
 
 const MOST_LISTED = 20;

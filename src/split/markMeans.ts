@@ -1,4 +1,4 @@
-import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import { type ErrorsInput, errorColumns, groupIndices } from '../errors/index.js';
 import { clusteredMean } from './clusteredMean.js';
 
 /** Mean error of one mark, mm; null where it cannot be given (not known of the mark, or a single day for `se`). */
@@ -30,13 +30,7 @@ export function markMeans(errors: ErrorsInput): MarkMean[] {
   const [east, north, up, lengths, azimuths] = ['east', 'north', 'up', 'baselineKm', 'azimuthDeg'].map(
     numbers,
   ) as [Float64Array, Float64Array, Float64Array, Float64Array, Float64Array];
-  const members = new Map<string, number[]>();
-  marks.forEach((mark, i) => {
-    const key = `${mark}\u0000${bases[i]}`;
-    const list = members.get(key);
-    if (list === undefined) members.set(key, [i]);
-    else list.push(i);
-  });
+  const members = groupIndices(marks.map((mark, i) => `${mark}\u0000${bases[i]}`));
   return [...members.values()]
     .map((indices): MarkMean => {
       const [first] = indices as [number];

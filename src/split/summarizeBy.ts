@@ -1,4 +1,4 @@
-import { type ErrorColumns, type ErrorsInput, errorColumns } from '../errors/index.js';
+import { type ErrorColumns, type ErrorsInput, errorColumns, groupIndices } from '../errors/index.js';
 import { sum } from '../stats/index.js';
 import { clusteredMean, type Interval, rootMeanSquare } from './clusteredMean.js';
 
@@ -99,13 +99,7 @@ type Classes = readonly { readonly group: Group; readonly members: readonly numb
 function classify(columns: ErrorColumns, by: SplitBy): Classes {
   const needed = `the split by ${typeof by === 'string' ? by : by.column}`;
   if (typeof by === 'string') {
-    const members = new Map<string, number[]>();
-    columns.texts(by, needed).forEach((name, i) => {
-      const list = members.get(name);
-      if (list === undefined) members.set(name, [i]);
-      else list.push(i);
-    });
-    return [...members]
+    return [...groupIndices(columns.texts(by, needed))]
       .sort(([a], [b]) => (a < b ? -1 : 1))
       .map(([group, list]) => ({ group: { group, from: null, to: null }, members: list }));
   }

@@ -19,6 +19,7 @@ export {
   type LocalTime,
   parseIsoTime,
 } from './isoTime.js';
+export { quoted } from './quoted.js';
 export { solarDay, solarHour } from './solarTime.js';
 export { compileTimeFormat, type ParsedWallTime, type TimeFormatReader } from './timeFormat.js';
 export { type TimeLayout, type TimeOutcome, timeReader } from './timeReader.js';
