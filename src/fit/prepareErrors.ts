@@ -10,6 +10,10 @@ export interface FitData extends SquaredErrors {
   readonly components: readonly Float64Array[];
   readonly mark: readonly string[] | null;
   readonly setup: readonly string[] | null;
+  /** Start of each occupation, UTC ms; null when the errors do not tell. */
+  readonly startMs: Float64Array | null;
+  /** Where each entry stands in the errors that came in. */
+  readonly rows: Int32Array;
   /** Rows without a value of this component (marks known in plan only or height only). */
   readonly withoutValue: number;
   /** Rows on the base itself, or without a length, which take no part. */
@@ -17,9 +21,10 @@ export interface FitData extends SquaredErrors {
 }
 
 /**
+ * @param weights in [0, 1], one for each row of the errors; default 1
  * @throws InputError when a column is missing, or no row has the component and a length above 0
  */
-export function prepareErrors(errors: ErrorsInput, component: Component): FitData {
+export function prepareErrors(errors: ErrorsInput, component: Component, weights?: Float64Array): FitData {
   const columns = errorColumns(errors);
   const neededFor = `component "${component}"`;
   const names = component === 'horizontal' ? ['east', 'north'] : ['up'];
@@ -30,6 +35,7 @@ export function prepareErrors(errors: ErrorsInput, component: Component): FitDat
     columns.has(name) ? columns.texts(name, 'a note') : null;
   const marks = optional('mark');
   const setups = optional('setup');
+  const starts = columns.has('startMs') ? columns.numbers('startMs', 'a note') : null;
   const rows = Array.from(lengths.keys());
   const used = rows.filter((i) => values.every((column) => !Number.isNaN(column[i]!)));
   if (used.length === 0) {
@@ -60,17 +66,20 @@ export function prepareErrors(errors: ErrorsInput, component: Component): FitDat
       compare(days[i]!, days[j]!) ||
       lengths[i]! - lengths[j]! ||
       square(i) - square(j) ||
-      compareSigns(values, i, j),
+      compareSigns(values, i, j) ||
+      (starts === null ? 0 : starts[i]! - starts[j]!),
   );
   const pick = (list: readonly string[] | null): string[] | null => list && measured.map((i) => list[i]!);
   return {
     y: Float64Array.from(measured, square),
     l: Float64Array.from(measured, (i) => lengths[i]! ** 2),
-    w: new Float64Array(measured.length).fill(1),
+    w: Float64Array.from(measured, (i) => weights?.[i] ?? 1),
     day: measured.map((i) => days[i]!),
     components: values.map((column) => Float64Array.from(measured, (i) => column[i]!)),
     mark: pick(marks),
     setup: pick(setups),
+    startMs: starts && Float64Array.from(measured, (i) => starts[i]!),
+    rows: Int32Array.from(measured),
     withoutValue: rows.length - used.length,
     withoutBaseline,
   };
