@@ -1,8 +1,18 @@
 export { readAliases } from './aliases.js';
 export { type Base, type Bases, type Mounting, readBases } from './bases.js';
 export { type Control, type Match, markFrame, matchBase, matchMark } from './control.js';
+export type { ControlFile } from './controlFile.js';
 export { type Mark, type Marks, readMarks } from './marks.js';
 export { type MarkInterval, type MarkTimes, markAt, readMarkTimes } from './markTimes.js';
 export { matchRowNames, type NameRules, type RowNames } from './names.js';
 export { NearestMark } from './nearestMark.js';
-export type { ControlFile } from './readControl.js';
+export { SIGMA_LEVELS, type SigmaLevel, sigmaLevel, sigmasIn } from './sigmaLevel.js';
+export {
+  coordinatesOn,
+  holdsOn,
+  type PointCoordinates,
+  SKIES,
+  type Sky,
+  type Versioned,
+  validityWords,
+} from './versions.js';

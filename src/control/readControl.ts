@@ -1,122 +1,128 @@
-import type { Geodetic } from '../geodesy/index.js';
-import {
-  type ColumnRole,
-  CoordinateFault,
-  type CoordinateSystem,
-  coordinateColumns,
-  type DelimitedHeader,
-  InputError,
-  type Message,
-  message,
-  parseNumber,
-  quoted,
-  readDelimitedTable,
-  type TableRow,
-} from '../logs/index.js';
+import { type ColumnRole, type Message, message, quoted } from '../logs/index.js';
+import { ControlCells, type ControlCellsRow } from './controlCells.js';
+import type { ControlFile } from './controlFile.js';
+import { type SigmaLevel, sigmaLevel, sigmasIn } from './sigmaLevel.js';
+import type { PointCoordinates } from './versions.js';
 
-/** Where a table of points with known coordinates stands and in which system it is written. */
-export interface ControlFile {
-  readonly path: string;
-  /** Name in messages. */
-  readonly file: string;
-  readonly coordinates: CoordinateSystem;
-  readonly columns?: Readonly<Partial<Record<ColumnRole, string>>> | undefined;
-}
-
-/** One row of a marks or bases file, its cells by role. */
+/** One row of a marks or bases file. */
 export interface ControlRow {
   readonly row: number;
   readonly name: string;
-  /** What is not known is NaN. */
-  readonly position: Geodetic;
+  readonly coordinates: PointCoordinates;
   /** Some, but not all, of the coordinates that are only known together are given; they count as not known. */
   readonly half: boolean;
   readonly text: (role: ColumnRole) => string;
-  /** One of the numbers asked for; NaN when blank. */
-  readonly number: (role: ColumnRole) => number;
 }
 
-const NOT_KNOWN: Geodetic = { latitudeDeg: Number.NaN, longitudeDeg: Number.NaN, heightM: Number.NaN };
+/** What a marks or bases file holds, and what is wrong with it. */
+export interface ControlRows {
+  readonly rows: readonly ControlRow[];
+  readonly messages: readonly Message[];
+  /** Every faulty cell; none of it may be passed over. */
+  readonly errors: readonly Message[];
+  /** How the file names the column of points. */
+  readonly nameColumn: string;
+}
 
 /**
- * The rows of a marks or bases file. A blank coordinate means not known (NaN).
- * @param numberRoles columns with further numbers, none of them negative
- * @throws InputError with every faulty cell named
+ * The rows of a marks or bases file, each with its coordinates as the study compares them. A blank coordinate means not
+ * known (NaN).
+ * @throws InputError when the header is not understood
  */
-export async function readControlRows(
-  control: ControlFile,
-  nameRole: 'mark' | 'base',
-  numberRoles: readonly ColumnRole[] = [],
-): Promise<{ rows: ControlRow[]; messages: Message[] }> {
-  const { path, file, columns } = control;
-  const { roles, together, toGeodetic } = coordinateColumns(control.coordinates);
-  const required = [nameRole, ...roles] as const;
-  const { header, rows, messages } = await readDelimitedTable(path, file, { columns, required });
-  const errors: Message[] = [];
-  const report = (code: string, text: string, row: number, role: ColumnRole | null): void => {
-    const column = role === null ? {} : { column: header.headers.get(role) ?? role };
-    errors.push(message('error', code, text, { file, row, ...column }));
-  };
-  const seen = new Map<string, number>();
-  const result: ControlRow[] = [];
-  for (const data of rows) {
-    const { row } = data;
-    if (data.cells === null) {
-      report('unreadable', `The row cannot be read: ${data.fault}. Correct it.`, row, null);
-      continue;
-    }
-    const text = (role: ColumnRole): string => cellOf(header, data, role);
-    const number = (role: ColumnRole): number => {
-      const value = parseNumber(text(role));
-      if (value !== null) return value;
-      const came = quoted(text(role));
-      report(
-        'not-a-number',
-        `Expected a number, came ${came}. Correct the cell or leave it blank.`,
-        row,
-        role,
-      );
-      return Number.NaN;
-    };
+export async function readControlRows(control: ControlFile, nameRole: 'mark' | 'base'): Promise<ControlRows> {
+  const cells = await ControlCells.read(control, nameRole);
+  const rows: ControlRow[] = [];
+  const withoutLevel: number[] = [];
+  for (const row of cells.readableRows()) {
+    const { text, place } = row;
     const name = text(nameRole);
     if (name === '') {
-      report('no-name', `Expected the name of a ${nameRole}, came a blank cell. Fill it in.`, row, nameRole);
+      row.report('no-name', `Expected the name of a ${nameRole}, came a blank cell. Fill it in.`, nameRole);
       continue;
     }
-    if (seen.has(name)) {
-      const before = `The ${nameRole} ${quoted(name)} stands already in row ${seen.get(name)}.`;
-      report('repeated-name', `${before} Keep one of the two.`, row, nameRole);
-      continue;
+    const sigmas = statedSigmas(row);
+    const [from, to] = [statedDay(row, 'start'), statedDay(row, 'end')];
+    if (from !== '' && to !== '' && from > to) {
+      row.report('bad-validity', `Expected a last day not before ${from}, came ${to}. Correct it.`, 'end');
     }
-    seen.set(name, row);
-    const faultsBefore = errors.length;
-    const [first, second, third] = roles.map(number) as [number, number, number];
-    const numbers = new Map(numberRoles.map((role) => [role, number(role)]));
-    for (const [role, value] of numbers) {
-      if (!(value < 0)) continue;
-      report('out-of-range', `Expected a number of at least 0, came ${value}. Correct the cell.`, row, role);
-    }
-    if (errors.length > faultsBefore) continue;
-    const blank = [first, second, third].slice(0, together).filter(Number.isNaN).length;
-    let position: Geodetic = { ...NOT_KNOWN, heightM: together === 2 ? third : Number.NaN };
-    if (blank === 0) {
-      try {
-        position = toGeodetic(first, second, third);
-      } catch (error) {
-        if (!(error instanceof CoordinateFault)) throw error;
-        const impossible = `The coordinates are impossible: ${error.message}. Correct them.`;
-        report('out-of-range', impossible, row, roles[error.index]);
-        continue;
-      }
-    }
-    const half = blank > 0 && blank < together;
-    result.push({ row, name, position, half, text, number: (role) => numbers.get(role) ?? Number.NaN });
+    const epoch = row.number('epoch');
+    const position = place();
+    if (position === null || row.faulty()) continue;
+    if (sigmas.levelMissing) withoutLevel.push(row.row);
+    const coordinates: PointCoordinates = {
+      position: position.place,
+      horizontalSigmaMm: sigmas.horizontalSigmaMm,
+      verticalSigmaMm: sigmas.verticalSigmaMm,
+      source: text('source'),
+      frame: text('frame') || (control.frame ?? ''),
+      epoch: Number.isNaN(epoch) ? (control.epoch ?? Number.NaN) : epoch,
+      from,
+      to,
+    };
+    rows.push({ row: row.row, name, coordinates, half: position.half, text });
   }
-  if (errors.length > 0) throw new InputError(errors);
-  return { rows: result, messages };
+  return {
+    rows,
+    messages: [...cells.messages, ...levelMessage(control.file, withoutLevel)],
+    errors: cells.errors,
+    nameColumn: cells.header.headers.get(nameRole) ?? nameRole,
+  };
 }
 
-function cellOf(header: DelimitedHeader, data: TableRow, role: ColumnRole): string {
-  const index = header.positions.get(role);
-  return index === undefined ? '' : data.cells![index]!;
+interface StatedSigmas {
+  readonly horizontalSigmaMm: number;
+  readonly verticalSigmaMm: number;
+  readonly levelMissing: boolean;
+}
+
+/** One standard deviation each; what is stated at another level is divided by its factor. */
+function statedSigmas(row: ControlCellsRow): StatedSigmas {
+  const [horizontal, vertical] = [row.number('horizontalSigmaMm'), row.number('verticalSigmaMm')];
+  for (const [role, value] of [
+    ['horizontalSigmaMm', horizontal],
+    ['verticalSigmaMm', vertical],
+  ] as const) {
+    if (value < 0) {
+      row.report('out-of-range', `Expected a number of at least 0, came ${value}. Correct the cell.`, role);
+    }
+  }
+  const stated = !Number.isNaN(horizontal) || !Number.isNaN(vertical);
+  const cell = row.text('sigmaLevel');
+  let level: SigmaLevel | null = 'rms';
+  if (stated && cell !== '') {
+    level = sigmaLevel(cell);
+    if (level === null) {
+      row.report(
+        'unknown-level',
+        `Expected "rms", "68" or "95" as the level of the stated precision, came ${quoted(cell)}. Correct it.`,
+        'sigmaLevel',
+      );
+    }
+  }
+  const factor = sigmasIn(level ?? 'rms');
+  return {
+    horizontalSigmaMm: horizontal / factor,
+    verticalSigmaMm: vertical / factor,
+    levelMissing: stated && cell === '',
+  };
+}
+
+function levelMessage(file: string, rows: readonly number[]): Message[] {
+  if (rows.length === 0) return [];
+  const which = rows.length === 1 ? 'one row' : `${rows.length} rows`;
+  return [
+    message(
+      'warning',
+      'sigma-without-level',
+      `Expected the level of stated precisions (column sigmaLevel: rms, 68 or 95), came none in ${which}: they are taken as one standard deviation of each axis. State the level, since a 95 % figure is twice as large.`,
+      { file, row: rows[0]!, column: 'sigmaLevel' },
+    ),
+  ];
+}
+
+function statedDay(row: ControlCellsRow, role: 'start' | 'end'): string {
+  const cell = row.text(role);
+  if (cell === '' || row.isDay(cell)) return cell;
+  row.report('bad-validity', `Expected a day like 2025-03-01, came ${quoted(cell)}. Correct it.`, role);
+  return '';
 }

@@ -21,6 +21,8 @@ export const RECORD = {
   epochs: 13,
   /** How the log shows the rover to come and go on: CAME_MOVING and LEFT_MOVING, or 0. */
   motion: 14,
+  tiltDeg: 15,
+  support: 16,
 } as const;
 
 /** What a row measures: these are averaged over an occupation. */
@@ -33,9 +35,10 @@ export const MEASURED = [
   RECORD.ageSeconds,
   RECORD.horizontalSigmaM,
   RECORD.verticalSigmaM,
+  RECORD.tiltDeg,
 ] as const;
 
-export const RECORD_WIDTH = 15;
+export const RECORD_WIDTH = 17;
 export const CAME_MOVING = 1;
 export const LEFT_MOVING = 2;
 export const FIXED = 0;
@@ -52,6 +55,7 @@ export function writeRecord(
   local: LocalVector | null,
   fileIndex: number,
   crewIndex: number,
+  supportIndex: number,
   motion: number,
 ): void {
   record[RECORD.utcMs] = position.dateOnly === '' ? position.utcMs : Date.parse(position.dateOnly);
@@ -69,4 +73,6 @@ export function writeRecord(
   record[RECORD.crew] = crewIndex;
   record[RECORD.epochs] = position.epochs;
   record[RECORD.motion] = motion;
+  record[RECORD.tiltDeg] = position.extras?.tiltDeg ?? Number.NaN;
+  record[RECORD.support] = supportIndex;
 }

@@ -2,12 +2,12 @@ import { type Geocentric, geodeticToGeocentric } from '../geodesy/index.js';
 import type { Position } from '../logs/index.js';
 import { CAME_MOVING, LEFT_MOVING } from './epochRecord.js';
 import { isMotion, LONGEST_STEP_MS } from './movingEpochs.js';
+import type { PlacingOptions } from './placer.js';
 
 /** A position and how the rover came to it and went on: the sum of CAME_MOVING and LEFT_MOVING, where they hold. */
 export interface Watched {
   readonly position: Position;
-  /** How far the nearest mark may be, m; null where nearness does not count. */
-  readonly reachM: number | null;
+  readonly placing: PlacingOptions;
   readonly motion: number;
 }
 
@@ -23,12 +23,12 @@ export class MotionWatch {
   readonly #waiting = new Map<string, Waiting>();
 
   /** The position of the same log and rover before this one, now that it is known how the rover went on. */
-  next(position: Position, reachM: number): Watched | null {
+  next(position: Position, placing: PlacingOptions): Watched | null {
     const key = `${position.file}\u0000${position.rover}`;
     const place = Number.isNaN(position.latitudeDeg) ? null : geodeticToGeocentric(position);
     const before = this.#waiting.get(key);
     const moved = before !== undefined && moves(before, position, place);
-    this.#waiting.set(key, { position, reachM, place, motion: moved ? CAME_MOVING : 0 });
+    this.#waiting.set(key, { position, placing, place, motion: moved ? CAME_MOVING : 0 });
     if (before === undefined) return null;
     return { ...before, motion: before.motion | (moved ? LEFT_MOVING : 0) };
   }

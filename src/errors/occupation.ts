@@ -35,6 +35,9 @@ export interface Occupation extends Stay {
   readonly ageSeconds: number;
   readonly horizontalSigmaM: number;
   readonly verticalSigmaM: number;
+  readonly tiltDeg: number;
+  /** What held the rod, of the first epoch; empty when the log does not tell. */
+  readonly support: string;
   /** Where its first epoch stands. */
   readonly file: string;
   readonly row: number;

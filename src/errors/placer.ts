@@ -1,9 +1,22 @@
-import { type Base, type Control, type Mark, type Match, markFrame, matchBase } from '../control/index.js';
-import type { LocalFrame } from '../geodesy/index.js';
-import type { Position, RowReason } from '../logs/index.js';
+import {
+  type Base,
+  type Control,
+  coordinatesOn,
+  type Mark,
+  type Match,
+  markFrame,
+  matchBase,
+  type PointCoordinates,
+  type Versioned,
+  validityWords,
+} from '../control/index.js';
+import { baselineBetween, type Geocentric, type LocalFrame } from '../geodesy/index.js';
+import { type Position, quoted, type RowReason } from '../logs/index.js';
 import type { DayOf } from './days.js';
+import { FieldBases } from './fieldBase.js';
 import { MarkFinder } from './markFinder.js';
 import { remembered } from './names.js';
+import { notSingleBase } from './singleBase.js';
 import type { VisitKey } from './visitBuilder.js';
 
 /** What the epochs of one rover, mark and setup share while they wait. */
@@ -18,6 +31,8 @@ interface Place {
   readonly mark: Mark;
   readonly base: Base;
   readonly day: string;
+  readonly markAt: PointCoordinates;
+  readonly baseAt: PointCoordinates;
 }
 
 export interface Rejection {
@@ -33,6 +48,16 @@ export interface Kept {
   readonly day: string;
   readonly key: string;
   readonly frame: LocalFrame;
+  /** Moves the position to where the published base puts it; null leaves it. */
+  readonly shift: Geocentric | null;
+}
+
+/** What the log's entry in the study file says of its positions. */
+export interface PlacingOptions {
+  /** A position that names no known mark belongs to the nearest one within this distance, m. */
+  readonly nearestMarkM: number | null;
+  /** Positions are moved by the difference between the base coordinates in the log and the published ones. */
+  readonly moveToPublishedBase: boolean;
 }
 
 /** Whether two positions name the same mark, base, setup and rover. */
@@ -44,6 +69,7 @@ const sameStay = (a: Position, b: Position): boolean =>
   a.base === b.base &&
   a.setup === b.setup &&
   a.dateOnly === b.dateOnly &&
+  a.extras === b.extras &&
   a.file === b.file;
 
 /** Between the parts of a key: stands in no name. */
@@ -55,6 +81,9 @@ export class Placer {
   readonly #marks: MarkFinder;
   readonly #baseOf: (name: string) => Match<Base>;
   readonly #dayOf: DayOf;
+  readonly #apartM = new Map<string, number>();
+  /** Base coordinates of logs beside those of the bases file. */
+  readonly fieldBases = new FieldBases();
   #last: Kept | null = null;
 
   /** @param period first and last day of the study; null takes every day */
@@ -74,7 +103,8 @@ export class Placer {
   }
 
   /** Where a position is kept; consecutive positions of one stay are answered from memory. */
-  place(position: Position, nearestMarkM: number | null): Kept | Rejection {
+  place(position: Position, options: PlacingOptions): Kept | Rejection {
+    const { nearestMarkM, moveToPublishedBase } = options;
     const last = this.#last;
     const same =
       last !== null &&
@@ -83,16 +113,34 @@ export class Placer {
     if (same) return last;
     const place = this.#find(position, nearestMarkM);
     if ('reason' in place) return place;
-    const { mark, base, day } = place;
-    const setup = position.setup || setupName(base, day);
+    const { mark, base, day, baseAt } = place;
+    const detail = notSingleBase(position, this.#fromBaseM(place));
+    if (detail !== null) return { reason: 'not-single-base', detail };
+    const field = this.fieldBases.of(position.extras, baseAt);
+    if (field !== null) this.fieldBases.tell(field, base, position, moveToPublishedBase);
+    const setup = position.setup || `${setupName(base, day)}${field?.setupSuffix ?? ''}`;
     const timed = position.dateOnly === '';
     const key = [position.rover, mark.name, base.name, setup, timed ? 'timed' : 'dated'].join(SEPARATOR);
     const { frame } = this.#context(key, { rover: position.rover, mark, base, setup, timed });
-    const kept = { position, mark: mark.name, base, day, key, frame };
-    // Where time or place names the mark, the next row may stand on another one.
+    const shift = moveToPublishedBase && field !== null ? field.toPublished : null;
+    const kept = { position, mark: mark.name, base, day, key, frame, shift };
+    // Where time or place names the mark, the next row may stand on another one; a base near the rover must be seen.
     const byText = nearestMarkM === null && this.control.markTimes?.get(position.file) === undefined;
     this.#last = byText ? kept : null;
     return kept;
+  }
+
+  #fromBaseM({ mark, base, markAt, baseAt }: Place): number {
+    const key = [mark.name, base.name, markAt.from, baseAt.from].join(SEPARATOR);
+    let apartM = this.#apartM.get(key);
+    if (apartM === undefined) {
+      const heightM = Number.isNaN(markAt.position.heightM)
+        ? baseAt.position.heightM
+        : markAt.position.heightM;
+      apartM = baselineBetween(baseAt.position, { ...markAt.position, heightM }).lengthKm * 1000;
+      this.#apartM.set(key, apartM);
+    }
+    return apartM;
   }
 
   #dayOfPosition({ dateOnly, utcMs }: Position, base: Base): string {
@@ -109,7 +157,11 @@ export class Placer {
     const { period } = this;
     const outside = period && (day < period.from || day > period.to);
     if (outside) return { reason: 'outside-study', detail: `day ${day}` };
-    return { mark: mark.point, base: base.point, day };
+    const markAt = coordinatesOn(mark.point, day);
+    if (markAt === null) return notValid('mark', mark.point, day);
+    const baseAt = coordinatesOn(base.point, day);
+    if (baseAt === null) return notValid('base', base.point, day);
+    return { mark: mark.point, base: base.point, day, markAt, baseAt };
   }
 
   #context(
@@ -133,6 +185,11 @@ export class Placer {
     }
     return context;
   }
+}
+
+function notValid(what: string, point: Versioned & { readonly name: string }, day: string): Rejection {
+  const detail = `the coordinates of ${what} ${quoted(point.name)} hold ${validityWords(point)}, not on ${day}`;
+  return { reason: 'outside-study', detail };
 }
 
 /** A tripod is put up anew each day; a pillar is not. */

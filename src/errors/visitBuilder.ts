@@ -24,6 +24,7 @@ export interface VisitBuilderOptions {
   readonly dayOf: (utcMs: number) => string;
   readonly fileNames: readonly string[];
   readonly crewNames: readonly string[];
+  readonly supportNames: readonly string[];
 }
 
 interface OpenOccupation {
@@ -31,6 +32,7 @@ interface OpenOccupation {
   endMs: number;
   epochs: number;
   readonly crew: string;
+  readonly support: string;
   readonly file: string;
   readonly row: number;
   readonly means: readonly RunningMean[];
@@ -56,7 +58,7 @@ export class VisitBuilder {
   /** One record at `offset`; a duplicate or conflicting row shows presence but does not enter a mean. */
   add(records: Float64Array, offset: number, verdict: Verdict): void {
     const utcMs = records[offset + RECORD.utcMs]!;
-    const { gapMs, windowMs, timed, fileNames, crewNames } = this.options;
+    const { gapMs, windowMs, timed, fileNames, crewNames, supportNames } = this.options;
     const gap = (endMs: number): boolean => !timed || utcMs - endMs > gapMs;
     if (this.#visit !== null && gap(this.#visit.endMs)) this.#closeVisit();
     const crew = crewNames[records[offset + RECORD.crew]!]!;
@@ -73,6 +75,7 @@ export class VisitBuilder {
       endMs: utcMs,
       epochs: 0,
       crew,
+      support: supportNames[records[offset + RECORD.support]!]!,
       file: fileNames[records[offset + RECORD.file]!]!,
       row: records[offset + RECORD.row]!,
       means: MEASURED.map(() => new RunningMean()),
@@ -116,7 +119,7 @@ export class VisitBuilder {
   #closeOccupation(): void {
     if (this.#occupation === null) return;
     const { rover, mark, base, setup } = this.options.key;
-    const { means, crew, startMs, endMs, epochs, file, row } = this.#occupation;
+    const { means, crew, startMs, endMs, epochs, support, file, row } = this.#occupation;
     this.#occupation = null;
     const [eastM, northM, upM] = [means[0]!.mean, means[1]!.mean, means[2]!.mean];
     this.occupations.push({
@@ -138,6 +141,8 @@ export class VisitBuilder {
       ageSeconds: means[5]!.mean,
       horizontalSigmaM: means[6]!.mean,
       verticalSigmaM: means[7]!.mean,
+      tiltDeg: means[8]!.mean,
+      support,
       file,
       row,
     });

@@ -1,4 +1,5 @@
 import { type Geodetic, geocentricToGeodetic, projection } from '../geodesy/index.js';
+import { type CoordinateChanges, changedPlace } from './coordinateChanges.js';
 import type { ColumnRole } from './roles.js';
 
 /** `geographic` (degrees, WGS 84), `geocentric` (metres, WGS 84) or a proj string of a projection. */
@@ -9,11 +10,14 @@ export interface CoordinateColumns {
   readonly roles: readonly [ColumnRole, ColumnRole, ColumnRole];
   /** So many of the roles, from the first, are known together or not at all: a plan position, or all three. */
   readonly together: 2 | 3;
+  /** The rows must give geoid separations. */
+  readonly rowSeparations: boolean;
   /**
    * Three numbers in the order of `roles`; a height may be NaN (not known) where it stands apart from the plan.
+   * @param separationM geoid separation of the row; NaN or left out when it gives none
    * @throws CoordinateFault for numbers outside the system's range
    */
-  readonly toGeodetic: (first: number, second: number, third: number) => Geodetic;
+  readonly toGeodetic: (first: number, second: number, third: number, separationM?: number) => Geodetic;
 }
 
 /** Coordinates that cannot be: what was expected and came, and which of the three is to blame. */
@@ -26,8 +30,29 @@ export class CoordinateFault extends RangeError {
   }
 }
 
-/** @throws Error when a proj string is not understood */
-export function coordinateColumns(system: CoordinateSystem): CoordinateColumns {
+/**
+ * @param changes what must be done to these coordinates so that they can be compared with those of other sources
+ * @throws Error when a proj string is not understood
+ */
+export function coordinateColumns(
+  system: CoordinateSystem,
+  changes: CoordinateChanges = {},
+): CoordinateColumns {
+  const plain = plainColumns(system, changes.plane);
+  const rowSeparations = changes.rowSeparations ?? false;
+  if (changes.height === undefined && changes.frame === undefined) return { ...plain, rowSeparations };
+  return {
+    ...plain,
+    rowSeparations,
+    toGeodetic: (first, second, third, separationM = Number.NaN) =>
+      changedPlace(plain.toGeodetic(first, second, third), separationM, changes),
+  };
+}
+
+function plainColumns(
+  system: CoordinateSystem,
+  plane: CoordinateChanges['plane'],
+): Omit<CoordinateColumns, 'rowSeparations'> {
   if (system === 'geographic') {
     return { roles: ['latitude', 'longitude', 'height'], together: 2, toGeodetic: geographic };
   }
@@ -36,7 +61,9 @@ export function coordinateColumns(system: CoordinateSystem): CoordinateColumns {
   return {
     roles: ['easting', 'northing', 'height'],
     together: 2,
-    toGeodetic: (eastingM, northingM, heightM) => {
+    toGeodetic: (writtenEastingM, writtenNorthingM, writtenHeightM) => {
+      const written = { eastingM: writtenEastingM, northingM: writtenNorthingM, heightM: writtenHeightM };
+      const { eastingM, northingM, heightM } = plane === undefined ? written : plane(written);
       checkHeight(heightM);
       try {
         return { ...inverse({ eastingM, northingM }), heightM };

@@ -7,12 +7,14 @@ export {
 } from './account.js';
 export { ENCODINGS, type Encoding, readHead } from './byteChunks.js';
 export { DELIMITERS } from './cells.js';
+export type { CoordinateChanges, PlanePoint } from './coordinateChanges.js';
 export {
   type CoordinateColumns,
   CoordinateFault,
   type CoordinateSystem,
   coordinateColumns,
 } from './coordinateColumns.js';
+export { parseDms } from './dms.js';
 export { type EpochBag, EpochStore } from './epochStore.js';
 export type { DelimitedHeader, DelimitedOptions } from './header.js';
 export type { DelimitedLayout, LogLayout, LogUnits, NmeaLayout } from './layout.js';
@@ -28,7 +30,14 @@ export {
 } from './messages.js';
 export { nearestName, suggestion } from './nearestName.js';
 export { parseNumber } from './numbers.js';
-export type { Fix, Position } from './position.js';
+export {
+  CORRECTION_KINDS,
+  type Corrections,
+  type Fix,
+  NO_EXTRAS,
+  type Position,
+  type PositionExtras,
+} from './position.js';
 export { readDelimitedTable, type TableRow } from './readDelimited.js';
 export { type LogBatch, type LogFile, type ReadLogsOptions, readLogs } from './readLogs.js';
 export {

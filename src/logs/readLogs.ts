@@ -1,11 +1,13 @@
 import { LEAP_SECONDS_KNOWN_UNTIL } from '../time/index.js';
+import type { CoordinateChanges } from './coordinateChanges.js';
 import { type CoordinateSystem, coordinateColumns } from './coordinateColumns.js';
 import { valuesFromFileName } from './fileName.js';
 import { FileNotes } from './fileNotes.js';
 import { type DelimitedLayout, decimalCharacter, type LogLayout } from './layout.js';
 import { inputError, type Message, message } from './messages.js';
 import { readNmea } from './nmea/readNmea.js';
-import type { Fix, Position } from './position.js';
+import { parseNumber } from './numbers.js';
+import type { Corrections, Fix, Position, PositionExtras } from './position.js';
 import { readDelimited } from './readDelimited.js';
 import type { SetAsideRow } from './reasons.js';
 import { type LogResolution, ResolutionMeter } from './resolution.js';
@@ -22,6 +24,12 @@ export interface LogFile {
   readonly nearestMarkM?: number | null | undefined;
   /** Marks may come from a list of times instead of the rows. */
   readonly marksByTime?: boolean | undefined;
+  /** What must be done to the coordinates before they can be compared with those of marks and bases. */
+  readonly changes?: CoordinateChanges | undefined;
+  /** From where the corrections of rows came that do not tell. */
+  readonly corrections?: Corrections | undefined;
+  /** Positions are to be moved by the difference between the base coordinates in the log and the published ones. */
+  readonly moveToPublishedBase?: boolean | undefined;
 }
 
 /** A stretch of one log. `rowsRead = positions + setAside`. */
@@ -34,6 +42,8 @@ export interface LogBatch {
   readonly messages: readonly Message[];
   /** A position that names no known mark belongs to the nearest one within this distance, m. */
   readonly nearestMarkM?: number | null | undefined;
+  /** Positions are to be moved by the difference between the base coordinates in the log and the published ones. */
+  readonly moveToPublishedBase?: boolean | undefined;
   /** In what steps the positions are written; comes with the last batch of a file. */
   readonly resolution?: LogResolution | null | undefined;
 }
@@ -58,24 +68,58 @@ export async function* readLogs(
       log.layout.kind === 'nmea'
         ? readNmeaLog(log, values)
         : readDelimitedLog(log, log.layout, values, options);
-    for await (const batch of batches) yield { ...batch, nearestMarkM: log.nearestMarkM };
+    const { nearestMarkM, moveToPublishedBase } = log;
+    for await (const batch of batches) yield { ...batch, nearestMarkM, moveToPublishedBase };
   }
 }
 
 type Values = Readonly<Partial<Record<ColumnRole, string>>>;
 
 /** Values that stand in no column: constants, and what the name of the file gives. */
-function layoutValues({ file, layout }: LogFile): Values {
+function layoutValues({ file, layout, corrections }: LogFile): Values {
+  const stated = corrections === undefined ? {} : { corrections };
   const fromName = layout.fromFileName === undefined ? {} : valuesFromFileName(layout.fromFileName, file);
-  return { ...layout.constants, ...fromName };
+  return { ...stated, ...layout.constants, ...fromName };
 }
 
 async function* readNmeaLog(log: LogFile, values: Values): AsyncGenerator<LogBatch> {
   const { mark = '', base = '', setup = '', rover = '', crew = '', date = null } = values;
-  for await (const batch of readNmea({ path: log.path, file: log.file, date })) {
-    const positions = batch.positions.map((position) => ({ ...position, mark, base, setup, rover, crew }));
+  const extras = nmeaExtras(values);
+  for await (const batch of readNmea({ path: log.path, file: log.file, date, changes: log.changes })) {
+    const positions = batch.positions.map((position) => ({
+      ...position,
+      mark,
+      base,
+      setup,
+      rover,
+      crew,
+      extras: extras(position.extras),
+    }));
     yield { ...batch, positions };
   }
+}
+
+/** What constants and file name say beside the sentences; rows that say the same share one value. */
+function nmeaExtras(values: Values): (own: PositionExtras | null) => PositionExtras | null {
+  const { corrections, support = '' } = values;
+  const number = (role: ColumnRole): number => parseNumber(values[role] ?? '') ?? Number.NaN;
+  const stated = {
+    baseLatitudeDeg: number('baseLatitude'),
+    baseLongitudeDeg: number('baseLongitude'),
+    baseHeightM: number('baseHeight'),
+    corrections: corrections ?? '',
+    tiltDeg: number('tilt'),
+    support,
+  };
+  const nothing = Object.values(stated).every((value) => value === '' || Number.isNaN(value));
+  if (nothing) return (own) => own;
+  const byStation = new Map<string, PositionExtras>();
+  return (own) => {
+    const station = own?.station ?? '';
+    const known = byStation.get(station) ?? { ...stated, station };
+    byStation.set(station, known);
+    return known;
+  };
 }
 
 async function* readDelimitedLog(
@@ -85,11 +129,14 @@ async function* readDelimitedLog(
   options: ReadLogsOptions,
 ): AsyncGenerator<LogBatch> {
   const { file, path } = log;
-  const coordinates = coordinateColumns(layout.coordinates ?? log.coordinates);
+  const coordinates = coordinateColumns(layout.coordinates ?? log.coordinates, log.changes);
   const notes = new FileNotes(file);
   const known = (roles: readonly ColumnRole[]): boolean => roles.some((role) => values[role] !== undefined);
   const named = known(NAME_ROLES) || log.nearestMarkM != null || log.marksByTime === true;
-  const required = coordinates.roles.filter((role) => values[role] === undefined);
+  const needed: readonly ColumnRole[] = coordinates.rowSeparations
+    ? [...coordinates.roles, 'geoidSeparation']
+    : coordinates.roles;
+  const required = needed.filter((role) => values[role] === undefined);
   const requiredOneOf = [
     ...(known(TIME_ROLES) ? [] : [{ what: 'the time', roles: TIME_ROLES }]),
     ...(named ? [] : [{ what: 'the mark', roles: NAME_ROLES }]),

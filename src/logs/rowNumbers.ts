@@ -67,6 +67,8 @@ export function coordinateReader(
       return value === null ? null : value * factor;
     };
   });
+  const separation = coordinates.rowSeparations ? numberReader('geoidSeparation') : null;
+  const heightFactor = metresPer(units.height);
   const [first, second, third] = readers as [(typeof readers)[0], (typeof readers)[0], (typeof readers)[0]];
   return (cells) => {
     const [a, b, c] = [first(cells), second(cells), third(cells)];
@@ -78,7 +80,12 @@ export function coordinateReader(
     }
     if (Number.isNaN(a + b + c)) return NO_POSITION;
     try {
-      return coordinates.toGeodetic(a, b, c);
+      if (separation === null) return coordinates.toGeodetic(a, b, c);
+      const given = separation(cells);
+      if (given === null) {
+        return { role: 'geoidSeparation', detail: notANumber(textOf('geoidSeparation', cells)) };
+      }
+      return coordinates.toGeodetic(a, b, c, given * heightFactor);
     } catch (error) {
       if (!(error instanceof CoordinateFault)) throw error;
       return { role: coordinates.roles[error.index], detail: error.message };

@@ -7,6 +7,7 @@ import type { Fix, Position } from './position.js';
 import type { RowReason, SetAsideRow } from './reasons.js';
 import type { ColumnRole } from './roles.js';
 import type { RowCells } from './rowCells.js';
+import { extrasReader } from './rowExtras.js';
 import { coordinateReader, numberReaders } from './rowNumbers.js';
 import { timePlan } from './timePlan.js';
 
@@ -100,6 +101,7 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
   const antenna = layout.heightOf === 'antenna' ? metresPer(resolvedUnits(layout.units).height) : null;
   const rodReader = numberReader('antennaHeight');
   const fixIsGiven = has('fix');
+  const extras = extrasReader({ has, textReader, numberReader, layout });
 
   return (row, cells) => {
     const when = time.read(cells);
@@ -128,6 +130,8 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
       heightM -= rod * antenna;
     }
 
+    const also = extras === null ? null : extras(cells);
+    if (also !== null && 'detail' in also) return refuse(row, 'unreadable', also.role, also.detail);
     faults = NO_FAULTS;
     const fixText = texts.fix(cells);
     const fix = fixIsGiven ? fixValues.get(fixText.toLowerCase()) : 'fixed';
@@ -155,6 +159,7 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
       ageSeconds: ageSeconds(row, cells),
       horizontalSigmaM: horizontalSigmaM(row, cells),
       verticalSigmaM: verticalSigmaM(row, cells),
+      extras: also,
     };
     return {
       kind: 'position',

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { markFrame, matchBase, matchMark } from '../../src/control/index.js';
 import { geodeticToGeocentric } from '../../src/geodesy/index.js';
-import { BASES, control, MARKS, mark } from '../errors/world.js';
+import { BASES, base as baseAt, control, MARKS, mark } from '../errors/world.js';
 
 describe('matchMark', () => {
   const known = control({ CP5: MARKS.CP1!, '007': MARKS.CP2! });
@@ -42,7 +42,7 @@ describe('matchBase', () => {
 });
 
 describe('markFrame', () => {
-  const base = { name: 'B1', position: BASES.B1!, mounting: 'pillar' } as const;
+  const base = baseAt('B1', BASES.B1!);
   const origin = (position: typeof MARKS.CP1) =>
     markFrame(mark('M', position!), base).toLocal(geodeticToGeocentric(MARKS.CP1!));
 

@@ -37,14 +37,17 @@ describe('readMarks', () => {
       '7,47.3,8,500,,,,',
     ]);
     expect([...marks.keys()]).toEqual(['007', 'cp5', 'CP5', '7']);
-    expect(marks.get('007')).toEqual({
-      name: '007',
+    const coordinates = {
       position: { latitudeDeg: 47, longitudeDeg: 8, heightM: 500 },
       horizontalSigmaMm: 1.5,
       verticalSigmaMm: Number.NaN,
       source: 'static session',
-      sky: 'open',
-    });
+      frame: '',
+      epoch: Number.NaN,
+      from: '',
+      to: '',
+    };
+    expect(marks.get('007')).toEqual({ ...coordinates, name: '007', versions: [coordinates], sky: 'open' });
     expect(marks.get('CP5')).toMatchObject({ source: 'level, 2019', position: { longitudeDeg: -18.5 } });
   });
 
@@ -76,14 +79,16 @@ describe('readMarks', () => {
       'HIGH,47,8,1e9,,',
     ];
     expect(await refusal(marksOf(lines))).toEqual([
+      'points.csv:2 error: Mark "HALF" has only some of the coordinates that belong together. Fill in all of them, or none when the place is not known.',
       'points.csv:3 [latitude] error: Expected a number, came "forty-seven". Correct the cell or leave it blank.',
       'points.csv:4 [mark] error: Expected the name of a mark, came a blank cell. Fill it in.',
-      'points.csv:7 [mark] error: The mark "GOOD" stands already in row 6. Keep one of the two.',
-      'points.csv:8 [latitude] error: The coordinates are impossible: expected a latitude from -90 to 90 degrees, came 108 (are latitude and longitude swapped?). Correct them.',
+      'points.csv:5 error: Mark "NOTHING" has no coordinates. Fill in its plan position, its height or both, or remove the row.',
+      'points.csv:7 [mark] error: The mark "GOOD" stands already in row 6, with the same coordinates. Keep one of the two, or state in the columns from and to on which days each holds.',
+      'points.csv:8 [latitude] error: The coordinates cannot be used: expected a latitude from -90 to 90 degrees, came 108 (are latitude and longitude swapped?). Correct them.',
       'points.csv:9 [horizontalSigmaMm] error: Expected a number, came "one". Correct the cell or leave it blank.',
       'points.csv:9 [verticalSigmaMm] error: Expected a number of at least 0, came -2. Correct the cell.',
       'points.csv:10 error: The row cannot be read: expected 6 cells as in the header, came 2. Correct it.',
-      'points.csv:11 [height] error: The coordinates are impossible: expected a height from -10000 to 100000 metres, came 1000000000. Correct them.',
+      'points.csv:11 [height] error: The coordinates cannot be used: expected a height from -10000 to 100000 metres, came 1000000000. Correct them.',
     ]);
   });
 
@@ -100,10 +105,10 @@ describe('readMarks', () => {
 
   it('names headers as the file spells them', async () => {
     const columns = { mark: 'Point', latitude: 'Lat', longitude: 'Lon', height: 'H' } as const;
-    const lines = ['Point,Lat,Lon,H', 'A,x,8,500', 'A,47,8,500'];
+    const lines = ['Point,Lat,Lon,H', 'B,x,8,500', 'A,47,8,500', 'A,47.1,8,500'];
     expect(await refusal(marksOf(lines, { columns }))).toEqual([
       'points.csv:2 [Lat] error: Expected a number, came "x". Correct the cell or leave it blank.',
-      'points.csv:3 [Point] error: The mark "A" stands already in row 2. Keep one of the two.',
+      'points.csv:4 [Point] error: The mark "A" stands already in row 3, 11118 m away. Keep one of the two, or state in the columns from and to on which days each holds.',
     ]);
     expect((await marksOf(['Point,Lat,Lon,H', 'A,47,8,500'], { columns })).size).toBe(1);
   });

@@ -1,4 +1,4 @@
-import type { Base, Control, Mark } from '../../src/control/index.js';
+import type { Base, Control, Mark, PointCoordinates } from '../../src/control/index.js';
 import type { Geodetic } from '../../src/geodesy/index.js';
 import type { LogBatch, Position } from '../../src/logs/index.js';
 
@@ -13,15 +13,30 @@ export const BASES: Readonly<Record<string, Geodetic>> = {
   B2: { latitudeDeg: 46.95, longitudeDeg: 7.9, heightM: 480 },
 };
 
-export function mark(name: string, position: Geodetic): Mark {
-  return {
-    name,
-    position,
-    horizontalSigmaMm: Number.NaN,
-    verticalSigmaMm: Number.NaN,
-    source: '',
-    sky: '',
-  };
+/** Coordinates of which nothing else is stated. */
+export const coordinatesAt = (
+  position: Geodetic,
+  change: Partial<PointCoordinates> = {},
+): PointCoordinates => ({
+  position,
+  horizontalSigmaMm: Number.NaN,
+  verticalSigmaMm: Number.NaN,
+  source: '',
+  frame: '',
+  epoch: Number.NaN,
+  from: '',
+  to: '',
+  ...change,
+});
+
+export function mark(name: string, position: Geodetic, ...later: readonly PointCoordinates[]): Mark {
+  const versions = [coordinatesAt(position), ...later];
+  return { ...versions.at(-1)!, name, versions, sky: '' };
+}
+
+export function base(name: string, position: Geodetic, mounting: Base['mounting'] = 'pillar'): Base {
+  const versions = [coordinatesAt(position)];
+  return { ...versions[0]!, name, versions, mounting };
 }
 
 export function control(
@@ -31,7 +46,7 @@ export function control(
 ): Control {
   return {
     marks: new Map(Object.entries(marks).map(([name, position]) => [name, mark(name, position)])),
-    bases: new Map(Object.entries(bases).map(([name, position]) => [name, { name, position, mounting }])),
+    bases: new Map(Object.entries(bases).map(([name, position]) => [name, base(name, position, mounting)])),
   };
 }
 
@@ -63,6 +78,7 @@ export function at(second: number, change: Partial<Position> = {}): Position {
     ageSeconds: Number.NaN,
     horizontalSigmaM: Number.NaN,
     verticalSigmaM: Number.NaN,
+    extras: null,
     ...change,
   };
 }

@@ -60,6 +60,7 @@ describe('a row', () => {
       ageSeconds: 1.5,
       horizontalSigmaM: 0.008,
       verticalSigmaM: Number.NaN,
+      extras: null,
     });
   });
 

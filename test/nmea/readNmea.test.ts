@@ -50,6 +50,7 @@ describe('readNmea', () => {
       // Root mean square of 6 and 8 mm: the square root of 50.
       horizontalSigmaM: expect.closeTo(0.00707107, 8),
       verticalSigmaM: 0.031,
+      extras: expect.objectContaining({ station: '0031', corrections: '' }),
     });
     expect(second).toMatchObject({
       row: 7,

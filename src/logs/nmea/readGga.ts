@@ -1,3 +1,4 @@
+import { type CoordinateChanges, changedPlace } from '../coordinateChanges.js';
 import { CoordinateFault, coordinateColumns } from '../coordinateColumns.js';
 import { quoted } from '../messages.js';
 import { parseNumber } from '../numbers.js';
@@ -14,7 +15,7 @@ export interface GgaRow {
   /** All three NaN when the sentence gives no position. */
   readonly latitudeDeg: number;
   readonly longitudeDeg: number;
-  /** Ellipsoidal. */
+  /** Of the kind that the study compares; ellipsoidal unless it says otherwise. */
   readonly heightM: number;
   readonly satellites: number;
   readonly ageSeconds: number;
@@ -48,8 +49,15 @@ const FEWEST_FIELDS = 13;
  * hold; a blank latitude, longitude or height means the same.
  * @param row line of the sentence
  * @param tell called for satellites or age that are no number
+ * @param changes how ellipsoidal heights and places become those that the study compares; where it compares orthometric
+ *   heights by the separations of the rows, a height without separation is taken as it stands
  */
-export function readGga(fields: readonly string[], row: number, tell: TellUnread): GgaRow | RefusedGga {
+export function readGga(
+  fields: readonly string[],
+  row: number,
+  tell: TellUnread,
+  changes: CoordinateChanges = {},
+): GgaRow | RefusedGga {
   const count = fields.length;
   if (count < FEWEST_FIELDS || count > FIELDS) {
     return unreadable(null, `expected ${FIELDS - 1} fields in a GGA sentence, came ${count - 1}`);
@@ -60,7 +68,7 @@ export function readGga(fields: readonly string[], row: number, tell: TellUnread
   if (Number.isNaN(timeMs)) {
     return noPosition && time === '' ? NEITHER : unreadable('time', expected('a time of day hhmmss', time));
   }
-  const place = noPosition ? NOWHERE : readPlace(fields as GgaFields);
+  const place = noPosition ? NOWHERE : readPlace(fields as GgaFields, changes);
   if (place.kind === 'refused') return place;
   return {
     kind: 'row',
@@ -98,7 +106,7 @@ const NOWHERE: Place = {
   heightM: Number.NaN,
 };
 
-function readPlace(fields: GgaFields): Place | RefusedGga {
+function readPlace(fields: GgaFields, changes: CoordinateChanges): Place | RefusedGga {
   const [
     ,
     ,
@@ -126,20 +134,21 @@ function readPlace(fields: GgaFields): Place | RefusedGga {
   if (orthometricM === null || !isMetre(heightUnit)) {
     return unreadable('height', expected('a height in metres', `${height},${heightUnit}`));
   }
-  if (separation === '') return NO_SEPARATION;
-  const separationM = parseNumber(separation);
+  const asItStands = separation === '' && changes.rowSeparations === true;
+  if (separation === '' && !asItStands) return NO_SEPARATION;
+  const separationM = asItStands ? 0 : parseNumber(separation);
   if (separationM === null || !isMetre(separationUnit)) {
     const came = `${separation},${separationUnit}`;
     return unreadable('geoidSeparation', expected('a geoid separation in metres', came));
   }
-  const heightM = orthometricM + separationM;
+  const written = { latitudeDeg, longitudeDeg, heightM: orthometricM + separationM };
   try {
-    toGeodetic(latitudeDeg, longitudeDeg, heightM);
+    toGeodetic(latitudeDeg, longitudeDeg, written.heightM);
+    return { kind: 'place', ...changedPlace(written, separationM, changes) };
   } catch (error) {
     if (!(error instanceof CoordinateFault)) throw error;
     return unreadable('height', error.message);
   }
-  return { kind: 'place', latitudeDeg, longitudeDeg, heightM };
 }
 
 const signed = (value: number, letter: string, positive: string, negative: string): number =>

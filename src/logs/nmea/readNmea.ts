@@ -1,6 +1,7 @@
 import { parseIsoTime } from '../../time/index.js';
+import type { CoordinateChanges } from '../coordinateChanges.js';
 import { LONGEST_LINE, readLines } from '../lines.js';
-import type { Position } from '../position.js';
+import { NO_EXTRAS, type Position, type PositionExtras } from '../position.js';
 import type { LogBatch } from '../readLogs.js';
 import type { RowReason, SetAsideRow } from '../reasons.js';
 import { type Epoch, EpochJoiner } from './epochs.js';
@@ -17,6 +18,8 @@ export interface NmeaLog {
   readonly file: string;
   /** UTC date on which the file begins, YYYY-MM-DD, for rows that no RMC or ZDA dates; null when not known. */
   readonly date: string | null;
+  /** How places and heights become those that the study compares; default none. */
+  readonly changes?: CoordinateChanges | undefined;
   /** Rows that may wait for a date stated further down; what exceeds them is read as if none came. Default 100 000. */
   readonly mostHeld?: number;
 }
@@ -43,12 +46,15 @@ class NmeaReader {
   readonly #file: string;
   readonly #notes: NmeaNotes;
   readonly #joiner: EpochJoiner;
+  readonly #changes: CoordinateChanges;
   #rowsRead = 0;
   #positions: Position[] = [];
   #setAside: SetAsideRow[] = [];
+  #extras: PositionExtras | null = null;
 
-  constructor({ file, date, mostHeld = MOST_HELD }: NmeaLog) {
+  constructor({ file, date, changes = {}, mostHeld = MOST_HELD }: NmeaLog) {
     this.#file = file;
+    this.#changes = changes;
     this.#notes = new NmeaNotes(file);
     const fileDateMs = date === null ? Number.NaN : midnightMs(date);
     this.#joiner = new EpochJoiner({ fileDateMs, mostHeld }, (epoch, dayMs) => this.#emit(epoch, dayMs));
@@ -93,7 +99,7 @@ class NmeaReader {
   #join({ type, fields }: Sentence, row: number): void {
     const tell: TellUnread = (column, text) => this.#notes.unread(column, text, row);
     if (type === 'GGA') {
-      const outcome = readGga(fields, row, tell);
+      const outcome = readGga(fields, row, tell, this.#changes);
       if (outcome.kind === 'row') this.#joiner.gga(outcome);
       else this.#refuse(row, outcome.reason, outcome.column, outcome.detail);
       return;
@@ -121,7 +127,7 @@ class NmeaReader {
   #emit({ timeOfDayMs, rows, pdop, horizontalSigmaM, verticalSigmaM }: Epoch, dayMs: number): void {
     const file = this.#file;
     for (const gga of rows) {
-      const { row, fix, latitudeDeg, longitudeDeg, heightM, satellites, ageSeconds } = gga;
+      const { row, fix, latitudeDeg, longitudeDeg, heightM, satellites, ageSeconds, station } = gga;
       this.#notes.add(gga);
       if (Number.isNaN(dayMs)) {
         this.#notes.dateless(row);
@@ -151,8 +157,16 @@ class NmeaReader {
         ageSeconds,
         horizontalSigmaM,
         verticalSigmaM,
+        extras: this.#extrasOf(fix === 'other' ? '' : station),
       });
     }
+  }
+
+  /** Rows of one station share one value: it changes seldom. Without corrections its number is left over from before. */
+  #extrasOf(station: string): PositionExtras | null {
+    if (station === '') return null;
+    if (this.#extras?.station !== station) this.#extras = { ...NO_EXTRAS, station };
+    return this.#extras;
   }
 
   #refuse(row: number, reason: RowReason, column: string | null, detail: string): void {
