@@ -1,4 +1,10 @@
-import type { Control } from '../control/index.js';
+import {
+  type Base,
+  type Control,
+  coordinatesOn,
+  type Mark,
+  type PointCoordinates,
+} from '../control/index.js';
 import { baselineBetween, geodeticToGeocentric, localFrame } from '../geodesy/index.js';
 import type { Message, OccupationReason } from '../logs/index.js';
 import { solarHour } from '../time/index.js';
@@ -14,6 +20,7 @@ export interface OccupationError {
   readonly rover: string;
   readonly crew: string;
   readonly startMs: number;
+  readonly endMs: number;
   /** Local mean solar time at the mark, hours. */
   readonly solarHour: number;
   /** Straight distance from base to mark, km. */
@@ -36,6 +43,15 @@ export interface OccupationError {
   readonly satellites: number;
   readonly pdop: number;
   readonly ageSeconds: number;
+  /** The receiver's own figures, mm; NaN where the log gives none. */
+  readonly reportedHorizontalMm: number;
+  readonly reportedVerticalMm: number;
+  /** Tilt of the rod, degrees from plumb. */
+  readonly tiltDeg: number;
+  /** What held the rod, in the log's words; empty where it does not tell. */
+  readonly support: string;
+  /** Sky of the mark: `open`, `partly`, `obstructed`, or empty where it is not stated. */
+  readonly sky: string;
   readonly file: string;
   readonly row: number;
 }
@@ -43,6 +59,8 @@ export interface OccupationError {
 /** An occupation that takes no part in any fit, with its error. */
 export interface SetAsideOccupation {
   readonly reason: OccupationReason;
+  /** The cause, where one is known; else empty. */
+  readonly detail: string;
   readonly error: OccupationError;
 }
 
@@ -66,27 +84,34 @@ export function computeErrors(occupations: readonly Occupation[], control: Contr
   for (const occupation of occupations) {
     const error = errorOf(occupation);
     const farOff = [error.east, error.north, error.up].some((value) => Math.abs(value) > FAR_OFF_MM);
-    if (farOff) setAside.push({ reason: 'error-over-10-m', error });
+    if (farOff) setAside.push({ reason: 'error-over-10-m', detail: '', error });
     else errors.push(error);
   }
   return { errors, setAside, messages: suspectMarks(errors, setAside) };
 }
 
 function errorFunction(control: Control): (occupation: Occupation) => OccupationError {
-  const geometries = new Map<string, ReturnType<typeof geometry>>();
+  const geometries = new Map<PointCoordinates, Map<PointCoordinates, ReturnType<typeof geometry>>>();
   return (occupation) => {
     const { mark, base, position } = occupation;
-    const key = `${mark}\u0000${base}`;
-    let line = geometries.get(key);
+    const [markAt, baseAt] = pointsOf(control, occupation);
+    // Coordinates are one object for all the days on which they hold.
+    let byMark = geometries.get(markAt);
+    if (byMark === undefined) {
+      byMark = new Map();
+      geometries.set(markAt, byMark);
+    }
+    let line = byMark.get(baseAt);
     if (line === undefined) {
-      line = geometry(control, mark, base, occupation);
-      geometries.set(key, line);
+      line = geometry(markAt, baseAt, occupation);
+      byMark.set(baseAt, line);
     }
     const measured = line.frame.toLocal(geodeticToGeocentric(position));
     const east = line.planKnown ? measured.eastM * 1000 : Number.NaN;
     const north = line.planKnown ? measured.northM * 1000 : Number.NaN;
     const up = line.heightKnown ? (position.heightM - line.heightM) * 1000 : Number.NaN;
-    const { day, setup, rover, crew, startMs, epochs, satellites, pdop, ageSeconds, file, row } = occupation;
+    const { day, setup, rover, crew, startMs, endMs, epochs, satellites, pdop, ageSeconds, file, row } =
+      occupation;
     return {
       day,
       base,
@@ -95,6 +120,7 @@ function errorFunction(control: Control): (occupation: Occupation) => Occupation
       rover,
       crew,
       startMs,
+      endMs,
       solarHour: solarHour(startMs, position.longitudeDeg),
       baselineKm: line.baselineKm,
       azimuthDeg: line.azimuthDeg,
@@ -111,21 +137,34 @@ function errorFunction(control: Control): (occupation: Occupation) => Occupation
       satellites,
       pdop,
       ageSeconds,
+      reportedHorizontalMm: occupation.horizontalSigmaM * 1000,
+      reportedVerticalMm: occupation.verticalSigmaM * 1000,
+      tiltDeg: occupation.tiltDeg,
+      support: occupation.support,
+      sky: control.marks.get(mark)!.sky,
       file,
       row,
     };
   };
 }
 
+/** The coordinates of mark and base that hold on the day of an occupation. */
+function pointsOf(
+  control: Control,
+  { mark: markName, base: baseName, day }: Occupation,
+): readonly [PointCoordinates, PointCoordinates] {
+  const mark: Mark | undefined = control.marks.get(markName);
+  const base: Base | undefined = control.bases.get(baseName);
+  const markAt = mark && coordinatesOn(mark, day);
+  const baseAt = base && coordinatesOn(base, day);
+  if (markAt && baseAt) return [markAt, baseAt];
+  throw new RangeError(
+    `Expected an occupation of a known mark from a known base, came mark "${markName}" and base "${baseName}" on ${day}. Use the control with which the occupations were formed.`,
+  );
+}
+
 /** What is the same for all occupations of a mark from a base. What is not known of the mark is taken as measured. */
-function geometry(control: Control, markName: string, baseName: string, occupation: Occupation) {
-  const mark = control.marks.get(markName);
-  const base = control.bases.get(baseName);
-  if (mark === undefined || base === undefined) {
-    throw new RangeError(
-      `Expected an occupation of a known mark from a known base, came mark "${markName}" and base "${baseName}". Use the control with which the occupations were formed.`,
-    );
-  }
+function geometry(mark: PointCoordinates, base: PointCoordinates, occupation: Occupation) {
   const planKnown = !Number.isNaN(mark.position.latitudeDeg);
   const heightKnown = !Number.isNaN(mark.position.heightM);
   const point = {

@@ -14,6 +14,7 @@ import {
 import { BackwardRows } from './backwardRows.js';
 import { type DayOf, dayFunction } from './days.js';
 import { RECORD, RECORD_WIDTH, writeRecord } from './epochRecord.js';
+import { FarOffPlaces } from './farOffPlaces.js';
 import type { FormedOccupations, FormOccupationsOptions } from './formOccupations.js';
 import { judgeDatedRows, judgeEpochs, type NameRanks, timeOrder } from './judgeEpochs.js';
 import { MotionWatch, type Watched } from './motionWatch.js';
@@ -36,6 +37,7 @@ export class EpochSorter {
   readonly #supportNames = new Names();
   readonly #network = new NetworkWatch();
   readonly #numbers = new PointNumbers();
+  readonly #farOff = new FarOffPlaces();
   readonly #resolutions = new Map<string, LogResolution>();
   readonly #record = new Float64Array(RECORD_WIDTH);
   readonly #dayOf: DayOf;
@@ -104,6 +106,7 @@ export class EpochSorter {
       visits: visits.sort(byStart),
       files: this.#account.accounts(),
       resolutions: this.#resolutions,
+      farOff: this.#farOff.list(),
       messages,
     };
   }
@@ -125,6 +128,7 @@ export class EpochSorter {
     if (local !== null && Math.hypot(local.eastM, local.northM, local.upM) > FARTHEST_M) {
       const detail = `positions on mark ${quoted(place.mark)} are more than ${FARTHEST_M / 1000} km from it; if it is one mark, check its coordinates, if it is all, look for swapped columns or another coordinate system`;
       this.#setAside({ file, row, reason: 'unreadable', column: null, detail });
+      this.#farOff.add({ mark: place.mark, day: place.day, position });
       return;
     }
     writeRecord(

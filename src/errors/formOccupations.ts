@@ -1,6 +1,7 @@
 import type { Control } from '../control/index.js';
 import type { FileAccount, LogBatch, LogResolution, Message, SetAsideRow } from '../logs/index.js';
 import { EpochSorter } from './epochSorter.js';
+import type { FarOffPlace } from './farOffPlaces.js';
 import type { Occupation, Visit } from './occupation.js';
 
 export interface FormOccupationsOptions {
@@ -28,6 +29,8 @@ export interface FormedOccupations {
   readonly files: readonly FileAccount[];
   /** File → the steps in which its positions are written. */
   readonly resolutions: ReadonlyMap<string, LogResolution>;
+  /** Some positions more than 1000 km from their marks: no means are formed of them, but they may tell their cause. */
+  readonly farOff: readonly FarOffPlace[];
   readonly messages: readonly Message[];
 }
 

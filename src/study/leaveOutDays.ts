@@ -9,7 +9,7 @@ export function leaveOutDays(computed: ComputedErrors, { leaveOutDays: days }: S
   const errors: OccupationError[] = [];
   const setAside: SetAsideOccupation[] = [...computed.setAside];
   for (const error of computed.errors) {
-    if (left.has(error.day)) setAside.push({ reason: 'left-out-day', error });
+    if (left.has(error.day)) setAside.push({ reason: 'left-out-day', detail: '', error });
     else errors.push(error);
   }
   const found = new Set(computed.errors.map(({ day }) => day));
