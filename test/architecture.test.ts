@@ -112,8 +112,10 @@ describe('the folders of src', () => {
   });
 
   it('hold short files', () => {
-    const broken = offenders(({ text }) => {
+    const broken = offenders(({ name, text }) => {
       const lines = text.split('\n').length - 1;
+      // a table that a recipe writes
+      if (name === 'geodesy/crs/epsgTable.ts') return [];
       return lines > MOST_LINES ? [`${lines} lines`] : [];
     });
     expect(broken).toEqual([]);

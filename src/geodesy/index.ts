@@ -1,5 +1,6 @@
 export { type Baseline, baselineBetween } from './baseline.js';
 export type { Geocentric, Geodetic, LocalVector } from './coordinates.js';
+export { type CrsDefinition, type CrsKind, crsDefinition, crsOfKind } from './crs/index.js';
 export {
   type Ellipsoid,
   ellipsoid,

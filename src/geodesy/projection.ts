@@ -1,4 +1,6 @@
 import proj4 from 'proj4';
+import { type Ellipsoid, ellipsoid } from './ellipsoid.js';
+import { wrappedLongitude } from './longitude.js';
 import { checkedDefinition } from './projectionDefinition.js';
 import { finitePoint, type Point, type PointMapping, refinedInverse } from './projectionInverse.js';
 
@@ -17,6 +19,8 @@ export interface PlanePosition {
 /** A map projection on the ellipsoid its definition states. */
 export interface Projection {
   readonly definition: string;
+  /** The ellipsoid that is projected; a sphere has the inverse flattening Infinity. */
+  readonly ellipsoid: Ellipsoid;
   /** @throws RangeError for a latitude beyond ±90° or a longitude beyond ±360°, Error when the place cannot be projected. */
   forward(place: Geographic): PlanePosition;
   /** Longitude in (−180, 180]. @throws Error when the position is not on the projection. */
@@ -25,6 +29,9 @@ export interface Projection {
 
 /** What is used of the projection library's own projection object: radians in, metres out. */
 interface PlaneMath {
+  readonly a: number;
+  readonly b: number;
+  readonly rf?: number;
   readonly from_greenwich?: number;
   readonly forward: PointMapping;
   readonly inverse: PointMapping;
@@ -40,15 +47,14 @@ function found(point: Point | undefined, definition: string, what: string): Poin
   return point;
 }
 
-/** Longitude in (−180, 180]. */
-function wrapped(longitudeDeg: number): number {
-  const turned = longitudeDeg - 360 * Math.ceil((longitudeDeg - 180) / 360);
-  return turned === -180 ? 180 : turned;
+/** By the inverse flattening if the definition states one: the library rounds some semi-minor axes. */
+function ellipsoidOf({ a, b, rf }: PlaneMath): Ellipsoid {
+  return ellipsoid('of the projection', a, rf ?? (a === b ? Number.POSITIVE_INFINITY : a / (a - b)));
 }
 
 /**
- * Map projection from a proj string (`+proj=utm +zone=31 +ellps=WGS84`) or a code that the projection library knows by
- * itself (`EPSG:32631` and the other WGS 84 UTM zones).
+ * Map projection from a proj string (`+proj=utm +zone=31 +ellps=WGS84`) or a code of the EPSG register (`EPSG:32631`;
+ * see `crsDefinition` for its unit, axes and frame).
  *
  * Only the projection on the stated ellipsoid is computed, by proj4. Changes of frame are never done here: `+towgs84`,
  * `+nadgrids` and the shift of a named `+datum` are left aside knowingly (of `+datum` the ellipsoid is kept).
@@ -65,12 +71,13 @@ export function projection(definition: string): Projection {
   const primeMeridian = math.from_greenwich ?? 0;
   return {
     definition,
+    ellipsoid: ellipsoidOf(math),
     forward: ({ latitudeDeg, longitudeDeg }) => {
       if (!(Math.abs(latitudeDeg) <= 90))
         throw new RangeError(`latitudeDeg: expected -90 to 90, received ${latitudeDeg}`);
       if (!(Math.abs(longitudeDeg) <= 360))
         throw new RangeError(`longitudeDeg: expected -360 to 360, received ${longitudeDeg}`);
-      const longitude = wrapped(longitudeDeg - primeMeridian / DEG) * DEG;
+      const longitude = wrappedLongitude(longitudeDeg - primeMeridian / DEG) * DEG;
       const what = `latitude ${latitudeDeg}, longitude ${longitudeDeg}`;
       const { x, y } = found(finitePoint(forward({ x: longitude, y: latitudeDeg * DEG })), definition, what);
       return { eastingM: x, northingM: y };
@@ -82,7 +89,7 @@ export function projection(definition: string): Projection {
         definition,
         what,
       );
-      return { latitudeDeg: y / DEG, longitudeDeg: wrapped((x + primeMeridian) / DEG) };
+      return { latitudeDeg: y / DEG, longitudeDeg: wrappedLongitude((x + primeMeridian) / DEG) };
     },
   };
 }

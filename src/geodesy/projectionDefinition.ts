@@ -1,4 +1,5 @@
 import proj4 from 'proj4';
+import { crsOfKind } from './crs/index.js';
 
 /** Keys whose value is one number. */
 const NUMBER_KEYS = new Set(
@@ -69,13 +70,7 @@ function checkParameter(definition: string, parameter: string, key: string, valu
  */
 export function checkedDefinition(definition: string): string {
   const text = definition.trim();
-  if (!text.startsWith('+')) {
-    const code = text.toUpperCase();
-    const known = proj4.defs(code) as { readonly projName?: string } | undefined;
-    if (!known?.projName) refuse(definition, 'this code is not known');
-    if (NOT_PLANE.has(known.projName)) refuse(definition, 'this is not a map projection');
-    return code;
-  }
+  if (!text.startsWith('+')) return checkedDefinition(definitionOfCode(definition));
   const kept: string[] = [];
   let name = '';
   for (const parameter of text.split(/\s+/)) {
@@ -91,6 +86,15 @@ export function checkedDefinition(definition: string): string {
   const projName = (libraryName(name) ?? refuse(definition, `+proj=${name} is not known`)).toLowerCase();
   if (NOT_PLANE.has(projName)) refuse(definition, `+proj=${name} is not a map projection`);
   return kept.join(' ');
+}
+
+/** @throws Error for text that is no code, an unknown code, or one of coordinates that are not on a plane. */
+function definitionOfCode(definition: string): string {
+  try {
+    return crsOfKind(definition, 'projected').projString;
+  } catch (error) {
+    return refuse(definition, (error as Error).message);
+  }
 }
 
 /** First of the library's names for a projection, or undefined when it has none. */

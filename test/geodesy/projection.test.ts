@@ -165,9 +165,15 @@ describe('what a definition may and may not say', () => {
     );
   });
   it.each([
-    ['', 'this code is not known'],
-    ['EPSG:999999', 'this code is not known'],
-    ['EPSG:4326', 'this is not a map projection'],
+    ['', '"" is not an EPSG code; expected a number of four or five digits, e.g. EPSG:25832'],
+    [
+      'EPSG:999999',
+      '"EPSG:999999" is not an EPSG code; expected a number of four or five digits, e.g. EPSG:25832',
+    ],
+    [
+      'EPSG:4326',
+      'EPSG:4326 (WGS 84) stands for latitudes and longitudes in degrees; expected a code for eastings and northings of a map projection',
+    ],
     ['+proj=longlat +ellps=WGS84', '+proj=longlat is not a map projection'],
     ['+proj=latlong', '+proj=latlong is not a map projection'],
     ['+proj=geocent +ellps=WGS84', '+proj=geocent is not a map projection'],

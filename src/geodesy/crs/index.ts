@@ -1,0 +1,1 @@
+export { type CrsDefinition, type CrsKind, crsDefinition, crsOfKind } from './crsDefinition.js';
