@@ -9,7 +9,17 @@ export {
   primeVerticalRadiusM,
   WGS84,
 } from './ellipsoid.js';
+export { type FrameDifference, frameDifference } from './frameDifference.js';
 export { geocentricToGeodetic, geodeticToGeocentric } from './geocentric.js';
+export { type FrameTransformation, frameTransformation } from './helmert.js';
+export type { HelmertParameters, HelmertSet, RotationConvention, Triple } from './helmertParameters.js';
 export { distanceErrorMm, type LengthUnit, metresPer } from './lengthUnits.js';
 export { type LocalFrame, localFrame } from './localFrame.js';
+export { wrappedLongitude } from './longitude.js';
+export {
+  type GeocentricVelocity,
+  geocentricVelocity,
+  type LocalVelocity,
+  movedInTime,
+} from './movedInTime.js';
 export { type Geographic, type PlanePosition, type Projection, projection } from './projection.js';

@@ -11,6 +11,8 @@ export interface LocalFrame {
   toGeocentric(v: LocalVector): Geocentric;
   /** Difference of two geocentric positions → the same vector in this horizon; only turned. */
   rotate(difference: Geocentric): LocalVector;
+  /** Undoes `rotate`. */
+  rotateBack(v: LocalVector): Geocentric;
 }
 
 /** Horizon of `origin`, by its ellipsoidal normal; sines and the origin's position are worked out once. */
@@ -31,17 +33,22 @@ export function localFrame(origin: Geodetic, ellipsoid: Ellipsoid = WGS84): Loca
       upM: cosLatitude * outward + sinLatitude * dz,
     };
   };
+  const turnBack = (v: LocalVector): Geocentric => {
+    const outward = cosLatitude * v.upM - sinLatitude * v.northM;
+    return {
+      xM: cosLongitude * outward - sinLongitude * v.eastM,
+      yM: sinLongitude * outward + cosLongitude * v.eastM,
+      zM: sinLatitude * v.upM + cosLatitude * v.northM,
+    };
+  };
   return {
     origin,
     toLocal: (c) => turn(c.xM - centre.xM, c.yM - centre.yM, c.zM - centre.zM),
     rotate: (difference) => turn(difference.xM, difference.yM, difference.zM),
+    rotateBack: turnBack,
     toGeocentric: (v) => {
-      const outward = cosLatitude * v.upM - sinLatitude * v.northM;
-      return {
-        xM: centre.xM + cosLongitude * outward - sinLongitude * v.eastM,
-        yM: centre.yM + sinLongitude * outward + cosLongitude * v.eastM,
-        zM: centre.zM + sinLatitude * v.upM + cosLatitude * v.northM,
-      };
+      const { xM, yM, zM } = turnBack(v);
+      return { xM: centre.xM + xM, yM: centre.yM + yM, zM: centre.zM + zM };
     },
   };
 }
