@@ -1,3 +1,4 @@
+import { azimuthDegrees } from './azimuth.js';
 import type { Geocentric, Geodetic } from './coordinates.js';
 import { type Ellipsoid, WGS84 } from './ellipsoid.js';
 import { geodeticToGeocentric } from './geocentric.js';
@@ -21,10 +22,7 @@ const NO_DIRECTION_M = 1e-6;
 function azimuthOf(difference: Geocentric, at: Geodetic, ellipsoid: Ellipsoid): number {
   const { eastM, northM } = localFrame(at, ellipsoid).rotate(difference);
   if (Math.hypot(eastM, northM) < NO_DIRECTION_M) return Number.NaN;
-  const degrees = (Math.atan2(eastM, northM) * 180) / Math.PI;
-  const turned = degrees < 0 ? degrees + 360 : degrees;
-  // a tiny negative angle rounds up to 360
-  return turned === 360 ? 0 : turned;
+  return azimuthDegrees(Math.atan2(eastM, northM));
 }
 
 /**

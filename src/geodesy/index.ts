@@ -1,4 +1,11 @@
+export { arcOfChordM, chordOfArcM } from './arcs.js';
 export { type Baseline, baselineBetween } from './baseline.js';
+export {
+  type CombinedFactor,
+  combinedFactor,
+  gaussianRadiusM,
+  heightFactor,
+} from './combinedFactor.js';
 export type { Geocentric, Geodetic, LocalVector } from './coordinates.js';
 export { type CrsDefinition, type CrsKind, crsDefinition, crsOfKind } from './crs/index.js';
 export {
@@ -11,9 +18,12 @@ export {
 } from './ellipsoid.js';
 export { type FrameDifference, frameDifference } from './frameDifference.js';
 export { geocentricToGeodetic, geodeticToGeocentric } from './geocentric.js';
+export { type Geodesic, geodesicBetween } from './geodesic.js';
+export { type GroundGridParameters, groundGrid, type PlaneMapping } from './groundGrid.js';
 export { type FrameTransformation, frameTransformation } from './helmert.js';
 export type { HelmertParameters, HelmertSet, RotationConvention, Triple } from './helmertParameters.js';
 export { distanceErrorMm, type LengthUnit, metresPer } from './lengthUnits.js';
+export { type LineLengths, lineLengths, lineScale } from './lineLengths.js';
 export { type LocalFrame, localFrame } from './localFrame.js';
 export { wrappedLongitude } from './longitude.js';
 export {
@@ -22,4 +32,6 @@ export {
   type LocalVelocity,
   movedInTime,
 } from './movedInTime.js';
+export { type PointScale, pointScale } from './pointScale.js';
 export { type Geographic, type PlanePosition, type Projection, projection } from './projection.js';
+export { type SitePlane, type SitePlaneParameters, type SitePosition, sitePlane } from './sitePlane.js';
