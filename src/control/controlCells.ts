@@ -90,9 +90,9 @@ export class ControlCells {
     faulty: () => boolean,
   ): { place: Geodetic; half: boolean } | null {
     const { coordinates, changes, units, heightOf } = this.control;
-    const { roles, together, toGeodetic, rowSeparations } = coordinateColumns(coordinates, changes);
-    const plan = metresPer(units?.length ?? 'metre');
-    const vertical = metresPer(units?.height ?? units?.length ?? 'metre');
+    const { roles, together, toGeodetic, rowSeparations, unit } = coordinateColumns(coordinates, changes);
+    const plan = metresPer(units?.length ?? unit);
+    const vertical = metresPer(units?.height ?? units?.length ?? unit);
     const metres = (role: ColumnRole): number => {
       const value = number(role);
       if (role === 'latitude' || role === 'longitude') return value;

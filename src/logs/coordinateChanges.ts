@@ -1,12 +1,4 @@
-import type { Geodetic } from '../geodesy/index.js';
-
-/** A place on a plane with its height, metres. */
-export interface PlanePoint {
-  readonly eastingM: number;
-  readonly northingM: number;
-  /** NaN when not known. */
-  readonly heightM: number;
-}
+import type { Ellipsoid, Geodetic, SitePosition } from '../geodesy/index.js';
 
 /**
  * What must be done to the coordinates of one source (a log, the marks, the bases) so that they can be compared with
@@ -14,7 +6,7 @@ export interface PlanePoint {
  */
 export interface CoordinateChanges {
   /** Undoes what a job did to plane coordinates: a ground grid, a local transformation. */
-  readonly plane?: ((point: PlanePoint) => PlanePoint) | undefined;
+  readonly plane?: ((position: SitePosition) => SitePosition) | undefined;
   /**
    * Height as written → height of the kind that the study compares.
    * @param separationM geoid separation of the row itself; NaN when it gives none
@@ -23,8 +15,8 @@ export interface CoordinateChanges {
   readonly height?: ((place: Geodetic, separationM: number) => number) | undefined;
   /** The rows themselves give geoid separations. */
   readonly rowSeparations?: boolean | undefined;
-  /** Frame of the source → frame of the study; null for a study of orthometric heights, which a frame does not move. */
-  readonly frame?: ((place: Geodetic) => Geodetic) | undefined;
+  /** Frame of the source, on its ellipsoid → frame of the study, on that of WGS 84. */
+  readonly frame?: ((place: Geodetic, ellipsoid: Ellipsoid) => Geodetic) | undefined;
 }
 
 /** Applies height and frame to a place; what is not known stays so. */
@@ -32,10 +24,11 @@ export function changedPlace(
   place: Geodetic,
   separationM: number,
   { height, frame }: CoordinateChanges,
+  ellipsoid: Ellipsoid,
 ): Geodetic {
   const known = !Number.isNaN(place.heightM);
   const levelled = height !== undefined && known ? { ...place, heightM: height(place, separationM) } : place;
   if (frame === undefined) return levelled;
-  const moved = frame(known ? levelled : { ...levelled, heightM: 0 });
+  const moved = frame(known ? levelled : { ...levelled, heightM: 0 }, ellipsoid);
   return known ? moved : { ...moved, heightM: Number.NaN };
 }

@@ -7,13 +7,10 @@ export {
 } from './account.js';
 export { ENCODINGS, type Encoding, readHead } from './byteChunks.js';
 export { DELIMITERS } from './cells.js';
-export type { CoordinateChanges, PlanePoint } from './coordinateChanges.js';
-export {
-  type CoordinateColumns,
-  CoordinateFault,
-  type CoordinateSystem,
-  coordinateColumns,
-} from './coordinateColumns.js';
+export type { CoordinateChanges } from './coordinateChanges.js';
+export { type CoordinateColumns, coordinateColumns } from './coordinateColumns.js';
+export { CoordinateFault } from './coordinateFault.js';
+export { type CoordinateSystem, type KnownSystem, systemOf } from './coordinateSystem.js';
 export { parseDms } from './dms.js';
 export { type EpochBag, EpochStore } from './epochStore.js';
 export type { DelimitedHeader, DelimitedOptions } from './header.js';

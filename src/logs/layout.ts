@@ -1,6 +1,6 @@
 import type { TimeLayout } from '../time/index.js';
 import type { Encoding } from './byteChunks.js';
-import type { CoordinateSystem } from './coordinateColumns.js';
+import type { CoordinateSystem } from './coordinateSystem.js';
 import type { Fix } from './position.js';
 import type { ColumnRole } from './roles.js';
 
@@ -54,12 +54,15 @@ export interface NmeaLayout extends CommonLayout {
 
 export type LogLayout = DelimitedLayout | NmeaLayout;
 
-/** Units with every default filled in. */
-export function resolvedUnits(units: DelimitedLayout['units']): LogUnits {
+/**
+ * Units with every default filled in.
+ * @param plane unit of the coordinate system, for lengths of which the layout says nothing
+ */
+export function resolvedUnits(units: DelimitedLayout['units'], plane: LogLengthUnit = 'metre'): LogUnits {
   if (units === undefined || typeof units === 'string') {
-    return { length: units ?? 'metre', height: units ?? 'metre', angle: 'degrees' };
+    return { length: units ?? plane, height: units ?? plane, angle: 'degrees' };
   }
-  const { length = 'metre', angle = 'degrees' } = units;
+  const { length = plane, angle = 'degrees' } = units;
   return { length, height: units.height ?? length, angle };
 }
 

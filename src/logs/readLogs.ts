@@ -1,6 +1,7 @@
 import { LEAP_SECONDS_KNOWN_UNTIL } from '../time/index.js';
 import type { CoordinateChanges } from './coordinateChanges.js';
-import { type CoordinateSystem, coordinateColumns } from './coordinateColumns.js';
+import { coordinateColumns } from './coordinateColumns.js';
+import type { CoordinateSystem } from './coordinateSystem.js';
 import { valuesFromFileName } from './fileName.js';
 import { FileNotes } from './fileNotes.js';
 import { type DelimitedLayout, decimalCharacter, type LogLayout } from './layout.js';
@@ -154,7 +155,7 @@ async function* readDelimitedLog(
       );
       notes.see(header, values.fix !== undefined);
       gpsScale ||= header.positions.has('gpsWeek');
-      meter = new ResolutionMeter(header, coordinates.roles, layout);
+      meter = new ResolutionMeter(header, coordinates, layout);
     },
     row(row: number, cells: Parameters<NonNullable<typeof read>>[1]) {
       const outcome = read!(row, cells);

@@ -1,7 +1,8 @@
 import { metresPer } from '../geodesy/index.js';
+import type { CoordinateColumns } from './coordinateColumns.js';
 import { DecimalCounter, type Resolution } from './decimalCounter.js';
 import type { DelimitedHeader } from './header.js';
-import { type DelimitedLayout, decimalCharacter, resolvedUnits } from './layout.js';
+import { type DelimitedLayout, decimalCharacter, type LogUnits, resolvedUnits } from './layout.js';
 import { type Message, message } from './messages.js';
 import type { ColumnRole } from './roles.js';
 import type { RowCells } from './rowCells.js';
@@ -68,12 +69,17 @@ export class ResolutionMeter {
   readonly #decimal: string;
   #rows = 0;
 
-  constructor(header: DelimitedHeader, roles: readonly ColumnRole[], layout: DelimitedLayout) {
+  constructor(
+    header: DelimitedHeader,
+    { roles, unit }: Pick<CoordinateColumns, 'roles' | 'unit'>,
+    layout: DelimitedLayout,
+  ) {
+    const units = resolvedUnits(layout.units, unit);
     this.#decimal = decimalCharacter(layout.decimal);
     this.#columns = roles.flatMap((role) => {
       const index = header.positions.get(role);
       if (index === undefined) return [];
-      const kind = columnKind(role, header.headers.get(role) ?? role, layout);
+      const kind = columnKind(role, header.headers.get(role) ?? role, units);
       return [{ index, kind, dms: kind.unit === 'second', counter: new DecimalCounter() }];
     });
   }
@@ -111,8 +117,7 @@ export class ResolutionMeter {
   }
 }
 
-function columnKind(role: ColumnRole, column: string, layout: DelimitedLayout): ColumnKind {
-  const units = resolvedUnits(layout.units);
+function columnKind(role: ColumnRole, column: string, units: LogUnits): ColumnKind {
   const isAngle = role === 'latitude' || role === 'longitude';
   if (isAngle && units.angle === 'dms')
     return { column, what: 'coordinates', unit: 'second', unitMm: DEGREE_MM / 3600 };

@@ -1,6 +1,6 @@
 import { metresPer } from '../geodesy/index.js';
 import { parseDms } from './dms.js';
-import { type DelimitedLayout, resolvedUnits } from './layout.js';
+import type { LogUnits } from './layout.js';
 import { quoted } from './messages.js';
 import { NO_EXTRAS, type PositionExtras } from './position.js';
 import type { ColumnRole } from './roles.js';
@@ -11,7 +11,7 @@ export interface ExtrasOptions {
   readonly has: (role: ColumnRole) => boolean;
   readonly textReader: (role: ColumnRole) => (cells: RowCells) => string;
   readonly numberReader: NumberReaders;
-  readonly layout: DelimitedLayout;
+  readonly units: LogUnits;
 }
 
 interface ExtrasRefusal {
@@ -30,10 +30,9 @@ export function extrasReader({
   has,
   textReader,
   numberReader,
-  layout,
+  units,
 }: ExtrasOptions): ((cells: RowCells) => PositionExtras | ExtrasRefusal) | null {
   if (!EXTRA_ROLES.some(has)) return null;
-  const units = resolvedUnits(layout.units);
   const base = BASE_ROLES.map((role) => {
     if (!has(role)) return () => Number.NaN;
     if (role !== 'baseHeight' && units.angle === 'dms') {

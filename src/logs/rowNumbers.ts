@@ -1,5 +1,6 @@
 import { metresPer } from '../geodesy/index.js';
-import { type CoordinateColumns, CoordinateFault } from './coordinateColumns.js';
+import type { CoordinateColumns } from './coordinateColumns.js';
+import { CoordinateFault } from './coordinateFault.js';
 import { parseDms } from './dms.js';
 import { type DelimitedLayout, decimalCharacter, resolvedUnits } from './layout.js';
 import { quoted } from './messages.js';
@@ -50,7 +51,7 @@ export function coordinateReader(
   numberReader: NumberReaders,
   textOf: TextOf,
 ): (cells: RowCells) => MeasuredPosition | CoordinateRefusal {
-  const units = resolvedUnits(layout.units);
+  const units = resolvedUnits(layout.units, coordinates.unit);
   const decimal = decimalCharacter(layout.decimal);
   const isAngle = (role: ColumnRole): boolean => role === 'latitude' || role === 'longitude';
   const readers = coordinates.roles.map((role): ((cells: RowCells) => number | null) => {

@@ -98,10 +98,11 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
     row: { file, row, reason, column: name(role), detail },
   });
   const readCoordinates = coordinateReader(layout, coordinates, at, numberReader, textOf);
-  const antenna = layout.heightOf === 'antenna' ? metresPer(resolvedUnits(layout.units).height) : null;
+  const units = resolvedUnits(layout.units, coordinates.unit);
+  const antenna = layout.heightOf === 'antenna' ? metresPer(units.height) : null;
   const rodReader = numberReader('antennaHeight');
   const fixIsGiven = has('fix');
-  const extras = extrasReader({ has, textReader, numberReader, layout });
+  const extras = extrasReader({ has, textReader, numberReader, units });
 
   return (row, cells) => {
     const when = time.read(cells);

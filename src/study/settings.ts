@@ -1,6 +1,7 @@
 import { z } from 'zod';
-import { COLUMN_ROLES, ENCODINGS } from '../logs/index.js';
+import { COLUMN_ROLES, CORRECTION_KINDS, ENCODINGS } from '../logs/index.js';
 import { isTimeZone, parseIsoTime } from '../time/index.js';
+import { coordinateKeys, coordinates, heights } from './coordinateSettings.js';
 
 /*
  * The study file as a schema. Descriptions become the help that editors show and the reference page, so each key says
@@ -15,16 +16,28 @@ const share = z.number().gt(0).lt(1);
 const columns = z
   .partialRecord(z.enum(COLUMN_ROLES), z.string().min(1))
   .describe('Role → header, where the file does not spell the role itself.');
-const coordinates = z
-  .string()
-  .min(1)
-  .describe('`geographic` (degrees, WGS 84), `geocentric` (metres) or a proj string of a projection.');
+const lengthUnit = z.enum(['metre', 'international-foot', 'us-survey-foot']);
+const units = z
+  .union([
+    lengthUnit,
+    z.strictObject({
+      length: lengthUnit.optional(),
+      height: lengthUnit.optional(),
+      angle: z.enum(['degrees', 'dms']).optional(),
+    }),
+  ])
+  .describe(
+    'Unit of all lengths, or of plane, heights and angles apart; default that of the coordinates, degrees.',
+  );
+const heightOf = z.enum(['mark', 'antenna']).describe('What the heights are those of; default mark.');
 
 const controlFile = z.union([
   z.string().min(1),
   z.strictObject({
     file: z.string().min(1),
-    coordinates: coordinates.optional(),
+    ...coordinateKeys,
+    units: units.optional(),
+    heightOf: heightOf.optional(),
     columns: columns.optional(),
   }),
 ]);
@@ -33,7 +46,9 @@ const marksFile = z.union([
   z.string().min(1),
   z.strictObject({
     file: z.string().min(1),
-    coordinates: coordinates.optional(),
+    ...coordinateKeys,
+    units: units.optional(),
+    heightOf: heightOf.optional(),
     columns: columns.optional(),
     names: z
       .strictObject({
@@ -47,8 +62,6 @@ const marksFile = z.union([
       .optional(),
   }),
 ]);
-
-const lengthUnit = z.enum(['metre', 'international-foot', 'us-survey-foot']);
 
 const valuesOutsideColumns = {
   constants: z
@@ -78,19 +91,9 @@ const delimitedLayout = z.strictObject({
     .partialRecord(z.enum(COLUMN_ROLES), z.union([z.string().min(1), z.number().int().gte(1)]))
     .optional()
     .describe('Role → header, or number of the column from 1.'),
-  units: z
-    .union([
-      lengthUnit,
-      z.strictObject({
-        length: lengthUnit.optional(),
-        height: lengthUnit.optional(),
-        angle: z.enum(['degrees', 'dms']).optional(),
-      }),
-    ])
-    .optional()
-    .describe('Unit of all lengths, or of plane, heights and angles apart; default metre and degrees.'),
+  units: units.optional(),
   coordinates: coordinates.optional(),
-  heightOf: z.enum(['mark', 'antenna']).optional().describe('What the heights are those of; default mark.'),
+  heightOf: heightOf.optional(),
   time: z
     .strictObject({
       format: z
@@ -110,6 +113,10 @@ const delimitedLayout = z.strictObject({
     .record(z.string(), z.enum(['fixed', 'float', 'other']))
     .optional()
     .describe('Text or number in the fix column → its meaning.'),
+  correctionValues: z
+    .record(z.string(), z.enum(CORRECTION_KINDS))
+    .optional()
+    .describe('Text in the corrections column → its meaning.'),
   ...valuesOutsideColumns,
 });
 
@@ -122,7 +129,17 @@ const log = z.strictObject({
     .union([z.string().min(1), z.array(z.string().min(1)).min(1)])
     .describe('A pattern or a list of patterns, relative to the study file.'),
   layout: layout.optional(),
-  coordinates: coordinates.optional(),
+  ...coordinateKeys,
+  corrections: z
+    .enum(CORRECTION_KINDS)
+    .optional()
+    .describe('From where the corrections came, for rows that do not tell; only single-base is fitted.'),
+  moveToPublishedBase: z
+    .boolean()
+    .optional()
+    .describe(
+      'Move positions by the base coordinates in the log minus those of the bases file; default false.',
+    ),
   nearestMarkM: z
     .number()
     .positive()
@@ -171,10 +188,11 @@ export const studySchema = z.strictObject({
     .optional()
     .describe('Zone of days and of log times without an offset; without it days are local mean solar days.'),
   coordinates: coordinates.default('geographic'),
-  heights: z
-    .strictObject({ kind: z.literal('ellipsoidal') })
+  heights: heights
     .optional()
-    .describe('All heights are ellipsoidal; state it where a column is named elevation.'),
+    .describe(
+      'Kind of the heights of marks, bases and logs that state none of their own; default ellipsoidal.',
+    ),
   marks: marksFile.describe('File of the marks: mark and coordinates.'),
   bases: controlFile.describe('File of the bases: base, coordinates and mounting.'),
   logs: z.array(log).min(1),

@@ -41,10 +41,12 @@ function shiftCauses(own: BaseParameters, all: readonly BaseParameters[]): Likel
   const causes: LikelyCause[] = [];
   if (east !== null && north !== null) {
     const size = Math.hypot(east.estimate, north.estimate);
-    if (size > PLAN_SHIFT_MM && (isTold(east) || isTold(north))) causes.push(planShift(own, east, north, up, all));
+    if (size > PLAN_SHIFT_MM && (isTold(east) || isTold(north)))
+      causes.push(planShift(own, east, north, up, all));
   }
   const planToo = causes.length > 0;
-  if (up !== null && isTold(up) && Math.abs(up.estimate) > UP_SHIFT_MM && !planToo) causes.push(upShift(own, up));
+  if (up !== null && isTold(up) && Math.abs(up.estimate) > UP_SHIFT_MM && !planToo)
+    causes.push(upShift(own, up));
   return causes;
 }
 
@@ -81,9 +83,7 @@ function planShift(
 const shifted = (base: BaseParameters): boolean => {
   const [east, north] = [parameter(base, 'shift-east'), parameter(base, 'shift-north')];
   if (east === null || north === null) return false;
-  return (
-    Math.hypot(east.estimate, north.estimate) > PLAN_SHIFT_MM && (isTold(east) || isTold(north))
-  );
+  return Math.hypot(east.estimate, north.estimate) > PLAN_SHIFT_MM && (isTold(east) || isTold(north));
 };
 
 function upShift({ base }: BaseParameters, up: CommonParameter): LikelyCause {

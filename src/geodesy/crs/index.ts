@@ -1,1 +1,2 @@
 export { type CrsDefinition, type CrsKind, crsDefinition, crsOfKind } from './crsDefinition.js';
+export { crsEllipsoid } from './crsEllipsoid.js';

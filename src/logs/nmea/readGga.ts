@@ -1,5 +1,7 @@
+import { WGS84 } from '../../geodesy/index.js';
 import { type CoordinateChanges, changedPlace } from '../coordinateChanges.js';
-import { CoordinateFault, coordinateColumns } from '../coordinateColumns.js';
+import { coordinateColumns } from '../coordinateColumns.js';
+import { CoordinateFault } from '../coordinateFault.js';
 import { quoted } from '../messages.js';
 import { parseNumber } from '../numbers.js';
 import type { Fix } from '../position.js';
@@ -144,7 +146,7 @@ function readPlace(fields: GgaFields, changes: CoordinateChanges): Place | Refus
   const written = { latitudeDeg, longitudeDeg, heightM: orthometricM + separationM };
   try {
     toGeodetic(latitudeDeg, longitudeDeg, written.heightM);
-    return { kind: 'place', ...changedPlace(written, separationM, changes) };
+    return { kind: 'place', ...changedPlace(written, separationM, changes, WGS84) };
   } catch (error) {
     if (!(error instanceof CoordinateFault)) throw error;
     return unreadable('height', error.message);

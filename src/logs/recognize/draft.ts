@@ -1,4 +1,4 @@
-import type { CoordinateSystem } from '../coordinateColumns.js';
+import type { CoordinateSystem } from '../coordinateSystem.js';
 import type { DelimitedLayout } from '../layout.js';
 import type { ColumnRole } from '../roles.js';
 import type { Column } from './columns.js';

@@ -1,5 +1,6 @@
 import { type Geodetic, geodeticToGeocentric } from '../../geodesy/index.js';
-import { type CoordinateColumns, type CoordinateSystem, coordinateColumns } from '../coordinateColumns.js';
+import { type CoordinateColumns, coordinateColumns } from '../coordinateColumns.js';
+import type { CoordinateSystem } from '../coordinateSystem.js';
 
 /** Rows that are tried. */
 const MOST_ROWS = 20;

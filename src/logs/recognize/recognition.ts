@@ -1,5 +1,5 @@
 import type { Geodetic } from '../../geodesy/index.js';
-import type { CoordinateSystem } from '../coordinateColumns.js';
+import type { CoordinateSystem } from '../coordinateSystem.js';
 import type { LogLayout } from '../layout.js';
 import type { Message } from '../messages.js';
 import type { ColumnRole } from '../roles.js';

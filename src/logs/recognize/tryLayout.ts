@@ -1,4 +1,5 @@
-import { type CoordinateSystem, coordinateColumns } from '../coordinateColumns.js';
+import { coordinateColumns } from '../coordinateColumns.js';
+import type { CoordinateSystem } from '../coordinateSystem.js';
 import { valuesFromFileName } from '../fileName.js';
 import { type DelimitedLayout, decimalCharacter } from '../layout.js';
 import { rowPosition } from '../rowPosition.js';
