@@ -19,6 +19,19 @@ export {
 export { type FrameDifference, frameDifference } from './frameDifference.js';
 export { geocentricToGeodetic, geodeticToGeocentric } from './geocentric.js';
 export { type Geodesic, geodesicBetween } from './geodesic.js';
+export {
+  type GeographicProblem,
+  type GeographicProblemKind,
+  geographicProblem,
+} from './geographicProblem.js';
+export {
+  type EstimatedSlope,
+  estimatedSlope,
+  type GeoidGrid,
+  type GeoidSlope,
+  geoidGrid,
+  type SeparationPoint,
+} from './geoid/index.js';
 export { type GroundGridParameters, groundGrid, type PlaneMapping } from './groundGrid.js';
 export { type FrameTransformation, frameTransformation } from './helmert.js';
 export type { HelmertParameters, HelmertSet, RotationConvention, Triple } from './helmertParameters.js';
