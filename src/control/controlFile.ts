@@ -8,7 +8,7 @@ export interface ControlFile {
   readonly coordinates: CoordinateSystem;
   readonly columns?: Readonly<Partial<Record<ColumnRole, string>>> | undefined;
   /** Default metres and degrees. */
-  readonly units?: Partial<LogUnits> | undefined;
+  readonly units?: { readonly [K in keyof LogUnits]?: LogUnits[K] | undefined } | undefined;
   /** What the heights are those of; default mark. With `antenna` the column antennaHeight is subtracted. */
   readonly heightOf?: 'mark' | 'antenna' | undefined;
   /** What must be done to the coordinates before they can be compared with those of logs. */

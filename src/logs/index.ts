@@ -23,6 +23,7 @@ export {
   message,
   type Place,
   quoted,
+  quotedList,
   type Severity,
 } from './messages.js';
 export { nearestName, suggestion } from './nearestName.js';

@@ -2,8 +2,8 @@ import {
   type Ellipsoid,
   type FrameTransformation,
   frameTransformation,
-  type GeoidGrid,
   type Geodetic,
+  type GeoidGrid,
   geocentricToGeodetic,
   geodeticToGeocentric,
   groundGrid,
@@ -132,7 +132,9 @@ export function frameOf(settings: Omit<TransformationSettings, 'epoch' | 'backwa
 }
 
 /** Without the keys that are not given. */
-function defined<Settings extends object>(settings: Settings): { [K in keyof Settings]: Exclude<Settings[K], undefined> } {
+function defined<Settings extends object>(
+  settings: Settings,
+): { [K in keyof Settings]: Exclude<Settings[K], undefined> } {
   return Object.fromEntries(Object.entries(settings).filter(([, value]) => value !== undefined)) as {
     [K in keyof Settings]: Exclude<Settings[K], undefined>;
   };

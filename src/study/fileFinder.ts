@@ -1,11 +1,13 @@
-import { statSync } from 'node:fs';
+import { readFileSync, statSync } from 'node:fs';
 import { relative, resolve } from 'node:path';
 import { globSync } from 'tinyglobby';
 import type { ControlFile } from '../control/index.js';
-import { type CoordinateSystem, coordinateColumns, type Message, message, quoted } from '../logs/index.js';
+import { type GeoidGrid, geoidGrid } from '../geodesy/index.js';
+import { type CoordinateSystem, type Message, message, quoted, systemOf } from '../logs/index.js';
 import type { FoundLog } from './logLayouts.js';
 import type { Path, PlaceOf } from './places.js';
 import type { StudySettings } from './settings.js';
+import { gridFiles } from './sources.js';
 
 /** A file and its name in messages. */
 export interface NamedFile {
@@ -16,6 +18,8 @@ export interface NamedFile {
 /** Finds the files that a study names, and gathers what is wrong with them. */
 export class FileFinder {
   readonly mistakes: Message[] = [];
+  /** What must be known of the coordinate systems, one message each. */
+  readonly notes = new Map<CoordinateSystem, Message>();
 
   constructor(
     readonly settings: StudySettings,
@@ -27,20 +31,43 @@ export class FileFinder {
   control(key: 'marks' | 'bases'): ControlFile | null {
     const entry = this.settings[key];
     const inline = typeof entry === 'string';
-    const { file, coordinates, columns } = inline
-      ? { file: entry, coordinates: undefined, columns: undefined }
+    const { file, coordinates, columns, units, heightOf, frame, epoch, transformation } = inline
+      ? ({ file: entry } as Partial<Exclude<typeof entry, string>> & { file: string })
       : entry;
-    const system = this.#system(coordinates, [key, 'coordinates']);
+    const system = this.#system(coordinates, [key, 'coordinates'], transformation !== undefined);
     const path = resolve(this.folder, file);
     if (!isFile(path)) {
-      this.#mistake(
+      this.mistake(
         'missing-file',
         `Expected the ${key} file ${quoted(file)} in the folder of the study file, there is none. Create it or correct the name.`,
         inline ? [key] : [key, 'file'],
       );
       return null;
     }
-    return { path, file: relative(this.folder, path), coordinates: system, columns };
+    const shown = relative(this.folder, path);
+    const lengths = typeof units === 'string' ? { length: units } : units;
+    return { path, file: shown, coordinates: system, columns, units: lengths, heightOf, frame, epoch };
+  }
+
+  /** The grid files of geoid separations, by the name that the settings give. */
+  grids(): Map<string, GeoidGrid> {
+    const grids = new Map<string, GeoidGrid>();
+    for (const [name, path] of gridFiles(this.settings)) {
+      const found = this.#file(name, path);
+      if (found === null) continue;
+      try {
+        grids.set(name, geoidGrid(readFileSync(found.path, 'utf8')));
+      } catch (error) {
+        if (!(error instanceof RangeError)) throw error;
+        const fault = error.message.replace(/\.$/, '');
+        this.mistake(
+          'bad-grid',
+          `Expected an ASCII grid of geoid separations in ${quoted(name)}, came a file that is none: ${fault}. Convert the grid to ASCII with longitudes and latitudes.`,
+          path,
+        );
+      }
+    }
+    return grids;
   }
 
   /** The pattern of names; null without one. */
@@ -53,14 +80,14 @@ export class FileFinder {
       const expression = new RegExp(pattern);
       // A match against nothing but an added empty alternative tells how many groups there are.
       if (new RegExp(`${pattern}|`).exec('')!.length > 1) return expression;
-      this.#mistake(
+      this.mistake(
         'bad-pattern',
         `Expected a pattern with a group for the mark, such as "CHK (\\d+)", came ${quoted(pattern)}. Put the name of the mark in brackets.`,
         path,
       );
     } catch (error) {
       const fault = (error as Error).message.replace(/\.$/, '');
-      this.#mistake(
+      this.mistake(
         'bad-pattern',
         `Expected a regular expression, came ${quoted(pattern)}: ${fault}. Correct it.`,
         path,
@@ -89,7 +116,7 @@ export class FileFinder {
   #file(name: string, path: Path): NamedFile | null {
     const found = resolve(this.folder, name);
     if (isFile(found)) return { path: found, file: relative(this.folder, found) };
-    this.#mistake(
+    this.mistake(
       'missing-file',
       `Expected the file ${quoted(name)} in the folder of the study file, there is none. Create it or correct the name.`,
       path,
@@ -99,8 +126,9 @@ export class FileFinder {
 
   logs(): FoundLog[] {
     const found = new Map<string, FoundLog>();
-    this.settings.logs.forEach(({ files, layout, coordinates, nearestMarkM, markTimes }, k) => {
-      const system = this.#system(coordinates, ['logs', k, 'coordinates']);
+    this.settings.logs.forEach((entry, k) => {
+      const { files, layout, coordinates, nearestMarkM, markTimes, transformation } = entry;
+      const system = this.#system(coordinates, ['logs', k, 'coordinates'], transformation !== undefined);
       for (const pattern of [files].flat()) {
         const paths = globSync(pattern, {
           cwd: this.folder,
@@ -108,7 +136,7 @@ export class FileFinder {
           expandDirectories: false,
         }).sort();
         if (paths.length === 0) {
-          this.#mistake(
+          this.mistake(
             'no-log',
             `Expected log files that match ${quoted(pattern)} in the folder of the study file, there are none. Put the exported logs there or correct the pattern, such as "logs/*.csv".`,
             ['logs', k, 'files'],
@@ -125,6 +153,8 @@ export class FileFinder {
             coordinates: system,
             nearestMarkM: nearestMarkM ?? null,
             marksByTime: markTimes !== undefined,
+            corrections: entry.corrections,
+            moveToPublishedBase: entry.moveToPublishedBase,
           });
         }
       }
@@ -132,27 +162,34 @@ export class FileFinder {
     return [...found.values()];
   }
 
-  #system(own: CoordinateSystem | undefined, path: Path): CoordinateSystem {
+  /** @param transformed its frame is stated to be changed, so that nothing need be said of it */
+  #system(own: CoordinateSystem | undefined, path: Path, transformed: boolean): CoordinateSystem {
     const system = own ?? this.settings.coordinates;
     const key = own === undefined ? ['coordinates'] : path;
     try {
-      coordinateColumns(system);
+      const { note } = systemOf(system);
+      if (note !== null && !transformed && !this.notes.has(system)) {
+        this.notes.set(
+          system,
+          message('warning', 'coordinate-system', `${system}: ${note}`, this.placeOf(key)),
+        );
+      }
     } catch (error) {
       const reason = (error as Error).message.replace(/\.$/, '');
-      this.#mistake(
+      this.mistake(
         'unknown-coordinates',
-        `Expected "geographic", "geocentric" or a proj string, came ${quoted(system)}: ${reason}. Correct it.`,
+        `Expected "geographic", "geocentric", an EPSG code or a proj string, came ${quoted(system)}: ${reason}. Correct it.`,
         key,
       );
     }
     return system;
   }
 
-  #mistake(code: string, text: string, path: Path): void {
+  readonly mistake = (code: string, text: string, path: Path): void => {
     const told = message('error', code, text, this.placeOf(path));
     const again = this.mistakes.some(({ text: before, row }) => before === text && row === told.row);
     if (!again) this.mistakes.push(told);
-  }
+  };
 }
 
 const isFile = (path: string): boolean => statSync(path, { throwIfNoEntry: false })?.isFile() ?? false;

@@ -1,5 +1,6 @@
 import {
   type Control,
+  comparabilityMessages,
   type MarkTimes,
   readAliases,
   readBases,
@@ -27,6 +28,6 @@ export async function loadControl(study: Study): Promise<{ control: Control; mes
   }
   return {
     control: { marks, bases: bases.bases, names: { pattern, aliases }, markTimes },
-    messages: [...messages, ...bases.messages],
+    messages: [...messages, ...bases.messages, ...comparabilityMessages(marks, bases.bases, study)],
   };
 }

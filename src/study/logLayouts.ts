@@ -17,8 +17,8 @@ export type FoundLog = Omit<LogFile, 'layout'> & {
 
 export interface LayoutOptions {
   readonly timeZone: string | null;
-  /** As the study file states it; undefined when it does not. */
-  readonly heights: 'ellipsoidal' | undefined;
+  /** Kind of the heights of an entry of the study file; undefined when it does not state it. */
+  readonly heightsOf: (entry: number) => 'ellipsoidal' | 'orthometric' | undefined;
 }
 
 /**
@@ -28,7 +28,7 @@ export interface LayoutOptions {
  */
 export async function logLayouts(
   found: readonly FoundLog[],
-  { timeZone, heights }: LayoutOptions,
+  { timeZone, heightsOf }: LayoutOptions,
 ): Promise<{ logs: LogFile[]; messages: Message[] }> {
   const known = new Map<string, LogLayout>();
   const logs: LogFile[] = [];
@@ -50,7 +50,7 @@ export async function logLayouts(
       const recognised = await autoLayout(log.path, log.file, {
         coordinates: log.coordinates,
         timeZone,
-        heights,
+        heights: heightsOf(entry),
       });
       logs.push({ ...log, layout: recognised.layout });
       messages.push(...recognised.messages);

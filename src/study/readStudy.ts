@@ -7,6 +7,7 @@ import { FileFinder } from './fileFinder.js';
 import { logLayouts } from './logLayouts.js';
 import { parseStudyText } from './parseStudyText.js';
 import type { StudySettings } from './settings.js';
+import { sources } from './sources.js';
 import type { Study } from './study.js';
 
 const MM_PER_FOOT = 304.8;
@@ -27,22 +28,39 @@ export async function readStudy(path: string): Promise<Study> {
   const { settings, placeOf } = parseStudyText(await readFile(file, 'utf8'), path);
   const finder = new FileFinder(settings, dirname(file), placeOf);
   const [marks, bases, found] = [finder.control('marks'), finder.control('bases'), finder.logs()];
+  const from = sources(settings, finder.grids(), finder.mistake);
   const [namePattern, aliases, markTimes] = [finder.namePattern(), finder.aliases(), finder.markTimes(found)];
   if (finder.mistakes.length > 0 || marks === null || bases === null) throw new InputError(finder.mistakes);
   const timeZone = settings.timeZone ?? null;
-  const { logs, messages } = await logLayouts(found, { timeZone, heights: settings.heights?.kind });
+  const read = await logLayouts(found, {
+    timeZone,
+    heightsOf: (entry) => (settings.logs[entry]!.heights ?? settings.heights)?.kind,
+  });
+  const logs = read.logs.map((log) => {
+    const { entry } = found.find(({ path: known }) => known === log.path)!;
+    return { ...log, changes: from.ofLog(entry, log.layout.kind === 'nmea') };
+  });
+  // What a log's heights lack is only known once its layout is.
+  if (finder.mistakes.length > 0) throw new InputError(finder.mistakes);
   return {
     file,
     folder: finder.folder,
     title: settings.title,
     timeZone,
-    marks,
-    bases,
+    heightKind: from.heightKind,
+    marks: { ...marks, changes: from.marks },
+    bases: { ...bases, changes: from.bases },
+    siteMarks: [...new Set(settings.logs.flatMap(({ sitePlane }) => sitePlane?.marks ?? []))].sort(),
+    logFrames: logFrames(settings),
+    controlTransformed: [settings.marks, settings.bases].some(
+      (source) => typeof source !== 'string' && source.transformation !== undefined,
+    ),
+    constantSeparation: hasConstantSeparation(settings),
     namePattern,
     aliases,
     markTimes,
     logs,
-    messages,
+    messages: [...finder.notes.values(), ...read.messages],
     period: settings.period ?? null,
     gapSeconds: settings.occupations.gapSeconds,
     windowSeconds: settings.occupations.windowSeconds ?? null,
@@ -53,6 +71,21 @@ export async function readStudy(path: string): Promise<Study> {
     seed: settings.seed,
   };
 }
+
+/** Frames that logs state; most state none, and then theirs is that of the base. */
+const logFrames = ({ logs }: StudySettings): Study['logFrames'] =>
+  logs.flatMap(({ frame, epoch, transformation }) => {
+    if (frame === undefined && epoch === undefined && transformation === undefined) return [];
+    return [{ frame: frame ?? '', epoch: epoch ?? Number.NaN, transformed: transformation !== undefined }];
+  });
+
+/** One separation stands for the whole study, in some source. */
+const hasConstantSeparation = ({ heights, marks, bases, logs }: StudySettings): boolean =>
+  [
+    heights,
+    ...[marks, bases].map((one) => (typeof one === 'string' ? undefined : one.heights)),
+    ...logs.map((log) => log.heights),
+  ].some((each) => each?.geoid === 'constant');
 
 function tolerance(written: StudySettings['tolerances'][number]): Tolerance {
   const { component, limitMm, limitFeet, share, dayShare, confidence } = written;

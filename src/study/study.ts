@@ -1,6 +1,7 @@
 import type { ControlFile } from '../control/index.js';
 import type { LogFile, Message } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
+import type { HeightKind } from './coordinateChanges.js';
 
 /** A study ready to run: settings with every default filled in, files found. */
 export interface Study {
@@ -9,8 +10,22 @@ export interface Study {
   readonly folder: string;
   readonly title: string;
   readonly timeZone: string | null;
+  /** Kind of heights that are compared: that of the marks. */
+  readonly heightKind: HeightKind;
   readonly marks: ControlFile;
   readonly bases: ControlFile;
+  /** Marks to which a job was fitted: their errors are residuals, not checks. */
+  readonly siteMarks: readonly string[];
+  /** Frames that logs state; without any their frame is that of the base. */
+  readonly logFrames: readonly {
+    readonly frame: string;
+    readonly epoch: number;
+    readonly transformed: boolean;
+  }[];
+  /** Marks or bases are transformed to one frame. */
+  readonly controlTransformed: boolean;
+  /** One geoid separation stands for the whole study. */
+  readonly constantSeparation: boolean;
   /** How logs name marks. */
   readonly namePattern: RegExp | null;
   readonly aliases: { readonly path: string; readonly file: string } | null;

@@ -26,13 +26,12 @@ function settleUnit(draft: Draft, height: Column): void {
 }
 
 function settleKind(draft: Draft, height: Column): void {
-  const question =
-    'Are the heights ellipsoidal (orthometric ones, above sea level, cannot be used before the height of the geoid is added)?';
+  const question = 'Are the heights ellipsoidal, or orthometric (above sea level)?';
   const common = {
     code: 'height-kind',
     question,
     key: 'heights.kind',
-    choices: ['ellipsoidal'],
+    choices: ['ellipsoidal', 'orthometric'],
   };
   if (height.name !== '' && soundsOrthometric(height.name)) {
     const because = `Heights named like ${height.label} mostly are orthometric, and the two differ by tens of metres.`;
