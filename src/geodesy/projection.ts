@@ -1,5 +1,6 @@
 import proj4 from 'proj4';
-import { type Ellipsoid, ellipsoid } from './ellipsoid.js';
+import type { Ellipsoid } from './ellipsoid.js';
+import { ellipsoidOfParameters } from './ellipsoidOfParameters.js';
 import { wrappedLongitude } from './longitude.js';
 import { checkedDefinition } from './projectionDefinition.js';
 import { finitePoint, type Point, type PointMapping, refinedInverse } from './projectionInverse.js';
@@ -29,9 +30,6 @@ export interface Projection {
 
 /** What is used of the projection library's own projection object: radians in, metres out. */
 interface PlaneMath {
-  readonly a: number;
-  readonly b: number;
-  readonly rf?: number;
   readonly from_greenwich?: number;
   readonly forward: PointMapping;
   readonly inverse: PointMapping;
@@ -47,9 +45,12 @@ function found(point: Point | undefined, definition: string, what: string): Poin
   return point;
 }
 
-/** By the inverse flattening if the definition states one: the library rounds some semi-minor axes. */
-function ellipsoidOf({ a, b, rf }: PlaneMath): Ellipsoid {
-  return ellipsoid('of the projection', a, rf ?? (a === b ? Number.POSITIVE_INFINITY : a / (a - b)));
+/** The parameters of a definition that give its ellipsoid. */
+function shapeOf(definition: string): string {
+  return definition
+    .split(' ')
+    .filter((parameter) => /^\+(ellps|datum|a|b|rf|r|r_a)(=|$)/i.test(parameter))
+    .join(' ');
 }
 
 /**
@@ -71,7 +72,7 @@ export function projection(definition: string): Projection {
   const primeMeridian = math.from_greenwich ?? 0;
   return {
     definition,
-    ellipsoid: ellipsoidOf(math),
+    ellipsoid: ellipsoidOfParameters(shapeOf(checked)),
     forward: ({ latitudeDeg, longitudeDeg }) => {
       if (!(Math.abs(latitudeDeg) <= 90))
         throw new RangeError(`latitudeDeg: expected -90 to 90, received ${latitudeDeg}`);

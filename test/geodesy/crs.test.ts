@@ -4,6 +4,7 @@ import { describe, expect, it } from 'vitest';
 import { epsgRows } from '../../src/geodesy/crs/epsgRows.js';
 import { crsDefinition, crsOfKind } from '../../src/geodesy/crs/index.js';
 import { likelyCodes } from '../../src/geodesy/crs/likelyCodes.js';
+import { GRS80 } from '../../src/geodesy/ellipsoid.js';
 import { metresPer } from '../../src/geodesy/lengthUnits.js';
 import { projection } from '../../src/geodesy/projection.js';
 
@@ -55,6 +56,7 @@ describe('EPSG codes', () => {
       name: 'ETRS89 / UTM zone 32N',
       kind: 'projected',
       frame: 'ETRS89',
+      ellipsoid: { ...GRS80, name: 'GRS80' },
       unit: 'metre',
       axes: 'enu',
       projString: '+proj=utm +zone=32 +ellps=GRS80',
@@ -72,6 +74,25 @@ describe('EPSG codes', () => {
       expect(crsDefinition(code).note, String(code)).toMatch(/are not satellite coordinates/);
     expect(crsDefinition(2048)).toMatchObject({ axes: 'wsu', note: expect.stringMatching(/turn the signs/) });
     expect(crsDefinition(3857).note).toMatch(/neither its distances nor its angles are true/);
+  });
+  it('knows the ellipsoid of each frame', () => {
+    // semi-major axis and inverse flattening of the register
+    for (const [code, a, inverseFlattening] of [
+      [4326, 6378137, 298.257223563],
+      [4277, 6377563.396, 299.3249646],
+      [4289, 6377397.155, 299.1528128],
+      [4267, 6378206.4, 294.978698213898],
+      [4230, 6378388, 297],
+      [4284, 6378245, 298.3],
+      [4322, 6378135, 298.26],
+    ] as const) {
+      const { ellipsoid } = crsDefinition(code);
+      expect(ellipsoid.semiMajorAxisM).toBe(a);
+      expect(ellipsoid.inverseFlattening).toBeCloseTo(inverseFlattening, 7);
+      const { projString } = crsDefinition(code);
+      expect(projection(projString.replace('longlat', 'merc')).ellipsoid.semiMajorAxisM).toBe(a);
+    }
+    expect(projection('EPSG:3857').ellipsoid.inverseFlattening).toBe(Number.POSITIVE_INFINITY);
   });
   it('never asks for a change of frame', () => {
     for (const { code } of epsgRows().values())

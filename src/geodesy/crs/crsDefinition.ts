@@ -1,3 +1,5 @@
+import type { Ellipsoid } from '../ellipsoid.js';
+import { ellipsoidOfParameters } from '../ellipsoidOfParameters.js';
 import type { LengthUnit } from '../lengthUnits.js';
 import { type EpsgRow, epsgRows } from './epsgRows.js';
 import { likelyCodes } from './likelyCodes.js';
@@ -12,6 +14,8 @@ export interface CrsDefinition {
   readonly kind: CrsKind;
   /** Name of the reference frame (datum) beneath, e.g. `ETRS89`. */
   readonly frame: string;
+  /** The frame's, for geocentric coordinates and lengths. */
+  readonly ellipsoid: Ellipsoid;
   /** Unit of the axes. `projection` computes in metres whatever this says. */
   readonly unit: 'degree' | LengthUnit;
   /** Where the first, second and third axis of the written coordinates point: `enu` unless the register says e.g. `wsu`. */
@@ -39,7 +43,7 @@ const KIND_WORDS: Readonly<Record<CrsKind, string>> = {
 };
 
 /**
- * Definition of a code of the EPSG register (`EPSG:25832`, `epsg:25832` or `25832`), offline: 5900 geographic,
+ * Definition of a code of the EPSG register (`EPSG:25832`, `epsg:25832` or `25832`), offline: 5952 geographic,
  * geocentric and projected systems in degrees, metres and feet, withdrawn ones left out (epsg-index 2.0.0).
  *
  * Datum shifts are no part of it: a grid on a frame with another origin is projected as it stands, and `note` says so.
@@ -91,12 +95,17 @@ function definitionOf(row: EpsgRow): CrsDefinition {
     name: row.name,
     kind: row.kind,
     frame: row.frame,
+    ellipsoid: ellipsoidOfParameters(withSigns(row.shape)),
     unit: row.kind === 'geographic' ? 'degree' : (UNITS[values.get('units') ?? ''] ?? 'metre'),
     axes,
-    projString: `${projection} ${row.shape}`.trim().replace(/(^| )(?=\S)/g, '$1+'),
+    projString: withSigns(`${projection} ${row.shape}`),
     originShiftM: row.originShiftM,
     note: noteOn(row, axes),
   };
+}
+
+function withSigns(parameters: string): string {
+  return parameters.replace(/(^| )(?=\S)/g, '$1+');
 }
 
 function noteOn(row: EpsgRow, axes: string): string | null {
