@@ -1,3 +1,14 @@
+export { assumedBasePpm } from './assumedBase.js';
+export { type BlunderCause, type Blunders, suspectBlunders } from './blunders/index.js';
+export {
+  type BaseParameters,
+  type CauseInput,
+  type CommonCauses,
+  type CommonParameter,
+  commonCauses,
+  type LikelyCause,
+  type ReadAs,
+} from './causes/index.js';
 export {
   type ComputedErrors,
   computeErrors,
@@ -6,6 +17,7 @@ export {
 } from './computeErrors.js';
 export { type ErrorColumns, type ErrorsInput, errorColumns } from './errorColumns.js';
 export { errorTable } from './errorTable.js';
+export type { FarOffPlace } from './farOffPlaces.js';
 export { type FormedOccupations, type FormOccupationsOptions, formOccupations } from './formOccupations.js';
 export { groupIndices } from './groupIndices.js';
 export type { Occupation, Visit } from './occupation.js';

@@ -7,7 +7,7 @@ export {
   heightFactor,
 } from './combinedFactor.js';
 export type { Geocentric, Geodetic, LocalVector } from './coordinates.js';
-export { type CrsDefinition, type CrsKind, crsDefinition, crsEllipsoid, crsOfKind } from './crs/index.js';
+export { type CrsDefinition, type CrsKind, crsDefinition, crsOfKind } from './crs/index.js';
 export {
   type Ellipsoid,
   ellipsoid,

@@ -1,6 +1,5 @@
 import {
   crsDefinition,
-  crsEllipsoid,
   type Ellipsoid,
   type LengthUnit,
   type Projection,
@@ -55,7 +54,7 @@ export function systemOf(system: CoordinateSystem): KnownSystem {
   const crs = crsDefinition(system);
   const unit = crs.unit === 'degree' ? 'metre' : crs.unit;
   const { note } = crs;
-  if (crs.kind !== 'projected') return { kind: crs.kind, ellipsoid: crsEllipsoid(crs), unit, note } as const;
+  if (crs.kind !== 'projected') return { kind: crs.kind, ellipsoid: crs.ellipsoid, unit, note } as const;
   const plane = projection(crs.code);
   return { kind: 'projected', projection: plane, registered: true, ellipsoid: plane.ellipsoid, unit, note };
 }

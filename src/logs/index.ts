@@ -14,7 +14,13 @@ export { type CoordinateSystem, type KnownSystem, systemOf } from './coordinateS
 export { parseDms } from './dms.js';
 export { type EpochBag, EpochStore } from './epochStore.js';
 export type { DelimitedHeader, DelimitedOptions } from './header.js';
-export type { DelimitedLayout, LogLayout, LogUnits, NmeaLayout } from './layout.js';
+export {
+  type DelimitedLayout,
+  type LogLayout,
+  type LogUnits,
+  type NmeaLayout,
+  resolvedUnits,
+} from './layout.js';
 export {
   formatMessage,
   InputError,

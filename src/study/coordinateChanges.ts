@@ -9,6 +9,7 @@ import {
   groundGrid,
   type SitePosition,
   sitePlane,
+  WGS84,
 } from '../geodesy/index.js';
 import { type CoordinateChanges, CoordinateFault } from '../logs/index.js';
 import type {
@@ -120,10 +121,20 @@ function frameChange(
   const change = frameOf(parameters);
   const turn = backwards ? change.inverse : change.forward;
   return (place, ellipsoid) => {
-    const moved = geocentricToGeodetic(turn.call(change, geodeticToGeocentric(place, ellipsoid), epoch));
+    const moved = geocentricToGeodetic(
+      turn.call(change, geodeticToGeocentric(place, ellipsoid), epoch),
+      alike(ellipsoid) ? ellipsoid : WGS84,
+    );
     return studyKind === 'orthometric' ? { ...moved, heightM: place.heightM } : moved;
   };
 }
+
+/**
+ * Ellipsoids of the satellite age, of which frames are compared as if they had the same one: GRS 80 and WGS 84 are 0.1 mm
+ * apart.
+ */
+const alike = ({ semiMajorAxisM, inverseFlattening }: Ellipsoid): boolean =>
+  semiMajorAxisM === WGS84.semiMajorAxisM && Math.abs(inverseFlattening - WGS84.inverseFlattening) < 1e-5;
 
 /** The transformation that settings describe. @throws RangeError when they cannot be one */
 export function frameOf(settings: Omit<TransformationSettings, 'epoch' | 'backwards'>): FrameTransformation {

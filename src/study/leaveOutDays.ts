@@ -1,10 +1,20 @@
-import type { ComputedErrors, OccupationError, SetAsideOccupation } from '../errors/index.js';
+import type { OccupationError, SetAsideOccupation } from '../errors/index.js';
 import { type Message, message } from '../logs/index.js';
 import type { Study } from './study.js';
 
+/** Errors that are used, those that are not, and what is to be told of these. */
+export interface DividedErrors {
+  readonly errors: readonly OccupationError[];
+  readonly setAside: readonly SetAsideOccupation[];
+  readonly messages: readonly Message[];
+}
+
 /** Sets aside the occupations of the days that the study file names, and says so. */
-export function leaveOutDays(computed: ComputedErrors, { leaveOutDays: days }: Study): ComputedErrors {
-  if (days.length === 0) return computed;
+export function leaveOutDays(
+  computed: Omit<DividedErrors, 'messages'>,
+  { leaveOutDays: days }: Pick<Study, 'leaveOutDays'>,
+): DividedErrors {
+  if (days.length === 0) return { ...computed, messages: [] };
   const left = new Set(days);
   const errors: OccupationError[] = [];
   const setAside: SetAsideOccupation[] = [...computed.setAside];
@@ -26,5 +36,5 @@ export function leaveOutDays(computed: ComputedErrors, { leaveOutDays: days }: S
           `Day ${day} is to be left out and has no occupations. Check the date in leaveOutDays.`,
         ),
   );
-  return { errors, setAside, messages: [...computed.messages, ...messages] };
+  return { errors, setAside, messages };
 }

@@ -1,4 +1,4 @@
-import type { StaticShots } from '../errors/index.js';
+import type { CommonCauses, StaticShots } from '../errors/index.js';
 import type { Component, EstimateWithLimits, Form } from '../fit/index.js';
 import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
 import type { Rule, SpecSheet } from '../rule/index.js';
@@ -59,6 +59,17 @@ export interface FileResult {
   readonly setAside: Readonly<Partial<Record<RowReason, ReasonCount>>>;
 }
 
+/** An occupation that a person likely got wrong. */
+export interface BlunderResult {
+  readonly mark: string;
+  readonly day: string;
+  readonly crew: string;
+  readonly rover: string;
+  readonly cause: string;
+  readonly file: string;
+  readonly row: number;
+}
+
 /** Everything a run found: the value from which every output is written. `results.json` is this, in JSON. */
 export interface Results {
   readonly version: 1;
@@ -80,6 +91,14 @@ export interface Results {
     readonly used: number;
     readonly setAside: Readonly<Partial<Record<OccupationReason, number>>>;
   };
+  /** Kind of heights that were compared, and so of every vertical error. */
+  readonly heights: 'ellipsoidal' | 'orthometric';
+  /** What the marks of each base have in common, and what likely caused it. Signed: no part of the scatter. */
+  readonly commonCauses: CommonCauses;
+  /** Occupations taken for blunders, which are among those set aside. */
+  readonly blunders: readonly BlunderResult[];
+  /** Marks to which a job was fitted: their errors are residuals, not checks. */
+  readonly siteMarks: readonly string[];
   /** Days with at least one used occupation. */
   readonly days: number;
   readonly period: { readonly from: string; readonly to: string } | null;

@@ -1,19 +1,23 @@
 import type { Control } from '../control/index.js';
 import {
+  commonCauses,
   computeErrors,
   formOccupations,
   type OccupationError,
   type SetAsideOccupation,
+  suspectBlunders,
   type Visit,
 } from '../errors/index.js';
 import type { ErrorModel } from '../fit/index.js';
 import { type Message, readLogs, type SetAsideRow } from '../logs/index.js';
 import { maximumBaseline, noRule } from '../rule/index.js';
 import { markMeans } from '../split/index.js';
+import { causeMessages } from './causeMessages.js';
 import { fitComponents, fitResult } from './fitComponents.js';
 import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
 import { loadControl } from './loadControl.js';
+import { readAs } from './readAs.js';
 import type { Results } from './results.js';
 import type { Study } from './study.js';
 import { summarizeRun } from './summarizeRun.js';
@@ -48,15 +52,32 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
   const { control, messages: controlMessages } = await loadControl(study);
   const formed = await formOccupations(readLogs(study.logs, study), control, { ...study, ...options });
   const computed = computeErrors(formed.occupations, control);
-  const { errors, setAside, messages } = leaveOutDays(computed, study);
+  // Causes that all errors share are looked for before anything is rejected for being far off.
+  const causes = commonCauses({
+    errors: [...computed.errors, ...computed.setAside.map(({ error }) => error)],
+    control,
+    farOff: formed.farOff,
+    ...readAs(study),
+  });
+  const checked = suspectBlunders(computed.errors, computed.setAside, control);
+  const left = leaveOutDays(checked, study);
+  const { errors, setAside } = left;
   const results = await summarizeRun(study, control, {
     formed,
     errors,
     setAside,
-    messages: [...study.messages, ...controlMessages, ...formed.messages, ...messages],
+    causes,
+    messages: [
+      ...study.messages,
+      ...controlMessages,
+      ...formed.messages,
+      ...computed.messages,
+      ...causeMessages(causes),
+      ...checked.messages,
+      ...left.messages,
+    ],
   });
-  const left = new Set(study.leaveOutDays);
-  const visits = formed.visits.filter(({ day }) => !left.has(day));
+  const visits = formed.visits.filter(({ day }) => !study.leaveOutDays.includes(day));
   return { control, errors, setAside, visits, results };
 }
 

@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto';
 import { createReadStream } from 'node:fs';
 import type { Control } from '../control/index.js';
 import {
+  type CommonCauses,
   type FormedOccupations,
   type OccupationError,
   type SetAsideOccupation,
@@ -23,12 +24,13 @@ export interface ReadParts {
   readonly formed: FormedOccupations;
   readonly errors: readonly OccupationError[];
   readonly setAside: readonly SetAsideOccupation[];
+  readonly causes: CommonCauses;
   readonly messages: readonly Message[];
 }
 
 /** The results of reading: accounts, visits, occupations and messages. */
 export async function summarizeRun(study: Study, control: Control, parts: ReadParts): Promise<Results> {
-  const { formed, errors, setAside, messages } = parts;
+  const { formed, errors, setAside, causes, messages } = parts;
   const days = [...new Set(errors.map(({ day }) => day))].sort();
   const withoutFix = formed.visits.filter(({ fixedRows }) => fixedRows === 0).length;
   const counts: Partial<Record<OccupationReason, number>> = {};
@@ -54,6 +56,10 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     staticShots: shots,
     visits: { withFix: formed.visits.length - withoutFix, withoutFix },
     occupations: { formed: formed.occupations.length, used: errors.length, setAside: counts },
+    heights: study.heightKind,
+    commonCauses: causes,
+    blunders: blunders(setAside),
+    siteMarks: study.siteMarks,
     days: days.length,
     period: days.length === 0 ? null : { from: days[0]!, to: days.at(-1)! },
     bases: [...control.bases.keys()].filter((base) => errors.some((error) => error.base === base)),
@@ -64,6 +70,25 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     specSheet: study.specSheet,
   };
 }
+
+/** The occupations taken for blunders, in the order of days. */
+const blunders = (setAside: readonly SetAsideOccupation[]): Results['blunders'] =>
+  setAside
+    .filter(({ reason }) => reason === 'suspected-blunder')
+    .map(({ detail, error: { mark, day, crew, rover, file, row } }) => ({
+      mark,
+      day,
+      crew,
+      rover,
+      cause: detail,
+      file,
+      row,
+    }))
+    .sort(
+      (a, b) =>
+        (a.day < b.day ? -1 : a.day > b.day ? 1 : 0) ||
+        (a.file < b.file ? -1 : a.file > b.file ? 1 : a.row - b.row),
+    );
 
 /** What the rounding of the coarsest log adds to the constant: both axes of the plan count. */
 function rounding(resolutions: readonly LogResolution[]): Results['roundingMm'] {

@@ -1,13 +1,16 @@
 import {
+  crsDefinition,
   type Geocentric,
   type Geodetic,
   geocentricToGeodetic,
   geodeticToGeocentric,
+  type LengthUnit,
   metresPer,
   type Projection,
   projection,
 } from '../../geodesy/index.js';
-import type { CoordinateSystem } from '../../logs/index.js';
+import { type CoordinateSystem, systemOf } from '../../logs/index.js';
+import type { ReadAs } from './commonCauses.js';
 
 /** A way in which coordinates may have been read wrongly, and how they stand when it is undone. */
 export interface Candidate {
@@ -19,21 +22,23 @@ export interface Candidate {
   readonly reread: (place: Geodetic) => Geodetic | null;
 }
 
-const FEET = [
-  ['international-foot', 'international feet'],
-  ['us-survey-foot', 'US survey feet'],
-] as const;
+const UNIT_WORDS: Readonly<Record<LengthUnit, string>> = {
+  metre: 'metres',
+  'international-foot': 'international feet',
+  'us-survey-foot': 'US survey feet',
+};
 
 /** Ways in which coordinates of a system may have been read wrongly in plan. */
-export function planCandidates(system: CoordinateSystem): Candidate[] {
-  if (system === 'geographic') return [swappedAngles()];
-  if (system === 'geocentric') return geocentricCandidates();
-  return planeCandidates(system);
+export function planCandidates({ system, length }: ReadAs): Candidate[] {
+  const { kind } = systemOf(system);
+  if (kind === 'geographic') return [swappedAngles()];
+  if (kind === 'geocentric') return geocentricCandidates(length);
+  return planeCandidates(system, length);
 }
 
 /** Ways in which heights may have been read wrongly. */
-export function heightCandidates(): Candidate[] {
-  return unitPairs().map(([from, to, words, factor]) => ({
+export function heightCandidates({ height }: ReadAs): Candidate[] {
+  return unitsMeant(height).map(([from, to, words, factor]) => ({
     code: 'height-unit',
     text: `heights look like ${words}`,
     remedy: `state height: ${to} under units (now ${from})`,
@@ -41,23 +46,17 @@ export function heightCandidates(): Candidate[] {
   }));
 }
 
-/** Of every pair of units that can be mistaken for each other: read as, meant, words, and what to multiply by. */
-function unitPairs(): (readonly [string, string, string, number])[] {
-  const units = ['metre', 'international-foot', 'us-survey-foot'] as const;
-  const wordsOf = (unit: string): string => FEET.find(([name]) => name === unit)?.[1] ?? 'metres';
-  return units.flatMap((read) =>
-    units
-      .filter((meant) => meant !== read)
-      .map(
-        (meant) =>
-          [
-            read,
-            meant,
-            `${wordsOf(meant)} read as ${wordsOf(read)}`,
-            metresPer(meant) / metresPer(read),
-          ] as const,
-      ),
-  );
+/** Units that may have been meant where one was read: read as, meant, words, and what to multiply by. */
+function unitsMeant(read: LengthUnit): (readonly [LengthUnit, LengthUnit, string, number])[] {
+  const units = Object.keys(UNIT_WORDS) as LengthUnit[];
+  return units
+    .filter((meant) => meant !== read)
+    .map((meant) => [
+      read,
+      meant,
+      `${UNIT_WORDS[meant]} read as ${UNIT_WORDS[read]}`,
+      metresPer(meant) / metresPer(read),
+    ]);
 }
 
 const swappedAngles = (): Candidate => ({
@@ -68,7 +67,7 @@ const swappedAngles = (): Candidate => ({
     Math.abs(longitudeDeg) <= 90 ? { latitudeDeg: longitudeDeg, longitudeDeg: latitudeDeg, heightM } : null,
 });
 
-function geocentricCandidates(): Candidate[] {
+function geocentricCandidates(length: LengthUnit): Candidate[] {
   const reread = (change: (c: Geocentric) => Geocentric) => (place: Geodetic) => {
     try {
       return geocentricToGeodetic(change(geodeticToGeocentric(place)));
@@ -84,7 +83,7 @@ function geocentricCandidates(): Candidate[] {
       remedy: 'name the columns the other way round under columns',
       reread: reread(({ xM, yM, zM }) => ({ xM: yM, yM: xM, zM })),
     },
-    ...unitPairs().map(([from, to, words, factor]) => ({
+    ...unitsMeant(length).map(([from, to, words, factor]) => ({
       code: 'plan-unit',
       text: `coordinates look like ${words}`,
       remedy: `state length: ${to} under units (now ${from})`,
@@ -93,7 +92,7 @@ function geocentricCandidates(): Candidate[] {
   ];
 }
 
-function planeCandidates(system: CoordinateSystem): Candidate[] {
+function planeCandidates(system: CoordinateSystem, length: LengthUnit): Candidate[] {
   const plane = projection(system);
   const through =
     (change: (e: number, n: number) => readonly [number, number], other: Projection = plane) =>
@@ -114,7 +113,7 @@ function planeCandidates(system: CoordinateSystem): Candidate[] {
       remedy: 'name the columns the other way round under columns',
       reread: through((e, n) => [n, e]),
     },
-    ...unitPairs().map(([from, to, words, factor]) => ({
+    ...unitsMeant(length).map(([from, to, words, factor]) => ({
       code: 'plan-unit',
       text: `coordinates look like ${words}`,
       remedy: `state length: ${to} under units (now ${from})`,
@@ -122,25 +121,36 @@ function planeCandidates(system: CoordinateSystem): Candidate[] {
     })),
     ...neighbourZones(system).map(({ zone, definition }) => ({
       code: 'wrong-zone',
-      text: `coordinates look like those of zone ${zone}`,
-      remedy: `state coordinates: "${definition}"`,
+      text: `coordinates look like those of ${zone}`,
+      remedy: `state coordinates: ${/^EPSG/.test(definition) ? definition : `"${definition}"`}`,
       reread: through((e, n) => [e, n], projection(definition)),
     })),
   ];
 }
 
-/** The zones beside a zone of the universal transverse Mercator grid, in the words of the definition itself. */
-function neighbourZones(system: CoordinateSystem): { zone: number; definition: string }[] {
+/** The zones beside a zone, in the words of the definition itself. */
+function neighbourZones(system: CoordinateSystem): { zone: string; definition: string }[] {
+  if (/^EPSG:/i.test(system)) return neighbourCodes(system);
   const proj = /^(.*\+proj=utm.*\+zone=)(\d{1,2})(\b.*)$/.exec(system);
-  // WGS 84 zones north and south, of which the last two digits are the zone (EPSG dataset).
-  const code = /^(EPSG:32[67])(\d{2})()$/i.exec(system);
-  const found = proj ?? code;
-  if (found === null) return [];
-  const [, before, zone, after] = found as unknown as [string, string, string, string];
+  if (proj === null) return [];
+  const [, before, zone, after] = proj as unknown as [string, string, string, string];
   return [-1, 1]
     .map((step) => ((Number(zone) + step + 59) % 60) + 1)
-    .map((next) => ({
-      zone: next,
-      definition: `${before}${code === null ? next : String(next).padStart(2, '0')}${after}`,
-    }));
+    .map((next) => ({ zone: `zone ${next}`, definition: `${before}${next}${after}` }));
+}
+
+/** Zones of one grid have codes that follow each other. */
+function neighbourCodes(system: CoordinateSystem): { zone: string; definition: string }[] {
+  const own = crsDefinition(system);
+  return [-1, 1].flatMap((step) => {
+    const code = Number(own.code.slice('EPSG:'.length)) + step;
+    try {
+      const next = crsDefinition(code);
+      const alike = next.kind === 'projected' && next.frame === own.frame;
+      return alike ? [{ zone: next.name, definition: next.code }] : [];
+    } catch {
+      // No such code: no neighbour on this side.
+      return [];
+    }
+  });
 }

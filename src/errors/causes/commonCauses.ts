@@ -1,5 +1,5 @@
-import type { Control } from '../../control/index.js';
-import { coordinatesOn } from '../../control/index.js';
+import { type Control, coordinatesOn } from '../../control/index.js';
+import { baselineBetween, type Geodetic, type LengthUnit } from '../../geodesy/index.js';
 import type { CoordinateSystem } from '../../logs/index.js';
 import type { OccupationError } from '../computeErrors.js';
 import type { FarOffPlace } from '../farOffPlaces.js';
@@ -32,15 +32,22 @@ export interface CommonCauses {
   readonly causes: readonly LikelyCause[];
 }
 
+/** How coordinates are read. */
+export interface ReadAs {
+  readonly system: CoordinateSystem;
+  readonly length: LengthUnit;
+  readonly height: LengthUnit;
+}
+
 export interface CauseInput {
   /** All errors, also those set aside for being far off. */
   readonly errors: readonly OccupationError[];
   readonly control: Control;
   /** Positions too far off to be averaged. */
   readonly farOff: readonly FarOffPlace[];
-  /** How logs and marks are written. */
-  readonly logSystems: readonly CoordinateSystem[];
-  readonly markSystem: CoordinateSystem;
+  /** How the coordinates of logs and marks are read. */
+  readonly logs: readonly ReadAs[];
+  readonly marks: ReadAs;
 }
 
 /**
@@ -49,7 +56,7 @@ export interface CauseInput {
  * of height, a rod, a base on an assumed coordinate.
  */
 export function commonCauses(input: CauseInput): CommonCauses {
-  const { errors, control, logSystems } = input;
+  const { errors, control, logs } = input;
   const vectors = markVectors(errors, control);
   const byBase = groupIndices(vectors.map(({ base }) => base));
   const bases = [...byBase.keys()].sort().map((base): BaseParameters => {
@@ -58,21 +65,56 @@ export function commonCauses(input: CauseInput): CommonCauses {
       base,
       marks: own.length,
       days: new Set(errors.filter((error) => error.base === base).map(({ day }) => day)).size,
-      parameters: commonParameters(own),
+      parameters: simplerParameters(own),
     };
   });
   const misread = rereadings(comparedPlaces(vectors, input), input);
   // What was misread has a shift and a scale of its own: these say nothing more.
-  const causes = misread.length > 0 ? misread : causesInVectors(bases, vectors, logSystems);
+  const causes = misread.length > 0 ? misread : causesInVectors(bases, vectors, logs);
   return { bases, causes };
+}
+
+/** From this common height error on it matters whether it is a shift in space or one along each mark's own vertical. */
+const TALL_MM = 300;
+
+/**
+ * A shift in space and heights of another kind differ in what they do to the plan: of the two the one is taken that needs
+ * less scale.
+ */
+function simplerParameters(vectors: readonly MarkVector[]): CommonParameter[] {
+  const inSpace = commonParameters(vectors);
+  const of = (list: readonly CommonParameter[], name: CommonParameter['name']): number =>
+    Math.abs(list.find((each) => each.name === name)?.estimate ?? 0);
+  if (of(inSpace, 'shift-up') < TALL_MM) return inSpace;
+  const alongVerticals = commonParameters(
+    vectors.map((vector) => ({ ...vector, east: vector.levelEast, north: vector.levelNorth })),
+  );
+  return of(alongVerticals, 'scale') < of(inSpace, 'scale') ? alongVerticals : inSpace;
 }
 
 /** Where marks are measured and where they should be, with positions that were too far off to be averaged. */
 function comparedPlaces(vectors: readonly MarkVector[], { control, farOff }: CauseInput): ComparedPlace[] {
   const far = farOff.flatMap(({ mark, day, place }): ComparedPlace[] => {
     const known = coordinatesOn(control.marks.get(mark)!, day)?.position;
-    return known === undefined || Number.isNaN(known.latitudeDeg) ? [] : [{ mark, known, measured: place }];
+    if (known === undefined || Number.isNaN(known.latitudeDeg)) return [];
+    return [{ mark, known, measured: place, base: nearestBase(control, known, place) }];
   });
   const near = vectors.filter(({ east, up }) => !Number.isNaN(east) || !Number.isNaN(up));
-  return [...near.map(({ mark, known, measured }) => ({ mark, known, measured })), ...far];
+  return [
+    ...near.map(({ mark, known, measured, base }) => ({
+      mark,
+      known,
+      measured,
+      base: control.bases.get(base)!.position,
+    })),
+    ...far,
+  ];
+}
+
+/** The base from which a position far from its mark was most likely taken: the one nearest to either. */
+function nearestBase(control: Control, known: Geodetic, measured: Geodetic): Geodetic {
+  const places = [...control.bases.values()].map(({ position }) => position);
+  const reach = (base: Geodetic): number =>
+    Math.min(baselineBetween(base, known).lengthKm, baselineBetween(base, measured).lengthKm);
+  return places.reduce((best, next) => (reach(next) < reach(best) ? next : best));
 }

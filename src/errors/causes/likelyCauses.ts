@@ -1,6 +1,6 @@
-import { type CoordinateSystem, quoted } from '../../logs/index.js';
+import { quoted } from '../../logs/index.js';
 import { assumedBasePpm } from '../assumedBase.js';
-import type { BaseParameters, LikelyCause } from './commonCauses.js';
+import type { BaseParameters, LikelyCause, ReadAs } from './commonCauses.js';
 import type { MarkVector } from './markVectors.js';
 import { type CommonParameter, isTold } from './similarity.js';
 import { siteFactors } from './siteFactor.js';
@@ -20,11 +20,11 @@ const SAME_SCALE_PPM = 1;
 export function causesInVectors(
   bases: readonly BaseParameters[],
   vectors: readonly MarkVector[],
-  systems: readonly CoordinateSystem[],
+  logs: readonly ReadAs[],
 ): LikelyCause[] {
   return bases.flatMap((base) => [
     ...shiftCauses(base, bases),
-    ...scaleCauses(base, vectors, systems),
+    ...scaleCauses(base, vectors, logs),
     ...turnCauses(base),
   ]);
 }
@@ -106,14 +106,14 @@ function upShift({ base }: BaseParameters, up: CommonParameter): LikelyCause {
 function scaleCauses(
   own: BaseParameters,
   vectors: readonly MarkVector[],
-  systems: readonly CoordinateSystem[],
+  logs: readonly ReadAs[],
 ): LikelyCause[] {
   const scale = parameter(own, 'scale');
   if (scale === null || !isTold(scale) || Math.abs(scale.estimate) < SCALE_PPM) return [];
   const found = `Positions from base ${quoted(own.base)} are stretched by ${withError(scale, 2)} ppm along the baselines, on all days alike`;
   const near = vectors.find(({ base }) => base === own.base)!;
   const within = Math.max(SAME_SCALE_PPM, 3 * scale.standardError!);
-  const factor = [...new Set(systems)]
+  const factor = [...new Set(logs.map(({ system }) => system))]
     .flatMap((system) => siteFactors(system, near.known))
     .filter(({ ppm }) => Math.abs(ppm) > 2 * within && Math.abs(ppm - scale.estimate) < within)
     .sort((a, b) => Math.abs(a.ppm - scale.estimate) - Math.abs(b.ppm - scale.estimate))[0];

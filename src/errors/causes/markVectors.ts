@@ -21,6 +21,9 @@ export interface MarkVector {
   readonly east: number;
   readonly north: number;
   readonly up: number;
+  /** The plan alone, as if the heights agreed: another kind of height leans it outward, since verticals part. */
+  readonly levelEast: number;
+  readonly levelNorth: number;
   /** Standard errors of one axis of the plan and of the height, from the scatter of days; NaN on fewer than 3 days. */
   readonly planSe: number;
   readonly upSe: number;
@@ -69,15 +72,20 @@ function markVector(errors: readonly OccupationError[], control: Control): MarkV
     longitudeDeg: planKnown ? markAt.longitudeDeg : base.longitudeDeg,
     heightM: Number.isNaN(markAt.heightM) ? base.heightM : markAt.heightM,
   };
-  const here = localFrame(known);
   const there = localFrame(base);
   const offset = {
     eastM: (east.value || 0) / 1000,
     northM: (north.value || 0) / 1000,
     upM: (up.value || 0) / 1000,
   };
-  const [from, to] = [geodeticToGeocentric(known), here.toGeocentric(offset)];
-  const turned = there.rotate({ xM: to.xM - from.xM, yM: to.yM - from.yM, zM: to.zM - from.zM });
+  const from = geodeticToGeocentric(known);
+  const measured = placeOf(known, offset);
+  const turnedTo = (to: Geodetic): LocalVector => {
+    const { xM, yM, zM } = geodeticToGeocentric(to);
+    return there.rotate({ xM: xM - from.xM, yM: yM - from.yM, zM: zM - from.zM });
+  };
+  const turned = turnedTo(measured);
+  const level = turnedTo({ ...measured, heightM: known.heightM });
   const place: LocalVector = there.toLocal(from);
   const orNan = (value: number, has: boolean): number => (has ? value : Number.NaN);
   return {
@@ -88,13 +96,31 @@ function markVector(errors: readonly OccupationError[], control: Control): MarkV
     east: orNan(turned.eastM * 1000, planKnown),
     north: orNan(turned.northM * 1000, planKnown),
     up: orNan(turned.upM * 1000, !Number.isNaN(up.value)),
+    levelEast: orNan(level.eastM * 1000, planKnown),
+    levelNorth: orNan(level.northM * 1000, planKnown),
     planSe: Math.sqrt((east.se ** 2 + north.se ** 2) / 2),
     upSe: up.se,
     days: new Set(errors.map(({ day }) => day)).size,
     occupations: errors.length,
     known,
-    measured: geocentricToGeodetic(to),
+    measured,
   };
+}
+
+/**
+ * The place to which an error leads: east and north in the horizon of the mark, and a difference of heights, which far
+ * away is another thing than the way up in that horizon.
+ */
+function placeOf(known: Geodetic, { eastM, northM, upM }: LocalVector): Geodetic {
+  const frame = localFrame(known);
+  let vertical = upM;
+  let place = geocentricToGeodetic(frame.toGeocentric({ eastM, northM, upM: vertical }));
+  // Each step leaves a small part of the rest: ten are enough for a thousand kilometres.
+  for (let k = 0; k < 10; k++) {
+    vertical += known.heightM + upM - place.heightM;
+    place = geocentricToGeodetic(frame.toGeocentric({ eastM, northM, upM: vertical }));
+  }
+  return place;
 }
 
 function typical(

@@ -1,14 +1,14 @@
 import { type Geodetic, geodeticToGeocentric } from '../../geodesy/index.js';
-import type { CoordinateSystem } from '../../logs/index.js';
 import { median } from '../../stats/index.js';
 import { type Candidate, heightCandidates, planCandidates } from './candidates.js';
-import type { LikelyCause } from './commonCauses.js';
+import type { LikelyCause, ReadAs } from './commonCauses.js';
 
 /** Where a mark was measured and where it should be. */
 export interface ComparedPlace {
   readonly mark: string;
   readonly known: Geodetic;
   readonly measured: Geodetic;
+  readonly base: Geodetic;
 }
 
 /** Only misfits above these are worth another reading, m. */
@@ -19,6 +19,8 @@ const LEFT_OVER = 0.1;
 /** … and no more than this, m, or than this share: far smaller than any misreading by chance. */
 const SMALL_M = 0.5;
 const SMALL_SHARE = 1e-3;
+/** Readings that leave up to so many times the least agree alike. */
+const ALIKE = 3;
 
 /**
  * Ways of reading the coordinates of logs or marks under which they agree far better: swapped axes, another unit or
@@ -26,16 +28,16 @@ const SMALL_SHARE = 1e-3;
  */
 export function rereadings(
   places: readonly ComparedPlace[],
-  systems: { readonly logSystems: readonly CoordinateSystem[]; readonly markSystem: CoordinateSystem },
+  read: { readonly logs: readonly ReadAs[]; readonly marks: ReadAs },
 ): LikelyCause[] {
   const plan = places.filter(({ known }) => !Number.isNaN(known.latitudeDeg));
   const heights = places.filter(({ known }) => !Number.isNaN(known.heightM));
-  const logs = [...new Set(systems.logSystems)];
-  const inPlan = [
-    ...logs.flatMap((system) => tried('logs', planCandidates(system))),
-    ...tried('marks', planCandidates(systems.markSystem)),
+  const logs = [...new Map(read.logs.map((one) => [JSON.stringify(one), one])).values()];
+  const candidates = (of: (as: ReadAs) => Candidate[]): Trial[] => [
+    ...logs.flatMap((as) => tried('logs', of(as))),
+    ...tried('marks', of(read.marks)),
   ];
-  const inHeight = [...tried('logs', heightCandidates()), ...tried('marks', heightCandidates())];
+  const [inPlan, inHeight] = [candidates(planCandidates), candidates(heightCandidates)];
   return [
     ...best(plan, inPlan, planDistanceM, PLAN_M, 'in plan'),
     ...best(heights, inHeight, heightDistanceM, HEIGHT_M, 'in height'),
@@ -62,10 +64,14 @@ function best(
   if (places.length === 0) return [];
   const before = median(places.map(({ known, measured }) => distance(known, measured)));
   if (!(before > worthM)) return [];
-  const found = trials
+  const good = trials
     .map((trial) => ({ ...trial, after: misfit(places, trial, distance) }))
-    .filter(({ after }) => after < LEFT_OVER * before && (after < SMALL_M || after < SMALL_SHARE * before))
-    .sort((a, b) => a.after - b.after)[0];
+    .filter(({ after }) => after < LEFT_OVER * before && (after < SMALL_M || after < SMALL_SHARE * before));
+  const least = Math.min(...good.map(({ after }) => after));
+  // Logs or marks, read the other way, may agree alike: what is far from the base is what was misread.
+  const found = good
+    .filter(({ after }) => after < ALIKE * least)
+    .sort((a, b) => fromBaseM(places, b.whose) - fromBaseM(places, a.whose) || a.after - b.after)[0];
   if (found === undefined) return [];
   const { whose, candidate, after } = found;
   return [
@@ -79,6 +85,10 @@ function best(
     },
   ];
 }
+
+/** Median distance of the logs' or the marks' places from the base as they stand. */
+const fromBaseM = (places: readonly ComparedPlace[], whose: Trial['whose']): number =>
+  median(places.map(({ known, measured, base }) => planDistanceM(base, whose === 'logs' ? measured : known)));
 
 /** Median distance after another reading; infinite where most places cannot be read so. */
 function misfit(places: readonly ComparedPlace[], { whose, candidate }: Trial, distance: Distance): number {

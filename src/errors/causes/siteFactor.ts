@@ -1,5 +1,5 @@
-import { combinedFactor, type Geodetic, projection } from '../../geodesy/index.js';
-import type { CoordinateSystem } from '../../logs/index.js';
+import { combinedFactor, type Geodetic } from '../../geodesy/index.js';
+import { type CoordinateSystem, systemOf } from '../../logs/index.js';
 
 /** A factor of the site's grid by which lengths may be wrong, ppm, and what it is. */
 export interface SiteFactor {
@@ -12,8 +12,9 @@ export interface SiteFactor {
  * ways; none for systems without a grid.
  */
 export function siteFactors(system: CoordinateSystem, place: Geodetic): SiteFactor[] {
-  if (system === 'geographic' || system === 'geocentric') return [];
-  const { combinedFactor: combined, pointScale, heightFactor } = combinedFactor(projection(system), place);
+  const known = systemOf(system);
+  if (known.kind !== 'projected') return [];
+  const { combinedFactor: combined, pointScale, heightFactor } = combinedFactor(known.projection, place);
   const factors = [
     [combined, 'the combined factor'],
     [pointScale, 'the point scale'],

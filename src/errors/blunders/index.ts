@@ -1,0 +1,1 @@
+export { type BlunderCause, type Blunders, suspectBlunders } from './suspectBlunders.js';
