@@ -25,8 +25,11 @@ export function markResiduals(errors: readonly OccupationError[]): Residuals {
     const days = groupIndices(indices.map((i) => errors[i]!.day));
     if (days.size < FEWEST_DAYS) continue;
     for (const values of [east, north, up]) {
-      const middles = [...days.values()].map((list) => median(list.map((k) => values[indices[k]!]!)));
-      const middle = middles.some(Number.isNaN) ? Number.NaN : median(middles);
+      // What is not known of a mark is not known on any day.
+      if (indices.some((i) => Number.isNaN(values[i]!))) continue;
+      const middle = median(
+        [...days.values()].map((list) => median(list.map((k) => values[indices[k]!]!))),
+      );
       for (const i of indices) values[i]! -= middle;
     }
   }

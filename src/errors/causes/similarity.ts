@@ -123,7 +123,7 @@ function solved(columns: readonly Float64Array[], y: Float64Array, se: Float64Ar
     known.length === 0 ? 0 : Math.sqrt(known.reduce((sum, value) => sum + value ** 2, 0) / known.length);
   const variance = se.map((value) => (value > 0 ? value : usual) ** 2);
   const fitWith = (own: number) => {
-    const weights = variance.map((value) => 1 / (value + own || 1));
+    const weights = variance.map((value) => (value + own > 0 ? 1 / (value + own) : 1));
     return { weights, ...leastSquares(columns, y, weights) };
   };
   try {
@@ -152,8 +152,9 @@ function ownVariance(
   y: Float64Array,
 ): number {
   const excess = (own: number): number => fitWith(own).residualSumOfSquares - degreesOfFreedom;
-  let [low, high] = [0, y.reduce((sum, value) => sum + value ** 2, 0) || 1];
-  if (excess(Number.MIN_VALUE) <= 0) return 0;
+  const squares = y.reduce((sum, value) => sum + value ** 2, 0) || 1;
+  let [low, high] = [1e-9 * squares, squares];
+  if (excess(low) <= 0) return 0;
   for (let k = 0; k < 100; k++) {
     const middle = (low + high) / 2;
     if (excess(middle) > 0) low = middle;
