@@ -75,20 +75,23 @@ function withoutNote(
 ): Message {
   const [from, to] = [starts[0]!, starts.at(-1)! + lengthMs];
   const outside = startMs.filter((ms) => ms < from || ms >= to);
-  const span = `${dayWords(from)} to ${dayWords(to - 1)}`;
   const lost = [...startMs.keys()].filter((i) => Number.isNaN(values[i]!)).map((i) => startMs[i]!);
-  const known = lost.filter(Number.isFinite);
-  const which =
-    known.length === 0
-      ? 'that have no time'
-      : `from ${dayWords(known.reduce((a, b) => Math.min(a, b)))} to ${dayWords(known.reduce((a, b) => Math.max(a, b)))}`;
   const all = without === startMs.length;
-  const found = `${all ? 'None' : startMs.length - without} of ${counted(startMs.length, 'occupation')}`;
   return message(
     'warning',
     all && outside.length > 0 ? 'index-other-period' : 'index-no-value',
-    `Expected ${INDEX_WORDS[name]} for every occupation, came a file from ${span}: ${found} found a value, not the ${without} ${which}. ${remedy(outside, from, to)}`,
+    `Expected ${INDEX_WORDS[name]} for ${counted(startMs.length, 'occupation')}, came values of ${periodWords(from, to - 1)}: ${all ? 'none' : without} of the occupations ${all ? 'has a value' : without === 1 ? 'has none' : 'have none'} (${lostWords(lost)}). ${remedy(outside, from, to)}`,
   );
+}
+
+const periodWords = (fromMs: number, toMs: number): string =>
+  dayWords(fromMs) === dayWords(toMs) ? dayWords(fromMs) : `${dayWords(fromMs)} to ${dayWords(toMs)}`;
+
+function lostWords(lostMs: readonly number[]): string {
+  const known = lostMs.filter(Number.isFinite);
+  if (known.length === 0) return 'without a time';
+  const [from, to] = [known.reduce((a, b) => Math.min(a, b)), known.reduce((a, b) => Math.max(a, b))];
+  return periodWords(from, to);
 }
 
 function remedy(outside: Float64Array, from: number, to: number): string {
