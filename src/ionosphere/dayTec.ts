@@ -1,10 +1,11 @@
+import type { Geographic } from '../geodesy/index.js';
 import type { Message } from '../logs/index.js';
 import { sum } from '../stats/index.js';
 import { solarHour } from '../time/index.js';
 import type { DaySpan } from './daySpan.js';
 import { delayPerTecuM, L1_HZ } from './delays.js';
 import { outsideMapsNote } from './ionex/joinMaps.js';
-import { type Place, type TimeScheme, tecAt } from './ionex/tecAt.js';
+import { type TimeScheme, tecAt } from './ionex/tecAt.js';
 import { steepestGradient, tecGradientAt } from './ionex/tecGradient.js';
 import type { TecMaps } from './ionex/tecMaps.js';
 import { type KlobucharCoefficients, klobucharVerticalM } from './klobuchar.js';
@@ -53,7 +54,7 @@ const DAY_MS = 86_400_000;
  */
 export function dayTec(
   maps: TecMaps,
-  site: Place,
+  site: Geographic,
   days: readonly DaySpan[],
   options: DayTecOptions = {},
 ): DaysTec {
@@ -113,7 +114,7 @@ function daytimes(
   return times;
 }
 
-const climateTecu = (ms: number, site: Place, coefficients: KlobucharCoefficients): number =>
+const climateTecu = (ms: number, site: Geographic, coefficients: KlobucharCoefficients): number =>
   klobucharVerticalM(site.latitudeDeg, site.longitudeDeg, (ms % DAY_MS) / 1000, coefficients) /
   delayPerTecuM(L1_HZ);
 

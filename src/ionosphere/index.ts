@@ -34,7 +34,7 @@ export { type IndexReading, readIndices } from './indices/readIndices.js';
 export { type JoinedMaps, joinMaps, outsideMapsNote } from './ionex/joinMaps.js';
 export { valueAt } from './ionex/mapGrid.js';
 export { readTecMaps, type TecMapsReading } from './ionex/readTecMaps.js';
-export { type Place, TIME_SCHEMES, type TimeScheme, tecAt, tecRmsAt } from './ionex/tecAt.js';
+export { TIME_SCHEMES, type TimeScheme, tecAt, tecRmsAt } from './ionex/tecAt.js';
 export { gradientAlong, steepestGradient, type TecGradient, tecGradientAt } from './ionex/tecGradient.js';
 export type { TecMaps } from './ionex/tecMaps.js';
 export {

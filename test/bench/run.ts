@@ -5,9 +5,16 @@
 import { benchDemo } from './demo.js';
 import { benchFit } from './fit.js';
 import { benchFuzz } from './fuzz.js';
+import { benchIonosphere } from './ionosphere.js';
 import { benchRead } from './read.js';
 
-const PARTS = { demo: benchDemo, read: benchRead, fit: benchFit, fuzz: benchFuzz };
+const PARTS = {
+  demo: benchDemo,
+  read: benchRead,
+  fit: benchFit,
+  fuzz: benchFuzz,
+  ionosphere: benchIonosphere,
+};
 
 const wanted = process.argv.slice(2);
 for (const [name, part] of Object.entries(PARTS)) {

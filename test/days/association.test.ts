@@ -57,7 +57,7 @@ describe('rankAssociation', () => {
     expect(rankAssociation(ten, ten, { random: random(), blockDays: 1 }).pValue).toBe(1 / 10_000);
   });
 
-  it.each(R.exact)("with blocks of one day has R's exact p-value $pValue", ({ order, spearman, pValue }) => {
+  it.each(R.exact)("with blocks of one day has R's p-value $pValue", ({ order, spearman, pValue }) => {
     const ten = [1, 2, 3, 4, 5, 6, 7, 8, 9, 10];
     const found = rankAssociation(ten, order, { random: random(), blockDays: 1 });
     expect(found.spearman).toBeCloseTo(spearman, 11);

@@ -94,6 +94,15 @@ describe('the daily file', () => {
     );
   });
 
+  it('takes rows of nines for missing too', () => {
+    const row = dailyRows[0]!.replace('178.5', '999.9').replace(/ 4 {2}-1/, '999  -1');
+    const { indices, rowsUsed } = readIndices(`${row}\n${dailyRows[1]}`, 'daily.txt');
+    expect(rowsUsed).toBe(2);
+    expect(indexAt(indices, 'f107Observed', utc('2024-01-21T12:00Z'))).toBeNaN();
+    expect(indexAt(indices, 'apDaily', utc('2024-01-21T12:00Z'))).toBeNaN();
+    expect(indexAt(indices, 'f107Adjusted', utc('2024-01-21T12:00Z'))).toBe(172.9);
+  });
+
   it('gives the great storms their values (GFZ Potsdam)', () => {
     const { indices, messages } = readIndices(STORM_DAYS.map(dailyRow).join('\n'), 'storms.txt');
     expect(indexAt(indices, 'apDaily', utc('2024-05-11T12:00Z'))).toBe(271);

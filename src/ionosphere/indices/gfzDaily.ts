@@ -1,12 +1,9 @@
 import { cellsOf, datedNumbers, isFault } from './gfzFields.js';
 import { type IndexLayout, unreadable } from './indexLine.js';
 import { INDEX_LENGTH_MS } from './indexSeries.js';
-import { apDailyDoubt, kpDoubt, kpFault } from './kpValues.js';
+import { apDailyDoubt, knownValue, kpDoubt, kpFault } from './kpValues.js';
 
 const FIELDS = 28;
-
-/** Negative numbers and rows of nines mark what is missing. */
-const known = (value: number): number => (value < 0 || value === 999 || value === 999.9 ? Number.NaN : value);
 
 /**
  * The daily file of GFZ Potsdam (`Kp_ap_Ap_SN_F107_…`, Matzka et al. 2021): YYYY MM DD days days_m Bsr dB Kp1…Kp8
@@ -22,13 +19,13 @@ export const gfzDaily: IndexLayout = {
     const { dayMs, numbers } = read;
     const flag = numbers[27]!;
     if (![0, 1, 2].includes(flag)) return unreadable(`expected 0, 1 or 2 as D, came ${flag}`);
-    const kp = numbers.slice(7, 15).map(known);
-    const ap = numbers.slice(15, 23).map(known);
+    const kp = numbers.slice(7, 15).map(knownValue);
+    const ap = numbers.slice(15, 23).map(knownValue);
     for (let k = 0; k < 8; k++) {
       const fault = kpFault(kp[k]!, ap[k]!);
       if (fault !== null) return fault;
     }
-    const apDaily = known(numbers[23]!);
+    const apDaily = knownValue(numbers[23]!);
     const doubts = [...kp.map((value, k) => kpDoubt(value, ap[k]!)), apDailyDoubt(ap, apDaily)];
     for (const text of doubts) if (text !== null) doubt(text);
     const kpStatus = flag === 0 ? 'preliminary' : 'definitive';
@@ -38,9 +35,9 @@ export const gfzDaily: IndexLayout = {
       add('ap', startMs, ap[k]!, kpStatus);
     }
     add('apDaily', dayMs, apDaily, kpStatus);
-    add('sunspotNumber', dayMs, known(numbers[24]!), flag === 2 ? 'definitive' : 'preliminary');
-    add('f107Observed', dayMs, known(numbers[25]!), 'not-stated');
-    add('f107Adjusted', dayMs, known(numbers[26]!), 'not-stated');
+    add('sunspotNumber', dayMs, knownValue(numbers[24]!), flag === 2 ? 'definitive' : 'preliminary');
+    add('f107Observed', dayMs, knownValue(numbers[25]!), 'not-stated');
+    add('f107Adjusted', dayMs, knownValue(numbers[26]!), 'not-stated');
     return null;
   },
 };

@@ -19,11 +19,11 @@ export interface DatedNumbers {
 export function datedNumbers(line: string, count: number, dayCountAt: number): DatedNumbers | LineFault {
   const cells = cellsOf(line);
   if (cells.length !== count) return unreadable(`expected ${count} numbers in the row, came ${cells.length}`);
-  const numbers: number[] = [];
-  for (const cell of cells) {
-    const value = numberIn(cell);
-    if (value === null) return unreadable(`expected a number, came ${JSON.stringify(cell.slice(0, 20))}`);
-    numbers.push(value);
+  const numbers = cells.map(Number);
+  // without another character, what Number() refuses is all that can be wrong
+  if (/[^\d\s.+-]/.test(line) || numbers.some(Number.isNaN)) {
+    const cell = cells.find((one) => numberIn(one) === null);
+    return unreadable(`expected a number, came ${JSON.stringify(cell?.slice(0, 20))}`);
   }
   const date = cells.slice(0, 3).join('-');
   const dayMs = dateMs(numbers[0]!, numbers[1]!, numbers[2]!);

@@ -1,7 +1,7 @@
 import { cellsOf, datedNumbers, isFault } from './gfzFields.js';
 import { type IndexLayout, unreadable } from './indexLine.js';
 import { INDEX_LENGTH_MS, type IndexName } from './indexSeries.js';
-import { kpDoubt, kpFault } from './kpValues.js';
+import { knownValue, kpDoubt, kpFault } from './kpValues.js';
 
 const FIELDS = 10;
 const HOUR_MS = 3_600_000;
@@ -14,6 +14,10 @@ const PAIRS: readonly { readonly index: IndexName; readonly amplitude: IndexName
     { index: 'hp60', amplitude: 'ap60', words: 'the hourly file of Hp60 and ap60' },
   ];
 
+/** Whether start and middle, in hours, are those of an interval of this index. */
+const holds = (index: IndexName, startHour: number, middleHour: number): boolean =>
+  Math.abs(2 * (middleHour - startHour) * HOUR_MS - INDEX_LENGTH_MS[index]) < 1000;
+
 /**
  * The files of GFZ Potsdam with one interval a row (`Kp_ap_…`, `Hp30_ap30_…`, `Hp60_ap60_…`): YYYY MM DD hh.h hh._m
  * days days_m index amplitude D (Matzka et al. 2021; Yamazaki et al. 2022). hh.h is the start and hh._m the middle, so
@@ -24,24 +28,26 @@ export const gfzIntervals: readonly IndexLayout[] = PAIRS.map(({ index, amplitud
   words,
   matches: (line) => {
     const cells = cellsOf(line);
-    const length = 2 * (Number(cells[4]) - Number(cells[3]));
     return (
-      cells.length === FIELDS &&
-      /^\d{4}$/.test(cells[0]!) &&
-      Math.abs(length * HOUR_MS - INDEX_LENGTH_MS[index]) < 1000
+      cells.length === FIELDS && /^\d{4}$/.test(cells[0]!) && holds(index, Number(cells[3]), Number(cells[4]))
     );
   },
   read: (line, add, doubt) => {
     const read = datedNumbers(line, FIELDS, 5);
     if (isFault(read)) return read;
     const { dayMs, numbers } = read;
+    if (!holds(index, numbers[3]!, numbers[4]!))
+      return unreadable(
+        `expected the middle of an interval of ${words.slice(4)}, came ${numbers[4]} after ${numbers[3]}`,
+      );
     const startMs = Math.round(dayMs + numbers[3]! * HOUR_MS);
     const steps = (startMs - dayMs) / INDEX_LENGTH_MS[index];
     if (!Number.isInteger(steps) || steps < 0 || numbers[3]! >= 24)
       return unreadable(
         `expected the hour at which an interval of ${words.slice(4)} begins, came ${numbers[3]}`,
       );
-    const [value, size] = [numbers[7]!, numbers[8]!].map((v) => (v < 0 ? Number.NaN : v)) as [number, number];
+    const known = index === 'kp' ? knownValue : (v: number): number => (v < 0 ? Number.NaN : v);
+    const [value, size] = [known(numbers[7]!), known(numbers[8]!)];
     const flag = numbers[9]!;
     if (index === 'kp') {
       const fault = kpFault(value, size);

@@ -1,6 +1,10 @@
 import { apOfKp, kpWords } from '../kp.js';
 import { type LineFault, unreadable } from './indexLine.js';
 
+/** NaN for the marks of missing values: negative numbers and rows of nines, which no index but Hp reaches. */
+export const knownValue = (value: number): number =>
+  value < 0 || value === 999 || value === 999.9 ? Number.NaN : value;
+
 /** Holds Kp and ap of one interval to their table; NaN is a missing value. */
 export function kpFault(kp: number, ap: number): LineFault | null {
   if (!Number.isNaN(kp) && kpWords(kp) === null)

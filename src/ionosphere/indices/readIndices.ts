@@ -42,18 +42,18 @@ export function readIndices(text: string, file: string): IndexReading {
   let rowsUsed = 0;
   for (const i of rows) {
     const line = lines[i]!;
-    const other = layout.matches(line) ? undefined : LAYOUTS.find((one) => one.matches(line));
-    if (other !== undefined) {
-      notes.add('index-layouts-mixed', i + 1, `expected ${layout.words}, came a row of ${other.words}`);
-      continue;
-    }
     const fault = layout.read(
       line,
       (name, startMs, value, status) => builder.add(name, startMs, value, status),
       (detail) => notes.add('index-inconsistent', i + 1, detail),
     );
-    if (fault === null) rowsUsed += 1;
-    else notes.add(fault.code, i + 1, fault.detail);
+    if (fault === null) {
+      rowsUsed += 1;
+      continue;
+    }
+    const other = layout.matches(line) ? undefined : LAYOUTS.find((one) => one.matches(line));
+    if (other === undefined) notes.add(fault.code, i + 1, fault.detail);
+    else notes.add('index-layouts-mixed', i + 1, `expected ${layout.words}, came a row of ${other.words}`);
   }
   const built = builder.build();
   return {
@@ -97,13 +97,19 @@ function notRecognised(first: string | undefined, rowsRead: number, file: string
   };
 }
 
-const REMEDIES = {
-  'index-row-unreadable': 'Get the file again, or complete the row.',
-  'index-date-mismatch': 'Its day is in doubt: get the file again.',
-  'index-layouts-mixed': 'Give each file by itself.',
-  'index-inconsistent': 'The values are used as they stand: compare the row with the published file.',
+const LEFT_OUT = ['is left out', 'are left out'] as const;
+
+/** What is said of one row and of several, and what to do. */
+const ROW_WORDS = {
+  'index-row-unreadable': { is: LEFT_OUT, remedy: 'Get the file again, or complete the row.' },
+  'index-date-mismatch': { is: LEFT_OUT, remedy: 'Its day is in doubt: get the file again.' },
+  'index-layouts-mixed': { is: LEFT_OUT, remedy: 'Give each file by itself.' },
+  'index-inconsistent': {
+    is: ['contradicts itself', 'contradict themselves'],
+    remedy: 'The values are used as they stand: compare the row with the published file.',
+  },
 } as const;
-type RowCode = keyof typeof REMEDIES;
+type RowCode = keyof typeof ROW_WORDS;
 
 /** One message for all rows with the same kind of finding, at the place of the first. */
 class RowNotes {
@@ -119,15 +125,9 @@ class RowNotes {
 
   messages(): Message[] {
     return [...this.#found].map(([code, { row, detail, rows }]) => {
-      const what = code === 'index-inconsistent' ? 'contradict themselves' : 'are left out';
-      const which =
-        rows.size === 1
-          ? `1 row ${what.replace('contradict themselves', 'contradicts itself').replace('are', 'is')}`
-          : `${counted(rows.size, 'row')} ${what}`;
-      return message('warning', code, `${which}, here: ${detail}. ${REMEDIES[code]}`, {
-        file: this.file,
-        row,
-      });
+      const { is, remedy } = ROW_WORDS[code];
+      const which = `${counted(rows.size, 'row')} ${is[rows.size === 1 ? 0 : 1]}`;
+      return message('warning', code, `${which}, here: ${detail}. ${remedy}`, { file: this.file, row });
     });
   }
 }

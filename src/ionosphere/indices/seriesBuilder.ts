@@ -59,8 +59,9 @@ export class SeriesBuilder {
 
 function seriesOf(name: IndexName, column: Column, conflicts: Conflict[]): IndexSeries {
   const { startMs, values, status } = column;
+  const order = startMs.map((_, i) => i);
   // sorting is stable: of equal starts the one added last comes last
-  const order = startMs.map((_, i) => i).sort((a, b) => startMs[a]! - startMs[b]!);
+  if (startMs.some((ms, i) => ms < startMs[i - 1]!)) order.sort((a, b) => startMs[a]! - startMs[b]!);
   const kept: number[] = [];
   for (const entry of order) {
     const before = kept.at(-1);

@@ -25,6 +25,8 @@ export const wdcDst: IndexLayout = {
   read: (line, add, doubt) => {
     if (line.length < NEEDED_COLUMNS)
       return unreadable(`expected ${COLUMNS} columns in the row, came ${line.length}`);
+    if (!line.startsWith('DST'))
+      return unreadable(`expected DST in columns 1 to 3, came ${JSON.stringify(line.slice(0, 3))}`);
     const date = `${line.slice(3, 7)} ${line.slice(8, 10)}`;
     const [yy, month, day] = [line.slice(3, 5), line.slice(5, 7), line.slice(8, 10)].map(numberIn);
     if (yy == null || month == null || day == null)

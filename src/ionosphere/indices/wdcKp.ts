@@ -1,7 +1,7 @@
 import { kpOfThirds } from '../kp.js';
 import { dateMismatch, dateMs, daysBetween, type IndexLayout, numberIn, unreadable } from './indexLine.js';
 import { INDEX_LENGTH_MS } from './indexSeries.js';
-import { apDailyDoubt, kpDoubt, kpFault } from './kpValues.js';
+import { apDailyDoubt, knownValue, kpDoubt, kpFault } from './kpValues.js';
 
 /** Through Ap; Cp and C9 behind it repeat what ap says. */
 const NEEDED_COLUMNS = 58;
@@ -33,7 +33,7 @@ export const wdcKp: IndexLayout = {
     for (let k = 0; k < 8; k++) {
       if (codes[k] !== 99 && !Number.isNaN(codes[k]) && Number.isNaN(kp[k]))
         return unreadable(`expected a Kp such as 27, 30 or 33, came ${codes[k]}`);
-      const fault = kpFault(kp[k]!, missingIfNines(ap[k]!));
+      const fault = kpFault(kp[k]!, knownValue(ap[k]!));
       if (fault !== null) return fault;
     }
     const sum = numberIn(line.slice(28, 31));
@@ -45,14 +45,12 @@ export const wdcKp: IndexLayout = {
       if (text !== null) doubt(text);
     for (let k = 0; k < 8; k++) {
       add('kp', day + k * INDEX_LENGTH_MS.kp, kp[k]!, 'not-stated');
-      add('ap', day + k * INDEX_LENGTH_MS.ap, missingIfNines(ap[k]!), 'not-stated');
+      add('ap', day + k * INDEX_LENGTH_MS.ap, knownValue(ap[k]!), 'not-stated');
     }
-    add('apDaily', day, missingIfNines(apDaily), 'not-stated');
+    add('apDaily', day, knownValue(apDaily), 'not-stated');
     return null;
   },
 };
-
-const missingIfNines = (value: number): number => (value === 999 ? Number.NaN : value);
 
 /** Eight numbers of equal width; NaN for blanks. */
 const fixed = (line: string, from: number, width: number): number[] =>

@@ -119,7 +119,8 @@ function readRow(cursor: LineCursor, values: Float64Array, at: number, width: nu
       if (digits === 0) throw badValue(cursor, k);
       if (value !== NONE) values[at + first + k] = (sign * value * factor) / divisor;
     }
-    if (cursor.columns(count * WIDTH, 80).trim() !== '') throw badValue(cursor, count);
+    if (cursor.end > cursor.start + count * WIDTH && cursor.columns(count * WIDTH, 80).trim() !== '')
+      throw badValue(cursor, count);
   }
 }
 

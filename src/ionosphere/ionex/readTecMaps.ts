@@ -30,19 +30,9 @@ export function readTecMaps(text: string, file: string): TecMapsReading {
   } catch (error) {
     if (!(error instanceof IonexFault)) throw error;
     const kept = blocks.filter(({ kind }) => kind === 'TEC').length;
-    const rest =
-      kept === 0 ? '' : ` The ${kept === 1 ? 'one map' : `${kept} maps`} of TEC before it are used.`;
-    messages.push(
-      message(
-        kept === 0 ? 'error' : 'warning',
-        error.code,
-        `${error.message}${rest.replace('map of TEC before it are', 'map of TEC before it is')}`,
-        {
-          file,
-          ...(error.line === null ? {} : { row: error.line }),
-        },
-      ),
-    );
+    const place = { file, ...(error.line === null ? {} : { row: error.line }) };
+    const text = [error.message, ...keptWords(kept)].join(' ');
+    messages.push(message(kept === 0 ? 'error' : 'warning', error.code, text, place));
   }
   if (header === null) return { maps: null, messages };
   const tec = lastOfEach(blocks, 'TEC');
@@ -80,6 +70,13 @@ export function readTecMaps(text: string, file: string): TecMapsReading {
     },
     messages,
   };
+}
+
+function keptWords(kept: number): string[] {
+  if (kept === 0) return [];
+  return [
+    kept === 1 ? 'The one map of TEC before it is used.' : `The ${kept} maps of TEC before it are used.`,
+  ];
 }
 
 /** Maps until END OF FILE. An exponent that a map states holds from there on. */

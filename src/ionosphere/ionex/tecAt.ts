@@ -1,3 +1,4 @@
+import type { Geographic } from '../../geodesy/index.js';
 import { valueAt } from './mapGrid.js';
 import type { TecMaps } from './tecMaps.js';
 
@@ -15,23 +16,27 @@ const LONGEST_STEP_MS = 4 * 3_600_000;
 /** The Sun's way: degrees of longitude a millisecond. */
 const DEGREES_PER_MS = 15 / 3_600_000;
 
-/** A place under the shell. */
-export interface Place {
-  readonly latitudeDeg: number;
-  readonly longitudeDeg: number;
-}
-
 /**
  * Vertical TEC at a place and time, TECU. NaN outside the grid, where the maps have no value, outside their time, and in
  * a gap of more than four hours; the nearest map serves half an interval beyond the first and the last.
  * @param scheme default `rotated`, the best of the four where TEC follows the Sun
  */
-export function tecAt(maps: TecMaps, utcMs: number, place: Place, scheme: TimeScheme = 'rotated'): number {
+export function tecAt(
+  maps: TecMaps,
+  utcMs: number,
+  place: Geographic,
+  scheme: TimeScheme = 'rotated',
+): number {
   return seriesAt(maps, maps.tec, utcMs, place, scheme);
 }
 
 /** Root-mean-square error of TEC at a place and time, TECU, as `tecAt`; NaN where a map has none. */
-export function tecRmsAt(maps: TecMaps, utcMs: number, place: Place, scheme: TimeScheme = 'rotated'): number {
+export function tecRmsAt(
+  maps: TecMaps,
+  utcMs: number,
+  place: Geographic,
+  scheme: TimeScheme = 'rotated',
+): number {
   return seriesAt(maps, maps.rms, utcMs, place, scheme);
 }
 
@@ -39,7 +44,7 @@ function seriesAt(
   maps: TecMaps,
   series: readonly (Float64Array | null)[],
   utcMs: number,
-  { latitudeDeg, longitudeDeg }: Place,
+  { latitudeDeg, longitudeDeg }: Geographic,
   scheme: TimeScheme,
 ): number {
   const isRotated = scheme === 'rotated' || scheme === 'nearest-rotated';

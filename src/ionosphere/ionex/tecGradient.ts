@@ -1,4 +1,5 @@
-import { type Place, type TimeScheme, tecAt } from './tecAt.js';
+import type { Geographic } from '../../geodesy/index.js';
+import { type TimeScheme, tecAt } from './tecAt.js';
 import type { TecMaps } from './tecMaps.js';
 
 /** Slope of vertical TEC at a site. A kilometre is one on the shell, so that it compares with pierce points. */
@@ -19,7 +20,7 @@ const RADIANS = Math.PI / 180;
 export function tecGradientAt(
   maps: TecMaps,
   utcMs: number,
-  { latitudeDeg, longitudeDeg }: Place,
+  { latitudeDeg, longitudeDeg }: Geographic,
   scheme: TimeScheme = 'rotated',
 ): TecGradient {
   const kmPerDegree = (maps.baseRadiusKm + maps.shellHeightKm) * RADIANS;
