@@ -69,8 +69,8 @@ describe('control text', () => {
       sky: 'open',
     };
     expect(marksText([mark], { horizontal: 1.5, vertical: 3 })).toBe(
-      'mark,latitude,longitude,height,horizontalSigmaMm,verticalSigmaMm,source,sky\n' +
-        'M01,44.300000000,-18.400000000,140.0000,1.5,3,static,open\n',
+      'mark,latitude,longitude,height,horizontalSigmaMm,verticalSigmaMm,sigmaLevel,source,sky\n' +
+        'M01,44.300000000,-18.400000000,140.0000,1.5,3,rms,static,open\n',
     );
     expect(basesText([{ name: 'B1', ...point, mounting: 'pillar', setupsPerDay: 1 }])).toBe(
       'base,latitude,longitude,height,mounting\nB1,44.300000000,-18.400000000,140.0000,pillar\n',

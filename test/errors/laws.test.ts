@@ -15,7 +15,7 @@ import {
 import type { Geodetic } from '../../src/geodesy/index.js';
 import { type Position, readLogs } from '../../src/logs/index.js';
 import { logFile, testFolder } from '../files.js';
-import { at, batches, control, MARKS } from './world.js';
+import { at, base, batches, control, MARKS, mark } from './world.js';
 
 const folder = testFolder();
 const SEED = 20250304;
@@ -68,8 +68,8 @@ describe('errors do not depend on where on its parallel the world lies', () => {
         longitudeDeg: place.longitudeDeg + turnDeg,
       });
       const there: Control = {
-        marks: new Map([...known.marks].map(([name, m]) => [name, { ...m, position: turned(m.position) }])),
-        bases: new Map([...known.bases].map(([name, b]) => [name, { ...b, position: turned(b.position) }])),
+        marks: new Map([...known.marks].map(([name, m]) => [name, mark(name, turned(m.position))])),
+        bases: new Map([...known.bases].map(([name, b]) => [name, base(name, turned(b.position))])),
       };
       const { occupations } = await formOccupations(batches(positions.map(turned)), there, UTC);
       return computeErrors(occupations, there).errors;

@@ -352,7 +352,7 @@ describe('computeErrors', () => {
     const { occupations } = await form([at(0)]);
     expect(() => computeErrors(occupations, control({ CP2: MARKS.CP2! }))).toThrow(
       new RangeError(
-        'Expected an occupation of a known mark from a known base, came mark "CP1" and base "B1". Use the control with which the occupations were formed.',
+        'Expected an occupation of a known mark from a known base, came mark "CP1" and base "B1" on 2025-03-04. Use the control with which the occupations were formed.',
       ),
     );
   });

@@ -137,8 +137,8 @@ describe('a value', () => {
     ],
     ['leaveOutDays: 2025-03-01', ':5 [leaveOutDays] Expected a list, came "2025-03-01". Correct it.'],
     [
-      'heights: {kind: orthometric}',
-      ':5 [heights.kind] Expected "ellipsoidal", came "orthometric". Correct it.',
+      'heights: {kind: geometric}',
+      ':5 [heights.kind] Expected "ellipsoidal" or "orthometric", came "geometric". Correct it.',
     ],
     ['model: {confidence: 95}', ':5 [model.confidence] Expected a number below 1, came 95. Correct it.'],
     ['model: {confidence: 0.5}', ':5 [model.confidence] Expected a number above 0.5, came 0.5. Correct it.'],

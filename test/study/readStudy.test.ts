@@ -36,8 +36,23 @@ describe('readStudy', () => {
       folder: folder.path,
       title: 'Check shots',
       timeZone: null,
-      marks: { path: join(folder.path, 'marks.csv'), file: 'marks.csv', coordinates: 'geographic' },
-      bases: { path: join(folder.path, 'bases.csv'), file: 'bases.csv', coordinates: 'geographic' },
+      heightKind: 'ellipsoidal',
+      marks: {
+        path: join(folder.path, 'marks.csv'),
+        file: 'marks.csv',
+        coordinates: 'geographic',
+        changes: {},
+      },
+      bases: {
+        path: join(folder.path, 'bases.csv'),
+        file: 'bases.csv',
+        coordinates: 'geographic',
+        changes: {},
+      },
+      siteMarks: [],
+      logFrames: [],
+      controlTransformed: false,
+      constantSeparation: false,
       namePattern: null,
       aliases: null,
       markTimes: new Map(),
@@ -49,6 +64,7 @@ describe('readStudy', () => {
           coordinates: 'geographic',
           nearestMarkM: null,
           marksByTime: false,
+          changes: {},
         },
       ],
       messages: [],
@@ -136,7 +152,7 @@ describe('mistakes of a study', () => {
     const unknown = (key: string, row: number) => [
       expect.stringMatching(
         new RegExp(
-          `^:${row} \\[${key}\\] error: Expected "geographic", "geocentric" or a proj string, came "`,
+          `^:${row} \\[${key}\\] error: Expected "geographic", "geocentric", an EPSG code or a proj string, came "`,
         ),
       ),
     ];
