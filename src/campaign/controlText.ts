@@ -7,15 +7,9 @@ export function marksText(
   stated: CampaignSettings['statedMarkSigmaMm'],
 ): string {
   const lines = marks.map((mark) =>
-    [
-      mark.name,
-      ...coordinates(mark),
-      stated.horizontal,
-      stated.vertical,
-      'rms',
-      mark.source,
-      mark.sky,
-    ].join(','),
+    [mark.name, ...coordinates(mark), stated.horizontal, stated.vertical, 'rms', mark.source, mark.sky].join(
+      ',',
+    ),
   );
   const header = 'mark,latitude,longitude,height,horizontalSigmaMm,verticalSigmaMm,sigmaLevel,source,sky';
   return `${[header, ...lines].join('\n')}\n`;

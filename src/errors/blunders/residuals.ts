@@ -27,9 +27,7 @@ export function markResiduals(errors: readonly OccupationError[]): Residuals {
     for (const values of [east, north, up]) {
       // What is not known of a mark is not known on any day.
       if (indices.some((i) => Number.isNaN(values[i]!))) continue;
-      const middle = median(
-        [...days.values()].map((list) => median(list.map((k) => values[indices[k]!]!))),
-      );
+      const middle = median([...days.values()].map((list) => median(list.map((k) => values[indices[k]!]!))));
       for (const i of indices) values[i]! -= middle;
     }
   }
