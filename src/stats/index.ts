@@ -16,6 +16,7 @@ export {
   RankDeficientError,
 } from './leastSquares.js';
 export { median, quantile } from './quantile.js';
+export { radialQuantile } from './radialQuantile.js';
 export { normalDeviates, type Random, randomStream, shuffle, uniformBetween } from './random.js';
 export { dot, sum } from './summation.js';
 export {
