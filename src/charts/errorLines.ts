@@ -1,5 +1,5 @@
 import { type ErrorModel, errorCurve } from '../fit/index.js';
-import { type SpecSheet, specSheetSigmaMm, toleranceFactor } from '../rule/index.js';
+import { type SpecSheet, specSheetSigmaMm, toleranceFactorAt } from '../rule/index.js';
 import { COLORS } from './theme.js';
 import { percentWords } from './words.js';
 
@@ -43,7 +43,6 @@ export function errorLines(
 ): ErrorLine[] {
   const lengths = curveLengthsKm(longestKm);
   const curve = errorCurve(model, lengths);
-  const factor = toleranceFactor(model.component, share);
   const lines: ErrorLine[] = [
     {
       points: curve.map(({ baselineKm, sigmaMm }) => ({ baselineKm, errorMm: sigmaMm })),
@@ -54,7 +53,10 @@ export function errorLines(
       bold: true,
     },
     {
-      points: curve.map(({ baselineKm, sigmaMm }) => ({ baselineKm, errorMm: factor * sigmaMm })),
+      points: curve.map(({ baselineKm, sigmaMm }) => ({
+        baselineKm,
+        errorMm: toleranceFactorAt(model, share, baselineKm) * sigmaMm,
+      })),
       label: [`${percentWords(share)} of positions,`, 'by the own model'],
       color: COLORS.water,
       widthPx: 1.6,

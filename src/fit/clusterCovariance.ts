@@ -6,14 +6,15 @@ import {
   type Symmetric2,
   type Vector2,
 } from '../stats/index.js';
-import type { SquaredErrors } from './estimate.js';
+import { FORM_CURVES, type Form } from './forms.js';
+import type { SquaredErrors } from './scoring.js';
 
 /** Which small-sample correction a cluster-robust covariance has. */
 export type CovarianceKind = 'CR0' | 'CR1' | 'CR2' | 'CR3';
 
-/** What a cluster-robust covariance of (A, B) is made of; everything on the scaled length x = l/scale. */
+/** What a cluster-robust covariance of the parameters (p, q) of a form is made of; x is divided by `scale`. */
 export interface ClusterTerms {
-  /** Mean squared length by which l was divided, km². */
+  /** Mean of x: squared length, km², or length, km. */
   readonly scale: number;
   /** Days in the order of the arrays below. */
   readonly days: readonly string[];
@@ -27,32 +28,36 @@ export interface ClusterTerms {
 }
 
 /**
- * Sums per day of information S_d = Σ w x x'/μ² and score g_d = Σ w x (y - μ)/μ² at (A, B).
+ * Sums per day of information S_d = Σ w x x' σ²'²/μ² and score g_d = Σ w x σ²' (y - μ)/μ² at (p, q), σ²' the slope of
+ * the form: 1 for root-sum-square, where (p, q) = (A, B), and 2σ for linear-sum.
  * Cluster-robust theory: Liang & Zeger 1986; MacKinnon & White 1985; Mancl & DeRouen 2001; Bell & McCaffrey 2002;
  * Pustejovsky & Tipton 2018 (from memory).
  */
 export function clusterTerms(
   { y, l, w }: SquaredErrors,
   days: readonly string[],
-  A: number,
-  B: number,
+  p: number,
+  q: number,
+  form: Form = 'root-sum-square',
 ): ClusterTerms {
-  const scale = l.reduce((sum, value) => sum + value, 0) / l.length;
+  const curve = FORM_CURVES[form];
+  const scale = l.reduce((sum, value) => sum + curve.regressor(value), 0) / l.length;
   const names = [...new Set(days)].sort();
   const index = new Map(names.map((name, d) => [name, d]));
   // Columns: S00, S01, S11, g0, g1.
   const sums = new Float64Array(names.length * 5);
   for (let i = 0; i < y.length; i++) {
-    const x = l[i]! / scale;
-    const mu = A + B * l[i]!;
-    const v = w[i]! / mu ** 2;
+    const x = curve.regressor(l[i]!);
+    const eta = p + q * x;
+    const [mu, slope] = [curve.variance(eta), curve.slope(eta)];
+    const v = w[i]! * (slope / mu) ** 2;
     const at = index.get(days[i]!)! * 5;
-    const score = v * (y[i]! - mu);
+    const score = (v * (y[i]! - mu)) / slope;
     sums[at]! += v;
-    sums[at + 1]! += v * x;
-    sums[at + 2]! += v * x * x;
+    sums[at + 1]! += v * (x / scale);
+    sums[at + 2]! += v * (x / scale) ** 2;
     sums[at + 3]! += score;
-    sums[at + 4]! += score * x;
+    sums[at + 4]! += score * (x / scale);
   }
   const column = (k: number): number => {
     let total = 0;
@@ -84,7 +89,7 @@ const leverage = (q: Symmetric2, power: number): Symmetric2 =>
 
 const POWER: Readonly<Record<CovarianceKind, number>> = { CR0: 0, CR1: 0, CR2: -0.5, CR3: -1 };
 
-/** Covariance of (A, B), in units of mm² and ppm². CR2 takes the symmetric root of the whitened problem. */
+/** Covariance of (p, q), in their units. CR2 takes the symmetric root of the whitened problem. */
 export function covariance(terms: ClusterTerms, kind: CovarianceKind): Symmetric2 {
   const sum: [number, number, number] = [0, 0, 0];
   terms.shares.forEach((share, d) => {
@@ -110,13 +115,13 @@ const unscale = (m: Symmetric2, scale: number, factor: number): Symmetric2 => [
   (factor * m[2]) / scale ** 2,
 ];
 
-/** Variance of c'(A, B). */
+/** Variance of c'(p, q). */
 export function contrastVariance(v: Symmetric2, [c0, c1]: Vector2): number {
   return c0 * c0 * v[0] + 2 * c0 * c1 * v[1] + c1 * c1 * v[2];
 }
 
 /**
- * Satterthwaite degrees of freedom of c'(A, B) under the working model (Bell & McCaffrey 2002; Pustejovsky & Tipton
+ * Satterthwaite degrees of freedom of c'(p, q) under the working model (Bell & McCaffrey 2002; Pustejovsky & Tipton
  * 2018; from memory), cut to [1, G - 1].
  */
 export function degreesOfFreedom(terms: ClusterTerms, [c0, c1]: Vector2): number {

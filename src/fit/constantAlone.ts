@@ -1,34 +1,43 @@
 import { type Message, message } from '../logs/index.js';
 import { clusteredMean } from '../split/index.js';
+import { meanAlone } from './axisFits.js';
 import type { ErrorModel } from './errorModel.js';
+import type { Form } from './forms.js';
 import { varianceLimits } from './intervals.js';
 import type { FitData } from './prepareErrors.js';
 
 const UNKNOWN = { estimate: null, low: null, high: null };
 
+/** The farthest shot must be this many times as far as the nearest for mm and ppm to be told apart. */
+const LEAST_LENGTH_RATIO = 3;
+
+/** @param l squared lengths */
+export function tooAlike(l: Float64Array, w?: Float64Array): boolean {
+  let [shortest, longest] = [Number.POSITIVE_INFINITY, 0];
+  for (let i = 0; i < l.length; i++) {
+    if (w !== undefined && !(w[i]! > 0)) continue;
+    shortest = Math.min(shortest, l[i]!);
+    longest = Math.max(longest, l[i]!);
+  }
+  return longest < LEAST_LENGTH_RATIO ** 2 * shortest;
+}
+
 /** One RMS for all lengths: what remains when the distances are too alike to separate mm and ppm. */
 export function constantAlone(
   data: FitData,
+  form: Form,
   confidence: number,
   withInterval: boolean,
 ): Pick<
   ErrorModel,
-  'variance' | 'informationNumber' | 'uncertainty' | 'constantMm' | 'ppm' | 'ppmIfIndependent' | 'interval'
+  'fitted' | 'informationNumber' | 'uncertainty' | 'constantMm' | 'ppm' | 'ppmIfIndependent' | 'interval'
 > {
-  const { mean, standardError, days } = clusteredMean(data.y, data.day);
+  const { mean, standardError, days } = clusteredMean(data.y, data.day, data.w);
   const limits = withInterval
     ? varianceLimits({ value: mean, standardError, degreesOfFreedom: days - 1 }, confidence)
     : null;
   return {
-    variance: {
-      A: mean,
-      B: 0,
-      displayA: mean,
-      displayB: 0,
-      constantAtFloor: false,
-      converged: true,
-      iterations: 0,
-    },
+    fitted: meanAlone(data.y, data.w, form),
     informationNumber: 0,
     uncertainty: null,
     constantMm: {

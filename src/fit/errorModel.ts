@@ -1,8 +1,8 @@
 import type { Message } from '../logs/index.js';
 import type { Symmetric2 } from '../stats/index.js';
 import type { ClusterTerms } from './clusterCovariance.js';
-import type { VarianceEstimate } from './estimate.js';
-import type { Component, Form } from './forms.js';
+import type { FormEstimate, VarianceEstimate } from './estimate.js';
+import type { BASIS, Component, FitComponent, Form } from './forms.js';
 
 /** An estimate with the limits of its interval; null is what the data cannot defend, and a note says why. */
 export interface EstimateWithLimits {
@@ -17,18 +17,25 @@ export type Reference = 'absolute';
 /** The uncertainty behind the intervals of a fit with a distance term; null in a model of the constant alone. */
 export interface ModelUncertainty {
   readonly terms: ClusterTerms;
-  /** CR3 covariance of (A, B). */
+  /** CR3 covariance of the parameters (p, q) of the form. */
   readonly covariance: Symmetric2;
 }
 
-/** The own error model of one component: σ² = a² + b² L². */
-export interface ErrorModel {
-  readonly component: Component;
+/** East and north fitted each by itself with the form and weights of the radial fit. */
+export interface AxisFits {
+  readonly east: FormEstimate;
+  readonly north: FormEstimate;
+}
+
+/** The own error model of one component: σ² = a² + b² L², or σ = a + b L. */
+export interface ErrorModel<C extends FitComponent = Component> {
+  readonly component: C;
   readonly reference: Reference;
   readonly form: Form;
+  /** Suspected wrong fixes count less, or not at all. */
   readonly screened: boolean;
-  /** What σ means: `radial RMS` √(mean(E² + N²)), or `vertical RMS`. */
-  readonly basis: 'radial RMS' | 'vertical RMS';
+  /** What σ means: `radial RMS` √(mean(E² + N²)), or the RMS of one axis. */
+  readonly basis: (typeof BASIS)[C];
   readonly confidence: number;
   /** a with its interval, mm. */
   readonly constantMm: EstimateWithLimits;
@@ -38,8 +45,12 @@ export interface ErrorModel {
   readonly ppmIfIndependent: EstimateWithLimits;
   /** Name of the method behind the interval of the ppm. */
   readonly interval: string;
-  /** Unconstrained and displayed A = a² (mm²) and B = b² (ppm²). */
-  readonly variance: VarianceEstimate;
+  /** The parameters of the form, unconstrained and as displayed; σ at a length is `sigmaAtMm`. */
+  readonly fitted: FormEstimate;
+  /** A = a² (mm²) and B = b² (ppm²); null in the linear-sum form, whose σ² is no A + B L². */
+  readonly variance: VarianceEstimate | null;
+  /** Of the horizontal component; null for the others, and where one of the axes could not be fitted. */
+  readonly axes: AxisFits | null;
   readonly uncertainty: ModelUncertainty | null;
   /** About the number of shots that speak of distance, see informationNumber. */
   readonly informationNumber: number;

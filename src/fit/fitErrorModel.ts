@@ -1,58 +1,54 @@
 import type { ErrorsInput } from '../errors/index.js';
 import { type Message, message } from '../logs/index.js';
+import { axisFits } from './axisFits.js';
 import { clusterTerms, covariance } from './clusterCovariance.js';
-import { constantAlone, tooAlikeNote } from './constantAlone.js';
+import { constantAlone, tooAlike, tooAlikeNote } from './constantAlone.js';
 import type { ErrorModel } from './errorModel.js';
-import { estimateVariance } from './estimate.js';
+import { asVariance, estimateForm } from './estimate.js';
+import { BASIS, type FitComponent, FORM_CURVES, type Form } from './forms.js';
 import { informationNumber } from './information.js';
 import { constantNote, modelLimits, tellsPpm } from './modelLimits.js';
 import { axisNote, dataNotes } from './notes.js';
 import { type FitOptions, resolveFitOptions } from './options.js';
 import { type FitData, prepareErrors } from './prepareErrors.js';
+import { screenWrongFixes } from './screening/screenWrongFixes.js';
 
 /** From 4 days on there is an interval at all. */
 const FEWEST_DAYS = 4;
-/** The farthest shot must be this many times as far as the nearest for mm and ppm to be told apart. */
-const LEAST_LENGTH_RATIO = 3;
-
-/** @param l squared lengths */
-export function tooAlike(l: Float64Array): boolean {
-  const shortest = l.reduce((a, b) => Math.min(a, b));
-  const longest = l.reduce((a, b) => Math.max(a, b));
-  return longest < LEAST_LENGTH_RATIO ** 2 * shortest;
-}
-
 /**
- * Fits σ² = a² + b² L² to the errors of occupations and gives a and b with intervals that count days, not shots.
+ * Fits σ² = a² + b² L² (or σ = a + b L, form `linear-sum`) to the errors of occupations and gives a and b with intervals
+ * that count days, not shots.
  *
- * Point estimate: gamma quasi-likelihood with identity link ({@link estimateVariance}). Intervals: cluster-robust
- * covariance CR3 by day with Satterthwaite degrees of freedom, on the log scale beyond two standard errors; for data
- * with little information on distance the inverted day score. The horizontal component is radial: σ is the
- * root-mean-square of √(E² + N²).
+ * Point estimate: gamma quasi-likelihood ({@link solveForm}). Intervals: cluster-robust covariance CR3 by day with
+ * Satterthwaite degrees of freedom, on the log scale beyond two standard errors; for data with little information on
+ * distance the inverted day score. The horizontal component is radial: σ is the root-mean-square of √(E² + N²).
+ * With `screen` suspected wrong fixes count less ({@link screenWrongFixes}); their weights are then taken as known.
  *
  * @param errors table or records with `day`, `baselineKm` (km) and `east`, `north` or `up` (mm); `mark` and `setup`
  *   sharpen the notes
  * @throws InputError when an option or a column is missing or unknown, or no occupation has the component
  */
-export function fitErrorModel(errors: ErrorsInput, options: FitOptions): ErrorModel {
-  const { component, form, reference, confidence } = resolveFitOptions(options);
-  const data = prepareErrors(errors, component);
+export function fitErrorModel<C extends FitComponent>(
+  errors: ErrorsInput,
+  options: FitOptions<C>,
+): ErrorModel<C> {
+  const { component, form, reference, confidence, screen, weights } = resolveFitOptions(options);
+  const screening = screen && weights === null ? screenWrongFixes(errors, { residuals: 'errors' }) : null;
+  const data = prepareErrors(errors, component, weights ?? screening?.weights);
   const days = new Set(data.day).size;
-  const lengths = data.l.map(Math.sqrt);
-  const notes = [...dataNotes(data, component), ...axisNote(data)];
-  const shortestKm = lengths.reduce((a, b) => Math.min(a, b));
-  const longestKm = lengths.reduce((a, b) => Math.max(a, b));
-  const alike = tooAlike(data.l);
-  const withInterval = days >= FEWEST_DAYS;
+  const shortestKm = Math.sqrt(data.l.reduce((a, b) => Math.min(a, b)));
+  const longestKm = Math.sqrt(data.l.reduce((a, b) => Math.max(a, b)));
+  const alike = tooAlike(data.l, data.w);
+  const withInterval = days >= FEWEST_DAYS && screening?.converged !== false;
   const core = alike
-    ? { ...constantAlone(data, confidence, withInterval), notes: [tooAlikeNote()] }
-    : distanceModel(data, confidence, withInterval);
+    ? { ...constantAlone(data, form, confidence, withInterval), notes: [tooAlikeNote()] }
+    : distanceModel(data, form, confidence, withInterval);
   return {
     component,
     reference,
     form,
-    screened: false,
-    basis: component === 'horizontal' ? 'radial RMS' : 'vertical RMS',
+    screened: weights !== null || (screening !== null && !screening.refused),
+    basis: BASIS[component],
     confidence,
     occupations: data.y.length,
     days,
@@ -60,22 +56,25 @@ export function fitErrorModel(errors: ErrorsInput, options: FitOptions): ErrorMo
     shortestKm,
     longestKm,
     ...core,
-    notes: [...notes, ...core.notes],
+    variance: form === 'root-sum-square' ? asVariance(core.fitted) : null,
+    axes: axisFits(data, form, !alike),
+    notes: [...(screening?.notes ?? []), ...dataNotes(data, component), ...axisNote(data), ...core.notes],
   };
 }
 
-function distanceModel(data: FitData, confidence: number, withInterval: boolean) {
-  const variance = estimateVariance(data);
-  const number = informationNumber(data, variance.displayA, variance.displayB);
-  if (!withInterval || !variance.converged) {
-    const point = (value: number) => ({ estimate: Math.sqrt(value), low: null, high: null });
-    const { constantAtFloor, converged } = variance;
+function distanceModel(data: FitData, form: Form, confidence: number, withInterval: boolean) {
+  const fitted = estimateForm(data, form);
+  const number = informationNumber(data, fitted.displayP, fitted.displayQ, form);
+  if (!withInterval || !fitted.converged) {
+    const { sigma } = FORM_CURVES[form];
+    const point = (parameter: number) => ({ estimate: sigma(parameter), low: null, high: null });
+    const { constantAtFloor, converged } = fitted;
     return {
-      variance,
+      fitted,
       informationNumber: number,
       uncertainty: null,
-      constantMm: point(variance.displayA),
-      ppm: tellsPpm(number) ? point(variance.displayB) : { estimate: null, low: null, high: null },
+      constantMm: point(fitted.displayP),
+      ppm: tellsPpm(number) ? point(fitted.displayQ) : { estimate: null, low: null, high: null },
       ppmIfIndependent: { estimate: null, low: null, high: null },
       interval: 'none',
       notes: [
@@ -85,12 +84,12 @@ function distanceModel(data: FitData, confidence: number, withInterval: boolean)
       ],
     };
   }
-  const terms = clusterTerms(data, data.day, variance.A, variance.B);
+  const terms = clusterTerms(data, data.day, fitted.p, fitted.q, form);
   return {
-    variance,
+    fitted,
     informationNumber: number,
     uncertainty: { terms, covariance: covariance(terms, 'CR3') },
-    ...modelLimits(data, variance, terms, number, confidence),
+    ...modelLimits(data, fitted, terms, number, confidence),
   };
 }
 

@@ -8,13 +8,56 @@ export {
   dominantDay,
   naiveCovariance,
 } from './clusterCovariance.js';
+export { type CompareOptions, type Comparison, compareForms, type DayScore } from './compareForms.js';
 export { type CurvePoint, errorCurve, sigmaAtMm, sigmaUpperLimitMm } from './errorCurve.js';
-export type { ErrorModel, EstimateWithLimits, ModelUncertainty, Reference } from './errorModel.js';
-export { estimateVariance, type SquaredErrors, type VarianceEstimate } from './estimate.js';
+export type {
+  AxisFits,
+  ErrorModel,
+  EstimateWithLimits,
+  ModelUncertainty,
+  Reference,
+} from './errorModel.js';
+export {
+  estimateForm,
+  estimateVariance,
+  type FormEstimate,
+  fittedSigmaMm,
+  type VarianceEstimate,
+} from './estimate.js';
 export { fitErrorModel } from './fitErrorModel.js';
-export { type Component, type Form, spreadMm } from './forms.js';
+export {
+  type Axis,
+  BASIS,
+  COMPONENT_COLUMNS,
+  type Component,
+  type FitComponent,
+  FORM_CURVES,
+  type Form,
+  type FormCurve,
+  spreadMm,
+} from './forms.js';
 export { informationNumber } from './information.js';
 export { type ContrastEstimate, contrastEstimate, varianceLimits, varianceUpperLimit } from './intervals.js';
+export { type DayInfluence, type Jackknife, jackknifeByDay } from './jackknife.js';
 export type { FitOptions } from './options.js';
 export { scoreLimits } from './scoreInterval.js';
-export { type FitWithoutDay, fitWithoutEachDay } from './withoutEachDay.js';
+export type { SquaredErrors } from './scoring.js';
+export {
+  type Screening,
+  type ScreeningOptions,
+  type ScreeningResiduals,
+  screenWrongFixes,
+} from './screening/screenWrongFixes.js';
+export {
+  type WrongFixGrowth,
+  type WrongFixShareAtKm,
+  wrongFixGrowth,
+  wrongFixShareAtKm,
+} from './screening/wrongFixGrowth.js';
+export type { WrongFixShare } from './screening/wrongFixShare.js';
+export {
+  type FitWithoutDay,
+  type FitWithoutMark,
+  fitWithoutEachDay,
+  fitWithoutEachMark,
+} from './withoutEachDay.js';

@@ -1,33 +1,33 @@
 import { type Symmetric2, studentTQuantile, type Vector2 } from '../stats/index.js';
 import { type ClusterTerms, contrastVariance, degreesOfFreedom } from './clusterCovariance.js';
 
-/** A variance θ = c'(A, B) with its cluster-robust uncertainty. */
+/** θ = c'(p, q), a variance or a spread, with its cluster-robust uncertainty. */
 export interface ContrastEstimate {
   readonly value: number;
   readonly standardError: number;
   readonly degreesOfFreedom: number;
 }
 
-/** A = a² is the contrast (1, 0), B = b² is (0, 1), σ²(L) is (1, L²). */
+/** p is the contrast (1, 0), q is (0, 1), and η(L), which is σ²(L) or σ(L), is (1, x). */
 export function contrastEstimate(
-  A: number,
-  B: number,
+  p: number,
+  q: number,
   terms: ClusterTerms,
   v: Symmetric2,
   contrast: Vector2,
 ): ContrastEstimate {
   return {
-    value: contrast[0] * A + contrast[1] * B,
+    value: contrast[0] * p + contrast[1] * q,
     standardError: Math.sqrt(contrastVariance(v, contrast)),
     degreesOfFreedom: degreesOfFreedom(terms, contrast),
   };
 }
 
-/** Beyond two standard errors the log scale is used: a variance is skewed, and cannot be negative. */
+/** Beyond two standard errors the log scale is used: a variance or spread is skewed, and cannot be negative. */
 export const usesLogScale = ({ value, standardError }: ContrastEstimate): boolean =>
   value > 2 * standardError;
 
-/** Two-sided limits of a variance. On the raw scale they are cut at 0. */
+/** Two-sided limits of a variance or spread. On the raw scale they are cut at 0. */
 export function varianceLimits(
   estimate: ContrastEstimate,
   confidence: number,
@@ -36,7 +36,7 @@ export function varianceLimits(
   return [Math.max(0, limit(estimate, -t)), limit(estimate, t)];
 }
 
-/** One-sided upper limit of a variance. */
+/** One-sided upper limit of a variance or spread. */
 export function varianceUpperLimit(estimate: ContrastEstimate, confidence: number): number {
   return limit(estimate, studentTQuantile(confidence, estimate.degreesOfFreedom));
 }

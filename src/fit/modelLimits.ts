@@ -2,7 +2,8 @@ import { type Message, message } from '../logs/index.js';
 import type { Vector2 } from '../stats/index.js';
 import { type ClusterTerms, covariance, dominantDay, naiveCovariance } from './clusterCovariance.js';
 import type { EstimateWithLimits } from './errorModel.js';
-import type { VarianceEstimate } from './estimate.js';
+import type { FormEstimate } from './estimate.js';
+import { FORM_CURVES } from './forms.js';
 import { type ContrastEstimate, contrastEstimate, usesLogScale, varianceLimits } from './intervals.js';
 import type { FitData } from './prepareErrors.js';
 import { scoreLimits } from './scoreInterval.js';
@@ -16,8 +17,8 @@ const COMFORTABLE = 30;
 /** A day beyond this share of the information, in some direction, is named. */
 const DOMINANT_SHARE = 0.9;
 
-const A_ALONE: Vector2 = [1, 0];
-const B_ALONE: Vector2 = [0, 1];
+const P_ALONE: Vector2 = [1, 0];
+const Q_ALONE: Vector2 = [0, 1];
 
 /** Intervals of constant and ppm, and what must be said of them. */
 export interface ModelLimits {
@@ -28,24 +29,25 @@ export interface ModelLimits {
   readonly notes: readonly Message[];
 }
 
-/** Limits of a = √A and b = √B from the cluster-robust covariance, or from the day score where data are thin. */
+/** Limits of a and b from the cluster-robust covariance, or of b from the day score where data are thin. */
 export function modelLimits(
   data: FitData,
-  variance: VarianceEstimate,
+  fitted: FormEstimate,
   terms: ClusterTerms,
   informationNumber: number,
   confidence: number,
 ): ModelLimits {
-  const { A, B, displayA, displayB, constantAtFloor } = variance;
+  const { form, p, q, displayP, displayQ, constantAtFloor } = fitted;
+  const { sigma } = FORM_CURVES[form];
   const robust = covariance(terms, 'CR3');
-  const a = contrastEstimate(A, B, terms, robust, A_ALONE);
-  const b = contrastEstimate(A, B, terms, robust, B_ALONE);
-  const constant = rooted(displayA, varianceLimits(a, confidence));
-  const { limits, interval } = ppmLimits(data, A, B, b, informationNumber, confidence);
-  const ppm = rooted(displayB, limits);
+  const a = contrastEstimate(p, q, terms, robust, P_ALONE);
+  const b = contrastEstimate(p, q, terms, robust, Q_ALONE);
+  const constant = around(displayP, varianceLimits(a, confidence), sigma);
+  const { limits, interval } = ppmLimits(data, fitted, b, informationNumber, confidence);
+  const ppm = around(displayQ, limits, sigma);
   const naive = naiveCovariance(terms, data.components.length as 1 | 2);
   const ifIndependent = varianceLimits(
-    { value: B, standardError: Math.sqrt(naive[2]), degreesOfFreedom: Math.max(1, data.y.length - 2) },
+    { value: q, standardError: Math.sqrt(naive[2]), degreesOfFreedom: Math.max(1, data.y.length - 2) },
     confidence,
   );
   const upperOnly = informationNumber < UPPER_LIMIT_BELOW;
@@ -53,7 +55,10 @@ export function modelLimits(
   return {
     constantMm: constantAtFloor ? { ...constant, estimate: 0, low: 0 } : constant,
     ppm: upperOnly || high === null ? { estimate: null, low: high === null ? null : 0, high } : ppm,
-    ppmIfIndependent: { ...rooted(displayB, ifIndependent), estimate: upperOnly ? null : ppm.estimate },
+    ppmIfIndependent: {
+      ...around(displayQ, ifIndependent, sigma),
+      estimate: upperOnly ? null : ppm.estimate,
+    },
     interval,
     notes: [
       ...(constantAtFloor ? [constantNote()] : []),
@@ -63,17 +68,16 @@ export function modelLimits(
   };
 }
 
-/** Limits of B and the name of the method behind them. */
+/** Limits of q and the name of the method behind them. */
 function ppmLimits(
   data: FitData,
-  A: number,
-  B: number,
+  { form, p, q }: FormEstimate,
   estimate: ContrastEstimate,
   informationNumber: number,
   confidence: number,
 ): { readonly limits: readonly [number, number]; readonly interval: string } {
   if (informationNumber < SCORE_BELOW) {
-    const limits = scoreLimits(data, data.day, A, B, confidence);
+    const limits = scoreLimits(data, data.day, p, q, confidence, form);
     // A score interval wholly below zero would claim a ppm of exactly zero: chance alone allows more than that.
     if (limits[1] > 0) return { limits, interval: 'inverted day score' };
   }
@@ -84,15 +88,16 @@ function ppmLimits(
   };
 }
 
-/** Square roots; the displayed estimate may differ from the unconstrained one, and its interval always holds it. */
-function rooted(
-  variance: number,
+/** As a or b; the displayed estimate may differ from the unconstrained one, and its interval always holds it. */
+function around(
+  parameter: number,
   [low, high]: readonly [number, number],
+  sigma: (parameter: number) => number,
 ): EstimateWithLimits & { high: number } {
   return {
-    estimate: Math.sqrt(variance),
-    low: Math.sqrt(Math.min(low, variance)),
-    high: Math.sqrt(Math.max(high, variance)),
+    estimate: sigma(parameter),
+    low: sigma(Math.min(low, parameter)),
+    high: sigma(Math.max(high, parameter)),
   };
 }
 

@@ -1,10 +1,10 @@
 import { type Message, message } from '../logs/index.js';
 import { clusteredMean } from '../split/index.js';
-import type { Component } from './forms.js';
+import { COMPONENT_COLUMNS, type FitComponent } from './forms.js';
 import type { FitData } from './prepareErrors.js';
 
 /** What the data themselves say before any fit (the fit adds its own notes). */
-export function dataNotes(data: FitData, component: Component): Message[] {
+export function dataNotes(data: FitData, component: FitComponent): Message[] {
   const notes: Message[] = [];
   const add = (code: string, text: string): void => {
     notes.push(message('warning', code, text));
@@ -76,11 +76,11 @@ export function dataNotes(data: FitData, component: Component): Message[] {
  * A mean error more than three standard errors from 0. The error of a mark repeats on every day, so the variance
  * between marks counts beside that between days.
  */
-function systematicOffset(data: FitData, component: Component): Message[] {
-  const names = component === 'horizontal' ? ['east', 'north'] : ['up'];
+function systematicOffset(data: FitData, component: FitComponent): Message[] {
+  const names = COMPONENT_COLUMNS[component];
   return data.components.flatMap((column, k) => {
-    const byDay = clusteredMean(column, data.day);
-    const byMark = data.mark === null ? null : clusteredMean(column, data.mark);
+    const byDay = clusteredMean(column, data.day, data.w);
+    const byMark = data.mark === null ? null : clusteredMean(column, data.mark, data.w);
     const error = Math.hypot(byDay.standardError, byMark?.standardError ?? 0);
     if (!(Math.abs(byDay.mean) > 3 * error)) return [];
     return [
@@ -106,15 +106,16 @@ function mostFrequent(list: readonly string[]): { name: string; count: number } 
 export function axisNote(data: FitData): Message[] {
   const [east, north] = data.components;
   if (east === undefined || north === undefined) return [];
+  const total = data.w.reduce((sum, value) => sum + value, 0);
   const rms = (column: Float64Array): number =>
-    Math.sqrt(column.reduce((sum, value) => sum + value * value, 0) / column.length);
+    Math.sqrt(column.reduce((sum, value, i) => sum + data.w[i]! * value * value, 0) / total);
   const ratio = rms(east) / rms(north);
   if (ratio >= 0.6 && ratio <= 1.67) return [];
   return [
     message(
       'warning',
       'unequal-axes',
-      `East and north errors differ (RMS ${rms(east).toFixed(1)} and ${rms(north).toFixed(1)} mm): radial limits from equal axes would be too small, and the larger factor of a single axis is used. Look for a cause that acts in one direction.`,
+      `East and north errors differ (RMS ${rms(east).toFixed(1)} and ${rms(north).toFixed(1)} mm): radial limits from equal axes would be too small, and the quantile of the two fitted axes is used. Look for a cause that acts in one direction.`,
     ),
   ];
 }

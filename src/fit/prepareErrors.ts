@@ -1,7 +1,8 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
 import { inputError } from '../logs/index.js';
-import type { SquaredErrors } from './estimate.js';
-import type { Component } from './forms.js';
+import { COMPONENT_COLUMNS, type FitComponent } from './forms.js';
+import { orderRows } from './rowOrder.js';
+import type { SquaredErrors } from './scoring.js';
 
 /** The columns of one component, in an order that does not depend on the order of rows. */
 export interface FitData extends SquaredErrors {
@@ -24,11 +25,10 @@ export interface FitData extends SquaredErrors {
  * @param weights in [0, 1], one for each row of the errors; default 1
  * @throws InputError when a column is missing, or no row has the component and a length above 0
  */
-export function prepareErrors(errors: ErrorsInput, component: Component, weights?: Float64Array): FitData {
+export function prepareErrors(errors: ErrorsInput, component: FitComponent, weights?: Float64Array): FitData {
   const columns = errorColumns(errors);
   const neededFor = `component "${component}"`;
-  const names = component === 'horizontal' ? ['east', 'north'] : ['up'];
-  const values = names.map((name) => columns.numbers(name, neededFor));
+  const values = COMPONENT_COLUMNS[component].map((name) => columns.numbers(name, neededFor));
   const lengths = columns.numbers('baselineKm', 'every fit');
   const days = columns.texts('day', 'every fit');
   const optional = (name: string): string[] | null =>
@@ -36,6 +36,12 @@ export function prepareErrors(errors: ErrorsInput, component: Component, weights
   const marks = optional('mark');
   const setups = optional('setup');
   const starts = columns.has('startMs') ? columns.numbers('startMs', 'a note') : null;
+  if (weights !== undefined && weights.length !== lengths.length) {
+    throw inputError(
+      'bad-option',
+      `Expected one weight for each of ${lengths.length} rows, came ${weights.length}. Hand in weights of the same errors.`,
+    );
+  }
   const rows = Array.from(lengths.keys());
   const used = rows.filter((i) => values.every((column) => !Number.isNaN(column[i]!)));
   if (used.length === 0) {
@@ -59,33 +65,34 @@ export function prepareErrors(errors: ErrorsInput, component: Component, weights
     );
   }
   const withoutBaseline = used.length - measured.length;
-  // Sums depend on order in the last digits: a fixed order makes equal data give equal bytes.
-  const square = (i: number): number => values.reduce((sum, column) => sum + column[i]! ** 2, 0);
-  measured.sort(
-    (i, j) =>
-      compare(days[i]!, days[j]!) ||
-      lengths[i]! - lengths[j]! ||
-      square(i) - square(j) ||
-      compareSigns(values, i, j) ||
-      (starts === null ? 0 : starts[i]! - starts[j]!),
-  );
-  const pick = (list: readonly string[] | null): string[] | null => list && measured.map((i) => list[i]!);
+  if (weights !== undefined && measured.every((i) => weights[i] === 0)) {
+    throw inputError(
+      'no-errors',
+      `Expected a weight above 0, came only 0 in all ${measured.length} occupations with ${component} errors. Check how they were screened.`,
+    );
+  }
+  const squares = new Float64Array(lengths.length);
+  for (const column of values) for (let i = 0; i < squares.length; i++) squares[i]! += column[i]! ** 2;
+  const order = orderRows(Int32Array.from(measured), days, [
+    lengths,
+    squares,
+    ...values,
+    ...(starts === null ? [] : [starts]),
+    ...(weights === undefined ? [] : [weights]),
+  ]);
+  const pick = (list: readonly string[] | null): string[] | null =>
+    list && Array.from(order, (i) => list[i]!);
   return {
-    y: Float64Array.from(measured, square),
-    l: Float64Array.from(measured, (i) => lengths[i]! ** 2),
-    w: Float64Array.from(measured, (i) => weights?.[i] ?? 1),
-    day: measured.map((i) => days[i]!),
-    components: values.map((column) => Float64Array.from(measured, (i) => column[i]!)),
+    y: Float64Array.from(order, (i) => squares[i]!),
+    l: Float64Array.from(order, (i) => lengths[i]! ** 2),
+    w: Float64Array.from(order, (i) => weights?.[i] ?? 1),
+    day: Array.from(order, (i) => days[i]!),
+    components: values.map((column) => Float64Array.from(order, (i) => column[i]!)),
     mark: pick(marks),
     setup: pick(setups),
-    startMs: starts && Float64Array.from(measured, (i) => starts[i]!),
-    rows: Int32Array.from(measured),
+    startMs: starts && Float64Array.from(order, (i) => starts[i]!),
+    rows: order,
     withoutValue: rows.length - used.length,
     withoutBaseline,
   };
 }
-
-const compare = (a: string, b: string): number => (a < b ? -1 : a > b ? 1 : 0);
-
-const compareSigns = (values: readonly Float64Array[], i: number, j: number): number =>
-  values.reduce((order, column) => order || column[i]! - column[j]!, 0);

@@ -22,6 +22,11 @@ ${lengthTable(lengthClasses, specSheet)}
 `;
 }
 
+const FORMULAS = {
+  'root-sum-square': 'spread² = constant² + (ppm × distance)²',
+  'linear-sum': 'spread = constant + ppm × distance',
+} as const;
+
 function fitTable(fits: readonly FitResult[]): Html {
   const level = percent(fits[0]!.confidence);
   const columns: Column<FitResult>[] = [
@@ -33,7 +38,7 @@ function fitTable(fits: readonly FitResult[]): Html {
     { head: 'Days', cell: ({ days }) => count(days) },
   ];
   return table(
-    `Own error model, spread² = constant² + (ppm × distance)², with ${level} intervals`,
+    `Own error model, ${[...new Set(fits.map(({ form }) => FORMULAS[form]))].join(' or ')}, with ${level} intervals`,
     fits,
     columns,
   );

@@ -35,6 +35,7 @@ export const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
   ['radial RMS', 'root of the mean of east² + north²; about 63 % of positions are within it'],
   ['vertical RMS', 'root of the mean of up²; about 68 % of positions are within it'],
   ['root-sum-square', 'constant and ppm part are added as squares: spread² = constant² + (ppm × distance)²'],
+  ['linear-sum', 'constant and ppm part are added as they are: spread = constant + ppm × distance'],
   ['tolerance', 'a limit and the share of positions that must be within it'],
   [
     'maximum baseline',
@@ -77,6 +78,8 @@ export const whyNoRule = ({ fits }: Results): string =>
     ? 'no fit was possible; the messages below say why'
     : 'the study file states no tolerance';
 
+const ADDED = { 'root-sum-square': 'added as squares', 'linear-sum': 'added as they are' } as const;
+
 /** A fit as one sentence. */
 export function fitSentence(fit: FitResult): string {
   const level = percent(fit.confidence);
@@ -85,7 +88,7 @@ export function fitSentence(fit: FitResult): string {
   const form =
     distance === NOT_GIVEN
       ? `${constant} at all distances in the data`
-      : `${constant} and ${distance} ppm, added as squares`;
+      : `${constant} and ${distance} ppm, ${ADDED[fit.form]}`;
   return `${componentTitle(fit.component)}: ${form} (${fit.basis}; ${level} intervals in brackets).`;
 }
 

@@ -1,4 +1,4 @@
 export { lengthWithin, maximumBaseline, noRule, type Rule, type RuleConditions } from './maximumBaseline.js';
 export { type SpecSheet, specSheetSigmaMm } from './specSheet.js';
 export { longestSupportedKm } from './supportedLength.js';
-export { type Tolerance, toleranceFactor } from './tolerance.js';
+export { type Tolerance, toleranceFactor, toleranceFactorAt } from './tolerance.js';

@@ -1,8 +1,8 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
-import { type Component, type ErrorModel, sigmaAtMm, sigmaUpperLimitMm } from '../fit/index.js';
+import { type Component, type ErrorModel, type Form, sigmaAtMm, sigmaUpperLimitMm } from '../fit/index.js';
 import { componentRows } from './componentRows.js';
 import { longestSupportedKm, marksBeyond } from './supportedLength.js';
-import { type Tolerance, toleranceFactor } from './tolerance.js';
+import { type Tolerance, toleranceFactorAt } from './tolerance.js';
 
 /** How far from the base a tolerance holds, and on what that rests. */
 export interface Rule {
@@ -60,12 +60,9 @@ export function maximumBaseline(errors: ErrorsInput, model: ErrorModel, toleranc
   if (reason !== null || supportedKm === null) {
     return { ...common, maximumBaselineKm: null, bestEstimateKm: null, allDaysKm: null, reason };
   }
-  const unequal = model.notes.some(({ code }) => code === 'unequal-axes');
-  const factor = toleranceFactor(tolerance.component, tolerance.share, unequal);
-  const allowedMm = tolerance.limitMm / factor;
-  const best = lengthWithin(model.variance.displayA, model.variance.displayB, allowedMm);
-  const bestEstimateKm = best === null ? 0 : Math.min(best, supportedKm);
-  const holds = (km: number): boolean => sigmaUpperLimitMm(model, km, tolerance.confidence)! <= allowedMm;
+  const allowedMm = (km: number): number => tolerance.limitMm / toleranceFactorAt(model, tolerance.share, km);
+  const bestEstimateKm = bestEstimate(model, allowedMm, supportedKm);
+  const holds = (km: number): boolean => sigmaUpperLimitMm(model, km, tolerance.confidence)! <= allowedMm(km);
   let steps = 0;
   while ((steps + 1) * STEP_KM <= supportedKm && holds((steps + 1) * STEP_KM)) steps += 1;
   const reached = steps / 10;
@@ -79,7 +76,7 @@ export function maximumBaseline(errors: ErrorsInput, model: ErrorModel, toleranc
     reason: capped
       ? cappedReason(errors, tolerance.component, supportedKm)
       : maximumBaselineKm === 0
-        ? zeroReason(model, tolerance, allowedMm)
+        ? zeroReason(model, tolerance, allowedMm(0))
         : null,
   };
 }
@@ -98,18 +95,50 @@ export function noRule(errors: ErrorsInput, tolerance: Tolerance, reason: string
   };
 }
 
-/** Length at which √(A + B L²) reaches the allowed σ; null when A alone exceeds it, Infinity when B is 0. */
-export function lengthWithin(A: number, B: number, allowedMm: number): number | null {
-  const room = allowedMm ** 2 - A;
+/**
+ * Length at which σ of a form reaches the allowed one; null when the constant alone exceeds it, Infinity without growth.
+ * @param p,q displayed parameters: a² and b² for root-sum-square, a and b for linear-sum
+ */
+export function lengthWithin(
+  p: number,
+  q: number,
+  allowedMm: number,
+  form: Form = 'root-sum-square',
+): number | null {
+  const squared = form === 'root-sum-square';
+  const room = (squared ? allowedMm ** 2 : allowedMm) - p;
   if (room <= 0) return null;
-  return B === 0 ? Number.POSITIVE_INFINITY : Math.sqrt(room / B);
+  if (q === 0) return Number.POSITIVE_INFINITY;
+  return squared ? Math.sqrt(room / q) : room / q;
+}
+
+/**
+ * The length at which the fitted σ reaches what is allowed there. The latter depends on the length only as the ratio of
+ * the axes does, so that a few repetitions settle it.
+ */
+function bestEstimate(
+  { fitted }: ErrorModel,
+  allowedMm: (km: number) => number,
+  supportedKm: number,
+): number {
+  const within = (km: number): number => {
+    const length = lengthWithin(fitted.displayP, fitted.displayQ, allowedMm(km), fitted.form);
+    return length === null ? 0 : Math.min(length, supportedKm);
+  };
+  let km = within(supportedKm);
+  for (let k = 0; k < 100; k++) {
+    const next = within(km);
+    if (Math.abs(next - km) < 1e-9) return next;
+    km = (km + next) / 2;
+  }
+  return km;
 }
 
 function whyNoRule(model: ErrorModel, { share }: Tolerance, supportedKm: number | null): string | null {
   if (model.days < FEWEST_DAYS) {
     return `${model.days} ${model.days === 1 ? 'day is' : 'days are'} too few: a rule needs ${FEWEST_DAYS} days`;
   }
-  if (!model.variance.converged) return 'the fit did not converge';
+  if (!model.fitted.converged) return 'the fit did not converge';
   if (model.uncertainty === null) return 'the distances are too alike to separate mm and ppm';
   if (share > LARGEST_SHARE) {
     return `a share of ${percent(share)} cannot be derived from an RMS: errors of bad days are rarer and larger than a Gaussian factor allows for`;

@@ -1,5 +1,5 @@
-import type { Component } from '../fit/index.js';
-import { normalQuantile } from '../stats/index.js';
+import { type Component, type ErrorModel, fittedSigmaMm } from '../fit/index.js';
+import { normalQuantile, radialQuantile } from '../stats/index.js';
 
 /** What a client demands: on `dayShare` of the days, `share` of that day's positions within `limitMm`. */
 export interface Tolerance {
@@ -20,4 +20,20 @@ export function toleranceFactor(component: Component, share: number, unequalAxes
   return component === 'horizontal' && !unequalAxes
     ? Math.sqrt(-Math.log1p(-share))
     : normalQuantile((1 + share) / 2);
+}
+
+/**
+ * The same at a length, for a model whose east and north errors may differ: then the exact radius at their fitted σ over
+ * the radial RMS of both, or the safe factor where the axes could not be fitted.
+ */
+export function toleranceFactorAt(model: ErrorModel, share: number, baselineKm: number): number {
+  const unequal = model.notes.some(({ code }) => code === 'unequal-axes');
+  if (!unequal || model.axes === null) return toleranceFactor(model.component, share, unequal);
+  const east = fittedSigmaMm(model.axes.east, baselineKm);
+  const north = fittedSigmaMm(model.axes.north, baselineKm);
+  const radialMm = Math.hypot(east, north);
+  // Without a constant there is no ellipse at the base itself.
+  return radialMm > 0
+    ? radialQuantile(east, north, share) / radialMm
+    : toleranceFactor(model.component, share, true);
 }

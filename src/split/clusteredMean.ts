@@ -10,17 +10,26 @@ export interface ClusteredMean {
 }
 
 /**
- * Mean of values with the day-clustered standard error G/(G-1) Σ_d (Σ_i (y - ȳ))² / n² (linearised cluster variance,
- * Liang & Zeger 1986, from memory).
+ * Mean of values with the day-clustered standard error G/(G-1) Σ_d (Σ_i w (y - ȳ))² / (Σ w)² (linearised cluster
+ * variance, Liang & Zeger 1986, from memory).
+ * @param weights one for each value; default 1
  */
-export function clusteredMean(values: ArrayLike<number>, days: readonly string[]): ClusteredMean {
+export function clusteredMean(
+  values: ArrayLike<number>,
+  days: readonly string[],
+  weights?: ArrayLike<number>,
+): ClusteredMean {
   const list = Array.from(values);
-  const mean = sum(list) / list.length;
+  const weight = (i: number): number => weights?.[i] ?? 1;
+  const total = weights === undefined ? list.length : sum(Array.from(weights));
+  const mean = sum(list.map((value, i) => weight(i) * value)) / total;
   const perDay = new Map<string, number>();
-  for (let i = 0; i < list.length; i++) perDay.set(days[i]!, (perDay.get(days[i]!) ?? 0) + list[i]! - mean);
+  for (let i = 0; i < list.length; i++) {
+    perDay.set(days[i]!, (perDay.get(days[i]!) ?? 0) + weight(i) * (list[i]! - mean));
+  }
   const groups = perDay.size;
   const squares = sum([...perDay.values()].map((total) => total * total));
-  const standardError = groups < 2 ? Number.NaN : Math.sqrt((groups / (groups - 1)) * squares) / list.length;
+  const standardError = groups < 2 ? Number.NaN : Math.sqrt((groups / (groups - 1)) * squares) / total;
   return { mean, standardError, days: groups, count: list.length };
 }
 

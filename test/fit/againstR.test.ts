@@ -73,8 +73,8 @@ describe.each(SETS)('radial errors of %s', (name) => {
   const { H, U } = referenceFits(name);
   it('horizontal fit equals R', () => {
     const model = fitErrorModel(rows, { component: 'horizontal' });
-    close(model.variance.A, H.A_drms2);
-    close(model.variance.B, H.B_drms2);
+    close(model.variance!.A, H.A_drms2);
+    close(model.variance!.B, H.B_drms2);
     close(model.constantMm.estimate!, H.a_drms);
     close(model.ppm.estimate!, H.b_drms);
     close(model.ppm.low!, H.ci_b_drms[0]);
@@ -83,7 +83,7 @@ describe.each(SETS)('radial errors of %s', (name) => {
       close(model.uncertainty!.covariance[k]!, value);
     });
     // The radial square is the pooled-component fit times two.
-    close(model.variance.A, 2 * H.pooled_component.A, 1e-8);
+    close(model.variance!.A, 2 * H.pooled_component.A, 1e-8);
   });
   it('leaves out each day as R does', () => {
     const { day, A, B } = U.jackknife;

@@ -7,6 +7,7 @@ export interface ReferenceRow {
   base: string;
   mark: string;
   setup: string;
+  startMs: number;
   baselineKm: number;
   east: number;
   north: number;
@@ -19,7 +20,7 @@ export function referenceErrors(name: string): ReferenceRow[] {
     .trim()
     .split('\n');
   return lines.map((line) => {
-    const [day, base, mark, , km, east, north, up] = line.split(',') as [
+    const [day, base, mark, time, km, east, north, up] = line.split(',') as [
       string,
       string,
       string,
@@ -34,6 +35,7 @@ export function referenceErrors(name: string): ReferenceRow[] {
       base,
       mark,
       setup: `${base} ${day}`,
+      startMs: Date.parse(`${day}T${time}Z`),
       baselineKm: Number(km),
       east: Number(east),
       north: Number(north),

@@ -66,7 +66,7 @@ describe('thin and odd data', () => {
   });
   it('finds no constant without short shots', () => {
     const model = fitErrorModel(made(30, [20, 25, 30, 60, 62], 0.2, 1), { component: 'vertical' });
-    expect(model.variance.constantAtFloor).toBe(true);
+    expect(model.fitted.constantAtFloor).toBe(true);
     expect(model.constantMm).toMatchObject({ estimate: 0, low: 0 });
     expect(model.notes.map(({ code }) => code)).toContain('constant-not-identified');
     expect(model.ppm.estimate).toBeGreaterThan(0.8);
@@ -127,7 +127,7 @@ describe('thin and odd data', () => {
       const rows = made(12, SPREAD, 5, 0.7, seed).map((r) =>
         random() < 0.02 ? { ...r, up: 1000 * (random() - 0.5) } : r,
       );
-      expect(fitErrorModel(rows, { component: 'vertical' }).variance.converged).toBe(true);
+      expect(fitErrorModel(rows, { component: 'vertical' }).fitted.converged).toBe(true);
     }
   });
   it('fits without each day, and gives null where the rest cannot tell mm and ppm apart', () => {
@@ -200,7 +200,7 @@ describe('misuse', () => {
   it.each([
     [
       { component: 'sideways' },
-      'Expected "horizontal" or "vertical" as component, came "sideways". Correct the option.',
+      'Expected "horizontal", "vertical", "east" or "north" as component, came "sideways". Correct the option.',
     ],
     [
       { component: 'vertical', confidence: 95 },
@@ -208,11 +208,11 @@ describe('misuse', () => {
     ],
     [
       { component: 'vertical', confidance: 0.9 },
-      'Expected one of component, form, reference, confidence, came the option "confidance". Did you mean "confidence"? Correct it.',
+      'Expected one of component, form, reference, confidence, screen, weights, came the option "confidance". Did you mean "confidence"? Correct it.',
     ],
     [
       { component: 'vertical', form: 'cubic' },
-      'Expected "root-sum-square" as form, came "cubic". Correct the option.',
+      'Expected "root-sum-square" or "linear-sum" as form, came "cubic". Correct the option.',
     ],
   ])('names the option in %j', (options, text) => {
     expect(() => fitErrorModel(rows, options as never)).toThrow(text);

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { simulateErrors } from '../../src/campaign/index.js';
-import { fitErrorModel, spreadMm } from '../../src/fit/index.js';
+import { fitErrorModel, fittedSigmaMm, sigmaAtMm, spreadMm } from '../../src/fit/index.js';
 import {
   lengthWithin,
   longestSupportedKm,
@@ -8,6 +8,7 @@ import {
   specSheetSigmaMm,
   type Tolerance,
   toleranceFactor,
+  toleranceFactorAt,
 } from '../../src/rule/index.js';
 
 const tolerance = (limitMm: number, more: Partial<Tolerance> = {}): Tolerance => ({
@@ -121,15 +122,21 @@ describe('a rule', () => {
     expect(vertical.conditions.occupations).toBe(near.filter(({ up }) => !Number.isNaN(up)).length);
     expect(vertical.conditions.marks.length).toBeLessThan(rule(25).conditions.marks.length);
   });
-  it('takes the factor of a single axis when east and north differ', () => {
+  it('takes the exact radius of an ellipse when east and north differ', () => {
     const oneSided = rows.map((row) => ({ ...row, east: row.east * 0.2 }));
     const fit = fitErrorModel(oneSided, { component: 'horizontal' });
     expect(fit.notes.map(({ code }) => code)).toContain('unequal-axes');
     const { bestEstimateKm } = maximumBaseline(oneSided, fit, tolerance(18));
-    expect(bestEstimateKm).toBeCloseTo(
-      lengthWithin(fit.variance.displayA, fit.variance.displayB, 18 / 1.9599639845)!,
-      6,
-    );
+    // At one ratio of the axes everywhere: the radius of 95 % by numerical integration, 1.970408 at 0.2 and 1.984196 at
+    // 0.3 of the longer axis, over √(1 + ratio²).
+    const { east, north } = fit.axes!;
+    const ratio = fittedSigmaMm(east, bestEstimateKm!) / fittedSigmaMm(north, bestEstimateKm!);
+    expect(ratio).toBeGreaterThan(0.18);
+    expect(ratio).toBeLessThan(0.24);
+    const factor = toleranceFactorAt(fit, 0.95, bestEstimateKm!);
+    expect(factor * Math.hypot(1, ratio)).toBeGreaterThan(1.96896);
+    expect(factor * Math.hypot(1, ratio)).toBeLessThan(1.9759);
+    expect(factor * sigmaAtMm(fit, bestEstimateKm!)).toBeCloseTo(18, 6);
   });
   it('states its conditions', () => {
     const { conditions } = rule(25);
