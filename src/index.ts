@@ -46,6 +46,7 @@ export {
   type FitWithoutMark,
   type Form,
   type FormEstimate,
+  type FormSolution,
   fitErrorModel,
   fitWithoutEachDay,
   fitWithoutEachMark,

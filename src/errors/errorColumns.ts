@@ -31,7 +31,13 @@ export function errorColumns(input: ErrorsInput): ErrorColumns {
   return {
     length: source.length,
     has: (name) => source.length > 0 && source.names().includes(name),
-    numbers: (name, neededFor) => Float64Array.from(column(name, neededFor) as ArrayLike<number>, Number),
+    numbers: (name, neededFor) => {
+      const values = column(name, neededFor);
+      // A plain loop: Float64Array.from takes many times as long.
+      const numbers = new Float64Array(values.length);
+      for (let i = 0; i < numbers.length; i++) numbers[i] = Number(values[i]);
+      return numbers;
+    },
     texts: (name, neededFor) => Array.from(column(name, neededFor), String),
   };
 }

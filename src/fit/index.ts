@@ -41,7 +41,7 @@ export { type ContrastEstimate, contrastEstimate, varianceLimits, varianceUpperL
 export { type DayInfluence, type Jackknife, jackknifeByDay } from './jackknife.js';
 export type { FitOptions } from './options.js';
 export { scoreLimits } from './scoreInterval.js';
-export type { SquaredErrors } from './scoring.js';
+export type { FormSolution, SquaredErrors } from './scoring.js';
 export {
   type Screening,
   type ScreeningOptions,

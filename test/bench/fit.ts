@@ -3,7 +3,7 @@ import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { fitErrorModel } from '../../src/fit/index.js';
+import { fitErrorModel, screenWrongFixes } from '../../src/fit/index.js';
 import { normalDeviates, randomStream } from '../../src/stats/index.js';
 import { medianSeconds } from './timing.js';
 
@@ -27,6 +27,32 @@ export async function benchFit(): Promise<void> {
   );
   console.log(`  constant ${show(constantMm)} mm, ppm ${show(ppm)}`);
   compareWithR(rows, ours);
+  await benchScreening();
+}
+
+const MANY = 1_000_000;
+
+/** Screening, fit and intervals of a million occupations on forty marks over 300 days, 3 in 1000 of them wrong. */
+async function benchScreening(): Promise<void> {
+  const normal = normalDeviates(randomStream(3, 'bench'));
+  const random = randomStream(4, 'bench');
+  const rows = Array.from({ length: MANY }, (_, k) => {
+    const mark = Math.floor(40 * random());
+    const baselineKm = 0.4 * 1.1 ** mark;
+    const sigma = random() < 0.003 ? 300 : Math.hypot(8, baselineKm);
+    const [east, north, up] = [normal() * sigma, normal() * sigma, normal() * sigma];
+    return { day: `day ${k % 300}`, mark: `M${mark}`, startMs: 1000 * k, baselineKm, east, north, up };
+  });
+  let found = screenWrongFixes(rows);
+  const screening = await medianSeconds(1, () => {
+    found = screenWrongFixes(rows);
+  });
+  const fit = await medianSeconds(1, () =>
+    fitErrorModel(rows, { component: 'horizontal', weights: found.weights }),
+  );
+  console.log(
+    `screening of ${MANY} occupations: ${screening.toFixed(1)} s, ${found.iterations} iterations, ${found.suspected.length} suspected; fit with intervals: ${fit.toFixed(1)} s (aim 10 s together)`,
+  );
 }
 
 const show = ({

@@ -76,7 +76,12 @@ describe('leaving out', () => {
     expect(standardErrorOfLog).toBeNull();
     expect(notes[0]).toMatchObject({ code: 'no-jackknife-interval' });
     expect(notes[0]!.text).toContain('without day far');
-    expect(jackknifeByDay(near.map((row) => ({ ...row, baselineKm: 5 })), { component: 'vertical' }).notes[0]!.text).toContain('too alike');
+    expect(
+      jackknifeByDay(
+        near.map((row) => ({ ...row, baselineKm: 5 })),
+        { component: 'vertical' },
+      ).notes[0]!.text,
+    ).toContain('too alike');
   });
   it('names a missing column', () => {
     expect(() => fitWithoutEachMark([{ day: 'd', baselineKm: 1, up: 1 }], { component: 'vertical' })).toThrow(

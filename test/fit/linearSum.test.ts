@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { errorLines } from '../../src/charts/errorLines.js';
+import { errorTitle } from '../../src/charts/errorWords.js';
 import {
   clusterTerms,
   covariance,
@@ -89,6 +91,41 @@ function made(days: number, lengthsKm: readonly number[], a: number, b: number, 
   ).flat();
 }
 const SPREAD = [0.4, 0.8, 1.5, 3, 6, 10, 16];
+
+describe('single axes', () => {
+  const rows = made(20, SPREAD, 6, 0.7, 5).map((row) => ({ ...row, north: 2 * row.north }));
+  it('are fitted beside the radial error with the same words for what σ is', () => {
+    const east = fitErrorModel(rows, { component: 'east' });
+    const alone = fitErrorModel(
+      rows.map((row) => ({ ...row, up: row.east })),
+      { component: 'vertical' },
+    );
+    expect(east).toMatchObject({ component: 'east', basis: 'east RMS', axes: null });
+    expect(east.ppm).toEqual(alone.ppm);
+    expect(east.constantMm).toEqual(alone.constantMm);
+    expect(fitErrorModel(rows, { component: 'north' }).basis).toBe('north RMS');
+  });
+  it.each(['root-sum-square', 'linear-sum'] as const)('stand in the radial model, %s', (form) => {
+    const { axes } = fitErrorModel(rows, { component: 'horizontal', form });
+    expect(axes!.east).toEqual(fitErrorModel(rows, { component: 'east', form }).fitted);
+    expect(axes!.north).toEqual(fitErrorModel(rows, { component: 'north', form }).fitted);
+    expect(fitErrorModel(rows, { component: 'vertical', form }).axes).toBeNull();
+  });
+});
+
+describe('a chart of the linear-sum form', () => {
+  it('draws σ = a + b L and what the tolerance share makes of it', () => {
+    const rows = made(20, SPREAD, 6, 0.7, 5);
+    const model = fitErrorModel(rows, { component: 'horizontal', form: 'linear-sum' });
+    const [own, share] = errorLines(model, 0.95, undefined, 16);
+    const [a, b] = [model.constantMm.estimate!, model.ppm.estimate!];
+    for (const [k, { baselineKm, errorMm }] of own!.points.entries()) {
+      expect(errorMm).toBeCloseTo(a + b * baselineKm, 9);
+      expect(share!.points[k]!.errorMm / errorMm).toBeCloseTo(1.7308183826, 9);
+    }
+    expect(errorTitle(model)).toContain('(linear-sum)');
+  });
+});
 
 describe('the linear-sum form', () => {
   it('holds a maximum baseline where σ = a + b L reaches what the tolerance allows', () => {

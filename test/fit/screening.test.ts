@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { simulateErrors } from '../../src/campaign/index.js';
 import { fitErrorModel, screenWrongFixes } from '../../src/fit/index.js';
+import { screeningNotes } from '../../src/fit/screening/screeningNotes.js';
 import { normalDeviates, randomStream, shuffle } from '../../src/stats/index.js';
 import { referenceErrors, referenceFits } from './reference.js';
 
@@ -192,6 +193,12 @@ describe('what screening says', () => {
     expect(found.crowdedDays).toEqual([day]);
     expect(found.notes.map(({ code }) => code)).toContain('suspects-on-one-day');
     expect(found.share!.designEffect).toBeGreaterThan(1.5);
+  });
+  it('says when the search did not converge', () => {
+    const found = screenWrongFixes(withWrongFixes(9, 0).rows);
+    expect(found.notes.map(({ code }) => code)).not.toContain('screening-not-converged');
+    const notes = screeningNotes({ ...found, converged: false }, 100, 0);
+    expect(notes[0]).toMatchObject({ code: 'screening-not-converged', severity: 'warning' });
   });
   it('does not screen a handful, and says so', () => {
     const few = withWrongFixes(9, 0).rows.slice(0, 19);

@@ -1,6 +1,7 @@
 import { type ErrorColumns, type ErrorsInput, errorColumns } from '../../errors/index.js';
 import { inputError, type Message } from '../../logs/index.js';
 import { badOption, refuseUnknownOptions } from '../options.js';
+import { numbersOf } from '../prepareErrors.js';
 import { orderRows } from '../rowOrder.js';
 import { suspectedRuns } from './events.js';
 import { groupByMarkAndDay, type MarkDays, markResiduals } from './markResiduals.js';
@@ -88,8 +89,8 @@ export function screenWrongFixes(errors: ErrorsInput, options: ScreeningOptions 
   const dayNumber = new Map(dayNames.map((day, d) => [day, d]));
   const dayOf = Int32Array.from(order, (row) => dayNumber.get(days[row]!)!);
   const mixture = fitMixture({
-    errors: judged.map((column) => Float64Array.from(order, (row) => column[row]!)),
-    l: Float64Array.from(order, (row) => lengths[row]! ** 2),
+    errors: judged.map((column) => numbersOf(order, (row) => column[row]!)),
+    l: numbersOf(order, (row) => lengths[row]! ** 2),
     dayOf,
     days: dayNames.length,
   });
