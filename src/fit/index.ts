@@ -55,6 +55,10 @@ export {
   wrongFixShareAtKm,
 } from './screening/wrongFixGrowth.js';
 export type { WrongFixShare } from './screening/wrongFixShare.js';
+export { fitTerms, type TermEstimate, type TermOptions, type TermsModel } from './terms/fitTerms.js';
+export type { KnownSigmas } from './terms/knownParts.js';
+export type { Term } from './terms/termData.js';
+export type { TermGain } from './terms/termGain.js';
 export {
   type FitWithoutDay,
   type FitWithoutMark,

@@ -1,3 +1,4 @@
+export { type CholeskyFactor, choleskyFactor, choleskySolve } from './cholesky.js';
 export {
   betaQuantile,
   chiSquareCdf,
