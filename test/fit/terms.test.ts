@@ -1,13 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { fitErrorModel, fitTerms, type Term } from '../../src/fit/index.js';
-import {
-  choleskyFactor,
-  choleskySolve,
-  normalDeviates,
-  randomStream,
-  shuffle,
-} from '../../src/stats/index.js';
+import { normalDeviates, randomStream, shuffle } from '../../src/stats/index.js';
 import { referenceErrors } from './reference.js';
 
 const close = (actual: number, expected: number, relative: number): void => {
