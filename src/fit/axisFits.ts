@@ -10,12 +10,21 @@ import type { FitData } from './prepareErrors.js';
 export function axisFits(data: FitData, form: Form, withDistance: boolean): AxisFits | null {
   const [east, north] = data.components;
   if (east === undefined || north === undefined) return null;
+  const added = addedBack(data.y, east, north);
   const fitted = (column: Float64Array): FormEstimate => {
-    const y = column.map((value) => value * value);
+    const y = column.map((value, i) => value * value + (added?.[i] ?? 0));
     return withDistance ? estimateForm({ y, l: data.l, w: data.w }, form) : meanAlone(y, data.w, form);
   };
   const fits = { east: fitted(east), north: fitted(north) };
   return fits.east.converged && fits.north.converged ? fits : null;
+}
+
+/**
+ * What squares hold for each axis beyond the signed components, as the variance of a setup's offset; null for rounding.
+ */
+function addedBack(y: Float64Array, east: Float64Array, north: Float64Array): Float64Array | null {
+  const added = y.map((value, i) => (value - east[i]! ** 2 - north[i]! ** 2) / 2);
+  return added.some((value, i) => Math.abs(value) > 1e-9 * y[i]!) ? added : null;
 }
 
 /** The estimate of one RMS for all lengths. */

@@ -25,6 +25,8 @@ export interface ClusterTerms {
   readonly shares: readonly Symmetric2[];
   /** M^½ g_d, g_d the score of a day. */
   readonly scores: readonly Vector2[];
+  /** M (Σ r w x x' σ²'²/μ²) M with the factors r of rows that share means; null where they share none. */
+  readonly shared: Symmetric2 | null;
 }
 
 /**
@@ -34,7 +36,7 @@ export interface ClusterTerms {
  * Pustejovsky & Tipton 2018 (from memory).
  */
 export function clusterTerms(
-  { y, l, w }: SquaredErrors,
+  { y, l, w, sharing }: SquaredErrors,
   days: readonly string[],
   p: number,
   q: number,
@@ -46,6 +48,7 @@ export function clusterTerms(
   const index = new Map(names.map((name, d) => [name, d]));
   // Columns: S00, S01, S11, g0, g1.
   const sums = new Float64Array(names.length * 5);
+  const withFactor: [number, number, number] = [0, 0, 0];
   for (let i = 0; i < y.length; i++) {
     const x = curve.regressor(l[i]!);
     const eta = p + q * x;
@@ -58,6 +61,10 @@ export function clusterTerms(
     sums[at + 2]! += v * (x / scale) ** 2;
     sums[at + 3]! += score;
     sums[at + 4]! += score * (x / scale);
+    if (sharing === undefined) continue;
+    withFactor[0] += sharing[i]! * v;
+    withFactor[1] += sharing[i]! * v * (x / scale);
+    withFactor[2] += sharing[i]! * v * (x / scale) ** 2;
   }
   const column = (k: number): number => {
     let total = 0;
@@ -70,7 +77,18 @@ export function clusterTerms(
   const scores = names.map((_, d) =>
     multiplySymmetric2Vector(breadRoot, [sums[d * 5 + 3]!, sums[d * 5 + 4]!]),
   );
-  return { scale, days: names, bread, breadRoot, shares, scores };
+  const shared = sharing === undefined ? null : sandwich(bread, withFactor);
+  return { scale, days: names, bread, breadRoot, shares, scores, shared };
+}
+
+/**
+ * Factor φ on the variance of c'(p, q) for means that rows of different days share: Σ v r / Σ v with
+ * v = w (c'M x σ²')²/μ², written as a ratio of quadratic forms. 1 where nothing is shared.
+ */
+export function sharedMeansFactor({ shared, bread, scale }: ClusterTerms, [c0, c1]: Vector2): number {
+  if (shared === null) return 1;
+  const contrast: Vector2 = [c0, c1 / scale];
+  return contrastVariance(shared, contrast) / contrastVariance(bread, contrast);
 }
 
 /** R S R for symmetric R and S. */

@@ -4,10 +4,12 @@ import type { FitComponent, Form } from './forms.js';
 import { fitWithoutEach } from './leaveOut.js';
 import { logScore, scoreGain } from './logScore.js';
 import { type FitOptions, refuseUnknownOptions, resolveFitOptions } from './options.js';
-import { prepareErrors } from './prepareErrors.js';
+import { referenceData } from './reference/referenceData.js';
 
 export interface CompareOptions<C extends FitComponent = FitComponent> {
   readonly component: C;
+  /** Default `absolute`. */
+  readonly reference?: FitOptions['reference'];
   /** Weights in [0, 1], one for each row; default 1. */
   readonly weights?: FitOptions['weights'];
 }
@@ -48,9 +50,9 @@ export function compareForms<C extends FitComponent>(
   errors: ErrorsInput,
   options: CompareOptions<C>,
 ): Comparison<C> {
-  refuseUnknownOptions(options, ['component', 'weights']);
-  const { component, weights } = resolveFitOptions(options);
-  const data = prepareErrors(errors, component, weights ?? undefined);
+  refuseUnknownOptions(options, ['component', 'reference', 'weights']);
+  const { component, reference, weights } = resolveFitOptions(options);
+  const { data } = referenceData(errors, { component, reference, weights: weights ?? undefined });
   const own = fitWithoutEach(data, data.day, 'root-sum-square');
   const other = fitWithoutEach(data, data.day, 'linear-sum');
   const axes = data.components.length;

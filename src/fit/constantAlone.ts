@@ -6,10 +6,10 @@ import type { Form } from './forms.js';
 import { varianceLimits } from './intervals.js';
 import type { FitData } from './prepareErrors.js';
 
-const UNKNOWN = { estimate: null, low: null, high: null };
-
 /** The farthest shot must be this many times as far as the nearest for mm and ppm to be told apart. */
 const LEAST_LENGTH_RATIO = 3;
+
+const UNKNOWN = { estimate: null, low: null, high: null };
 
 /** @param l squared lengths */
 export function tooAlike(l: Float64Array, w?: Float64Array): boolean {
@@ -33,8 +33,9 @@ export function constantAlone(
   'fitted' | 'informationNumber' | 'uncertainty' | 'constantMm' | 'ppm' | 'ppmIfIndependent' | 'interval'
 > {
   const { mean, standardError, days } = clusteredMean(data.y, data.day, data.w);
+  const error = standardError * Math.sqrt(sharedFactor(data));
   const limits = withInterval
-    ? varianceLimits({ value: mean, standardError, degreesOfFreedom: days - 1 }, confidence)
+    ? varianceLimits({ value: mean, standardError: error, degreesOfFreedom: days - 1 }, confidence)
     : null;
   return {
     fitted: meanAlone(data.y, data.w, form),
@@ -49,6 +50,17 @@ export function constantAlone(
     ppmIfIndependent: UNKNOWN,
     interval: limits === null ? 'none' : 'mean square with day clusters',
   };
+}
+
+/** Factor on the variance of the mean square for means that days share; 1 where they share none. */
+function sharedFactor({ sharing, w }: FitData): number {
+  if (sharing === undefined) return 1;
+  let [top, bottom] = [0, 0];
+  for (let i = 0; i < w.length; i++) {
+    top += w[i]! * sharing[i]!;
+    bottom += w[i]!;
+  }
+  return top / bottom;
 }
 
 export const tooAlikeNote = (): Message =>

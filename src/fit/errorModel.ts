@@ -4,6 +4,10 @@ import type { ClusterTerms } from './clusterCovariance.js';
 import type { FormEstimate, VarianceEstimate } from './estimate.js';
 import type { BASIS, Component, FitComponent, Form } from './forms.js';
 
+import type { MarkComponent } from './reference/markComponent.js';
+import type { SetupSeparation } from './reference/relative.js';
+import type { MarkDay } from './reference/repeatability.js';
+
 /** An estimate with the limits of its interval; null is what the data cannot defend, and a note says why. */
 export interface EstimateWithLimits {
   readonly estimate: number | null;
@@ -11,13 +15,19 @@ export interface EstimateWithLimits {
   readonly high: number | null;
 }
 
-/** What error is counted from. */
-export type Reference = 'absolute';
+/**
+ * What error is counted from: `absolute` the published coordinates; `repeatability` the mean of the mark's other days, or
+ * how well a position is found again; `relative` the offset common to its base setup.
+ */
+export type Reference = 'absolute' | 'repeatability' | 'relative';
 
 /** The uncertainty behind the intervals of a fit with a distance term; null in a model of the constant alone. */
 export interface ModelUncertainty {
   readonly terms: ClusterTerms;
-  /** CR3 covariance of the parameters (p, q) of the form. */
+  /**
+   * CR3 covariance of the parameters (p, q) of the form, without the factor of shared means; take standard errors from
+   * contrastEstimate.
+   */
   readonly covariance: Symmetric2;
 }
 
@@ -26,6 +36,21 @@ export interface AxisFits {
   readonly east: FormEstimate;
   readonly north: FormEstimate;
 }
+
+/** What a fit of repeatability found beside the model. */
+export interface RepeatabilityTerms {
+  /** Correlation of occupations of one mark on one day. */
+  readonly rho: number;
+  /** Factor on the variance of p and of q for the means that days share; null in a model without intervals. */
+  readonly sharedMeans: { readonly constant: number; readonly ppm: number } | null;
+  /** Occupations on marks with a single counting day. */
+  readonly setAside: number;
+  /** The means of all marks and days, from which the marks' own errors can be found. */
+  readonly markDays: readonly MarkDay[];
+}
+
+/** The offsets of the base setups without the errors they were taken from. */
+export type SetupSummary = Omit<SetupSeparation, 'data' | 'setAside' | 'onLoneMarks'>;
 
 /** The own error model of one component: σ² = a² + b² L², or σ = a + b L. */
 export interface ErrorModel<C extends FitComponent = Component> {
@@ -59,6 +84,12 @@ export interface ErrorModel<C extends FitComponent = Component> {
   readonly marks: number | null;
   readonly shortestKm: number;
   readonly longestKm: number;
+  /** Null unless the reference is repeatability, or the model is composed from one. */
+  readonly repeatability: RepeatabilityTerms | null;
+  /** The setups' offsets; null unless the reference is `relative`. */
+  readonly setups: SetupSummary | null;
+  /** The marks' own errors in a composed absolute model, whose constant holds them; null elsewhere. */
+  readonly markComponent: MarkComponent | null;
   /** What a reader must know before using the numbers. */
   readonly notes: readonly Message[];
 }

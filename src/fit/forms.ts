@@ -15,6 +15,9 @@ export const COMPONENT_COLUMNS = {
   north: ['north'],
 } as const satisfies Record<FitComponent, readonly string[]>;
 
+/** Axes in a squared error of the component: two of the horizontal one. */
+export const axesOf = (component: FitComponent): number => COMPONENT_COLUMNS[component].length;
+
 /** What σ of a component is. */
 export const BASIS = {
   horizontal: 'radial RMS',

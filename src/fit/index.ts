@@ -7,15 +7,18 @@ export {
   degreesOfFreedom,
   dominantDay,
   naiveCovariance,
+  sharedMeansFactor,
 } from './clusterCovariance.js';
 export { type CompareOptions, type Comparison, compareForms, type DayScore } from './compareForms.js';
-export { type CurvePoint, errorCurve, sigmaAtMm, sigmaUpperLimitMm } from './errorCurve.js';
+export { type CurvePoint, errorCurve, sigmaAtMm, sigmaLimitsMm, sigmaUpperLimitMm } from './errorCurve.js';
 export type {
   AxisFits,
   ErrorModel,
   EstimateWithLimits,
   ModelUncertainty,
   Reference,
+  RepeatabilityTerms,
+  SetupSummary,
 } from './errorModel.js';
 export {
   estimateForm,
@@ -36,10 +39,32 @@ export {
   type FormCurve,
   spreadMm,
 } from './forms.js';
+export { type CompareStudiesOptions, compareStudies, type StudyComparison } from './groups/compareStudies.js';
+export {
+  type FitByGroupOptions,
+  fitByGroup,
+  type GroupBy,
+  type GroupComparison,
+  type GroupFit,
+  type GroupVerdict,
+} from './groups/fitByGroup.js';
 export { informationNumber } from './information.js';
 export { type ContrastEstimate, contrastEstimate, varianceLimits, varianceUpperLimit } from './intervals.js';
 export { type DayInfluence, type Jackknife, jackknifeByDay } from './jackknife.js';
 export type { FitOptions } from './options.js';
+export type { FitData } from './prepareErrors.js';
+export { chooseReference, type ReferenceChoice } from './reference/chooseReference.js';
+export { type ComposedAbsolute, composeAbsolute } from './reference/composeAbsolute.js';
+export type { MarkCell } from './reference/markCells.js';
+export { type MarkComponent, type MarkError, markComponent } from './reference/markComponent.js';
+export type { MarkSupport } from './reference/markSupport.js';
+export { type MarkMeanError, markVariance, type VarianceWithLimits } from './reference/markVariance.js';
+export { type ReferencedData, type ReferenceOptions, referenceData } from './reference/referenceData.js';
+export type { SetupOffset, SetupSeparation } from './reference/relative.js';
+export type { MarkDay, Repeatability } from './reference/repeatability.js';
+export type { ScaleTrend } from './reference/scaleTrend.js';
+export { type SetupOffsets, setupOffsets } from './reference/setupOffsets.js';
+export { type MarkTest, type TestMarksOptions, testMarks } from './reference/testMarks.js';
 export { scoreLimits } from './scoreInterval.js';
 export type { FormSolution, SquaredErrors } from './scoring.js';
 export {
@@ -55,6 +80,7 @@ export {
   wrongFixShareAtKm,
 } from './screening/wrongFixGrowth.js';
 export type { WrongFixShare } from './screening/wrongFixShare.js';
+export { type SignFlipTest, signFlipTest } from './signFlips.js';
 export { fitTerms, type TermEstimate, type TermOptions, type TermsModel } from './terms/fitTerms.js';
 export type { KnownSigmas } from './terms/knownParts.js';
 export type { Term } from './terms/termData.js';

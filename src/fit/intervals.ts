@@ -1,5 +1,10 @@
 import { type Symmetric2, studentTQuantile, type Vector2 } from '../stats/index.js';
-import { type ClusterTerms, contrastVariance, degreesOfFreedom } from './clusterCovariance.js';
+import {
+  type ClusterTerms,
+  contrastVariance,
+  degreesOfFreedom,
+  sharedMeansFactor,
+} from './clusterCovariance.js';
 
 /** θ = c'(p, q), a variance or a spread, with its cluster-robust uncertainty. */
 export interface ContrastEstimate {
@@ -8,7 +13,10 @@ export interface ContrastEstimate {
   readonly degreesOfFreedom: number;
 }
 
-/** p is the contrast (1, 0), q is (0, 1), and η(L), which is σ²(L) or σ(L), is (1, x). */
+/**
+ * An estimate with the standard error of `v`, enlarged where days share means ({@link sharedMeansFactor}). p is the
+ * contrast (1, 0), q is (0, 1), and η(L), which is σ²(L) or σ(L), is (1, x).
+ */
 export function contrastEstimate(
   p: number,
   q: number,
@@ -18,7 +26,7 @@ export function contrastEstimate(
 ): ContrastEstimate {
   return {
     value: contrast[0] * p + contrast[1] * q,
-    standardError: Math.sqrt(contrastVariance(v, contrast)),
+    standardError: Math.sqrt(sharedMeansFactor(terms, contrast) * contrastVariance(v, contrast)),
     degreesOfFreedom: degreesOfFreedom(terms, contrast),
   };
 }

@@ -7,7 +7,8 @@ import type { FormEstimate } from './estimate.js';
 import { type FitComponent, FORM_CURVES } from './forms.js';
 import { type FitWithoutGroup, fitWithoutEach } from './leaveOut.js';
 import { type FitOptions, resolveFitOptions } from './options.js';
-import { type FitData, prepareErrors } from './prepareErrors.js';
+import type { FitData } from './prepareErrors.js';
+import { referenceData } from './reference/referenceData.js';
 
 /** How the ppm changes when a day is left out. */
 export interface DayInfluence {
@@ -39,8 +40,8 @@ export function jackknifeByDay<C extends FitComponent>(
   errors: ErrorsInput,
   options: FitOptions<C>,
 ): Jackknife {
-  const { component, form, confidence, weights } = resolveFitOptions(options);
-  const data = prepareErrors(errors, component, weights ?? undefined);
+  const { component, form, reference, confidence, weights } = resolveFitOptions(options);
+  const { data } = referenceData(errors, { component, reference, weights: weights ?? undefined });
   const { whole, fits } = fitWithoutEach(data, data.day, form);
   const { sigma } = FORM_CURVES[form];
   const all = whole?.converged ? sigma(whole.displayQ) : null;

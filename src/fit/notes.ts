@@ -1,10 +1,16 @@
+import { groupIndices } from '../errors/index.js';
 import { type Message, message } from '../logs/index.js';
 import { clusteredMean } from '../split/index.js';
+import type { Reference } from './errorModel.js';
 import { COMPONENT_COLUMNS, type FitComponent } from './forms.js';
 import type { FitData } from './prepareErrors.js';
+import { spreadOfMarks } from './reference/spreadOfMarks.js';
 
-/** What the data themselves say before any fit (the fit adds its own notes). */
-export function dataNotes(data: FitData, component: FitComponent): Message[] {
+/**
+ * What the data themselves say before any fit (the fit adds its own notes).
+ * @param data errors against the published coordinates, of the occupations that take part
+ */
+export function dataNotes(data: FitData, component: FitComponent, reference: Reference): Message[] {
   const notes: Message[] = [];
   const add = (code: string, text: string): void => {
     notes.push(message('warning', code, text));
@@ -42,7 +48,7 @@ export function dataNotes(data: FitData, component: FitComponent): Message[] {
       );
     }
   }
-  if (data.setup !== null && new Set(data.setup).size === 1 && days > 1) {
+  if (reference === 'absolute' && data.setup !== null && new Set(data.setup).size === 1 && days > 1) {
     notes.push(
       message(
         'info',
@@ -69,28 +75,45 @@ export function dataNotes(data: FitData, component: FitComponent): Message[] {
       ),
     );
   }
-  return [...notes, ...systematicOffset(data, component)];
+  // Other references take out what is common to all days.
+  return reference === 'absolute' ? [...notes, ...systematicOffset(data, component)] : notes;
 }
 
 /**
- * A mean error more than three standard errors from 0. The error of a mark repeats on every day, so the variance
- * between marks counts beside that between days.
+ * A mean error more than three standard errors from 0. The error of a mark repeats on every day, so the spread between
+ * marks counts beside that between days: SE² = SE_day² + s² Σ n_m²/n², s from the marks' own means where they were
+ * visited on enough days, else the scatter between marks.
  */
 function systematicOffset(data: FitData, component: FitComponent): Message[] {
   const names = COMPONENT_COLUMNS[component];
-  return data.components.flatMap((column, k) => {
+  const off = data.components.map((column) => {
     const byDay = clusteredMean(column, data.day, data.w);
-    const byMark = data.mark === null ? null : clusteredMean(column, data.mark, data.w);
-    const error = Math.hypot(byDay.standardError, byMark?.standardError ?? 0);
-    if (!(Math.abs(byDay.mean) > 3 * error)) return [];
+    return { column, ...byDay, suspect: Math.abs(byDay.mean) > 3 * byDay.standardError };
+  });
+  if (!off.some(({ suspect }) => suspect)) return [];
+  const ownMm = spreadOfMarks(data, component);
+  return off.flatMap(({ column, mean, standardError, suspect }, k) => {
+    if (!suspect) return [];
+    const error = Math.hypot(standardError, markError(data, column, ownMm));
+    if (!(Math.abs(mean) > 3 * error)) return [];
     return [
       message(
         'warning',
         'systematic-offset',
-        `The mean ${names[k]} error is ${byDay.mean.toFixed(1)} mm with a standard error of ${error.toFixed(1)} mm: a systematic offset. Check transformation, antenna heights and base coordinates; it stays in the absolute errors.`,
+        `The mean ${names[k]} error is ${mean.toFixed(1)} mm with a standard error of ${error.toFixed(1)} mm: a systematic offset. Check transformation, antenna heights and base coordinates; it stays in the absolute errors.`,
       ),
     ];
   });
+}
+
+/** Standard error of the mean from the marks' own errors: s √(Σ n_m²)/n, or the scatter between marks without s. */
+function markError({ mark, w }: FitData, column: Float64Array, ownMm: number | null): number {
+  if (mark === null) return 0;
+  // With a single mark the scatter between marks is unknown.
+  if (ownMm === null) return clusteredMean(column, mark, w).standardError || 0;
+  const weights = [...groupIndices(mark).values()].map((list) => list.reduce((sum, i) => sum + w[i]!, 0));
+  const total = weights.reduce((sum, weight) => sum + weight, 0);
+  return (ownMm * Math.sqrt(weights.reduce((sum, weight) => sum + weight ** 2, 0))) / total;
 }
 
 function mostFrequent(list: readonly string[]): { name: string; count: number } {

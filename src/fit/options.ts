@@ -1,4 +1,5 @@
 import { inputError, suggestion } from '../logs/index.js';
+import type { Reference } from './errorModel.js';
 import { COMPONENT_COLUMNS, type Component, type FitComponent, FORM_CURVES, type Form } from './forms.js';
 
 export interface FitOptions<C extends FitComponent = Component> {
@@ -6,7 +7,7 @@ export interface FitOptions<C extends FitComponent = Component> {
   /** Default `root-sum-square`. */
   readonly form?: Form | undefined;
   /** Default `absolute`: errors against the published coordinates. */
-  readonly reference?: 'absolute' | undefined;
+  readonly reference?: Reference | undefined;
   /** Level of the two-sided intervals; default 0.95. */
   readonly confidence?: number | undefined;
   /** Let suspected wrong fixes count less, found in the errors themselves (needs all three); default false. */
@@ -19,12 +20,13 @@ export interface FitOptions<C extends FitComponent = Component> {
 export interface ResolvedFitOptions<C extends FitComponent = Component> {
   readonly component: C;
   readonly form: Form;
-  readonly reference: 'absolute';
+  readonly reference: Reference;
   readonly confidence: number;
   readonly screen: boolean;
   readonly weights: Float64Array | null;
 }
 
+const REFERENCES: readonly Reference[] = ['absolute', 'repeatability', 'relative'];
 const KNOWN_OPTIONS = ['component', 'form', 'reference', 'confidence', 'screen', 'weights'];
 
 /** @throws InputError that names the option, what was expected and what came */
@@ -38,7 +40,9 @@ export function resolveFitOptions<C extends FitComponent>(options: FitOptions<C>
   if (!Object.hasOwn(FORM_CURVES, form)) {
     throw badOption('form', '"root-sum-square" or "linear-sum"', form);
   }
-  if (reference !== 'absolute') throw badOption('reference', '"absolute"', reference);
+  if (!REFERENCES.includes(reference)) {
+    throw badOption('reference', '"absolute", "repeatability" or "relative"', reference);
+  }
   if (!(confidence > 0.5 && confidence < 1)) {
     throw badOption('confidence', 'a number between 0.5 and 1', confidence);
   }

@@ -79,6 +79,7 @@ export function prepareErrors(errors: ErrorsInput, component: FitComponent, weig
     ...values,
     ...(starts === null ? [] : [starts]),
     ...(weights === undefined ? [] : [weights]),
+    ...(marks === null ? [] : [rankOf(marks)]),
   ]);
   const pick = (list: readonly string[] | null): string[] | null => list && textsOf(order, list);
   return {
@@ -107,4 +108,29 @@ function textsOf(order: Int32Array, texts: readonly string[]): string[] {
   const picked: string[] = [];
   for (const row of order) picked.push(texts[row]!);
   return picked;
+}
+
+/** Place of each name in the order of names. */
+function rankOf(names: readonly string[]): Int32Array {
+  const rank = new Map([...new Set(names)].sort().map((name, k) => [name, k]));
+  return Int32Array.from(names, (name) => rank.get(name)!);
+}
+
+/** The same data with the given entries only, in their order. */
+export function pickEntries(data: FitData, kept: readonly number[]): FitData {
+  const pick = (list: readonly string[] | null): string[] | null => list && kept.map((i) => list[i]!);
+  const numbers = (column: Float64Array): Float64Array => Float64Array.from(kept, (i) => column[i]!);
+  return {
+    ...data,
+    y: numbers(data.y),
+    l: numbers(data.l),
+    w: numbers(data.w),
+    day: kept.map((i) => data.day[i]!),
+    components: data.components.map(numbers),
+    mark: pick(data.mark),
+    setup: pick(data.setup),
+    startMs: data.startMs && numbers(data.startMs),
+    rows: Int32Array.from(kept, (i) => data.rows[i]!),
+    ...(data.sharing === undefined ? {} : { sharing: numbers(data.sharing) }),
+  };
 }

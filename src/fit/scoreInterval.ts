@@ -76,10 +76,11 @@ class DayScore {
 
   at(q: number, start: number): number {
     const { x, dayOf, groups, curve } = this;
-    const { y, w } = this.data;
+    const { y, w, sharing } = this.data;
     const p = this.constantFor(q, start);
     const g1 = new Float64Array(groups);
     const g2 = new Float64Array(groups);
+    const information = new Float64Array(y.length);
     let [h11, h12] = [0, 0];
     for (let i = 0; i < y.length; i++) {
       const eta = p + q * x[i]!;
@@ -88,6 +89,7 @@ class DayScore {
       const score = (v * (y[i]! - mu)) / slope;
       g1[dayOf[i]!]! += score;
       g2[dayOf[i]!]! += score * x[i]!;
+      information[i] = v;
       h11 += v;
       h12 += v * x[i]!;
     }
@@ -95,7 +97,8 @@ class DayScore {
     const total = h.reduce((sum, value) => sum + value, 0);
     const mean = total / groups;
     const spread = h.reduce((sum, value) => sum + (value - mean) ** 2, 0);
-    return total / Math.sqrt((groups / (groups - 1)) * spread);
+    const factor = sharing === undefined ? 1 : scoreFactor(x, information, sharing, h12 / h11);
+    return total / Math.sqrt(factor * (groups / (groups - 1)) * spread);
   }
 
   /** p that solves Σ w σ²' (y - μ)/μ² = 0 for a given q, by bisection: the sum falls as p grows near the solution. */
@@ -123,4 +126,15 @@ class DayScore {
     }
     return (low + high) / 2;
   }
+}
+
+/** The factor for shared means (see sharedMeansFactor) of the score of q freed of the constant. */
+function scoreFactor(x: Float64Array, v: Float64Array, sharing: Float64Array, center: number): number {
+  let [top, bottom] = [0, 0];
+  for (let i = 0; i < x.length; i++) {
+    const own = v[i]! * (x[i]! - center) ** 2;
+    top += own * sharing[i]!;
+    bottom += own;
+  }
+  return top / bottom;
 }

@@ -8,6 +8,11 @@ export interface SquaredErrors {
   /** Squared baseline length, km². */
   readonly l: Float64Array;
   readonly w: Float64Array;
+  /**
+   * Factor on the variance of each row's score where rows of different days share a mean that was taken out of them;
+   * absent where they share none.
+   */
+  readonly sharing?: Float64Array | undefined;
 }
 
 /** Parameters (p, q) of a form, σ² a function of p + q x, see FormCurve. */

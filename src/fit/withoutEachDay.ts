@@ -2,7 +2,7 @@ import { type ErrorsInput, errorColumns } from '../errors/index.js';
 import { type FitComponent, FORM_CURVES } from './forms.js';
 import { fitWithoutEach } from './leaveOut.js';
 import { type FitOptions, resolveFitOptions } from './options.js';
-import { prepareErrors } from './prepareErrors.js';
+import { referenceData } from './reference/referenceData.js';
 
 /** The fit without one day; null where the other days cannot tell mm and ppm apart. */
 export interface FitWithoutDay {
@@ -20,7 +20,7 @@ export interface FitWithoutMark {
 
 /**
  * The point estimate with each day left out in turn (delete-one-day jackknife): shows which days carry the result.
- * Weights are kept; nothing is screened again.
+ * Weights and the means that a reference takes out are kept; nothing is screened again.
  * @throws InputError as fitErrorModel
  */
 export function fitWithoutEachDay(errors: ErrorsInput, options: FitOptions<FitComponent>): FitWithoutDay[] {
@@ -36,9 +36,9 @@ export function fitWithoutEachMark(errors: ErrorsInput, options: FitOptions<FitC
 }
 
 function leftOut(errors: ErrorsInput, options: FitOptions<FitComponent>, column: 'day' | 'mark') {
-  const { component, form, weights } = resolveFitOptions(options);
+  const { component, form, reference, weights } = resolveFitOptions(options);
   const names = errorColumns(errors).texts(column, `fits without each ${column}`);
-  const data = prepareErrors(errors, component, weights ?? undefined);
+  const { data } = referenceData(errors, { component, reference, weights: weights ?? undefined });
   const keys = Array.from(data.rows, (row) => names[row]!);
   const { sigma } = FORM_CURVES[form];
   return fitWithoutEach(data, keys, form).fits.map(({ group: { name }, fitted }) => ({

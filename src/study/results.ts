@@ -1,5 +1,5 @@
 import type { CommonCauses, StaticShots } from '../errors/index.js';
-import type { Component, EstimateWithLimits, Form } from '../fit/index.js';
+import type { Component, EstimateWithLimits, Form, Reference } from '../fit/index.js';
 import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
 import type { Rule, SpecSheet } from '../rule/index.js';
 import type { Interval, MarkMean } from '../split/index.js';
@@ -7,7 +7,7 @@ import type { Interval, MarkMean } from '../split/index.js';
 /** One fitted model, as `results.json` states it. */
 export interface FitResult {
   readonly component: Component;
-  readonly reference: 'absolute';
+  readonly reference: Reference;
   /** Whether the constant was put together from repeatability and the marks' own errors. */
   readonly composed: boolean;
   readonly form: Form;

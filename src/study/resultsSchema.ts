@@ -21,7 +21,7 @@ const message = z.strictObject({
 
 const fit = z.strictObject({
   component,
-  reference: z.literal('absolute'),
+  reference: z.enum(['absolute', 'repeatability', 'relative']),
   composed: z.boolean(),
   form,
   screened: z.boolean(),

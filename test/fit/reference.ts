@@ -34,7 +34,7 @@ export function referenceErrors(name: string): ReferenceRow[] {
       day,
       base,
       mark,
-      setup: `${base} ${day}`,
+      setup: `${day} ${base}`,
       startMs: Date.parse(`${day}T${time}Z`),
       baselineKm: Number(km),
       east: Number(east),
@@ -47,4 +47,9 @@ export function referenceErrors(name: string): ReferenceRow[] {
 // biome-ignore lint/suspicious/noExplicitAny: the file holds whatever R wrote, and tests name the fields
 export function referenceFits(name: string): any {
   return JSON.parse(readFileSync(new URL(`${name}.json`, FOLDER), 'utf8')).reference;
+}
+
+/** Rows, from 1, that the generator of a data set spoilt by a wrong fix. */
+export function referenceWrongFixes(name: string): readonly number[] {
+  return JSON.parse(readFileSync(new URL(`${name}.json`, FOLDER), 'utf8')).truth.wrong_fix_rows_1based;
 }
