@@ -27,6 +27,21 @@ export {
   fittedSigmaMm,
   type VarianceEstimate,
 } from './estimate.js';
+export { daysWithFarShots, type FarDays, type FarDaysOptions } from './evidence/daysWithFarShots.js';
+export { type FirstAndLast, type FirstAndLastOptions, firstAndLast } from './evidence/firstAndLast.js';
+export {
+  type DistanceCompanion,
+  type DistanceCompanions,
+  goesWithDistance,
+} from './evidence/goesWithDistance.js';
+export {
+  type InformationBy,
+  type InformationShare,
+  type InformationShares,
+  informationShares,
+} from './evidence/informationShares.js';
+export type { RmsRatio } from './evidence/ratioOfMeanSquares.js';
+export { type ReshotOptions, type Reshots, reshots } from './evidence/reshots.js';
 export { fitErrorModel } from './fitErrorModel.js';
 export {
   type Axis,

@@ -5,6 +5,7 @@
 import { benchDemo } from './demo.js';
 import { benchFit } from './fit.js';
 import { benchFuzz } from './fuzz.js';
+import { benchGroups } from './groups.js';
 import { benchIonosphere } from './ionosphere.js';
 import { benchRead } from './read.js';
 
@@ -13,6 +14,7 @@ const PARTS = {
   read: benchRead,
   fit: benchFit,
   fuzz: benchFuzz,
+  groups: benchGroups,
   ionosphere: benchIonosphere,
 };
 
