@@ -243,6 +243,11 @@ describe('what repeatability needs', () => {
     expect(only(4).model).not.toBeNull();
     expect(only(4).notes.map(({ code }) => code)).toContain('mark-component-indicative');
   });
+  it('composes only the root-sum-square form', () => {
+    const linear = fitErrorModel(simulated, { ...OPTIONS, form: 'linear-sum' });
+    expect(linear.repeatability!.rho).toBe(fitErrorModel(simulated, OPTIONS).repeatability!.rho);
+    expect(() => composeAbsolute(linear)).toThrow('the errors of marks add to its square only');
+  });
   it('composes only from repeatability', () => {
     expect(() => composeAbsolute(fitErrorModel(simulated, { component: 'vertical' }))).toThrow(
       'Expected a fit of reference "repeatability"',
