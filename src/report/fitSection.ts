@@ -3,7 +3,7 @@ import type { FitResult, LengthClass, Results } from '../study/index.js';
 import { count, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
 import { type Html, html } from './html.js';
 import { type Column, table } from './table.js';
-import { componentTitle } from './words.js';
+import { componentTitle, REFERENCE_WORDS, shownFits } from './words.js';
 
 /** How the errors grow with distance: charts, fitted models and what was measured by length. */
 export function fitSection(
@@ -15,8 +15,8 @@ export function fitSection(
     return html`<section id="fit"><h2>How errors grow with distance</h2><p>No fit was possible.</p></section>\n`;
   return html`<section id="fit"><h2>How errors grow with distance</h2>
 ${charts.horizontal}${charts.vertical}${manyTolerances(results)}
-${fitTable(fits)}
-${fits.map(fitRemarks)}
+${fitTable(shownFits(results))}
+${shownFits(results).map(fitRemarks)}
 ${lengthTable(lengthClasses, specSheet)}
 </section>
 `;
@@ -27,10 +27,17 @@ const FORMULAS = {
   'linear-sum': 'spread = constant + ppm × distance',
 } as const;
 
+const COUNTED_FROM = {
+  absolute: 'published coordinates',
+  repeatability: "the mark's other days",
+  relative: "the setup's offset",
+} as const;
+
 function fitTable(fits: readonly FitResult[]): Html {
   const level = percent(fits[0]!.confidence);
   const columns: Column<FitResult>[] = [
     { head: 'Component', cell: ({ component }) => componentTitle(component), text: true },
+    { head: 'Counted from', cell: ({ reference }) => COUNTED_FROM[reference], text: true },
     { head: 'Constant, mm', cell: ({ constantMm }) => withLimits(constantMm, mm) },
     { head: 'ppm, mm per km', cell: (fit) => withLimits(fit.ppm, ppm) },
     { head: 'Spread is', cell: ({ basis }) => basis, text: true },
@@ -54,8 +61,7 @@ function fitRemarks(fit: FitResult): Html {
     fit.mostInfluentialDay === null
       ? null
       : html` The day that moves the ppm most is ${fit.mostInfluentialDay.day}: without it the ppm is ${ppm(fit.mostInfluentialDay.ppmWithout)}.`;
-  return html`<p class="small">${componentTitle(fit.component)}: interval by ${fit.interval}; errors counted from the
-published coordinates (${fit.reference}).${independent}${influential}</p>
+  return html`<p class="small">${componentTitle(fit.component)}: ${REFERENCE_WORDS[fit.reference]}; interval by ${fit.interval}.${independent}${influential}</p>
 `;
 }
 

@@ -7,6 +7,7 @@ import {
   otherFilesWords,
   ruleSentence,
   setAsideWords,
+  shownFits,
   spoiling,
   whyNoRule,
 } from './words.js';
@@ -20,7 +21,7 @@ export function summaryText(results: Results): string {
     ...results.rules.map(ruleSentence),
     ...(results.rules.length === 0 ? [`There is no rule: ${whyNoRule(results)}.`] : []),
     '',
-    ...results.fits.map(fitSentence),
+    ...shownFits(results).map(fitSentence),
     ...(results.fits.length === 0 ? ['No fit.'] : []),
     '',
     ...accountLines(results),

@@ -44,16 +44,23 @@ const ERROR_COLUMNS: readonly [head: string, cell: (error: OccupationError) => C
 ];
 
 /** Every table of a run. */
-export function reportTables({ errors, setAside, visits, results }: StudyRun): ReportTable[] {
+export function reportTables({ errors, weights, setAside, visits, results }: StudyRun): ReportTable[] {
   const { fits, rules, marks, lengthClasses, messages } = results;
   const errorHeads = ERROR_COLUMNS.map(([head]) => head);
   const errorCells = (error: OccupationError): Cell[] => ERROR_COLUMNS.map(([, cell]) => cell(error));
   return [
-    { name: 'errors', header: errorHeads, rows: errors.map(errorCells) },
+    {
+      name: 'errors',
+      header: [...errorHeads, 'weight'],
+      // Suspected wrong fixes stand among the occupations that are set aside.
+      rows: errors.flatMap((error, i) =>
+        weights[i]! < 0.5 ? [] : [[...errorCells(error), digits(weights[i]!, 4)]],
+      ),
+    },
     {
       name: 'set-aside-occupations',
-      header: ['reason', ...errorHeads],
-      rows: setAside.map(({ reason, error }) => [reason, ...errorCells(error)]),
+      header: ['reason', 'detail', ...errorHeads],
+      rows: setAside.map(({ reason, detail, error }) => [reason, detail, ...errorCells(error)]),
     },
     {
       name: 'visits-without-fix',
@@ -67,7 +74,10 @@ export function reportTables({ errors, setAside, visits, results }: StudyRun): R
       header: [
         'component',
         'reference',
+        'composed',
         'form',
+        'screened',
+        'basisOfRule',
         'basis',
         'confidence',
         'constantMm',
@@ -84,7 +94,10 @@ export function reportTables({ errors, setAside, visits, results }: StudyRun): R
       rows: fits.map((f) => [
         f.component,
         f.reference,
+        f.composed,
         f.form,
+        f.screened,
+        f.basisOfRule,
         f.basis,
         f.confidence,
         f.constantMm.estimate,

@@ -80,6 +80,24 @@ export const whyNoRule = ({ fits }: Results): string =>
 
 const ADDED = { 'root-sum-square': 'added as squares', 'linear-sum': 'added as they are' } as const;
 
+/**
+ * The fits that a reader needs: of each component the one behind the rules, and beside it that against the published
+ * coordinates where the two differ. The others stand in the tables.
+ */
+export const shownFits = ({ fits }: Pick<Results, 'fits'>): FitResult[] =>
+  fits.filter(({ basisOfRule, component, reference, form, screened }) => {
+    if (basisOfRule) return true;
+    const basis = fits.find((fit) => fit.basisOfRule && fit.component === component)!;
+    return reference === 'absolute' && form === basis.form && screened === basis.screened;
+  });
+
+/** What errors are counted from, in a surveyor's words. */
+export const REFERENCE_WORDS: Readonly<Record<FitResult['reference'], string>> = {
+  absolute: 'against the published coordinates',
+  repeatability: 'repeatability: how well a position is found again on another day',
+  relative: "relative to each setup's common offset",
+};
+
 /** A fit as one sentence. */
 export function fitSentence(fit: FitResult): string {
   const level = percent(fit.confidence);
@@ -89,7 +107,7 @@ export function fitSentence(fit: FitResult): string {
     distance === NOT_GIVEN
       ? `${constant} at all distances in the data`
       : `${constant} and ${distance} ppm, ${ADDED[fit.form]}`;
-  return `${componentTitle(fit.component)}: ${form} (${fit.basis}; ${level} intervals in brackets).`;
+  return `${componentTitle(fit.component)}, ${REFERENCE_WORDS[fit.reference]}: ${form} (${fit.basis}; ${level} intervals in brackets).`;
 }
 
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

@@ -1,19 +1,60 @@
 import type { OccupationError } from '../errors/index.js';
-import { type Component, type ErrorModel, fitErrorModel, fitWithoutEachDay } from '../fit/index.js';
+import {
+  type Comparison,
+  type Component,
+  chooseReference,
+  compareForms,
+  composeAbsolute,
+  type ErrorModel,
+  type Form,
+  fitErrorModel,
+  type MarkComponent,
+  type MarkTest,
+  type Reference,
+  type ReferenceChoice,
+  testMarks,
+} from '../fit/index.js';
 import { InputError, type Message, message } from '../logs/index.js';
-import type { FitResult } from './results.js';
+import { randomStream } from '../stats/index.js';
 import type { Study } from './study.js';
 
-const COMPONENTS: readonly Component[] = ['horizontal', 'vertical'];
+/** One model that could be fitted. */
+export interface FittedModel {
+  readonly model: ErrorModel;
+  /** Its constant was put together from repeatability and the marks' own errors. */
+  readonly composed: boolean;
+}
 
-/** Fits each component that the errors hold; a component that cannot be fitted leaves a message. */
+/** All that is fitted to the errors of one component. */
+export interface ComponentFits {
+  readonly component: Component;
+  /** The fit on which the rules rest. */
+  readonly basis: ErrorModel;
+  /** Every reference, form, with and without screening; the basis is one of them. */
+  readonly fits: readonly FittedModel[];
+  readonly comparison: Comparison;
+  /** The marks' own errors and their test; null where marks hardly repeat. */
+  readonly markComponent: MarkComponent | null;
+  readonly markTest: MarkTest | null;
+}
+
+const COMPONENTS: readonly Component[] = ['horizontal', 'vertical'];
+const REFERENCES: readonly Reference[] = ['repeatability', 'absolute', 'relative'];
+const FORMS: readonly Form[] = ['root-sum-square', 'linear-sum'];
+
+/**
+ * Fits each component that the errors hold, from every reference and in both forms; a component that cannot be fitted
+ * leaves a message.
+ * @param weights of a screening, one for each error; null without one
+ */
 export function fitComponents(
   errors: readonly OccupationError[],
-  { confidence }: Study,
-): { models: ErrorModel[]; messages: Message[] } {
+  weights: Float64Array | null,
+  study: Study,
+): { components: ComponentFits[]; messages: Message[] } {
   if (errors.length === 0) {
     return {
-      models: [],
+      components: [],
       messages: [
         message(
           'error',
@@ -23,63 +64,94 @@ export function fitComponents(
       ],
     };
   }
-  const models: ErrorModel[] = [];
+  const components: ComponentFits[] = [];
   const messages: Message[] = [];
   for (const component of COMPONENTS) {
     try {
-      const model = fitErrorModel(errors, { component, confidence });
-      models.push(model);
-      messages.push(...model.notes.map((note) => ({ ...note, text: `${title(component)}: ${note.text}` })));
+      const { fits, told } = fitComponent(errors, weights, component, study);
+      components.push(fits);
+      messages.push(...told.map((note) => ({ ...note, text: `${title(component)}: ${note.text}` })));
     } catch (error) {
       if (!(error instanceof InputError)) throw error;
       messages.push(...error.messages);
     }
   }
-  return { models, messages };
+  return { components, messages };
 }
 
 const title = (component: Component): string => (component === 'horizontal' ? 'Horizontal' : 'Vertical');
 
-/** A model as the results state it. */
-export function fitResult(model: ErrorModel, errors: readonly OccupationError[]): FitResult {
-  const { component, reference, form, screened, basis, confidence, constantMm, ppm, ppmIfIndependent } =
-    model;
-  const { interval, informationNumber, occupations, days, marks, shortestKm, longestKm, notes } = model;
+function fitComponent(
+  errors: readonly OccupationError[],
+  weights: Float64Array | null,
+  component: Component,
+  { reference: wanted, form: basisForm, confidence, seed }: Study,
+): { fits: ComponentFits; told: Message[] } {
+  const screened = weights === null ? {} : { weights };
+  const choice = chooseReference(errors, { component, ...screened });
+  const reference = wanted === 'auto' ? choice.reference : wanted;
+  const basis = fitErrorModel(errors, { component, form: basisForm, reference, confidence, ...screened });
+  const common = { component, confidence };
+  const others = FORMS.flatMap((form) =>
+    [...(weights === null ? [] : [screened]), {}].flatMap((screening) =>
+      REFERENCES.flatMap((each): FittedModel[] => {
+        const isBasis = form === basisForm && each === reference && screening === screened;
+        if (isBasis) return [{ model: basis, composed: false }];
+        return possibleFits(errors, { ...common, ...screening, form, reference: each }, choice);
+      }),
+    ),
+  );
+  const repeated = others.find(
+    ({ model }) =>
+      model.reference === 'repeatability' &&
+      model.form === 'root-sum-square' &&
+      model.screened === basis.screened,
+  );
+  const marks = repeated === undefined ? null : markErrors(repeated.model, seed);
+  const comparison = compareForms(errors, { component, reference, ...screened });
   return {
-    component,
-    reference,
-    composed: false,
-    form,
-    screened,
-    basisOfRule: true,
-    basis,
-    confidence,
-    constantMm,
-    ppm,
-    ppmIfIndependent,
-    interval,
-    informationNumber,
-    occupations,
-    days,
-    marks,
-    shortestKm,
-    longestKm,
-    mostInfluentialDay: mostInfluentialDay(model, errors),
-    notes: notes.map(({ text }) => text),
+    fits: {
+      component,
+      basis,
+      fits: others,
+      comparison,
+      markComponent: marks?.component ?? null,
+      markTest: marks?.test ?? null,
+    },
+    told: [
+      ...(wanted === 'auto' ? [choice.message] : []),
+      ...basis.notes,
+      ...comparison.notes,
+      ...(marks?.component.notes ?? []),
+      ...(marks?.test.notes ?? []),
+    ],
   };
 }
 
-function mostInfluentialDay(
-  { component, uncertainty, ppm }: ErrorModel,
+/** A fit beside the basis: what the data do not allow is left out, for the basis has told of it. */
+function possibleFits(
   errors: readonly OccupationError[],
-): FitResult['mostInfluentialDay'] {
-  if (uncertainty === null || ppm.estimate === null) return null;
-  let most: FitResult['mostInfluentialDay'] = null;
-  const change = (without: number): number => Math.abs(without - ppm.estimate!);
-  for (const { day, ppm: without } of fitWithoutEachDay(errors, { component })) {
-    if (without !== null && (most === null || change(without) > change(most.ppmWithout))) {
-      most = { day, ppmWithout: without };
+  options: Parameters<typeof fitErrorModel<Component>>[1],
+  choice: ReferenceChoice,
+): FittedModel[] {
+  try {
+    if (
+      options.reference === 'absolute' &&
+      options.form === 'root-sum-square' &&
+      choice.reference === 'repeatability'
+    ) {
+      const { model } = composeAbsolute(fitErrorModel(errors, { ...options, reference: 'repeatability' }));
+      if (model !== null) return [{ model, composed: true }];
     }
+    return [{ model: fitErrorModel(errors, options), composed: false }];
+  } catch (error) {
+    if (error instanceof InputError) return [];
+    throw error;
   }
-  return most;
+}
+
+/** The marks' own errors and whether they are more than their days explain. */
+function markErrors(model: ErrorModel, seed: number): { component: MarkComponent; test: MarkTest } | null {
+  const { markComponent } = composeAbsolute(model);
+  return { component: markComponent, test: testMarks(model, { random: randomStream(seed) }) };
 }

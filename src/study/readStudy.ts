@@ -64,7 +64,7 @@ export async function readStudy(path: string): Promise<Study> {
     period: settings.period ?? null,
     gapSeconds: settings.occupations.gapSeconds,
     windowSeconds: settings.occupations.windowSeconds ?? null,
-    confidence: settings.model.confidence,
+    ...settings.model,
     tolerances: settings.tolerances.map(tolerance),
     specSheet: settings.specSheet === undefined ? null : specSheet(settings.specSheet),
     leaveOutDays: settings.leaveOutDays,

@@ -9,6 +9,7 @@ const nullable = z.number().nullable();
 const limits = z.strictObject({ estimate: nullable, low: nullable, high: nullable });
 const interval = z.strictObject({ estimate: z.number(), low: nullable, high: nullable });
 const day = z.string();
+const axes = z.strictObject({ east: nullable, north: nullable, up: nullable });
 
 const message = z.strictObject({
   code: z.string().describe('Stable name of the kind of message.'),
@@ -17,6 +18,15 @@ const message = z.strictObject({
   file: z.string().nullable(),
   row: count.nullable().describe('Line of the file, from 1, the header included.'),
   column: z.string().nullable(),
+});
+
+const signedPpm = z.strictObject({
+  ppm: z.number(),
+  low: z.number(),
+  high: z.number(),
+  pValue: z.number(),
+  degreesOfFreedom: count,
+  significant: z.boolean(),
 });
 
 const fit = z.strictObject({
@@ -32,6 +42,19 @@ const fit = z.strictObject({
   ppm: limits.describe('Root-mean-square over the days observed, mm per km.'),
   ppmIfIndependent: limits.describe('If every shot were independent: too narrow.'),
   interval: z.string(),
+  medianDayPpm: limits
+    .nullable()
+    .describe('Of which half of the days are worse; null where days cannot be judged.'),
+  wrongFixShare: z
+    .strictObject({
+      events: count,
+      estimate: z.number(),
+      low: z.number(),
+      high: z.number(),
+      atKm: z.array(z.strictObject({ baselineKm: z.number(), estimate: z.number(), high: z.number() })),
+    })
+    .nullable(),
+  signedPpm: signedPpm.nullable().describe("Signed growth of the marks' mean errors: no part of the ppm."),
   informationNumber: z.number(),
   occupations: count,
   days: count,
@@ -64,7 +87,54 @@ const mark = z.strictObject({
   east: nullable,
   north: nullable,
   up: nullable,
-  se: z.strictObject({ east: nullable, north: nullable, up: nullable }),
+  se: axes,
+  standsOut: z.strictObject({ horizontal: z.boolean(), vertical: z.boolean() }),
+});
+
+const comparison = z.strictObject({
+  component,
+  against: z.literal('linear-sum'),
+  gain: nullable.describe('Log score per shot that root-sum-square gains on unseen days.'),
+  se: nullable,
+  days: count,
+  verdict: z.enum(['root-sum-square', 'linear-sum', 'cannot be told apart']),
+});
+
+const setup = z.strictObject({
+  setup: z.string(),
+  visits: count,
+  east: nullable,
+  north: nullable,
+  up: nullable,
+  se: axes,
+  separable: z.boolean(),
+  reason: z.string().nullable(),
+});
+
+const markComponent = z.strictObject({
+  component,
+  marks: count,
+  standing: z.enum(['given', 'indicative', 'too few marks']),
+  sigmaMm: limits.describe("Spread of the marks' own errors per axis."),
+  signedPpm: signedPpm.nullable(),
+  differPValue: nullable,
+  anyPValue: nullable,
+  spreadMm: nullable,
+  standOut: z.array(z.string()),
+});
+
+const wrongFix = z.strictObject({
+  day,
+  mark: z.string(),
+  rover: z.string(),
+  crew: z.string(),
+  baselineKm: z.number(),
+  east: nullable,
+  north: nullable,
+  up: nullable,
+  probability: z.number(),
+  file: z.string(),
+  row: count,
 });
 
 const rule = z.strictObject({
@@ -148,6 +218,10 @@ export const resultsSchema = z.strictObject({
   period: z.strictObject({ from: day, to: day }).nullable(),
   bases: z.array(z.string()),
   fits: z.array(fit),
+  comparison: z.array(comparison),
+  setups: z.array(setup),
+  markComponents: z.array(markComponent),
+  wrongFixes: z.array(wrongFix),
   lengthClasses: z.array(lengthClass),
   marks: z.array(mark),
   rules: z.array(rule),

@@ -11,14 +11,15 @@ import {
 import type { ErrorModel } from '../fit/index.js';
 import { type Message, readLogs, type SetAsideRow } from '../logs/index.js';
 import { maximumBaseline, noRule } from '../rule/index.js';
-import { markMeans } from '../split/index.js';
 import { causeMessages } from './causeMessages.js';
-import { fitComponents, fitResult } from './fitComponents.js';
+import { fitComponents } from './fitComponents.js';
+import { fitResults, markResults } from './fitResults.js';
 import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
 import { loadControl } from './loadControl.js';
 import { readAs } from './readAs.js';
 import type { Results } from './results.js';
+import { screenStudy, suspects, withSuspects, wrongFixResults } from './screenStudy.js';
 import type { Study } from './study.js';
 import { summarizeRun } from './summarizeRun.js';
 
@@ -41,6 +42,9 @@ export interface StudyErrors {
 
 /** A whole run: the results and the tables they rest on. */
 export interface StudyRun extends StudyErrors {
+  /** What each of the errors counts in the fits; all 1 without screening. Below one half it is a suspected wrong fix. */
+  readonly weights: Float64Array;
+  /** The fits on which the rules rest, one a component. */
   readonly models: readonly ErrorModel[];
 }
 
@@ -88,25 +92,33 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
 export async function runStudy(study: Study, options: RunOptions = {}): Promise<StudyRun> {
   const read = await readStudyErrors(study, options);
   const { errors } = read;
-  const { models, messages } = fitComponents(errors, study);
+  const wrongFixes = screenStudy(errors, study);
+  const weights = wrongFixes?.weights ?? null;
+  const { components, messages } = fitComponents(errors, weights, study);
+  const models = components.map(({ basis }) => basis);
+  const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
   const rules = study.tolerances.map((tolerance) => {
     const model = models.find(({ component }) => component === tolerance.component);
-    if (model !== undefined) return maximumBaseline(errors, model, tolerance);
-    return noRule(errors, tolerance, `no fit of the ${tolerance.component} component was possible`);
+    if (model !== undefined) return maximumBaseline(used, model, tolerance);
+    return noRule(used, tolerance, `no fit of the ${tolerance.component} component was possible`);
   });
   const results: Results = {
     ...read.results,
-    messages: [...read.results.messages, ...messages, ...ruleMessages(rules.length)],
-    fits: models.map((model) => fitResult(model, errors)),
-    lengthClasses: lengthClasses(errors, read.visits, read.control, study.confidence),
-    // A mark on the base itself has no direction; 0 leaves it in the middle of a map.
-    marks: markMeans(errors).map((mark) =>
-      Number.isNaN(mark.azimuthDeg) ? { ...mark, azimuthDeg: 0 } : mark,
-    ),
+    messages: [
+      ...read.results.messages,
+      ...(wrongFixes?.messages ?? []),
+      ...messages,
+      ...ruleMessages(rules.length),
+    ],
+    occupations: withSuspects(read.results.occupations, errors.length - used.length),
+    ...fitResults(components, errors, wrongFixes),
+    wrongFixes: wrongFixResults(errors, wrongFixes),
+    lengthClasses: lengthClasses(used, read.visits, read.control, study.confidence),
+    marks: markResults(used, components),
     rules,
-    specSheet: study.specSheet,
   };
-  return { ...read, models, results };
+  const setAside = [...read.setAside, ...suspects(errors, wrongFixes)];
+  return { ...read, setAside, weights: weights ?? new Float64Array(errors.length).fill(1), models, results };
 }
 
 const ruleMessages = (rules: number): Message[] =>

@@ -203,14 +203,17 @@ export const studySchema = z.strictObject({
     .describe('Days that belong to the study; without it all do.'),
   model: z
     .strictObject({
-      form: z.literal('root-sum-square').default('root-sum-square'),
+      form: z.enum(['root-sum-square', 'linear-sum']).default('root-sum-square'),
       reference: z
-        .enum(['auto', 'absolute'])
+        .enum(['auto', 'absolute', 'repeatability', 'relative'])
         .default('auto')
-        .describe('What errors are counted from; `auto` takes the published coordinates.'),
+        .describe(
+          'What errors are counted from in the fit behind the rules; all that the data allow are reported.',
+        ),
       confidence: z.number().gt(0.5).lt(1).default(0.95).describe('Level of the two-sided intervals.'),
+      screen: z.boolean().default(true).describe('Look for wrong fixes and let them count less.'),
     })
-    .default({ form: 'root-sum-square', reference: 'auto', confidence: 0.95 }),
+    .default({ form: 'root-sum-square', reference: 'auto', confidence: 0.95, screen: true }),
   occupations: z
     .strictObject({
       gapSeconds: z.number().positive().default(60).describe('A longer gap begins a new visit.'),

@@ -1,4 +1,5 @@
 import type { ControlFile } from '../control/index.js';
+import type { Form, Reference } from '../fit/index.js';
 import type { LogFile, Message } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 import type { HeightKind } from './coordinateChanges.js';
@@ -37,8 +38,13 @@ export interface Study {
   readonly period: { readonly from: string; readonly to: string } | null;
   readonly gapSeconds: number;
   readonly windowSeconds: number | null;
+  /** Form and reference of the fit behind the rules. */
+  readonly form: Form;
+  readonly reference: Reference | 'auto';
   /** Level of the two-sided intervals. */
   readonly confidence: number;
+  /** Look for wrong fixes and let them count less. */
+  readonly screen: boolean;
   readonly tolerances: readonly Tolerance[];
   readonly specSheet: SpecSheet | null;
   readonly leaveOutDays: readonly string[];

@@ -79,8 +79,8 @@ function made(seed: number, days: number, truth: { c?: number; k?: number }) {
         baselineKm,
         heightDifferenceM,
         pdop,
-        horizontalSigmaMm: 5 * pdop,
-        verticalSigmaMm: 9,
+        reportedHorizontalMm: 5 * pdop,
+        reportedVerticalMm: 9,
         east: draw(),
         north: draw(),
         up: draw(),
@@ -114,7 +114,7 @@ describe('terms', () => {
   it('follow a value over its median: its unit does not matter', () => {
     const rows = made(3, 12, { k: 1 });
     const options = { component: 'horizontal', terms: ['reported-sigma'] } as const;
-    const metres = rows.map((row) => ({ ...row, horizontalSigmaMm: row.horizontalSigmaMm / 1000 }));
+    const metres = rows.map((row) => ({ ...row, reportedHorizontalMm: row.reportedHorizontalMm / 1000 }));
     const [one, other] = [fitTerms(rows, options), fitTerms(metres, options)];
     expect(other.terms[0]!.estimate).toBeCloseTo(one.terms[0]!.estimate!, 8);
     expect(other.ppm.high).toBeCloseTo(one.ppm.high!, 8);

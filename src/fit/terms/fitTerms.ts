@@ -52,7 +52,7 @@ const NONE = { estimate: null, low: null, high: null };
  * Fits further terms beside constant and ppm, each with an interval that counts days (CR3) and a verdict: whether days
  * that were left out are predicted better with it by more than one standard error. PDOP and reported sigma are not
  * trusted but estimated: a power of 0 means that they do not matter, of 1 that the spread is proportional to them.
- * @param errors as for fitErrorModel, with `heightDifferenceM`, `pdop`, or `horizontalSigmaMm` and `verticalSigmaMm`
+ * @param errors as for fitErrorModel, with `heightDifferenceM`, `pdop`, or `reportedHorizontalMm` and `reportedVerticalMm`
  * @throws InputError when an option or a column is missing or wrong
  */
 export function fitTerms<C extends FitComponent>(

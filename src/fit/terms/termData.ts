@@ -34,7 +34,7 @@ const METRES_OF_HEIGHT = 100;
 function columnOf(term: Term, component: FitComponent): string {
   if (term === 'height-difference') return 'heightDifferenceM';
   if (term === 'pdop') return 'pdop';
-  return component === 'vertical' ? 'verticalSigmaMm' : 'horizontalSigmaMm';
+  return component === 'vertical' ? 'reportedVerticalMm' : 'reportedHorizontalMm';
 }
 
 /**
