@@ -67,7 +67,7 @@ export { informationNumber } from './information.js';
 export { type ContrastEstimate, contrastEstimate, varianceLimits, varianceUpperLimit } from './intervals.js';
 export { type DayInfluence, type Jackknife, jackknifeByDay } from './jackknife.js';
 export type { FitOptions } from './options.js';
-export type { FitData } from './prepareErrors.js';
+export { type FitData, prepareErrors } from './prepareErrors.js';
 export { chooseReference, type ReferenceChoice } from './reference/chooseReference.js';
 export { type ComposedAbsolute, composeAbsolute } from './reference/composeAbsolute.js';
 export type { MarkCell } from './reference/markCells.js';

@@ -16,6 +16,7 @@ export {
   RANK_TOLERANCE,
   RankDeficientError,
 } from './leastSquares.js';
+export { digamma, inverseTrigamma, tetragamma, trigamma } from './polygamma.js';
 export { median, quantile } from './quantile.js';
 export { radialQuantile } from './radialQuantile.js';
 export { normalDeviates, type Random, randomStream, shuffle, uniformBetween } from './random.js';

@@ -1,0 +1,10 @@
+export { type DailyFactor, dailyFactors } from './dailyFactors.js';
+export { type DayEstimate, type DayValue, DEGRADED_FACTOR } from './dayEstimates.js';
+export { comboQuantiles, DAY_COMBOS, type DayCombo, dayPrior, THETAS } from './dayGrid.js';
+export type { DayIndex } from './dayIndex.js';
+export type { DayCells } from './dayLikelihood.js';
+export { type DayModel, type DayPosterior, dayModel, dayModelOf } from './dayModel.js';
+export { type DayModelNode, dayModelNodes, dayQuantilePpm, predictiveWeights } from './dayQuantiles.js';
+export type { DegradedEvent } from './degradedDays.js';
+export { type EffectiveShare, effectiveShare } from './effectiveShare.js';
+export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
