@@ -8,3 +8,12 @@ export { type DayModelNode, dayModelNodes, dayQuantilePpm, predictiveWeights } f
 export type { DegradedEvent } from './degradedDays.js';
 export { type EffectiveShare, effectiveShare } from './effectiveShare.js';
 export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
+export type { HourHarmonics } from './hourHarmonics.js';
+export { type ModeratedDay, moderatedDays, moderatedDaysOf } from './moderatedVariance.js';
+export {
+  type HourClass,
+  type TimeOfDay,
+  type TimeOfDayOptions,
+  timeOfDay,
+  timeOfDayOf,
+} from './timeOfDay.js';
