@@ -1,15 +1,29 @@
 export { type DailyFactor, dailyFactors } from './dailyFactors.js';
+export type { DayCondition } from './dayConditions.js';
 export { type DayEstimate, type DayValue, DEGRADED_FACTOR } from './dayEstimates.js';
 export { comboQuantiles, DAY_COMBOS, type DayCombo, dayPrior, THETAS } from './dayGrid.js';
 export type { DayIndex } from './dayIndex.js';
 export type { DayCells } from './dayLikelihood.js';
 export { type DayModel, type DayPosterior, dayModel, dayModelOf } from './dayModel.js';
+export type { GuiltyPart } from './dayParts.js';
 export { type DayModelNode, dayModelNodes, dayQuantilePpm, predictiveWeights } from './dayQuantiles.js';
 export type { DegradedEvent } from './degradedDays.js';
 export { type EffectiveShare, effectiveShare } from './effectiveShare.js';
+export {
+  type DayCovariates,
+  type DayExplanation,
+  type DayVerdict,
+  type ExplainOptions,
+  explainDay,
+  explainDaysOf,
+  judgeDegradedDays,
+  type TestedCondition,
+  type TestedSetup,
+} from './explainDay.js';
 export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
 export type { HourHarmonics } from './hourHarmonics.js';
 export { type ModeratedDay, moderatedDays, moderatedDaysOf } from './moderatedVariance.js';
+export type { OffsetTest } from './setupOffsets.js';
 export {
   type HourClass,
   type TimeOfDay,
@@ -17,3 +31,4 @@ export {
   timeOfDay,
   timeOfDayOf,
 } from './timeOfDay.js';
+export { type DayDependence, dayDependence, dayDependenceOf } from './weekClusters.js';

@@ -1,7 +1,8 @@
 /*
  * Speed and memory, printed, never asserted: machines are noisy, so ratios are taken within one run.
- * `npm run bench` runs all parts, `npm run bench -- fit` those named.
+ * `npm run bench` runs all parts, `npm run bench -- fit` those named; `days` takes some minutes.
  */
+import { benchDays } from './days.js';
 import { benchDemo } from './demo.js';
 import { benchFit } from './fit.js';
 import { benchFuzz } from './fuzz.js';
@@ -16,6 +17,7 @@ const PARTS = {
   fuzz: benchFuzz,
   groups: benchGroups,
   ionosphere: benchIonosphere,
+  days: benchDays,
 };
 
 const wanted = process.argv.slice(2);
