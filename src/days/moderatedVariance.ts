@@ -5,6 +5,7 @@ import { dayRatios } from './dayRatios.js';
 import { effectiveShare } from './effectiveShare.js';
 import { falseDiscoveryAdjusted } from './falseDiscovery.js';
 import { fittedData, fittedSpread } from './fittedSpread.js';
+import { robustPrior } from './robustPrior.js';
 
 /** What the days have in common: variance ratios of s0² F with d0 degrees of freedom. */
 export interface VariancePrior {
@@ -52,8 +53,8 @@ export function moderatedDays(
 }
 
 /**
- * The days by moderated variances: a cross-check of the day model that shares no step with it but the effective share.
- * It names fewer days, since the very days sought widen its prior.
+ * The days by moderated variances with a robust prior: a cross-check of the day model that shares no step with it but
+ * the effective share. It names fewer days.
  * @param A,B displayed estimates, mm² and ppm²
  * @param share effective share of the shots
  */
@@ -62,7 +63,7 @@ export function moderatedDaysOf(data: FitData, A: number, B: number, share: numb
   const df = factors.map((_, d) =>
     Math.max(1, (data.components.length * share * omegaSums[d]! ** 2) / omegaSquares[d]!),
   );
-  const { moderated, pValues } = moderateVariances(factors, df);
+  const { moderated, pValues } = moderateVariances(factors, df, 'robust');
   const adjusted = falseDiscoveryAdjusted([...pValues]);
   const ppm = moderatedPpm(moderated, omegaSums, omegaSquares, B);
   return days.map((day, d) => ({
@@ -77,7 +78,7 @@ export function moderatedDaysOf(data: FitData, A: number, B: number, share: numb
 }
 
 /** Ppm of each day from its variance ratio: what exceeds 1 is the doing of the distance part, Σ ω² of Σ ω. */
-export function moderatedPpm(
+function moderatedPpm(
   ratios: Float64Array,
   omegaSums: Float64Array,
   omegaSquares: Float64Array,
@@ -89,11 +90,16 @@ export function moderatedPpm(
 }
 
 /**
- * Empirical Bayes moderation of variances (Smyth 2004; from memory): the prior from mean and variance of the log ratios.
- * @param ratios sample variances, all above 0
+ * Empirical Bayes moderation of variances (Smyth 2004; from memory): the prior from mean and variance of the log ratios,
+ * or from their winsorised ones, which the days sought do not widen.
+ * @param ratios sample variances, not all 0
  * @param df their degrees of freedom
  */
-export function moderateVariances(ratios: Float64Array, df: Float64Array): ModeratedVariances {
+export function moderateVariances(
+  ratios: Float64Array,
+  df: Float64Array,
+  kind: 'plain' | 'robust',
+): ModeratedVariances {
   const n = ratios.length;
   // A day without any error would have a log of minus infinity and decide alone.
   const least = 1e-5 * median(ratios);
@@ -103,12 +109,18 @@ export function moderateVariances(ratios: Float64Array, df: Float64Array): Moder
   const mean = sum(z) / n;
   const excess =
     sum(z.map((value) => (value - mean) ** 2)) / (n - 1) - sum(df.map((v) => trigamma(v / 2))) / n;
-  const prior = priorOf(ratios, mean, excess);
-  const { variance, degreesOfFreedom: d0 } = prior;
-  const moderated = ratios.map((ratio, d) =>
-    d0 === Number.POSITIVE_INFINITY ? variance : (d0 * variance + df[d]! * ratio) / (d0 + df[d]!),
-  );
-  return { prior, moderated, pValues: ratios.map((ratio, d) => upperTail(ratio / variance, df[d]!, d0)) };
+  const plain = priorOf(ratios, mean, excess);
+  const { dayDegreesOfFreedom, ...prior } =
+    kind === 'robust'
+      ? robustPrior(ratios, df, plain)
+      : { ...plain, dayDegreesOfFreedom: new Float64Array(n).fill(plain.degreesOfFreedom) };
+  const moderated = ratios.map((ratio, d) => {
+    const d0 = dayDegreesOfFreedom[d]!;
+    const { variance } = prior;
+    return d0 === Number.POSITIVE_INFINITY ? variance : (d0 * variance + df[d]! * ratio) / (d0 + df[d]!);
+  });
+  const pValues = ratios.map((ratio, d) => upperTail(ratio / prior.variance, df[d]!, prior.degreesOfFreedom));
+  return { prior, moderated, pValues };
 }
 
 function priorOf(ratios: Float64Array, mean: number, excess: number): VariancePrior {
@@ -121,6 +133,7 @@ function priorOf(ratios: Float64Array, mean: number, excess: number): VariancePr
 
 /** P(F > x) by the lower tail of 1/F, which keeps its digits where the chance is small. */
 function upperTail(x: number, df1: number, df2: number): number {
+  if (x === 0) return 1;
   if (df2 === Number.POSITIVE_INFINITY) return 1 - chiSquareCdf(df1 * x, df1);
   return fCdf(1 / x, df2, df1);
 }
