@@ -1,6 +1,6 @@
 import type { FitData } from '../fit/index.js';
 import { DAY_COMBOS, dayPrior, THETAS } from './dayGrid.js';
-import { type DayIndex, dayIndex } from './dayIndex.js';
+import { type DayIndex, dayIndex, rowsWithinDays } from './dayIndex.js';
 
 /**
  * Rows of one day and one length: the likelihood needs their number and their sum of squares alone. Logs repeat a few
@@ -20,11 +20,10 @@ export interface DayCells extends DayIndex {
 export function dayCells({ y, l, w, day, components }: FitData): DayCells {
   const index = dayIndex(day);
   const { dayOf, days } = index;
-  const order = Array.from(dayOf.keys()).sort((i, j) => dayOf[i]! - dayOf[j]! || l[i]! - l[j]! || i - j);
   const starts = new Int32Array(days.length + 1);
   const [lengths, weights, squares]: number[][] = [[], [], []];
   let last = -1;
-  for (const i of order) {
+  for (const i of rowsWithinDays(index, l)) {
     const opens = last < 0 || dayOf[i] !== dayOf[last] || l[i] !== l[last];
     if (opens) {
       lengths!.push(l[i]!);

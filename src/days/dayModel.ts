@@ -109,9 +109,21 @@ export function dayModelOf(data: FitData, spread: FittedSpread | null): DayModel
     degradedDays: named,
     events,
     posterior: { A, B, standardErrorA, effectiveShare: share, cells, comboWeights: fit.weights },
-    notes: dayNotes({ component, occupations: cells.occupations, tau: tau.estimate!, estimates, events }),
+    notes: dayNotes({
+      component,
+      occupations: cells.occupations,
+      daysWithoutFar: daysWithout(cells, A / B),
+      farFromKm: Math.sqrt(A / B),
+      tau: tau.estimate!,
+      estimates,
+      events,
+    }),
   };
 }
+
+/** Days without a length beyond one, given squared. */
+const daysWithout = ({ days, starts, l }: DayCells, beyond: number): number =>
+  days.filter((_, d) => !l.subarray(starts[d], starts[d + 1]).some((value) => value > beyond)).length;
 
 /**
  * Whether the ppm is clear enough of zero for its days to be compared. The second condition lets a study pass whose

@@ -23,6 +23,10 @@ export const daysNotJudged = (): Message =>
 interface DaysFound {
   readonly component: Component;
   readonly occupations: Int32Array;
+  /** Days without a shot where the distance part exceeds the constant. */
+  readonly daysWithoutFar: number;
+  /** That length, a/b, km. */
+  readonly farFromKm: number;
   readonly tau: number;
   readonly estimates: readonly DayEstimate[];
   readonly events: readonly DegradedEvent[];
@@ -31,8 +35,10 @@ interface DaysFound {
 /** What must be said of the days beside the numbers. */
 export function dayNotes(found: DaysFound): Message[] {
   const days = found.occupations.length;
+  const named = namesDays(found.occupations);
   return [
-    ...(namesDays(found.occupations) ? [] : [notNamed(found)]),
+    ...(named ? [] : [notNamed(found)]),
+    ...(named && found.daysWithoutFar > 0 ? [withoutFarNote(found)] : []),
     ...found.events.map((event) => degradedNote(event, found)),
     ...(days < LONG_RUN_DAYS ? [longRunNote(days, found.events)] : []),
   ];
@@ -51,6 +57,14 @@ function notNamed({ occupations, tau }: DaysFound): Message {
     'info',
     'days-not-named',
     `${few} degraded days cannot be named; only the spread of the log of the ppm between days is told, ${tau.toFixed(2)}. ${remedy}`,
+  );
+}
+
+function withoutFarNote({ daysWithoutFar, farFromKm, occupations }: DaysFound): Message {
+  return message(
+    'info',
+    'days-without-far-shots',
+    `${daysWithoutFar} of ${occupations.length} days ${daysWithoutFar === 1 ? 'has' : 'have'} no shot beyond ${farFromKm.toFixed(1)} km and could hardly be found degraded. Take some far shots every day.`,
   );
 }
 

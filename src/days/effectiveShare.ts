@@ -1,5 +1,6 @@
 import type { FitData } from '../fit/index.js';
 import { inputError } from '../logs/index.js';
+import { rowsWithinDays } from './dayIndex.js';
 import { type DayRatios, dayRatios } from './dayRatios.js';
 
 /** Lags are added in pairs up to this one. */
@@ -34,21 +35,20 @@ interface Series {
   readonly dayOf: Int32Array;
 }
 
-function inTimeOrder({ startMs }: FitData, { dayOf, omega, ratio, factors }: DayRatios): Series {
+function inTimeOrder({ startMs }: FitData, ratios: DayRatios): Series {
   if (startMs === null) {
     throw inputError(
       'missing-column',
       'Expected a column "startMs" in the errors, needed for the order of shots within a day, came none. Add the start of each occupation.',
     );
   }
-  const order = Array.from(dayOf.keys()).sort(
-    (i, j) => dayOf[i]! - dayOf[j]! || startMs[i]! - startMs[j]! || i - j,
-  );
+  const { dayOf, omega, ratio, factors } = ratios;
+  const order = rowsWithinDays(ratios, startMs);
   const deviation = (i: number): number => {
     const level = factors[dayOf[i]!]!;
     return level > 0 ? omega[i]! * (ratio[i]! / level - 1) : 0;
   };
-  return { values: Float64Array.from(order, deviation), dayOf: Int32Array.from(order, (i) => dayOf[i]!) };
+  return { values: Float64Array.from(order, deviation), dayOf: order.map((i) => dayOf[i]!) };
 }
 
 /** 1 + 2 Σ ρ over the initial positive sequence; 1 where nothing varies. */

@@ -1,9 +1,18 @@
 import { describe, expect, it } from 'vitest';
+import { comboRms } from '../../src/days/dayGrid.js';
 import { dayRatios } from '../../src/days/dayRatios.js';
-import { dayModelOf, dayQuantilePpm, effectiveShare } from '../../src/days/index.js';
-import { estimateVariance, type FitData, prepareErrors } from '../../src/fit/index.js';
+import {
+  comboQuantiles,
+  dayModelNodes,
+  dayModelOf,
+  dayQuantilePpm,
+  effectiveShare,
+  fittedSpread,
+} from '../../src/days/index.js';
+import { weightedQuantiles } from '../../src/days/weightedQuantile.js';
+import { estimateVariance, type FitData, fitErrorModel, prepareErrors } from '../../src/fit/index.js';
 import { referenceFits } from '../fit/reference.js';
-import { allClose, axisData, close, referenceWeights, timedErrors } from './reference.js';
+import { allClose, axisData, close, readDaysFixture, referenceWeights, timedErrors } from './reference.js';
 
 // Source of every expected number: an implementation in R and limma 3.54 (fixtures/fits, with recipe); where weights
 // are needed, from fixtures/days. Tolerance 1e-8 relative: the same grid.
@@ -105,4 +114,23 @@ describe.each(CASES)('$name', ({ data, expected, scale }) => {
     });
     expect(model.degradedDays).toEqual(days.flagged_bfdr10);
   });
+});
+
+it('has the posterior of R at every node of the constant', () => {
+  const data = axisData('ref1_mild15', 'up');
+  const spread = fittedSpread(fitErrorModel(timedErrors('ref1_mild15'), { component: 'vertical' }))!;
+  const nodes = dayModelNodes(dayModelOf(data, spread).posterior!);
+  const expected = readDaysFixture('nodes.json');
+  allClose(
+    nodes.map(({ A }) => A),
+    expected.A!,
+  );
+  const medians = (values: Float64Array, level: number): number[] =>
+    nodes.map(
+      ({ comboWeights }) =>
+        Math.sqrt(spread.B) * Math.exp(weightedQuantiles(values, comboWeights, [level])[0]!),
+    );
+  allClose(medians(comboQuantiles(0.5), 0.5), expected.median_day_ppm!);
+  allClose(medians(comboRms(), 0.5), expected.rms_ppm!);
+  allClose(medians(comboQuantiles(0.9), 0.95), expected.q_day_upper95!);
 });

@@ -3,6 +3,7 @@ import { type SimulatedOccupation, simulateErrors } from '../../src/campaign/ind
 import { type DayExplanation, dayModel, explainDay, judgeDegradedDays } from '../../src/days/index.js';
 import type { Visit } from '../../src/errors/index.js';
 import { fitErrorModel } from '../../src/fit/index.js';
+import { expectSentences } from './reference.js';
 
 /*
  * Faults of known kind put into one day of a simulated campaign whose days are alike otherwise: the verdict must name
@@ -27,7 +28,9 @@ const farMark = onDay.reduce((far, row) => (row.baselineKm > far.baselineKm ? ro
 function judged(change: (row: Row) => Partial<Row>, visits?: readonly Visit[]): DayExplanation {
   const rows = plain.map((row) => (row.day === DAY ? { ...row, ...change(row) } : row));
   const days = dayModel(rows, fitErrorModel(rows, { component: 'horizontal' }));
-  return explainDay(DAY, rows, days, { visits });
+  const found = explainDay(DAY, rows, days, { visits });
+  expectSentences([found.note]);
+  return found;
 }
 
 const larger = (row: Row, factor: number): Partial<Row> => ({

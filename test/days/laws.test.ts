@@ -18,6 +18,7 @@ import { weekOf } from '../../src/days/weekClusters.js';
 import { weightedQuantiles } from '../../src/days/weightedQuantile.js';
 import { fitErrorModel } from '../../src/fit/index.js';
 import { randomStream, shuffle } from '../../src/stats/index.js';
+import { expectSentences } from './reference.js';
 
 const rows = Object.freeze(
   simulateErrors({ seed: 21, days: 16, badDays: { runs: 1, runLength: 2 } }).rows.map((row) =>
@@ -153,6 +154,7 @@ it('has a prior of which every combo sums to 1', () => {
 describe('what the day model says', () => {
   const said = (errors: readonly object[]) => {
     const { notes, ...model } = dayModel(errors, fitErrorModel(errors, { component: 'horizontal' }));
+    expectSentences(notes);
     return { ...model, text: notes.map(({ text }) => text).join(' ') };
   };
 
@@ -193,6 +195,13 @@ describe('what the day model says', () => {
   it('of the absence of bad days among few', () => {
     const { text } = said(simulateErrors({ seed: 8, days: 15, dayFactorLogSd: 0.1 }).rows);
     expect(text).toContain('No degraded day among 15 leaves room for a share of up to 20 %');
+  });
+
+  it('of days without far shots', () => {
+    const near = rows.filter(({ day, baselineKm }) => day > '2025-03-04' || baselineKm < 5);
+    expect(said(near).text).toMatch(
+      /2 of 16 days have no shot beyond \d+\.\d km and could hardly be found degraded/,
+    );
   });
 
   it('of errors without times: it asks for them', () => {

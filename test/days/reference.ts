@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { expect } from 'vitest';
 import type { FitData } from '../../src/fit/index.js';
 import { prepareErrors } from '../../src/fit/index.js';
+import type { Message } from '../../src/logs/index.js';
 import { referenceErrors } from '../fit/reference.js';
 
 const FITS = new URL('../fixtures/fits/', import.meta.url);
@@ -41,4 +42,14 @@ export function allClose(actual: Iterable<number>, expected: readonly number[], 
   const list = [...actual];
   expect(list).toHaveLength(expected.length);
   for (const [k, value] of list.entries()) close(value, expected[k]!, relative);
+}
+
+/** The grammar of messages, as test/messages.test.ts holds it for a whole run. */
+export function expectSentences(notes: readonly Message[]): void {
+  for (const { code, text } of notes) {
+    expect(code).toMatch(/^[a-z0-9]+(-[a-z0-9]+)*$/);
+    expect(text).toMatch(/^[\p{Lu}\d"].*\.$/u);
+    expect(text).not.toMatch(/undefined|\[object|\bNaN\b|\bnull\b|\bInfinity\b| {2}|\.\.|\s\./);
+    expect(text.length).toBeLessThanOrEqual(600);
+  }
 }

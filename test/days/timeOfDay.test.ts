@@ -8,7 +8,7 @@ import { hourTest } from '../../src/days/timeOfDay.js';
 import { estimateVariance, type FitData, fitErrorModel } from '../../src/fit/index.js';
 import { randomStream } from '../../src/stats/index.js';
 import { referenceFits } from '../fit/reference.js';
-import { axisData, close, timedErrors } from './reference.js';
+import { axisData, close, expectSentences, timedErrors } from './reference.js';
 
 const AXES = { U: 'up', E: 'east', N: 'north' } as const;
 const sets = ['ref1_mild15', 'ref3_linear_base10'].flatMap((name) =>
@@ -86,6 +86,7 @@ describe('timeOfDay', () => {
       expect(ppm.high!).toBeGreaterThan(ppm.estimate!);
     }
     expect(found.notes.map(({ code }) => code)).toEqual(['hours-differ']);
+    expectSentences(found.notes);
     expect(found.harmonics).toBeNull();
   });
 
@@ -125,6 +126,7 @@ describe('timeOfDay', () => {
       random: random(),
     });
     expect(result.pValue).toBeNull();
+    expectSentences(result.notes);
     expect(result.notes.map((note) => note.text).join(' ')).toMatch(text);
   });
 
