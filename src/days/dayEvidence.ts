@@ -10,8 +10,9 @@ export interface Shots {
   readonly w: ArrayLike<number>;
 }
 
-/** From here on evidence is called strong, on either side (Jeffreys 1961; from memory). */
+/** From here on evidence is called strong, from the second on substantial (Jeffreys 1961; from memory). */
 export const STRONG = 10;
+export const SUBSTANTIAL = 3.2;
 
 /** What shots of one day say of it. */
 export interface DayEvidence {

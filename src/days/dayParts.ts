@@ -1,6 +1,6 @@
 import { groupIndices } from '../errors/index.js';
 import type { FitData } from '../fit/index.js';
-import { type DayEvidence, type Shots, STRONG } from './dayEvidence.js';
+import { type DayEvidence, type Shots, STRONG, SUBSTANTIAL } from './dayEvidence.js';
 
 /** A part of a day's shots that alone makes the day look degraded. */
 export interface GuiltyPart {
@@ -13,7 +13,7 @@ export interface GuiltyPart {
 
 /**
  * The part of a day (a mark, a crew, a receiver) without which the day is ordinary: it must say degraded strongly, more
- * so the more parts there are to choose from, and the rest must strongly say ordinary.
+ * so the more parts there are to choose from, and the rest must say ordinary.
  * @param rows of the day
  * @param names of every row of data
  */
@@ -39,7 +39,7 @@ export function guiltyPart(
         rows.filter((_, k) => !inside.has(k)),
       ),
     );
-    if (1 / own < STRONG * parts.size || rest < STRONG) return [];
+    if (1 / own < STRONG * parts.size || rest < SUBSTANTIAL) return [];
     return [{ name, occupations: places.length, evidence: 1 / own, restEvidence: rest }];
   });
   return found.sort((a, b) => b.restEvidence - a.restEvidence)[0] ?? null;
@@ -50,3 +50,22 @@ export const pickShots = ({ y, l, w }: FitData, rows: readonly number[]): Shots 
   l: rows.map((i) => l[i]!),
   w: rows.map((i) => w[i]!),
 });
+
+/**
+ * Evidence that errors grow with distance whichever mark is left out: one wrong mark far out looks the same.
+ * @param rows of the day
+ */
+export function growthEvidence(data: FitData, rows: readonly number[], evidence: DayEvidence): number {
+  const whole = evidence.growthOverLevel(pickShots(data, rows));
+  if (data.mark === null) return whole;
+  const marks = new Set(rows.map((i) => data.mark![i]!));
+  const without = [...marks].map((mark) =>
+    evidence.growthOverLevel(
+      pickShots(
+        data,
+        rows.filter((i) => data.mark![i] !== mark),
+      ),
+    ),
+  );
+  return Math.min(whole, ...without);
+}

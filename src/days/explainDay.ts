@@ -2,9 +2,9 @@ import { type ErrorsInput, errorColumns, type Visit } from '../errors/index.js';
 import { type Component, type FitData, prepareErrors } from '../fit/index.js';
 import { type Message, message } from '../logs/index.js';
 import { type ConditionColumns, type DayCondition, dayConditions } from './dayConditions.js';
-import { type DayEvidence, dayEvidence, STRONG } from './dayEvidence.js';
+import { type DayEvidence, dayEvidence, SUBSTANTIAL } from './dayEvidence.js';
 import type { DayModel } from './dayModel.js';
-import { type GuiltyPart, guiltyPart, pickShots } from './dayParts.js';
+import { type GuiltyPart, growthEvidence, guiltyPart, pickShots } from './dayParts.js';
 import { explanationText } from './explanationText.js';
 import { familyAdjusted } from './falseDiscovery.js';
 import {
@@ -52,7 +52,10 @@ export interface DayExplanation {
   readonly mark: GuiltyPart | null;
   readonly crew: GuiltyPart | null;
   readonly receiver: GuiltyPart | null;
-  /** How many times as probable the errors are as growth with distance than as a larger error at every distance. */
+  /**
+   * How many times as probable the errors are as growth with distance than as a larger error at every distance,
+   * whichever mark is left out.
+   */
   readonly growthEvidence: number;
   readonly conditions: readonly TestedCondition[];
   readonly note: Message;
@@ -72,7 +75,7 @@ export interface DayCovariates extends ConditionColumns {
 }
 
 /** Chance at which a setup or a circumstance is called out of the ordinary, over all tests made. */
-const LEVEL = 0.05;
+export const LEVEL = 0.05;
 
 /**
  * Puts every degraded day to a cause on the ground first: an offset of the setup, one mark, one crew, one receiver; what
@@ -210,7 +213,7 @@ function explanation(
     mark: part(data.mark),
     crew: part(covariates.crew),
     receiver: part(covariates.rover),
-    growthEvidence: evidence.growthOverLevel(pickShots(data, rows)),
+    growthEvidence: growthEvidence(data, rows, evidence),
   };
   const facts = {
     component: model.component,
@@ -228,16 +231,22 @@ function explanation(
 
 type Found = Pick<DayExplanation, 'mark' | 'crew' | 'receiver' | 'growthEvidence'>;
 
-/** The narrowest cause that suffices; a crew and its receiver, when both suffice, are told by the crew. */
+/**
+ * The narrowest cause that suffices: without the offset of a setup, which leaves every shot to be judged, the day must no
+ * longer look degraded; without a part of it, which may take all far shots away, it must look ordinary. A crew and its
+ * receiver, when both suffice, are told by the crew.
+ */
 function verdictOf(
   setups: readonly TestedSetup[],
-  { mark, crew, receiver, growthEvidence }: Found,
+  { mark, crew, receiver, growthEvidence: growth }: Found,
 ): Pick<DayExplanation, 'verdict' | 'subject'> {
   if (mark !== null) return { verdict: 'one mark', subject: mark.name };
-  const setup = setups.find(({ adjustedP, restEvidence }) => adjustedP < LEVEL && restEvidence >= STRONG);
+  const setup = setups.find(
+    ({ adjustedP, restEvidence }) => adjustedP < LEVEL && restEvidence >= SUBSTANTIAL,
+  );
   if (setup !== undefined) return { verdict: 'bad setup', subject: setup.setup };
   if (crew !== null) return { verdict: 'one crew', subject: crew.name };
   if (receiver !== null) return { verdict: 'one receiver', subject: receiver.name };
-  if (growthEvidence >= STRONG) return { verdict: 'grows with distance', subject: null };
+  if (growth >= SUBSTANTIAL) return { verdict: 'grows with distance', subject: null };
   return { verdict: 'not explained', subject: null };
 }

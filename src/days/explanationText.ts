@@ -1,4 +1,4 @@
-import type { DayExplanation, TestedCondition } from './explainDay.js';
+import { type DayExplanation, LEVEL, type TestedCondition } from './explainDay.js';
 
 type Facts = Omit<DayExplanation, 'note'>;
 
@@ -8,7 +8,7 @@ export function explanationText(facts: Facts): string {
   const head = `On ${day} the ${component} ppm was ${factor.toFixed(1)} times that of the median day`;
   const unusual = conditions.filter((each) => each.unusual).map(conditionText);
   const beside = unusual.length === 0 ? '' : ` Out of the ordinary that day: ${unusual.join('; ')}.`;
-  return `${head}: ${cause(facts)}${beside} ${remedy(facts)}`;
+  return `${head}: ${cause(facts)}${partOfIt(facts)}${beside} ${remedy(facts)}`;
 }
 
 function cause(facts: Facts): string {
@@ -19,18 +19,30 @@ function cause(facts: Facts): string {
     case 'one mark':
       return `one mark, ${subject} (${rest(mark)}).`;
     case 'bad setup': {
-      const { offsetMm, usualMm, restEvidence } = setups.find(({ setup }) => setup === subject)!;
-      return `a bad setup, ${subject}, all of whose shots are off by ${offsetMm.toFixed(0)} mm (usual are ${usualMm.toFixed(0)} mm; without the offset the day is ${times(restEvidence)} as probable as an ordinary one).`;
+      const { offsetMm, usualMm } = setups.find(({ setup }) => setup === subject)!;
+      return `a bad setup, ${subject}, all of whose shots are off by ${offsetMm.toFixed(0)} mm (usual are ${usualMm.toFixed(0)} mm); without the offset the day does not look degraded.`;
     }
     case 'one crew':
       return `one crew, ${subject} (${rest(crew)})${receiver === null ? '' : `, or its receiver ${receiver.name}, which cannot be told apart that day`}.`;
     case 'one receiver':
       return `one receiver, ${subject} (${rest(receiver)}).`;
     case 'grows with distance':
-      return 'the error grows with distance at all marks, and no setup, mark, crew or receiver explains it.';
+      return 'the error grows with distance, whichever mark is left out, and no setup, mark, crew or receiver explains it.';
     case 'not explained':
       return 'not explained by setup, mark, crew or receiver, and not clearly growing with distance.';
   }
+}
+
+/** An offset of a setup that is real and does not suffice. */
+function partOfIt({ verdict, setups }: Facts): string {
+  if (verdict === 'bad setup') return '';
+  return setups
+    .filter(({ adjustedP }) => adjustedP < LEVEL)
+    .map(
+      ({ setup, offsetMm, usualMm }) =>
+        ` Setup ${setup} is off by ${offsetMm.toFixed(0)} mm (usual are ${usualMm.toFixed(0)} mm), which explains a part at most.`,
+    )
+    .join('');
 }
 
 function remedy({ verdict }: Facts): string {
@@ -50,7 +62,7 @@ function remedy({ verdict }: Facts): string {
 }
 
 const times = (evidence: number): string =>
-  evidence > 1000 ? 'more than 1000 times' : `${evidence.toFixed(0)} times`;
+  evidence > 1000 ? 'more than 1000 times' : `${Math.floor(evidence)} times`;
 
 const conditionText = ({ name, value, usual }: TestedCondition): string =>
   name === 'share of visits without a fix'

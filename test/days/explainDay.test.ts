@@ -46,7 +46,7 @@ describe('a day judged', () => {
     const { verdict, factor, note, growthEvidence, conditions } = judged(worsePpm);
     expect(verdict).toBe('grows with distance');
     expect(factor).toBeGreaterThan(2);
-    expect(growthEvidence).toBeGreaterThan(10);
+    expect(growthEvidence).toBeGreaterThan(3.2);
     expect(conditions.filter(({ unusual }) => unusual)).toEqual([]);
     expect(note.text).toMatch(
       /^On 2025-\d\d-\d\d the horizontal ppm was \d\.\d times .* The day stays in the fit\.$/,
@@ -97,7 +97,7 @@ describe('a day judged', () => {
 
   it('with errors larger at all distances alike: not explained', () => {
     const { verdict, growthEvidence } = judged((row) => larger(row, 3));
-    expect(growthEvidence).toBeLessThan(10);
+    expect(growthEvidence).toBeLessThan(1);
     expect(verdict).toBe('not explained');
   });
 
