@@ -1,65 +1,14 @@
 import { type ErrorsInput, errorColumns, type Visit } from '../errors/index.js';
-import { type Component, type FitData, prepareErrors } from '../fit/index.js';
-import { type Message, message } from '../logs/index.js';
-import { type ConditionColumns, type DayCondition, dayConditions } from './dayConditions.js';
+import { type FitData, prepareErrors } from '../fit/index.js';
+import { message } from '../logs/index.js';
+import { type ConditionColumns, dayConditions } from './dayConditions.js';
 import { type DayEvidence, dayEvidence, SUBSTANTIAL } from './dayEvidence.js';
+import { type DayExplanation, LEVEL, type TestedCondition, type TestedSetup } from './dayExplanation.js';
 import type { DayModel } from './dayModel.js';
 import { type GuiltyPart, growthEvidence, guiltyPart, pickShots } from './dayParts.js';
 import { explanationText } from './explanationText.js';
 import { familyAdjusted } from './falseDiscovery.js';
-import {
-  type OffsetTest,
-  type SetupOffset,
-  setupOffsets,
-  squaresWithout,
-  testOffset,
-} from './setupOffsets.js';
-
-/** What a degraded day is put down to. */
-export type DayVerdict =
-  | 'bad setup'
-  | 'one mark'
-  | 'one crew'
-  | 'one receiver'
-  | 'grows with distance'
-  | 'not explained';
-
-/** A circumstance with its chance after as many tests as were made. */
-export interface TestedCondition extends DayCondition {
-  readonly adjustedP: number;
-  readonly unusual: boolean;
-}
-
-/** An offset of a setup with its chance, and whether the day is ordinary without it. */
-export interface TestedSetup extends OffsetTest {
-  readonly setup: string;
-  readonly adjustedP: number;
-  /** How strongly the day says ordinary once the offset is taken out. */
-  readonly restEvidence: number;
-}
-
-/** What speaks for and against causes on the ground, before the sky is blamed. */
-export interface DayExplanation {
-  readonly component: Component;
-  readonly day: string;
-  readonly factor: number;
-  readonly probabilityDegraded: number;
-  readonly occupations: number;
-  readonly verdict: DayVerdict;
-  /** Name of the setup, mark, crew or receiver. */
-  readonly subject: string | null;
-  readonly setups: readonly TestedSetup[];
-  readonly mark: GuiltyPart | null;
-  readonly crew: GuiltyPart | null;
-  readonly receiver: GuiltyPart | null;
-  /**
-   * How many times as probable the errors are as growth with distance than as a larger error at every distance,
-   * whichever mark is left out.
-   */
-  readonly growthEvidence: number;
-  readonly conditions: readonly TestedCondition[];
-  readonly note: Message;
-}
+import { type SetupOffset, setupOffsets, squaresWithout, testOffset } from './setupOffsets.js';
 
 export interface ExplainOptions {
   /** Visits with and without a fix; without them missing fixes are not judged. */
@@ -73,9 +22,6 @@ export interface DayCovariates extends ConditionColumns {
   readonly crew: readonly string[] | null;
   readonly rover: readonly string[] | null;
 }
-
-/** Chance at which a setup or a circumstance is called out of the ordinary, over all tests made. */
-export const LEVEL = 0.05;
 
 /**
  * Puts every degraded day to a cause on the ground first: an offset of the setup, one mark, one crew, one receiver; what

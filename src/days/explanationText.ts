@@ -1,4 +1,4 @@
-import { type DayExplanation, LEVEL, type TestedCondition } from './explainDay.js';
+import { type DayExplanation, LEVEL, type TestedCondition } from './dayExplanation.js';
 
 type Facts = Omit<DayExplanation, 'note'>;
 

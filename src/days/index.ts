@@ -1,6 +1,7 @@
 export { type DailyFactor, dailyFactors } from './dailyFactors.js';
 export type { DayCondition } from './dayConditions.js';
 export { type DayEstimate, type DayValue, DEGRADED_FACTOR } from './dayEstimates.js';
+export type { DayExplanation, DayVerdict, TestedCondition, TestedSetup } from './dayExplanation.js';
 export { comboQuantiles, DAY_COMBOS, type DayCombo, dayPrior, THETAS } from './dayGrid.js';
 export type { DayIndex } from './dayIndex.js';
 export type { DayCells } from './dayLikelihood.js';
@@ -11,14 +12,10 @@ export type { DegradedEvent } from './degradedDays.js';
 export { type EffectiveShare, effectiveShare } from './effectiveShare.js';
 export {
   type DayCovariates,
-  type DayExplanation,
-  type DayVerdict,
   type ExplainOptions,
   explainDay,
   explainDaysOf,
   judgeDegradedDays,
-  type TestedCondition,
-  type TestedSetup,
 } from './explainDay.js';
 export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
 export type { HourHarmonics } from './hourHarmonics.js';
