@@ -17,6 +17,8 @@ export interface DayPosterior {
   readonly B: number;
   readonly standardErrorA: number;
   readonly effectiveShare: number;
+  /** The rows of the fit, and the same by day and length. */
+  readonly data: FitData;
   readonly cells: DayCells;
   /** Probability of each of DAY_COMBOS. */
   readonly comboWeights: Float64Array;
@@ -108,7 +110,7 @@ export function dayModelOf(data: FitData, spread: FittedSpread | null): DayModel
     dayEstimates: estimates,
     degradedDays: named,
     events,
-    posterior: { A, B, standardErrorA, effectiveShare: share, cells, comboWeights: fit.weights },
+    posterior: { A, B, standardErrorA, effectiveShare: share, data, cells, comboWeights: fit.weights },
     notes: dayNotes({
       component,
       occupations: cells.occupations,

@@ -1,10 +1,10 @@
 import { type ErrorsInput, errorColumns, type Visit } from '../errors/index.js';
-import { type FitData, prepareErrors } from '../fit/index.js';
-import { message } from '../logs/index.js';
+import type { FitData } from '../fit/index.js';
+import { inputError, message } from '../logs/index.js';
 import { type ConditionColumns, dayConditions } from './dayConditions.js';
 import { type DayEvidence, dayEvidence, SUBSTANTIAL } from './dayEvidence.js';
 import { type DayExplanation, LEVEL, type TestedCondition, type TestedSetup } from './dayExplanation.js';
-import type { DayModel } from './dayModel.js';
+import type { DayModel, DayPosterior } from './dayModel.js';
 import { type GuiltyPart, growthEvidence, guiltyPart, pickShots } from './dayParts.js';
 import { explanationText } from './explanationText.js';
 import { familyAdjusted } from './falseDiscovery.js';
@@ -13,8 +13,6 @@ import { type SetupOffset, setupOffsets, squaresWithout, testOffset } from './se
 export interface ExplainOptions {
   /** Visits with and without a fix; without them missing fixes are not judged. */
   readonly visits?: readonly Visit[] | undefined;
-  /** Weights with which the model was fitted. */
-  readonly weights?: Float64Array | undefined;
 }
 
 /** Columns of the errors that take part where they exist, aligned with the rows of the fit. */
@@ -29,7 +27,7 @@ export interface DayCovariates extends ConditionColumns {
  * @param errors those of the model; `setup`, `mark`, `crew`, `rover`, `satellites`, `pdop`, `ageSeconds` take part where
  *   they exist
  * @returns nothing where no day is degraded or none can be named
- * @throws InputError when a column of the fit is missing
+ * @throws InputError for errors that are not those of the model
  */
 export function judgeDegradedDays(
   errors: ErrorsInput,
@@ -56,14 +54,27 @@ function explainDays(
   days: readonly string[],
   errors: ErrorsInput,
   model: DayModel,
-  { visits = [], weights }: ExplainOptions,
+  { visits = [] }: ExplainOptions,
 ): DayExplanation[] {
-  const data = prepareErrors(errors, model.component, weights);
-  return explainDaysOf(days, data, covariatesOf(errors, data), model, visits);
+  if (days.length === 0) return [];
+  return explainDaysOf(days, covariatesOf(errors, posteriorOf(model).data), model, visits);
+}
+
+function posteriorOf({ posterior }: DayModel): DayPosterior {
+  if (posterior !== null) return posterior;
+  throw new RangeError('model: expected a day model that could judge days, received one that could not');
 }
 
 function covariatesOf(errors: ErrorsInput, data: FitData): DayCovariates {
   const columns = errorColumns(errors);
+  const last = data.rows.reduce((a, b) => Math.max(a, b), 0);
+  const days = columns.texts('day', 'the causes of a day');
+  if (last >= columns.length || data.rows.some((row, i) => days[row] !== data.day[i])) {
+    throw inputError(
+      'bad-option',
+      `Expected the errors of the day model, came ${columns.length} others. Hand in the errors that the model was made from.`,
+    );
+  }
   const texts = (name: string): string[] | null => {
     if (!columns.has(name)) return null;
     const all = columns.texts(name, 'the causes of a day');
@@ -83,20 +94,20 @@ function covariatesOf(errors: ErrorsInput, data: FitData): DayCovariates {
   };
 }
 
-/** The same from the rows of a fit. Chances are adjusted for all tests on all days asked for (Holm). */
+/**
+ * The same with the circumstances of every row of the model's data. Chances are adjusted for all tests on all days asked
+ * for (Holm).
+ */
 export function explainDaysOf(
   days: readonly string[],
-  data: FitData,
   covariates: DayCovariates,
   model: DayModel,
   visits: readonly Visit[],
 ): DayExplanation[] {
-  if (days.length === 0) return [];
-  if (model.posterior === null) {
-    throw new RangeError('model: expected a day model that could judge days, received one that could not');
-  }
-  const evidence = dayEvidence(model.posterior);
-  const offsets = setupOffsets(data, model);
+  const posterior = posteriorOf(model);
+  const { data } = posterior;
+  const evidence = dayEvidence(posterior);
+  const offsets = setupOffsets(model);
   const tested = days.map((day) => ({
     day,
     setups: daySetups(day, data, offsets, evidence),

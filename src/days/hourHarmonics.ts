@@ -1,8 +1,8 @@
 import type { FitData } from '../fit/index.js';
 import { leastSquares, type Random } from '../stats/index.js';
 import { dayIndex } from './dayIndex.js';
+import { flippedScores } from './flippedScores.js';
 import { hourScores } from './hourScores.js';
-import { signFlipTest } from './signFlips.js';
 
 /** With less of the day at work a daily course is nearly the same as a level. */
 const ONE_FROM_HOURS = 12;
@@ -52,7 +52,7 @@ export function hourHarmonics(
     coefficients,
     ratio: Math.exp(highest - lowest),
     highestHour: clock[logs.indexOf(highest)]!,
-    pValue: signFlipTest(hourScores(data, A, B, factors, courses), random).pValue,
+    pValue: flippedScores(hourScores(data, A, B, factors, courses), random).pValue,
   };
 }
 

@@ -1,3 +1,13 @@
+export {
+  type AssociationOptions,
+  type DayShare,
+  type DegradedDay,
+  type KpThreshold,
+  type RankAssociation,
+  rankAssociation,
+  type ThresholdRule,
+  thresholdRule,
+} from './association.js';
 export { type DailyFactor, dailyFactors } from './dailyFactors.js';
 export type { DayCondition } from './dayConditions.js';
 export { type DayEstimate, type DayValue, DEGRADED_FACTOR } from './dayEstimates.js';

@@ -22,9 +22,9 @@ export interface SetupOffset {
  * Weighted mean error of every setup on every day. Weights follow the variance that the day itself had, so that on a
  * day of large ppm the offset rests on the near shots.
  */
-export function setupOffsets(data: FitData, { dayEstimates, posterior }: DayModel): SetupOffset[] {
-  if (posterior === null || data.setup === null) return [];
-  const { A, effectiveShare } = posterior;
+export function setupOffsets({ dayEstimates, posterior }: DayModel): SetupOffset[] {
+  if (posterior === null || posterior.data.setup === null) return [];
+  const { A, effectiveShare, data } = posterior;
   const slopes = new Map(dayEstimates.map(({ day, ppm }) => [day, ppm.estimate ** 2]));
   const keys = data.day.map((day, i) => JSON.stringify([day, data.setup![i]!]));
   const axes = data.components.length;

@@ -4,11 +4,11 @@ import { type Message, message } from '../logs/index.js';
 import type { Random } from '../stats/index.js';
 import { dayIndex } from './dayIndex.js';
 import { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
+import { flippedScores } from './flippedScores.js';
 import { type HourClasses, hourClasses } from './hourClasses.js';
 import { type HourHarmonics, hourHarmonics } from './hourHarmonics.js';
 import { ppmOfRows } from './hourPpm.js';
 import { hourDayFactors, hourScores } from './hourScores.js';
-import { signFlipTest } from './signFlips.js';
 
 /** The ppm in one third of the working hours. */
 export interface HourClass {
@@ -113,7 +113,7 @@ export function hourTest(
   random: Random,
 ) {
   const indicator = (k: number): Float64Array => Float64Array.from(classOf, (own) => (own === k ? 1 : 0));
-  return signFlipTest(hourScores(data, A, B, factors, [indicator(1), indicator(2)]), random);
+  return flippedScores(hourScores(data, A, B, factors, [indicator(1), indicator(2)]), random);
 }
 
 /** Rows without a time keep their place with weight 0. */

@@ -3,7 +3,7 @@ import { clusterTerms, covariance, type ErrorModel, type FitData } from '../fit/
 import { type Message, message } from '../logs/index.js';
 import type { DayEstimate } from './dayEstimates.js';
 import { near } from './degradedDays.js';
-import { fittedData } from './fittedSpread.js';
+import { fittedData, varianceOf } from './fittedSpread.js';
 
 /** Weeks replace days as clusters when they widen the error of the ppm by so much, and there are so many. */
 const WIDER = 1.25;
@@ -37,7 +37,7 @@ export function dayDependence(
   days: readonly DayEstimate[],
   weights?: Float64Array,
 ): DayDependence {
-  const { A, B } = model.variance;
+  const { A, B } = varianceOf(model);
   return dayDependenceOf(fittedData(errors, model, weights), A, B, days);
 }
 
@@ -70,7 +70,7 @@ export function dayDependenceOf(
 }
 
 const slopeVariance = (data: FitData, clusters: readonly string[], A: number, B: number): number =>
-  covariance(clusterTerms(data, clusters, A, B), 'CR3')[2];
+  covariance(clusterTerms(data, clusters, A, B, 'root-sum-square'), 'CR3')[2];
 
 /** The Monday of a day's week, YYYY-MM-DD; null for a name that is no date. */
 export function weekOf(day: string): string | null {

@@ -3,6 +3,7 @@ import { comboRms } from '../../src/days/dayGrid.js';
 import { dayRatios } from '../../src/days/dayRatios.js';
 import {
   comboQuantiles,
+  dayModel,
   dayModelNodes,
   dayModelOf,
   dayQuantilePpm,
@@ -11,7 +12,8 @@ import {
 } from '../../src/days/index.js';
 import { weightedQuantiles } from '../../src/days/weightedQuantile.js';
 import { estimateVariance, type FitData, fitErrorModel, prepareErrors } from '../../src/fit/index.js';
-import { referenceFits } from '../fit/reference.js';
+import { normalQuantile } from '../../src/stats/index.js';
+import { referenceErrors, referenceFits, referenceWrongFixes } from '../fit/reference.js';
 import { allClose, axisData, close, readDaysFixture, referenceWeights, timedErrors } from './reference.js';
 
 // Source of every expected number: an implementation in R and limma 3.54 (fixtures/fits, with recipe); where weights
@@ -113,6 +115,50 @@ describe.each(CASES)('$name', ({ data, expected, scale }) => {
       expect(Math.abs(probabilityDegraded - days.p_degraded[d])).toBeLessThan(1e-8);
     });
     expect(model.degradedDays).toEqual(days.flagged_bfdr10);
+  });
+});
+
+// Chance that on 90 % of the days 95 % of the shots at 8 km, wrong fixes counted, are within the tolerance: from
+// repeatability, the nodes of the constant and the 80 % quantile of the share of wrong fixes (fixtures/fits, ref4_marks).
+describe('confidence at 8 km on habitual marks', () => {
+  const rows = referenceErrors('ref4_marks');
+  const wrong = new Set(referenceWrongFixes('ref4_marks'));
+  const weights = Float64Array.from(rows, (_, i) => (wrong.has(i + 1) ? 0 : 1));
+  const reference = referenceFits('ref4_marks').known;
+  const share = 0.95 / (1 - reference.wrong_fixes.eps[2].q80);
+  it.each([
+    ['vertical', 'U', normalQuantile(0.5 + share / 2)],
+    // The radial variance is twice that of an axis.
+    ['horizontal', 'H', Math.sqrt(-Math.log(1 - share))],
+  ] as const)('equals R, %s', (component, letter, factor) => {
+    const model = fitErrorModel(rows, { component, reference: 'repeatability', weights });
+    const { posterior, effectiveShare: shots } = dayModel(rows, model, weights);
+    const { rule } = reference[letter].repeatability;
+    expect(shots).toBeCloseTo(rule.kappa_used, 8);
+    const logs = comboQuantiles(0.9);
+    let confidence = 0;
+    for (const { A, weight, comboWeights } of dayModelNodes(posterior!)) {
+      const room = (rule.T_mm / factor) ** 2 - A;
+      comboWeights.forEach((w, j) => {
+        if (Math.sqrt(Math.max(0, room) / posterior!.B) >= 8 * Math.exp(logs[j]!)) confidence += weight * w;
+      });
+    }
+    expect(Math.abs(confidence - rule.conf_at_8km)).toBeLessThan(1e-6);
+  });
+
+  it('needs the weights of the screened model', () => {
+    const model = fitErrorModel(rows, { component: 'vertical', reference: 'repeatability', weights });
+    expect(() => dayModel(rows, model)).toThrow(/Expected the weights of the screened model/);
+  });
+
+  it('is not asked of another form, or of a composed model', () => {
+    const linear = fitErrorModel(rows, { component: 'vertical', form: 'linear-sum' });
+    expect(() => dayModel(rows, linear)).toThrow(
+      /form "root-sum-square" for the study of days, came "linear-sum"/,
+    );
+    const model = fitErrorModel(rows, { component: 'vertical', reference: 'repeatability' });
+    const composed = { ...model, markComponent: {} as never };
+    expect(() => dayModel(rows, composed)).toThrow(/came one composed/);
   });
 });
 

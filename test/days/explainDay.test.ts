@@ -146,9 +146,13 @@ describe('judgeDegradedDays', () => {
       north,
       startMs,
     }));
-    const [found] = judgeDegradedDays(bare, model);
+    const [found] = judgeDegradedDays(bare, dayModel(bare, fitErrorModel(bare, { component: 'horizontal' })));
     expect(found!.verdict).toBe('grows with distance');
     expect([found!.setups, found!.conditions, found!.mark, found!.crew]).toEqual([[], [], null, null]);
+  });
+
+  it('refuses errors that are not those of the model', () => {
+    expect(() => judgeDegradedDays(rows.slice(1), model)).toThrow(/errors of the day model/);
   });
 
   it('refuses a day that is not in the data', () => {

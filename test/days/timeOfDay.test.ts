@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { simulateErrors } from '../../src/campaign/index.js';
+import { flippedScores } from '../../src/days/flippedScores.js';
 import { hourClasses } from '../../src/days/hourClasses.js';
 import { hourDayFactors } from '../../src/days/hourScores.js';
 import { timeOfDay } from '../../src/days/index.js';
-import { signFlipTest } from '../../src/days/signFlips.js';
 import { hourTest } from '../../src/days/timeOfDay.js';
 import { estimateVariance, type FitData, fitErrorModel } from '../../src/fit/index.js';
 import { randomStream } from '../../src/stats/index.js';
@@ -37,13 +37,13 @@ describe.each(sets)('the test of hours on %s %s', (name, letter) => {
 
 describe('sign flips', () => {
   it('count all patterns of few groups: of 2^4 signs of 1, 2, 3, 4 two reach the full sum', () => {
-    const { pValue, statistic } = signFlipTest([Float64Array.of(1, 2, 3, 4)], () => Number.NaN);
+    const { pValue, statistic } = flippedScores([Float64Array.of(1, 2, 3, 4)], () => Number.NaN);
     expect(pValue).toBe(2 / 16);
     expect(statistic).toBeCloseTo(100 / 30, 12);
   });
   it('agree for equal seeds and differ for others', () => {
     const scores = [Float64Array.from({ length: 20 }, (_, k) => Math.sin(k) + 0.4)];
-    const p = (seed: number) => signFlipTest(scores, randomStream(seed)).pValue;
+    const p = (seed: number) => flippedScores(scores, randomStream(seed)).pValue;
     expect(p(1)).toBe(p(1));
     expect(p(1)).not.toBe(p(2));
   });
