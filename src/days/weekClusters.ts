@@ -48,6 +48,8 @@ export function dayDependenceOf(
   B: number,
   days: readonly DayEstimate[],
 ): DayDependence {
+  // A fit that cannot judge days may have no distance term at all: there is no slope to cluster.
+  if (days.length === 0) return NOT_COMPARED;
   const weekNames = data.day.map(weekOf);
   const dated = weekNames.every((week) => week !== null);
   const weeks = dated ? new Set(weekNames).size : 0;
@@ -68,6 +70,15 @@ export function dayDependenceOf(
       cluster === 'week' ? [weekNote(standardErrorRatio!, pairs < FEWEST_PAIRS ? null : correlation)] : [],
   };
 }
+
+const NOT_COMPARED: DayDependence = {
+  cluster: 'day',
+  weeks: 0,
+  standardErrorRatio: null,
+  lagOneCorrelation: null,
+  pairs: 0,
+  notes: [],
+};
 
 const slopeVariance = (data: FitData, clusters: readonly string[], A: number, B: number): number =>
   covariance(clusterTerms(data, clusters, A, B, 'root-sum-square'), 'CR3')[2];

@@ -2,6 +2,7 @@ import type { OccupationError } from '../errors/index.js';
 import { type ErrorModel, fitWithoutEachDay, setupOffsets, wrongFixShareAtKm } from '../fit/index.js';
 import { markMeans } from '../split/index.js';
 import type { ComponentFits, FittedModel } from './fitComponents.js';
+import { type JudgedDays, ppmInterval } from './judgeDays.js';
 import type { FitResult, MarkComponentResult, MarkResult, Results } from './results.js';
 import type { WrongFixes } from './screenStudy.js';
 
@@ -13,11 +14,13 @@ export function fitResults(
   components: readonly ComponentFits[],
   errors: readonly OccupationError[],
   wrongFixes: WrongFixes | null,
+  judged: readonly JudgedDays[],
 ): Pick<Results, 'fits' | 'comparison' | 'setups' | 'markComponents'> {
   return {
-    fits: components.flatMap(({ fits, basis }) =>
-      fits.map((fitted) => fitResult(fitted, basis, errors, wrongFixes)),
-    ),
+    fits: components.flatMap(({ component, fits, basis }) => {
+      const days = judged.find((each) => each.component === component);
+      return fits.map((fitted) => fitResult(fitted, basis, errors, wrongFixes, days));
+    }),
     comparison: components.map(({ comparison: { component, against, gain, se, days, verdict } }) => ({
       component: component as FitResult['component'],
       against,
@@ -76,10 +79,12 @@ function fitResult(
   basis: ErrorModel,
   errors: readonly OccupationError[],
   wrongFixes: WrongFixes | null,
+  days: JudgedDays | undefined,
 ): FitResult {
-  const { component, reference, form, screened, confidence, constantMm, ppm, ppmIfIndependent } = model;
-  const { interval, informationNumber, occupations, days, marks, shortestKm, longestKm, notes } = model;
+  const { component, reference, form, screened, confidence, constantMm, ppmIfIndependent } = model;
+  const { informationNumber, occupations, marks, shortestKm, longestKm, notes } = model;
   const isBasis = model === basis;
+  const { ppm, interval } = ppmInterval(model, isBasis ? days : undefined);
   return {
     component,
     reference,
@@ -93,12 +98,12 @@ function fitResult(
     ppm,
     ppmIfIndependent,
     interval,
-    medianDayPpm: null,
+    medianDayPpm: isBasis && days?.model.posterior ? days.model.medianDayPpm : null,
     wrongFixShare: screened && wrongFixes !== null ? wrongFixShare(wrongFixes, longestKm) : null,
     signedPpm: model.markComponent?.trend ?? null,
     informationNumber,
     occupations,
-    days,
+    days: model.days,
     marks,
     shortestKm,
     longestKm,

@@ -1,3 +1,4 @@
+import type { DailyFactor, DayVerdict, DegradedEvent, HourClass, HourHarmonics } from '../days/index.js';
 import type { CommonCauses, StaticShots } from '../errors/index.js';
 import type { Component, EstimateWithLimits, Form, Reference, SetupOffsets } from '../fit/index.js';
 import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
@@ -106,6 +107,49 @@ export interface WrongFixResult {
   readonly row: number;
 }
 
+/** How the ppm differs from day to day. */
+export interface DayModelResult {
+  readonly component: Component;
+  /** Of which half of the days are worse. */
+  readonly medianDayPpm: EstimateWithLimits;
+  /** Root-mean-square over days to come. */
+  readonly longRunPpm: EstimateWithLimits;
+  /** Spread of the log of the daily factors. */
+  readonly spread: EstimateWithLimits;
+  /** What a shot is worth against an independent one. */
+  readonly effectiveShare: number;
+  /** Degraded days in a row. */
+  readonly events: readonly DegradedEvent[];
+  readonly lagOneCorrelation: number | null;
+  readonly clusteredBy: 'day' | 'week';
+}
+
+/** A day's ppm over that of the median day. */
+export interface DailyFactorResult extends DailyFactor {
+  /** Whether a moderated variance names the day too; null where it cannot be asked. */
+  readonly secondOpinion: boolean | null;
+}
+
+/** A degraded day and what it is put down to. */
+export interface DegradedDayResult {
+  readonly component: Component;
+  readonly day: string;
+  readonly factor: number;
+  readonly probabilityDegraded: number;
+  readonly occupations: number;
+  readonly verdict: DayVerdict;
+  readonly subject: string | null;
+  readonly text: string;
+}
+
+/** Whether the ppm depends on the hour of the day, by solar time. */
+export interface TimeOfDayResult {
+  readonly component: Component;
+  readonly pValue: number | null;
+  readonly hours: readonly HourClass[];
+  readonly harmonics: HourHarmonics | null;
+}
+
 /** Measured spread by class of baseline length. Shown, never fitted. */
 export interface LengthClass {
   readonly fromKm: number;
@@ -181,6 +225,10 @@ export interface Results {
   readonly markComponents: readonly MarkComponentResult[];
   /** Occupations that look like wrong fixes, for review. */
   readonly wrongFixes: readonly WrongFixResult[];
+  readonly dayModels: readonly DayModelResult[];
+  readonly dailyFactors: readonly DailyFactorResult[];
+  readonly degradedDays: readonly DegradedDayResult[];
+  readonly timeOfDay: readonly TimeOfDayResult[];
   readonly lengthClasses: readonly LengthClass[];
   readonly marks: readonly MarkResult[];
   readonly rules: readonly Rule[];

@@ -65,6 +65,64 @@ const fit = z.strictObject({
   notes: z.array(z.string()),
 });
 
+const dayModel = z.strictObject({
+  component,
+  medianDayPpm: limits,
+  longRunPpm: limits.describe('Root-mean-square over days to come.'),
+  spread: limits.describe('Of the log of the daily factors.'),
+  effectiveShare: z.number(),
+  events: z.array(z.strictObject({ from: day, to: day, days: z.array(day) })),
+  lagOneCorrelation: nullable,
+  clusteredBy: z.enum(['day', 'week']),
+});
+
+const dailyFactor = z.strictObject({
+  component,
+  day,
+  factor: z.number().describe("The day's ppm over that of the median day."),
+  low: z.number(),
+  high: z.number(),
+  probabilityDegraded: z.number(),
+  degraded: z.boolean().nullable(),
+  occupations: count,
+  secondOpinion: z.boolean().nullable(),
+});
+
+const degradedDay = z.strictObject({
+  component,
+  day,
+  factor: z.number(),
+  probabilityDegraded: z.number(),
+  occupations: count,
+  verdict: z.enum([
+    'bad setup',
+    'one mark',
+    'one crew',
+    'one receiver',
+    'grows with distance',
+    'not explained',
+  ]),
+  subject: z.string().nullable(),
+  text: z.string(),
+});
+
+const timeOfDay = z.strictObject({
+  component,
+  pValue: nullable,
+  hours: z.array(
+    z.strictObject({ from: z.number(), to: z.number(), ppm: limits, occupations: count, days: count }),
+  ),
+  harmonics: z
+    .strictObject({
+      count: z.union([z.literal(1), z.literal(2)]),
+      coefficients: z.array(z.number()),
+      ratio: z.number(),
+      highestHour: z.number(),
+      pValue: z.number(),
+    })
+    .nullable(),
+});
+
 const lengthClass = z.strictObject({
   fromKm: z.number(),
   toKm: z.number(),
@@ -222,6 +280,10 @@ export const resultsSchema = z.strictObject({
   setups: z.array(setup),
   markComponents: z.array(markComponent),
   wrongFixes: z.array(wrongFix),
+  dayModels: z.array(dayModel),
+  dailyFactors: z.array(dailyFactor),
+  degradedDays: z.array(degradedDay),
+  timeOfDay: z.array(timeOfDay),
   lengthClasses: z.array(lengthClass),
   marks: z.array(mark),
   rules: z.array(rule),

@@ -14,6 +14,7 @@ import { maximumBaseline, noRule } from '../rule/index.js';
 import { causeMessages } from './causeMessages.js';
 import { fitComponents } from './fitComponents.js';
 import { fitResults, markResults } from './fitResults.js';
+import { dayResults, type JudgedDays, judgeDays } from './judgeDays.js';
 import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
 import { loadControl } from './loadControl.js';
@@ -46,6 +47,8 @@ export interface StudyRun extends StudyErrors {
   readonly weights: Float64Array;
   /** The fits on which the rules rest, one a component. */
   readonly models: readonly ErrorModel[];
+  /** Days and hours under these fits. */
+  readonly days: readonly JudgedDays[];
 }
 
 /**
@@ -96,6 +99,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const weights = wrongFixes?.weights ?? null;
   const { components, messages } = fitComponents(errors, weights, study);
   const models = components.map(({ basis }) => basis);
+  const judged = judgeDays(errors, weights, read.visits, components, study);
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
   const rules = study.tolerances.map((tolerance) => {
     const model = models.find(({ component }) => component === tolerance.component);
@@ -108,17 +112,26 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...read.results.messages,
       ...(wrongFixes?.messages ?? []),
       ...messages,
+      ...judged.flatMap((each) => each.messages),
       ...ruleMessages(rules.length),
     ],
     occupations: withSuspects(read.results.occupations, errors.length - used.length),
-    ...fitResults(components, errors, wrongFixes),
+    ...fitResults(components, errors, wrongFixes, judged),
+    ...dayResults(judged),
     wrongFixes: wrongFixResults(errors, wrongFixes),
     lengthClasses: lengthClasses(used, read.visits, read.control, study.confidence),
     marks: markResults(used, components),
     rules,
   };
   const setAside = [...read.setAside, ...suspects(errors, wrongFixes)];
-  return { ...read, setAside, weights: weights ?? new Float64Array(errors.length).fill(1), models, results };
+  return {
+    ...read,
+    setAside,
+    weights: weights ?? new Float64Array(errors.length).fill(1),
+    models,
+    days: judged,
+    results,
+  };
 }
 
 const ruleMessages = (rules: number): Message[] =>

@@ -78,7 +78,9 @@ describe('demo and run', () => {
     const setAside = Object.values(results.rows.setAside).reduce((a, b) => a + b, 0);
     expect(results.rows.read).toBe(results.rows.used + setAside);
     const truth = JSON.parse(readFileSync(join(demo, 'truth.json'), 'utf8'));
-    for (const { component, ppm, constantMm } of results.fits) {
+    for (const { component, ppm, constantMm, form } of results.fits) {
+      // The truth adds as squares; the other form says the same with other numbers.
+      if (form === 'linear-sum') continue;
       const { longRunPpm, constantMm: constant } = truth.components[component];
       expect(ppm.low).toBeLessThan(longRunPpm);
       expect(ppm.high).toBeGreaterThan(longRunPpm);

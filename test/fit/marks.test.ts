@@ -144,15 +144,17 @@ describe('the choice of reference', () => {
       rows.map((row) => ({ ...row, mark: row.baselineKm > 6 ? 'far' : 'near' })),
       'only 2 marks were visited on 3 days or more',
     ],
-    [
-      'one mark is far',
-      rows.filter(({ baselineKm }) => baselineKm < 5 || baselineKm > 28),
-      'far enough from the base',
-    ],
   ])('falls back to the published coordinates when %s', (_, errors, reason) => {
     const { reference, message } = choose(errors);
     expect(reference).toBe('absolute');
     expect(message.text).toContain(reason);
+  });
+
+  it('stays with repeatability when one mark is far, and warns', () => {
+    const { reference, message } = choose(rows.filter(({ baselineKm }) => baselineKm < 5 || baselineKm > 28));
+    expect(reference).toBe('repeatability');
+    expect(message.severity).toBe('warning');
+    expect(message.text).toMatch(/(no mark|only mark \S+) is far enough from the base/);
   });
 });
 

@@ -30,7 +30,7 @@ describe('a study file', () => {
       marks: 'm.csv',
       bases: 'b.csv',
       logs: [{ files: 'a.csv' }],
-      model: { form: 'root-sum-square', reference: 'auto', confidence: 0.95 },
+      model: { form: 'root-sum-square', reference: 'auto', confidence: 0.95, screen: true },
       occupations: { gapSeconds: 60 },
       tolerances: [],
       leaveOutDays: [],

@@ -101,7 +101,10 @@ describe('the demo study', () => {
 
   it('has results that satisfy their schema and survive JSON', () => {
     expectSound(run.results);
-    expect(run.results.fits.map(({ component }) => component)).toEqual(['horizontal', 'vertical']);
+    const basis = run.results.fits.filter(({ basisOfRule }) => basisOfRule);
+    expect(basis.map(({ component }) => component)).toEqual(['horizontal', 'vertical']);
+    // Three references, two forms, with and without screening, of each component.
+    expect(run.results.fits).toHaveLength(24);
     expect(run.results.rules).toHaveLength(4);
   });
 

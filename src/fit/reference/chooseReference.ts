@@ -20,8 +20,9 @@ export interface ReferenceChoice {
 }
 
 /**
- * Repeatability where at least half of the occupations lie on marks visited on three days or more, there are three such
- * marks, and two of them lie beyond a/b; else the published coordinates.
+ * Repeatability where at least half of the occupations lie on marks visited on three days or more and there are three
+ * such marks; else the published coordinates. Without two of them beyond a/b the ppm rests on little, which is told, but
+ * against the published coordinates the marks' own errors would be in it too.
  * @throws InputError as referenceData for `absolute`
  */
 export function chooseReference(
@@ -62,21 +63,18 @@ export function chooseReference(
   if (support.marks.length < FEWEST_MARKS) {
     return absolute(`only ${support.marks.length} marks were visited on 3 days or more`, support);
   }
-  if (support.beyond.length < FEWEST_BEYOND) {
-    const far = support.beyond.length === 0 ? 'none of the marks' : `only mark ${support.beyond[0]}`;
-    return absolute(
-      `of the marks visited on 3 days or more ${far} is far enough from the base for the ppm to outweigh the constant`,
-      support,
-    );
+  const text = `Errors are counted from each mark's mean of its other days, because ${percent(share)} of the occupations lie on ${support.marks.length} marks that were visited on 3 days or more: this is how well a position is found again on another day. What is the same every day (coordinates of marks and base, scale, geoid, transformation) is not in it.`;
+  const chosen = { reference: 'repeatability', shareOnRepeatedMarks: share, support } as const;
+  if (support.beyond.length >= FEWEST_BEYOND) {
+    return { ...chosen, message: message('info', 'reference-repeatability', text) };
   }
+  const far = support.beyond.length === 0 ? 'no mark' : `only mark ${support.beyond[0]}`;
   return {
-    reference: 'repeatability',
-    shareOnRepeatedMarks: share,
-    support,
+    ...chosen,
     message: message(
-      'info',
+      'warning',
       'reference-repeatability',
-      `Errors are counted from each mark's mean of its other days, because ${percent(share)} of the occupations lie on ${support.marks.length} marks that were visited on 3 days or more: this is how well a position is found again on another day. What is the same every day (coordinates of marks and base, scale, geoid, transformation) is not in it.`,
+      `${text} Of these marks ${far} is far enough from the base for the ppm to outweigh the constant: visit ${FEWEST_BEYOND} far marks on 3 days or more each.`,
     ),
   };
 }

@@ -1,0 +1,138 @@
+import {
+  type DayExplanation,
+  type DayModel,
+  dailyFactors,
+  dayDependence,
+  dayModel,
+  judgeDegradedDays,
+  moderatedDays,
+  timeOfDay,
+} from '../days/index.js';
+import type { OccupationError, Visit } from '../errors/index.js';
+import type { ErrorModel, EstimateWithLimits } from '../fit/index.js';
+import type { Message } from '../logs/index.js';
+import { randomStream } from '../stats/index.js';
+import type { ComponentFits } from './fitComponents.js';
+import type { DayModelResult, DegradedDayResult, Results } from './results.js';
+import type { Study } from './study.js';
+
+/** The day model of a fit, and what single days and hours are like under it. */
+export interface JudgedDays {
+  readonly component: ErrorModel['component'];
+  readonly model: DayModel;
+  readonly explanations: readonly DayExplanation[];
+  readonly results: Pick<Results, 'dayModels' | 'dailyFactors' | 'degradedDays' | 'timeOfDay'>;
+  readonly messages: readonly Message[];
+}
+
+/** A moderated variance names a day from this adjusted chance on. */
+const SECOND_OPINION = 0.1;
+
+/**
+ * Judges days and hours by the fit behind the rules of each component. A fit in another form than root-sum-square has
+ * no day model.
+ */
+export function judgeDays(
+  errors: readonly OccupationError[],
+  weights: Float64Array | null,
+  visits: readonly Visit[],
+  components: readonly ComponentFits[],
+  { seed }: Pick<Study, 'seed'>,
+): JudgedDays[] {
+  return components.flatMap(({ component, basis }) => {
+    if (basis.form !== 'root-sum-square') return [];
+    const own = weights ?? undefined;
+    const model = dayModel(errors, basis, own);
+    const explanations = judgeDegradedDays(errors, model, { visits });
+    const moderated = moderatedDays(errors, basis, own);
+    const dependence = dayDependence(errors, basis, model.dayEstimates, own);
+    const hours = timeOfDay(errors, basis, {
+      random: randomStream(seed, `hours ${component}`),
+      weights: own,
+    });
+    const second = new Map(moderated.map(({ day, adjustedP }) => [day, adjustedP <= SECOND_OPINION]));
+    const summary: DayModelResult = {
+      component,
+      medianDayPpm: model.medianDayPpm,
+      longRunPpm: model.longRunPpm,
+      spread: model.tau,
+      effectiveShare: model.effectiveShare,
+      events: model.events,
+      lagOneCorrelation: dependence.lagOneCorrelation,
+      clusteredBy: dependence.cluster,
+    };
+    return [
+      {
+        component,
+        model,
+        explanations,
+        results: {
+          dayModels: [summary],
+          dailyFactors: dailyFactors(model).map((factor) => ({
+            ...factor,
+            secondOpinion: second.get(factor.day) ?? null,
+          })),
+          degradedDays: explanations.map(degradedDay),
+          timeOfDay: [{ component, pValue: hours.pValue, hours: hours.hours, harmonics: hours.harmonics }],
+        },
+        messages: [
+          // Each degraded day is told with what it is put down to.
+          ...model.notes.filter(({ code }) => code !== 'degraded-days' || explanations.length === 0),
+          ...explanations.map(({ note }) => note),
+          ...dependence.notes,
+          ...hours.notes,
+        ].map((note) => ({
+          ...note,
+          text: `${component === 'horizontal' ? 'Horizontal' : 'Vertical'}: ${note.text}`,
+        })),
+      },
+    ];
+  });
+}
+
+function degradedDay({
+  component,
+  day,
+  factor,
+  probabilityDegraded,
+  occupations,
+  verdict,
+  subject,
+  note,
+}: DayExplanation): DegradedDayResult {
+  return { component, day, factor, probabilityDegraded, occupations, verdict, subject, text: note.text };
+}
+
+/** The findings of all components in the lists of the results. */
+export const dayResults = (judged: readonly JudgedDays[]): JudgedDays['results'] => ({
+  dayModels: judged.flatMap(({ results }) => results.dayModels),
+  dailyFactors: judged.flatMap(({ results }) => results.dailyFactors),
+  degradedDays: judged.flatMap(({ results }) => results.degradedDays),
+  timeOfDay: judged.flatMap(({ results }) => results.timeOfDay),
+});
+
+/** A spread of the days from which on the interval of a fit over all days is too narrow. */
+const WIDE_SPREAD = 0.35;
+
+/**
+ * The interval of the ppm that the data allow: where days differ much, that of the long-run ppm from the day model,
+ * since an interval from the scatter of the observed days does not know of worse days to come.
+ */
+export function ppmInterval(
+  { ppm, interval }: ErrorModel,
+  judged: JudgedDays | undefined,
+): { readonly ppm: EstimateWithLimits; readonly interval: string } {
+  const { estimate } = ppm;
+  if (judged === undefined || estimate === null) return { ppm, interval };
+  const { longRunPpm, tau, degradedDays } = judged.model;
+  const disturbed = (degradedDays?.length ?? 0) > 0 || (tau.estimate ?? 0) > WIDE_SPREAD;
+  if (!disturbed || longRunPpm.low === null || longRunPpm.high === null) return { ppm, interval };
+  return {
+    ppm: {
+      estimate,
+      low: Math.min(longRunPpm.low, estimate),
+      high: Math.max(longRunPpm.high, estimate),
+    },
+    interval: 'posterior of the day model, for days to come',
+  };
+}
