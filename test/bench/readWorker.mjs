@@ -2,19 +2,29 @@
 import { computeErrors, formOccupations, readLogs } from '../../dist/index.js';
 
 const [kind, path] = process.argv.slice(2);
+/** Coordinates that hold on all days. */
+const always = (position) => {
+  const coordinates = {
+    position,
+    horizontalSigmaMm: Number.NaN,
+    verticalSigmaMm: Number.NaN,
+    source: '',
+    frame: '',
+    epoch: Number.NaN,
+    from: '',
+    to: '',
+  };
+  return { ...coordinates, versions: [coordinates] };
+};
 const marks = new Map(
   Array.from({ length: 12 }, (_, k) => {
-    const name = `M${k}`;
     const position = { latitudeDeg: 44.3 + 0.02 * (k + 1), longitudeDeg: -18.40070001, heightM: 133.7 };
-    return [
-      name,
-      { name, position, horizontalSigmaMm: Number.NaN, verticalSigmaMm: Number.NaN, source: '', sky: '' },
-    ];
+    return [`M${k}`, { ...always(position), name: `M${k}`, sky: '' }];
   }),
 );
 const base = {
+  ...always({ latitudeDeg: 44.3, longitudeDeg: -18.4, heightM: 100 }),
   name: 'B',
-  position: { latitudeDeg: 44.3, longitudeDeg: -18.4, heightM: 100 },
   mounting: 'pillar',
 };
 const layout = kind === 'nmea' ? { kind, constants: { mark: 'M0' } } : { kind: 'delimited' };
