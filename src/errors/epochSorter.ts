@@ -159,7 +159,7 @@ export class EpochSorter {
       const row = records[offset + RECORD.row]!;
       if (this.#network.any) {
         const day = this.#dayOfRecord(records[offset + RECORD.utcMs]!, context);
-        const detail = this.#network.reason(file, key.rover, key.base, day);
+        const detail = this.#network.reason(key.rover, key.base, day);
         if (detail !== null) {
           this.#setAside({ file, row, reason: 'not-single-base', column: null, detail });
           continue;

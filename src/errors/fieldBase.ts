@@ -7,6 +7,8 @@ import { assumedBasePpm } from './assumedBase.js';
 export interface FieldBase {
   /** Coordinates in the field minus those of the bases file, in the base's horizon. */
   readonly apart: LocalVector;
+  /** The log gives the height of the base too; else it is taken as published. */
+  readonly heightKnown: boolean;
   /** The same backwards, in geocentric axes: moves a position to where the published base puts it. */
   readonly toPublished: Geocentric;
   /** Sets the setup apart from those with other base coordinates; empty when these are the published ones. */
@@ -21,7 +23,7 @@ export class FieldBases {
   readonly #known = new Map<PositionExtras, Map<PointCoordinates, FieldBase>>();
   readonly #found = new Map<
     string,
-    { file: string; row: number; base: string; apart: LocalVector; moved: boolean }
+    { file: string; row: number; base: string; field: FieldBase; moved: boolean }
   >();
 
   /**
@@ -45,25 +47,25 @@ export class FieldBases {
 
   /** Remembers a difference for the message about it. */
   tell(
-    { apart, setupSuffix }: FieldBase,
+    field: FieldBase,
     base: Base,
     { file, row }: { readonly file: string; readonly row: number },
     moved: boolean,
   ): void {
-    if (setupSuffix === '') return;
-    const key = [file, base.name, setupSuffix].join('\u0000');
+    if (field.setupSuffix === '') return;
+    const key = [file, base.name, field.setupSuffix].join('\u0000');
     const before = this.#found.get(key);
     if (before === undefined || row < before.row) {
-      this.#found.set(key, { file, row, base: base.name, apart, moved });
+      this.#found.set(key, { file, row, base: base.name, field, moved });
     }
   }
 
   messages(): Message[] {
     return [...this.#found.values()]
       .sort((a, b) => (a.file < b.file ? -1 : a.file > b.file ? 1 : a.row - b.row))
-      .map(({ file, row, base, apart, moved }) => {
+      .map(({ file, row, base, field: { apart, heightKnown }, moved }) => {
         const sizeM = Math.hypot(apart.eastM, apart.northM, apart.upM);
-        const where = `The log gives base ${quoted(base)} coordinates ${sizeM.toFixed(3)} m from those of the bases file (${vectorWords(apart)})`;
+        const where = `The log gives base ${quoted(base)} coordinates ${sizeM.toFixed(3)} m from those of the bases file (${vectorWords(apart, heightKnown)})`;
         const ppm = `${assumedBasePpm(sizeM).toFixed(2)} ppm of every baseline (common practice: metres / 20)`;
         return moved
           ? message(
@@ -84,10 +86,11 @@ export class FieldBases {
 
 function compared(extras: PositionExtras, { position }: PointCoordinates): FieldBase {
   const published = geodeticToGeocentric(position);
+  const heightKnown = !Number.isNaN(extras.baseHeightM);
   const inField = geodeticToGeocentric({
     latitudeDeg: extras.baseLatitudeDeg,
     longitudeDeg: extras.baseLongitudeDeg,
-    heightM: extras.baseHeightM,
+    heightM: heightKnown ? extras.baseHeightM : position.heightM,
   });
   const difference = {
     xM: inField.xM - published.xM,
@@ -99,12 +102,13 @@ function compared(extras: PositionExtras, { position }: PointCoordinates): Field
   return {
     apart,
     toPublished: { xM: -difference.xM, yM: -difference.yM, zM: -difference.zM },
-    setupSuffix: same ? '' : `, base moved ${vectorWords(apart)}`,
+    heightKnown,
+    setupSuffix: same ? '' : `, base moved ${vectorWords(apart, heightKnown)}`,
   };
 }
 
-const vectorWords = ({ eastM, northM, upM }: LocalVector): string =>
-  `east ${signed(eastM)}, north ${signed(northM)}, up ${signed(upM)} m`;
+const vectorWords = ({ eastM, northM, upM }: LocalVector, heightKnown: boolean): string =>
+  `east ${signed(eastM)}, north ${signed(northM)}${heightKnown ? `, up ${signed(upM)} m` : ' m, its height is not told'}`;
 
 function signed(metres: number): string {
   const size = Math.abs(metres).toFixed(3);

@@ -1,57 +1,52 @@
 import { type Geocentric, geodeticToGeocentric } from '../geodesy/index.js';
-import type { Position } from '../logs/index.js';
+import type { Position, PositionExtras } from '../logs/index.js';
 
 /** Base places nearer to each other than this are one base put up again. */
 const APART_M = 50;
 /** A day's positions of one rover from so many stations, or so many base places, are not from a base of the firm. */
 const MANY = 3;
+/** Places are kept in cells of this size, so that a base that moves with the rover does not fill the memory. */
+const CELL_M = 5;
 
 interface Seen {
   readonly stations: Set<string>;
-  readonly places: Geocentric[];
+  readonly places: SpreadPlaces;
 }
 
 /**
  * Tells corrections of a network from those of a base: within a day the station number, or the base coordinates that
- * the log gives, keep changing with the rover.
+ * the log gives, keep changing with the rover. What is found does not depend on the order of rows.
  */
 export class NetworkWatch {
   readonly #seen = new Map<string, Seen>();
   #lastKey = '';
   #last: Seen | null = null;
-  #lastExtras: Position['extras'] = null;
+  #lastExtras: PositionExtras | null = null;
 
   /** Some rover's positions on some day are from a network. */
   any = false;
 
-  see({ extras, file, rover }: Position, base: string, day: string): void {
+  see({ extras, rover }: Position, base: string, day: string): void {
     if (extras === null) return;
-    const key = [file, rover, base, day].join('\u0000');
+    const key = keyOf(rover, base, day);
     if (key === this.#lastKey && extras === this.#lastExtras) return;
     if (key !== this.#lastKey || this.#last === null) {
       this.#lastKey = key;
-      this.#last = this.#seen.get(key) ?? { stations: new Set(), places: [] };
+      this.#last = this.#seen.get(key) ?? { stations: new Set(), places: new SpreadPlaces() };
       this.#seen.set(key, this.#last);
     }
     this.#lastExtras = extras;
     const { stations, places } = this.#last;
     if (extras.station !== '' && stations.size < MANY) stations.add(extras.station);
-    this.any ||= stations.size >= MANY;
-    if (Number.isNaN(extras.baseLatitudeDeg) || places.length >= MANY) return;
-    const place = geodeticToGeocentric({
-      latitudeDeg: extras.baseLatitudeDeg,
-      longitudeDeg: extras.baseLongitudeDeg,
-      heightM: extras.baseHeightM,
-    });
-    if (places.every((other) => distanceM(other, place) > APART_M)) places.push(place);
-    this.any ||= places.length >= MANY;
+    if (!Number.isNaN(extras.baseLatitudeDeg)) places.add(fieldPlace(extras));
+    this.any ||= stations.size >= MANY || places.spread;
   }
 
   /** Why the positions of a rover on a day are not from a single base; null when they are. */
-  reason(file: string, rover: string, base: string, day: string): string | null {
-    const seen = this.#seen.get([file, rover, base, day].join('\u0000'));
+  reason(rover: string, base: string, day: string): string | null {
+    const seen = this.#seen.get(keyOf(rover, base, day));
     if (seen === undefined) return null;
-    if (seen.places.length >= MANY) {
+    if (seen.places.spread) {
       return `the base coordinates in the log move with the rover (${MANY} or more places on ${day})`;
     }
     if (seen.stations.size >= MANY) {
@@ -60,6 +55,30 @@ export class NetworkWatch {
     return null;
   }
 }
+
+const keyOf = (rover: string, base: string, day: string): string => [rover, base, day].join('\u0000');
+
+/** Whether three of the places that were met are all apart from each other. */
+class SpreadPlaces {
+  readonly #cells = new Map<string, Geocentric>();
+  spread = false;
+
+  add(place: Geocentric): void {
+    if (this.spread) return;
+    const cell = [place.xM, place.yM, place.zM].map((value) => Math.round(value / CELL_M));
+    const key = cell.join(' ');
+    if (this.#cells.has(key)) return;
+    const [xM, yM, zM] = cell.map((value) => value * CELL_M) as [number, number, number];
+    const centre = { xM, yM, zM };
+    const far = [...this.#cells.values()].filter((other) => distanceM(other, centre) > APART_M);
+    this.spread = far.some((one, i) => far.slice(i + 1).some((other) => distanceM(one, other) > APART_M));
+    this.#cells.set(key, centre);
+  }
+}
+
+/** Where the log says that the base stands, brought to the ellipsoid: its height does not matter here. */
+export const fieldPlace = ({ baseLatitudeDeg, baseLongitudeDeg }: PositionExtras): Geocentric =>
+  geodeticToGeocentric({ latitudeDeg: baseLatitudeDeg, longitudeDeg: baseLongitudeDeg, heightM: 0 });
 
 export const distanceM = (a: Geocentric, b: Geocentric): number =>
   Math.hypot(a.xM - b.xM, a.yM - b.yM, a.zM - b.zM);

@@ -45,6 +45,9 @@ export interface Kept {
   readonly position: Position;
   readonly mark: string;
   readonly base: Base;
+  readonly baseAt: PointCoordinates;
+  /** Null when the mark is not known in plan. */
+  readonly markFromBaseM: number | null;
   readonly day: string;
   readonly key: string;
   readonly frame: LocalFrame;
@@ -110,11 +113,15 @@ export class Placer {
       last !== null &&
       sameStay(last.position, position) &&
       this.#dayOfPosition(position, last.base) === last.day;
-    if (same) return last;
+    if (same) {
+      const moved = notSingleBase(position, last.markFromBaseM ?? baseDistanceM(position, last.baseAt));
+      return moved === null ? last : { reason: 'not-single-base', detail: moved };
+    }
     const place = this.#find(position, nearestMarkM);
     if ('reason' in place) return place;
     const { mark, base, day, baseAt } = place;
-    const detail = notSingleBase(position, this.#fromBaseM(place));
+    const markFromBaseM = this.#fromBaseM(place);
+    const detail = notSingleBase(position, markFromBaseM ?? baseDistanceM(position, baseAt));
     if (detail !== null) return { reason: 'not-single-base', detail };
     const field = this.fieldBases.of(position.extras, baseAt);
     if (field !== null) this.fieldBases.tell(field, base, position, moveToPublishedBase);
@@ -123,14 +130,16 @@ export class Placer {
     const key = [position.rover, mark.name, base.name, setup, timed ? 'timed' : 'dated'].join(SEPARATOR);
     const { frame } = this.#context(key, { rover: position.rover, mark, base, setup, timed });
     const shift = moveToPublishedBase && field !== null ? field.toPublished : null;
-    const kept = { position, mark: mark.name, base, day, key, frame, shift };
+    const kept = { position, mark: mark.name, base, baseAt, markFromBaseM, day, key, frame, shift };
     // Where time or place names the mark, the next row may stand on another one; a base near the rover must be seen.
     const byText = nearestMarkM === null && this.control.markTimes?.get(position.file) === undefined;
     this.#last = byText ? kept : null;
     return kept;
   }
 
-  #fromBaseM({ mark, base, markAt, baseAt }: Place): number {
+  /** Distance of the mark from the base; null when the mark is not known in plan. */
+  #fromBaseM({ mark, base, markAt, baseAt }: Place): number | null {
+    if (Number.isNaN(markAt.position.latitudeDeg)) return null;
     const key = [mark.name, base.name, markAt.from, baseAt.from].join(SEPARATOR);
     let apartM = this.#apartM.get(key);
     if (apartM === undefined) {
@@ -185,6 +194,13 @@ export class Placer {
     }
     return context;
   }
+}
+
+/** How far a position is from the base of the bases file, where its mark does not tell. */
+function baseDistanceM(position: Position, { position: base }: PointCoordinates): number {
+  if (Number.isNaN(position.latitudeDeg)) return Number.NaN;
+  const { latitudeDeg, longitudeDeg } = position;
+  return baselineBetween(base, { latitudeDeg, longitudeDeg, heightM: base.heightM }).lengthKm * 1000;
 }
 
 function notValid(what: string, point: Versioned & { readonly name: string }, day: string): Rejection {

@@ -1,10 +1,8 @@
 import type { DelimitedHeader } from './header.js';
 import { type Message, message, quoted } from './messages.js';
+import { CORRECTION_KINDS } from './position.js';
 import type { CellFault, RowOutcome } from './rowPosition.js';
-
-/** Different texts of the fix column that are remembered, and of them those that are told. */
-const MOST_FIX_TEXTS = 1000;
-const TOLD_FIX_TEXTS = 5;
+import { rowsWords, UnknownWords } from './unknownWords.js';
 
 /** What is told of a log once, however many rows it concerns. */
 export class FileNotes {
@@ -12,9 +10,10 @@ export class FileNotes {
   #headers = 0;
   #noFixColumn = false;
   readonly #faults = new Map<string, { first: CellFault; count: number }>();
-  readonly #unknownFixes = new Map<string, number>();
-  #firstUnknownFix = 0;
+  readonly #unknownFixes = new UnknownWords();
+  readonly #unknownCorrections = new UnknownWords();
   #fixColumn = 'fix';
+  #correctionsColumn = 'corrections';
 
   constructor(readonly file: string) {}
 
@@ -23,23 +22,20 @@ export class FileNotes {
     this.#headers += 1;
     if (header.readable && !header.positions.has('fix') && !fixIsKnown) this.#noFixColumn = true;
     this.#fixColumn = header.headers.get('fix') ?? this.#fixColumn;
+    this.#correctionsColumn = header.headers.get('corrections') ?? this.#correctionsColumn;
   }
 
   #dateOnly = 0;
 
-  add({ position, faults, unknownFix }: Extract<RowOutcome, { kind: 'position' }>): void {
+  add({ position, faults, unknownFix, unknownCorrections }: Extract<RowOutcome, { kind: 'position' }>): void {
     if (position.dateOnly !== '') this.#dateOnly += 1;
     for (const fault of faults) {
       const entry = this.#faults.get(fault.column);
       if (entry === undefined) this.#faults.set(fault.column, { first: fault, count: 1 });
       else entry.count += 1;
     }
-    if (unknownFix === null) return;
-    const texts = this.#unknownFixes;
-    if (texts.size === 0) this.#firstUnknownFix = position.row;
-    if (texts.has(unknownFix) || texts.size < MOST_FIX_TEXTS) {
-      texts.set(unknownFix, (texts.get(unknownFix) ?? 0) + 1);
-    }
+    if (unknownFix !== null) this.#unknownFixes.add(unknownFix, position.row);
+    if (unknownCorrections !== null) this.#unknownCorrections.add(unknownCorrections, position.row);
   }
 
   messages(): Message[] {
@@ -47,7 +43,8 @@ export class FileNotes {
     return [
       ...(this.#noFixColumn ? [this.#withoutFixColumn()] : []),
       ...(this.#dateOnly > 0 ? [this.#withoutTimeOfDay()] : []),
-      ...(this.#unknownFixes.size > 0 ? [this.#unknownFix()] : []),
+      ...(this.#unknownFixes.any ? [this.#unknownFix()] : []),
+      ...(this.#unknownCorrections.any ? [this.#unknownCorrection()] : []),
       ...[...this.#faults.values()].map((fault) => this.#unreadValue(fault)),
     ];
   }
@@ -75,23 +72,28 @@ export class FileNotes {
     return message(
       'info',
       'no-time-of-day',
-      `The log gives a date and no time of day in ${rows(this.#dateOnly)}: each is taken as an occupation of its own, and hours are not known. Export the time where the controller can.`,
+      `The log gives a date and no time of day in ${rowsWords(this.#dateOnly)}: each is taken as an occupation of its own, and hours are not known. Export the time where the controller can.`,
       { file: this.file },
     );
   }
 
   #unknownFix(): Message {
-    const texts = [...this.#unknownFixes].sort(([, a], [, b]) => b - a);
-    const list = texts
-      .slice(0, TOLD_FIX_TEXTS)
-      .map(([text, count]) => `${text === '' ? 'a blank cell' : quoted(text)} in ${rows(count)}`)
-      .join(', ');
-    const more = texts.length > TOLD_FIX_TEXTS ? ` and ${texts.length - TOLD_FIX_TEXTS} other texts` : '';
     return message(
       'warning',
       'unknown-fix',
-      `Expected "fixed" or "float", came ${list}${more}: these count as not fixed. Say in fixValues of the layout what they mean.`,
-      { file: this.file, row: this.#firstUnknownFix, column: this.#fixColumn },
+      `Expected "fixed" or "float", came ${this.#unknownFixes.words()}: these count as not fixed. Say in fixValues of the layout what they mean.`,
+      { file: this.file, row: this.#unknownFixes.firstRow, column: this.#fixColumn },
+    );
+  }
+
+  #unknownCorrection(): Message {
+    const words = this.#unknownCorrections;
+    const expected = CORRECTION_KINDS.map(quoted).join(', ');
+    return message(
+      'warning',
+      'unknown-corrections',
+      `Expected one of ${expected} as corrections, came ${words.words()}: these count as not from a single base. Say in correctionValues of the layout what they mean.`,
+      { file: this.file, row: words.firstRow, column: this.#correctionsColumn },
     );
   }
 
@@ -99,10 +101,8 @@ export class FileNotes {
     return message(
       'warning',
       'unread-value',
-      `Expected a number, came ${quoted(first.cell)}: ${rows(count)} ${count === 1 ? 'is' : 'are'} read without this value. Leave the cell blank where nothing is known.`,
+      `Expected a number, came ${quoted(first.cell)}: ${rowsWords(count)} ${count === 1 ? 'is' : 'are'} read without this value. Leave the cell blank where nothing is known.`,
       { file: this.file, row: first.row, column: first.column },
     );
   }
 }
-
-const rows = (count: number): string => (count === 1 ? '1 row' : `${count} rows`);

@@ -1,7 +1,7 @@
 import type { TimeLayout } from '../time/index.js';
 import type { Encoding } from './byteChunks.js';
 import type { CoordinateSystem } from './coordinateSystem.js';
-import type { Fix } from './position.js';
+import type { Corrections, Fix } from './position.js';
 import type { ColumnRole } from './roles.js';
 
 /** Units of lengths in a log. */
@@ -45,6 +45,8 @@ export interface DelimitedLayout extends CommonLayout {
   readonly time?: TimeLayout | undefined;
   /** Text of the fix column → its meaning; `fixed` and `float` in any case are understood without it. */
   readonly fixValues?: Readonly<Record<string, Fix>> | undefined;
+  /** Text of the corrections column → its meaning; the meanings themselves are understood without it. */
+  readonly correctionValues?: Readonly<Record<string, Corrections>> | undefined;
 }
 
 /** Layout of NMEA 0183 sentences. */

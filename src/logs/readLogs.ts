@@ -7,13 +7,14 @@ import { FileNotes } from './fileNotes.js';
 import { type DelimitedLayout, decimalCharacter, type LogLayout } from './layout.js';
 import { inputError, type Message, message } from './messages.js';
 import { readNmea } from './nmea/readNmea.js';
-import { parseNumber } from './numbers.js';
-import type { Corrections, Fix, Position, PositionExtras } from './position.js';
+import { nmeaConstants } from './nmeaConstants.js';
+import { CORRECTION_KINDS, type Corrections, type Fix, type Position } from './position.js';
 import { readDelimited } from './readDelimited.js';
 import type { SetAsideRow } from './reasons.js';
 import { type LogResolution, ResolutionMeter } from './resolution.js';
 import type { ColumnRole } from './roles.js';
 import { rowPosition } from './rowPosition.js';
+import { wordMeanings } from './wordMeanings.js';
 
 export interface LogFile {
   readonly path: string;
@@ -84,43 +85,16 @@ function layoutValues({ file, layout, corrections }: LogFile): Values {
 }
 
 async function* readNmeaLog(log: LogFile, values: Values): AsyncGenerator<LogBatch> {
-  const { mark = '', base = '', setup = '', rover = '', crew = '', date = null } = values;
-  const extras = nmeaExtras(values);
-  for await (const batch of readNmea({ path: log.path, file: log.file, date, changes: log.changes })) {
+  const { path, file, changes } = log;
+  const { texts, extras } = layoutOr(file, () => nmeaConstants(values, changes));
+  for await (const batch of readNmea({ path, file, date: values.date ?? null, changes })) {
     const positions = batch.positions.map((position) => ({
       ...position,
-      mark,
-      base,
-      setup,
-      rover,
-      crew,
+      ...texts,
       extras: extras(position.extras),
     }));
     yield { ...batch, positions };
   }
-}
-
-/** What constants and file name say beside the sentences; rows that say the same share one value. */
-function nmeaExtras(values: Values): (own: PositionExtras | null) => PositionExtras | null {
-  const { corrections, support = '' } = values;
-  const number = (role: ColumnRole): number => parseNumber(values[role] ?? '') ?? Number.NaN;
-  const stated = {
-    baseLatitudeDeg: number('baseLatitude'),
-    baseLongitudeDeg: number('baseLongitude'),
-    baseHeightM: number('baseHeight'),
-    corrections: corrections ?? '',
-    tiltDeg: number('tilt'),
-    support,
-  };
-  const nothing = Object.values(stated).every((value) => value === '' || Number.isNaN(value));
-  if (nothing) return (own) => own;
-  const byStation = new Map<string, PositionExtras>();
-  return (own) => {
-    const station = own?.station ?? '';
-    const known = byStation.get(station) ?? { ...stated, station };
-    byStation.set(station, known);
-    return known;
-  };
 }
 
 async function* readDelimitedLog(
@@ -150,8 +124,18 @@ async function* readDelimitedLog(
   const sink = {
     header(header: Parameters<typeof notes.see>[0]) {
       const { timeZone } = options;
-      read = positionsOr(file, () =>
-        rowPosition({ file, header, layout, coordinates, timeZone, fixValues: fixMeanings(layout), values }),
+      read = layoutOr(file, () =>
+        rowPosition({
+          file,
+          header,
+          layout,
+          coordinates,
+          timeZone,
+          fixValues: wordMeanings<Fix>(['fixed', 'float'], layout.fixValues),
+          correctionValues: wordMeanings(CORRECTION_KINDS, layout.correctionValues),
+          changes: log.changes ?? {},
+          values,
+        }),
       );
       notes.see(header, values.fix !== undefined);
       gpsScale ||= header.positions.has('gpsWeek');
@@ -218,20 +202,11 @@ class Collected {
 }
 
 /** A fault of the layout itself is the user's mistake. */
-function positionsOr<T>(file: string, make: () => T): T {
+function layoutOr<T>(file: string, make: () => T): T {
   try {
     return make();
   } catch (error) {
     const fault = (error as Error).message.replace(/\.$/, '');
     throw inputError('bad-layout', `The layout of this log cannot be used: ${fault}. Correct it.`, { file });
   }
-}
-
-function fixMeanings({ fixValues }: DelimitedLayout): ReadonlyMap<string, Fix> {
-  const given = Object.entries(fixValues ?? {});
-  return new Map<string, Fix>([
-    ['fixed', 'fixed'],
-    ['float', 'float'],
-    ...given.map(([text, fix]): [string, Fix] => [text.trim().toLowerCase(), fix]),
-  ]);
 }

@@ -1,15 +1,18 @@
 import { metresPer } from '../geodesy/index.js';
+import type { CoordinateChanges } from './coordinateChanges.js';
 import type { CoordinateColumns } from './coordinateColumns.js';
+import { fieldBasePlace } from './fieldBasePlace.js';
 import type { DelimitedHeader } from './header.js';
 import { type DelimitedLayout, decimalCharacter, resolvedUnits } from './layout.js';
 import { quoted } from './messages.js';
-import type { Fix, Position } from './position.js';
+import type { Corrections, Fix, Position, PositionExtras } from './position.js';
 import type { RowReason, SetAsideRow } from './reasons.js';
 import type { ColumnRole } from './roles.js';
 import type { RowCells } from './rowCells.js';
 import { extrasReader } from './rowExtras.js';
 import { coordinateReader, numberReaders } from './rowNumbers.js';
 import { timePlan } from './timePlan.js';
+import { plainWord } from './wordMeanings.js';
 
 /** A covariate that could not be read: the row is used without it, and this is told. */
 export interface CellFault {
@@ -26,6 +29,8 @@ export type RowOutcome =
       readonly faults: readonly CellFault[];
       /** The cell of the fix column when nobody has said what it means. */
       readonly unknownFix: string | null;
+      /** The cell of the corrections column when nobody has said what it means. */
+      readonly unknownCorrections: string | null;
     }
   | { readonly kind: 'set-aside'; readonly row: SetAsideRow };
 
@@ -37,6 +42,10 @@ export interface RowPositionOptions {
   readonly timeZone: string | null;
   /** Text of the fix column, lower case → meaning. */
   readonly fixValues: ReadonlyMap<string, Fix>;
+  /** Text of the corrections column, lower case → meaning. */
+  readonly correctionValues: ReadonlyMap<string, Corrections>;
+  /** What is done to the coordinates of the log, and so to those of its base; default nothing. */
+  readonly changes?: CoordinateChanges | undefined;
   /** Values that stand in no column, by role: constants, and what the file name gives. */
   readonly values: Readonly<Partial<Record<ColumnRole, string>>>;
 }
@@ -56,13 +65,14 @@ const COVARIATES = [
  * @throws Error for a time format or zone that is not understood
  */
 export function rowPosition(options: RowPositionOptions): (row: number, cells: RowCells) => RowOutcome {
-  const { file, header, layout, coordinates, fixValues, values } = options;
+  const { file, header, layout, coordinates, fixValues, correctionValues, values } = options;
   const at = (role: ColumnRole): number => header.positions.get(role) ?? -1;
   const name = (role: ColumnRole): string => header.headers.get(role) ?? role;
   const has = (role: ColumnRole): boolean => header.positions.has(role) || values[role] !== undefined;
   const textOf = (role: ColumnRole, cells: RowCells): string =>
     cells.uniqueText(at(role)) || (values[role] ?? '');
-  const numberReader = numberReaders(at, values, decimalCharacter(layout.decimal));
+  const decimal = decimalCharacter(layout.decimal);
+  const numberReader = numberReaders(at, values, decimal);
   const time = timePlan(has, textOf, numberReader, layout.time ?? {}, options.timeZone);
   const textReader = (role: ColumnRole): ((cells: RowCells) => string) => {
     const [index, value] = [at(role), values[role] ?? ''];
@@ -102,7 +112,17 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
   const antenna = layout.heightOf === 'antenna' ? metresPer(units.height) : null;
   const rodReader = numberReader('antennaHeight');
   const fixIsGiven = has('fix');
-  const extras = extrasReader({ has, textReader, numberReader, units });
+  const extras = extrasReader({
+    has,
+    textReader,
+    numberReader,
+    units,
+    decimal,
+    correctionValues,
+    toStudy: fieldBasePlace(options.changes ?? {}),
+  });
+  const isUnknown = ({ corrections }: PositionExtras): boolean =>
+    corrections !== '' && !correctionValues.has(plainWord(corrections));
 
   return (row, cells) => {
     const when = time.read(cells);
@@ -167,6 +187,7 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
       position,
       faults,
       unknownFix: fix === undefined && hasPosition ? fixText : null,
+      unknownCorrections: also !== null && isUnknown(also) ? also.corrections : null,
     };
   };
 }

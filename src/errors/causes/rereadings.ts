@@ -77,7 +77,7 @@ function best(
   return [
     {
       code: candidate.code,
-      text: `Positions and marks are ${metres(before)} apart ${where} (median of ${places.length} marks), and ${metres(after)} if the ${whose === 'logs' ? 'logs' : 'marks file'} is read another way: its ${candidate.text}.`.replace(
+      text: `Positions and marks are ${metres(before)} apart ${where} (median of ${countWords(places)}), and ${metres(after)} if the ${whose === 'logs' ? 'logs' : 'marks file'} is read another way: its ${candidate.text}.`.replace(
         'logs is read another way: its',
         'logs are read another way: their',
       ),
@@ -85,6 +85,11 @@ function best(
     },
   ];
 }
+
+const countWords = (places: readonly ComparedPlace[]): string => {
+  const marks = new Set(places.map(({ mark }) => mark)).size;
+  return marks === 1 ? '1 mark' : `${marks} marks`;
+};
 
 /** Median distance of the logs' or the marks' places from the base as they stand. */
 const fromBaseM = (places: readonly ComparedPlace[], whose: Trial['whose']): number =>

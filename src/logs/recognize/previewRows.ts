@@ -103,6 +103,7 @@ function placeOfRows(
     coordinates: system,
     timeZone: null,
     fixValues: new Map(),
+    correctionValues: new Map(),
     values: SOME_DATE,
   });
 }

@@ -31,8 +31,8 @@ export function tryLayout(
   const reader = new RowReader(fileName, reading, {
     header(header) {
       const timeZone = options.timeZone ?? null;
-      const fixValues = new Map();
-      read = rowPosition({ file: fileName, header, layout, coordinates, timeZone, fixValues, values });
+      const noWords = { fixValues: new Map(), correctionValues: new Map() };
+      read = rowPosition({ file: fileName, header, layout, coordinates, timeZone, ...noWords, values });
     },
     row(row, cells) {
       rows += 1;
