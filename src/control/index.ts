@@ -1,6 +1,6 @@
 export { readAliases } from './aliases.js';
 export { type Base, type Bases, type Mounting, readBases } from './bases.js';
-export { comparabilityMessages, type FrameStatements } from './comparability.js';
+export { type ControlStatements, comparabilityMessages } from './comparability.js';
 export { type Control, type Match, markFrame, matchBase, matchMark } from './control.js';
 export type { ControlFile } from './controlFile.js';
 export { type Mark, type Marks, readMarks } from './marks.js';

@@ -13,6 +13,8 @@ export interface CoordinateChanges {
    * @throws CoordinateFault when no separation is known there
    */
   readonly height?: ((place: Geodetic, separationM: number) => number) | undefined;
+  /** Geoid separation of a place, for NMEA sentences that give none. @throws CoordinateFault where it is not known */
+  readonly separation?: ((place: Geodetic) => number) | undefined;
   /** The rows themselves give geoid separations. */
   readonly rowSeparations?: boolean | undefined;
   /** Frame of the source, on its ellipsoid → frame of the study, on that of WGS 84. */

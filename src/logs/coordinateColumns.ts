@@ -1,4 +1,10 @@
-import { type Ellipsoid, type Geodetic, geocentricToGeodetic, type LengthUnit } from '../geodesy/index.js';
+import {
+  type Ellipsoid,
+  type Geodetic,
+  geocentricToGeodetic,
+  type LengthUnit,
+  metresPer,
+} from '../geodesy/index.js';
 import { type CoordinateChanges, changedPlace } from './coordinateChanges.js';
 import { CoordinateFault } from './coordinateFault.js';
 import { type CoordinateSystem, systemOf } from './coordinateSystem.js';
@@ -112,13 +118,23 @@ function geographic(latitudeDeg: number, longitudeDeg: number, heightM: number):
 const SMALLEST_RADIUS_M = 6.3e6;
 const LARGEST_RADIUS_M = 6.5e6;
 
+const isNearSurface = (radiusM: number): boolean =>
+  radiusM >= SMALLEST_RADIUS_M && radiusM <= LARGEST_RADIUS_M;
+
 const geocentricOn =
   (ellipsoid: Ellipsoid) =>
   (xM: number, yM: number, zM: number): Geodetic => {
     const radiusM = Math.hypot(xM, yM, zM);
-    if (!(radiusM >= SMALLEST_RADIUS_M && radiusM <= LARGEST_RADIUS_M)) {
+    if (!isNearSurface(radiusM)) {
+      const inFeet = isNearSurface(radiusM * metresPer('international-foot'));
+      const degrees = Math.max(Math.abs(xM), Math.abs(yM)) <= 360;
+      const hint = inFeet
+        ? ' (are these feet? State length under units)'
+        : degrees
+          ? ' (are these degrees? State coordinates: geographic)'
+          : '';
       throw new CoordinateFault(
-        `expected geocentric metres near the earth's surface, came ${xM}, ${yM}, ${zM}`,
+        `expected geocentric metres near the earth's surface, came ${xM}, ${yM}, ${zM}${hint}`,
         0,
       );
     }

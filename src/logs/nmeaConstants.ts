@@ -24,7 +24,7 @@ export function nmeaConstants(values: Values, changes: CoordinateChanges = {}): 
   const odd = (Object.keys(values) as ColumnRole[]).filter((role) => !TAKEN.includes(role));
   if (odd.length > 0) {
     throw new Error(
-      `constants of NMEA sentences may be ${quotedList(TAKEN)}, came ${quotedList(odd)}, which the sentences tell themselves or cannot carry`,
+      `constants of NMEA sentences may be ${TAKEN.join(', ')}, came ${quotedList(odd)}, which the sentences tell themselves or cannot carry`,
     );
   }
   const texts = Object.fromEntries(TEXTS.map((role) => [role, values[role] ?? '']));

@@ -77,7 +77,7 @@ function heightChange(
   { studyKind, fallbacks, grids }: ChangeContext,
 ): Pick<CoordinateChanges, 'height' | 'rowSeparations'> {
   if (own.kind === studyKind) return {};
-  const separations = [own, ...fallbacks].find((each) => each?.geoid !== undefined);
+  const separations = statedSeparations(own, fallbacks);
   // Orthometric height = ellipsoidal height − separation.
   const sign = studyKind === 'orthometric' ? -1 : 1;
   switch (separations?.geoid) {
@@ -103,6 +103,27 @@ function heightChange(
     default:
       throw new MissingSeparation();
   }
+}
+
+/** The separations that count for a source: its own, else the first that the others state. */
+const statedSeparations = (
+  own: HeightSettings,
+  fallbacks: ChangeContext['fallbacks'],
+): HeightSettings | undefined => [own, ...fallbacks].find((each) => each?.geoid !== undefined);
+
+/** Whether one separation leads from the source's heights to those that the study compares. */
+export const isLevelledByConstant = (own: HeightSettings, { studyKind, fallbacks }: ChangeContext): boolean =>
+  own.kind !== studyKind && statedSeparations(own, fallbacks)?.geoid === 'constant';
+
+/** The separation of a place as settings state it; null where they leave it to the rows. */
+export function separationAt(
+  { geoid, separationM, file }: HeightSettings,
+  { grids }: ChangeContext,
+): ((place: Geodetic) => number) | null {
+  if (geoid === 'constant') return () => separationM!;
+  if (geoid !== 'grid') return null;
+  const grid = grids.get(file!)!;
+  return (place) => separationOf(grid, place);
 }
 
 function separationOf(grid: GeoidGrid, place: Geodetic): number {

@@ -38,7 +38,8 @@ export async function readStudy(path: string): Promise<Study> {
   });
   const logs = read.logs.map((log) => {
     const { entry } = found.find(({ path: known }) => known === log.path)!;
-    return { ...log, changes: from.ofLog(entry, log.layout.kind === 'nmea') };
+    const system = log.layout.kind === 'nmea' ? null : (log.layout.coordinates ?? log.coordinates);
+    return { ...log, changes: from.ofLog(entry, system) };
   });
   // What a log's heights lack is only known once its layout is.
   if (finder.mistakes.length > 0) throw new InputError(finder.mistakes);
@@ -52,10 +53,8 @@ export async function readStudy(path: string): Promise<Study> {
     bases: { ...bases, changes: from.bases },
     siteMarks: [...new Set(settings.logs.flatMap(({ sitePlane }) => sitePlane?.marks ?? []))].sort(),
     logFrames: logFrames(settings),
-    controlTransformed: [settings.marks, settings.bases].some(
-      (source) => typeof source !== 'string' && source.transformation !== undefined,
-    ),
-    constantSeparation: hasConstantSeparation(settings),
+    broughtToOneFrame: isBroughtToOneFrame(settings),
+    constantSeparation: from.constantSeparation(),
     namePattern,
     aliases,
     markTimes,
@@ -79,13 +78,9 @@ const logFrames = ({ logs }: StudySettings): Study['logFrames'] =>
     return [{ frame: frame ?? '', epoch: epoch ?? Number.NaN, transformed: transformation !== undefined }];
   });
 
-/** One separation stands for the whole study, in some source. */
-const hasConstantSeparation = ({ heights, marks, bases, logs }: StudySettings): boolean =>
-  [
-    heights,
-    ...[marks, bases].map((one) => (typeof one === 'string' ? undefined : one.heights)),
-    ...logs.map((log) => log.heights),
-  ].some((each) => each?.geoid === 'constant');
+const isBroughtToOneFrame = ({ marks, bases, logs }: StudySettings): boolean =>
+  [marks, bases].some((source) => typeof source !== 'string' && source.transformation !== undefined) ||
+  logs.every(({ transformation }) => transformation !== undefined);
 
 function tolerance(written: StudySettings['tolerances'][number]): Tolerance {
   const { component, limitMm, limitFeet, share, dayShare, confidence } = written;

@@ -1,10 +1,13 @@
 import type { GeoidGrid } from '../geodesy/index.js';
-import type { CoordinateChanges } from '../logs/index.js';
+import { type CoordinateChanges, type CoordinateSystem, systemOf } from '../logs/index.js';
 import {
+  type ChangeContext,
   coordinateChanges,
   type HeightKind,
+  isLevelledByConstant,
   MissingSeparation,
   type SourceSettings,
+  separationAt,
 } from './coordinateChanges.js';
 import type { HeightSettings } from './coordinateSettings.js';
 import type { Path } from './places.js';
@@ -19,8 +22,10 @@ export interface Sources {
   readonly heightKind: HeightKind;
   readonly marks: CoordinateChanges;
   readonly bases: CoordinateChanges;
-  /** @param isNmea the log holds NMEA sentences: ellipsoidal heights with a separation in each row */
-  readonly ofLog: (entry: number, isNmea: boolean) => CoordinateChanges;
+  /** @param system coordinates of the log; null for NMEA sentences: ellipsoidal heights with a separation in each row */
+  readonly ofLog: (entry: number, system: CoordinateSystem | null) => CoordinateChanges;
+  /** One separation leads from one kind of height to the other, in some source that was asked for. */
+  readonly constantSeparation: () => boolean;
 }
 
 const ELLIPSOIDAL: HeightSettings = { kind: 'ellipsoidal' };
@@ -35,8 +40,23 @@ export function sources(
 ): Sources {
   const { heights: common, logs } = settings;
   const marksOwn = ownSettings(settings.marks);
-  const heightKind = (marksOwn.heights ?? common ?? ELLIPSOIDAL).kind;
-  const context = { studyKind: heightKind, fallbacks: [common, marksOwn.heights], grids };
+  const ownHeights = ({ heights }: SourceSettings, system: CoordinateSystem, path: Path): HeightSettings => {
+    if (!isGeocentric(system)) return heights ?? common ?? ELLIPSOIDAL;
+    if (heights?.kind === 'orthometric') {
+      report(
+        'bad-setting',
+        'Expected ellipsoidal heights for geocentric coordinates, which hold no others, came orthometric ones. Remove heights, or state the coordinates in which the heights stand.',
+        [...path, 'heights'],
+      );
+    }
+    return { ...common, ...heights, kind: 'ellipsoidal' };
+  };
+  const systemFor = (own: SourceSettings & { readonly coordinates?: string | undefined }): CoordinateSystem =>
+    own.coordinates ?? settings.coordinates;
+  const marksHeights = ownHeights(marksOwn, systemFor(marksOwn), ['marks']);
+  const heightKind = marksHeights.kind;
+  const context: ChangeContext = { studyKind: heightKind, fallbacks: [common, marksOwn.heights], grids };
+  let constantSeparation = false;
   const changesOf = (
     own: HeightSettings,
     source: SourceSettings,
@@ -44,7 +64,9 @@ export function sources(
     what: string,
   ): CoordinateChanges => {
     try {
-      return coordinateChanges(own, source, context);
+      const changes = coordinateChanges(own, source, context);
+      constantSeparation ||= isLevelledByConstant(own, context);
+      return changes;
     } catch (error) {
       if (error instanceof MissingSeparation) {
         report(
@@ -58,29 +80,51 @@ export function sources(
       return {};
     }
   };
-  const control = (key: 'marks' | 'bases'): CoordinateChanges => {
-    const own = ownSettings(settings[key]);
-    return changesOf(own.heights ?? common ?? ELLIPSOIDAL, own, [key], `the ${key}`);
-  };
+  const basesOwn = ownSettings(settings.bases);
+  const basesHeights = ownHeights(basesOwn, systemFor(basesOwn), ['bases']);
   const told = new Map<string, CoordinateChanges>();
   return {
     heightKind,
-    marks: control('marks'),
-    bases: control('bases'),
-    ofLog(entry, isNmea) {
+    marks: changesOf(marksHeights, marksOwn, ['marks'], 'the marks'),
+    bases: changesOf(basesHeights, basesOwn, ['bases'], 'the bases'),
+    ofLog(entry, system) {
       // One report for an entry, however many files it has.
-      const key = `${entry} ${isNmea}`;
+      const key = `${entry} ${system}`;
       const known = told.get(key);
       if (known !== undefined) return known;
       const log = logs[entry]!;
-      const stated = log.heights ?? (isNmea ? NMEA_HEIGHTS : (common ?? ELLIPSOIDAL));
-      // What the log states of separations holds for its sentences too: their heights arrive as ellipsoidal ones.
-      const own = isNmea ? { ...NMEA_HEIGHTS, ...stated, kind: NMEA_HEIGHTS.kind } : stated;
-      const changes = changesOf(own, log, ['logs', entry], 'the logs');
+      const path = ['logs', entry];
+      const changes =
+        system === null
+          ? nmeaChanges(log.heights ?? common, (own) => changesOf(own, log, path, 'the logs'), context)
+          : changesOf(ownHeights(log, system, path), log, path, 'the logs');
       told.set(key, changes);
       return changes;
     },
+    constantSeparation: () => constantSeparation,
   };
+}
+
+/** What the study file states of separations holds for sentences too: it stands in for those that give none. */
+function nmeaChanges(
+  stated: HeightSettings | undefined,
+  changesOf: (own: HeightSettings) => CoordinateChanges,
+  context: ChangeContext,
+): CoordinateChanges {
+  const changes = changesOf({ ...NMEA_HEIGHTS, ...stated, kind: NMEA_HEIGHTS.kind });
+  const separation = [stated, ...context.fallbacks]
+    .map((each) => (each === undefined ? null : separationAt(each, context)))
+    .find((each) => each !== null);
+  return separation == null ? changes : { ...changes, separation };
+}
+
+/** Codes that are not known are reported elsewhere. */
+function isGeocentric(system: CoordinateSystem): boolean {
+  try {
+    return systemOf(system).kind === 'geocentric';
+  } catch {
+    return false;
+  }
 }
 
 const ownSettings = (source: StudySettings['marks'] | StudySettings['bases']): SourceSettings =>

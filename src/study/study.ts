@@ -23,9 +23,9 @@ export interface Study {
     readonly epoch: number;
     readonly transformed: boolean;
   }[];
-  /** Marks or bases are transformed to one frame. */
-  readonly controlTransformed: boolean;
-  /** One geoid separation stands for the whole study. */
+  /** Marks, bases or all logs are brought to one frame. */
+  readonly broughtToOneFrame: boolean;
+  /** One geoid separation leads from one kind of height to the other. */
   readonly constantSeparation: boolean;
   /** How logs name marks. */
   readonly namePattern: RegExp | null;

@@ -46,7 +46,8 @@ const FEWEST_FIELDS = 13;
 /**
  * Reads the fields of a GGA sentence (NMEA 0183): time, latitude, N/S, longitude, E/W, quality, satellites, HDOP,
  * height above the geoid, M, geoid above the ellipsoid (separation), M, age of corrections, reference station.
- * Height + separation is the ellipsoidal height; without the separation there is none, and the row is refused. Quality
+ * Height + separation is the ellipsoidal height; without the separation that of the study file counts, and without one the
+ * row is refused. Quality
  * 4 is fixed, 5 is float, any other is neither. Quality 0 means that there is no position, whatever the other fields
  * hold; a blank latitude, longitude or height means the same.
  * @param row line of the sentence
@@ -136,15 +137,19 @@ function readPlace(fields: GgaFields, changes: CoordinateChanges): Place | Refus
   if (orthometricM === null || !isMetre(heightUnit)) {
     return unreadable('height', expected('a height in metres', `${height},${heightUnit}`));
   }
-  const asItStands = separation === '' && changes.rowSeparations === true;
-  if (separation === '' && !asItStands) return NO_SEPARATION;
-  const separationM = asItStands ? 0 : parseNumber(separation);
-  if (separationM === null || !isMetre(separationUnit)) {
+  const blank = separation === '';
+  const asItStands = blank && changes.rowSeparations === true;
+  if (blank && !asItStands && changes.separation === undefined) return NO_SEPARATION;
+  const given = blank ? 0 : parseNumber(separation);
+  if (given === null || !isMetre(separationUnit)) {
     const came = `${separation},${separationUnit}`;
     return unreadable('geoidSeparation', expected('a geoid separation in metres', came));
   }
-  const written = { latitudeDeg, longitudeDeg, heightM: orthometricM + separationM };
   try {
+    const stated = blank && !asItStands ? changes.separation : undefined;
+    const place = { latitudeDeg, longitudeDeg, heightM: orthometricM };
+    const separationM = stated === undefined ? given : stated(place);
+    const written = { ...place, heightM: orthometricM + separationM };
     toGeodetic(latitudeDeg, longitudeDeg, written.heightM);
     return { kind: 'place', ...changedPlace(written, separationM, changes, WGS84) };
   } catch (error) {
@@ -170,7 +175,7 @@ const unreadable = (column: string | null, detail: string): RefusedGga => ({
 
 const NO_SEPARATION = unreadable(
   'geoidSeparation',
-  'expected the geoid separation, came a blank field: the height is orthometric, and an ellipsoidal height cannot be formed',
+  'expected the geoid separation, came a blank field: the height is orthometric, and an ellipsoidal height cannot be formed; state geoid: constant or grid under the heights of this log',
 );
 
 /** What receivers send before they have seen a satellite. */
