@@ -342,6 +342,7 @@ export {
   summarizeBy,
 } from './split/index.js';
 export {
+  type ControlMark,
   type Results,
   readStudy,
   readStudyErrors,

@@ -20,7 +20,7 @@ import {
 import { drawnShare, errorBand, errorLines } from './errorLines.js';
 import { errorPoints } from './errorPoints.js';
 import { ruleLayers, toleranceLayer } from './errorTolerance.js';
-import { errorDescription, errorSubtitle, errorTitle } from './errorWords.js';
+import { errorDescription, errorSubtitle, errorTitle, type HeightKind } from './errorWords.js';
 import { COLORS } from './theme.js';
 import { countWords, percentWords, shortNumber } from './words.js';
 
@@ -34,6 +34,8 @@ export interface ErrorByBaselineInput {
   readonly specSheet?: SpecSheet | undefined;
   readonly tolerance?: Tolerance | undefined;
   readonly rule?: Rule | undefined;
+  /** Kind of the heights, for charts of vertical errors; named where it is given. */
+  readonly heights?: HeightKind | undefined;
 }
 
 /** Beyond this many, points would cover each other and counts are shown instead. */
@@ -60,7 +62,7 @@ export function errorByBaselineChart(input: ErrorByBaselineInput): ChartSpec {
     ],
     tolerance?.limitMm ?? null,
   );
-  const channels = frameChannels(frame, axisTitle(model));
+  const channels = frameChannels(frame, axisTitle(model, input.heights));
   const shown = points.filter(({ errorMm }) => errorMm <= frame.maxMm);
   const shownClasses = classes.filter(({ rmsMm }) => rmsMm <= frame.maxMm);
   const hidden = {
@@ -88,14 +90,23 @@ export function errorByBaselineChart(input: ErrorByBaselineInput): ChartSpec {
   ];
   return chartSpec(
     errorTitle(model),
-    errorSubtitle(model, rule, hidden),
-    errorDescription(model, { classes: shownClasses.length, specSheet, tolerance, rule, hidden }),
+    errorSubtitle(model, rule, hidden, input.heights),
+    errorDescription(model, {
+      classes: shownClasses.length,
+      specSheet,
+      tolerance,
+      rule,
+      hidden,
+      heights: input.heights,
+    }),
     { width: frame.widthPx, height: frame.heightPx, layer },
   );
 }
 
-const axisTitle = ({ component }: ErrorModel): string =>
-  component === 'horizontal' ? 'radial error √(E² + N²), mm' : 'size of the height error, mm';
+const axisTitle = ({ component }: ErrorModel, heights: HeightKind | undefined): string =>
+  component === 'horizontal'
+    ? 'radial error √(E² + N²), mm'
+    : `size of the ${heights === undefined ? '' : `${heights} `}height error, mm`;
 
 function toleranceLabel(tolerance: Tolerance | undefined): EndLabel[] {
   if (tolerance === undefined) return [];

@@ -30,9 +30,14 @@ export function errorTitle(model: ErrorModel): string {
 }
 
 /** What the numbers are, on what they rest, and what the chart does not show. */
-export function errorSubtitle(model: ErrorModel, rule: Rule | undefined, hidden: HiddenCounts): string[] {
+export function errorSubtitle(
+  model: ErrorModel,
+  rule: Rule | undefined,
+  hidden: HiddenCounts,
+  heights: HeightKind | undefined,
+): string[] {
   const marks = model.marks === null ? '' : ` at ${counted(model.marks, 'mark')}`;
-  const basis = `${model.basis}, ${model.reference} reference${intervalWords(model)}`;
+  const basis = `${model.basis}${heightWords(model, heights)}, ${model.reference} reference${intervalWords(model)}`;
   const data = `${counted(model.occupations, 'occupation')} on ${counted(model.days, 'day')}${marks}${hiddenWords(hidden)}`;
   const why =
     rule !== undefined && ruleWords(rule) === null
@@ -40,6 +45,13 @@ export function errorSubtitle(model: ErrorModel, rule: Rule | undefined, hidden:
       : [];
   return [basis, data, ...why].map((line) => `${line[0]!.toUpperCase()}${line.slice(1)}`);
 }
+
+/** Kind of the heights of which vertical errors are those. */
+export type HeightKind = 'ellipsoidal' | 'orthometric';
+
+/** ` of ellipsoidal heights`; nothing for the plan, or where the kind is not stated. */
+export const heightWords = ({ component }: ErrorModel, heights: HeightKind | undefined): string =>
+  component === 'horizontal' || heights === undefined ? '' : ` of ${heights} heights`;
 
 function intervalWords({ constantMm, ppm, confidence }: ErrorModel): string {
   const ranges = [limits(constantMm, 1, 'mm'), limits(ppm, 2, 'ppm')].filter((text) => text !== null);
@@ -75,10 +87,14 @@ export function errorDescription(
     readonly tolerance: Tolerance | undefined;
     readonly rule: Rule | undefined;
     readonly hidden: HiddenCounts;
+    readonly heights: HeightKind | undefined;
   },
 ): string {
-  const { classes, specSheet, tolerance, rule, hidden } = parts;
-  const kind = model.component === 'horizontal' ? 'radial horizontal errors' : 'sizes of height errors';
+  const { classes, specSheet, tolerance, rule, hidden, heights } = parts;
+  const kind =
+    model.component === 'horizontal'
+      ? 'radial horizontal errors'
+      : `sizes of height errors${heights === undefined ? '' : ` (${heights} heights)`}`;
   const words = rule === undefined ? null : ruleWords(rule);
   return [
     `Chart of ${kind} in millimetres against baseline length from ${model.shortestKm.toFixed(1)} to ${model.longestKm.toFixed(1)} km, ${counted(model.occupations, 'occupation')} on ${counted(model.days, 'day')}.`,

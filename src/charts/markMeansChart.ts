@@ -8,6 +8,8 @@ import { counted, signedNumber } from './words.js';
 export interface MarkMeansInput {
   /** From `markMeans`. */
   readonly marks: readonly MarkMean[];
+  /** Kind of the heights; named where it is given. */
+  readonly heights?: 'ellipsoidal' | 'orthometric' | undefined;
 }
 
 const AXES = ['east', 'north', 'up'] as const;
@@ -29,7 +31,7 @@ const PANEL_PX = 215;
  * Mean east, north and up error of each mark with two standard errors on either side, nearest mark first.
  * @throws InputError when there is no mark
  */
-export function markMeansChart({ marks }: MarkMeansInput): ChartSpec {
+export function markMeansChart({ marks, heights }: MarkMeansInput): ChartSpec {
   if (marks.length === 0) {
     throw inputError(
       'bad-option',
@@ -42,7 +44,9 @@ export function markMeansChart({ marks }: MarkMeansInput): ChartSpec {
   const labels = rowLabels(ordered);
   const panels = AXES.map((axis) => meanRows(ordered, labels, axis));
   const domain = commonDomain(panels.flat());
-  const views = AXES.map((axis, k) => panelView(axis, panels[k]!, labels, domain, k === 0));
+  const views = AXES.map((axis, k) =>
+    panelView(axisTitle(axis, heights), panels[k]!, labels, domain, k === 0),
+  );
   return chartSpec(title(marks), subtitle(marks, ordered.length), description(marks), {
     hconcat: views,
     spacing: 22,
@@ -90,8 +94,11 @@ function commonDomain(rows: readonly MeanRow[]): [number, number] {
   return [least - room, most + room];
 }
 
+const axisTitle = (axis: Axis, heights: MarkMeansInput['heights']): string =>
+  `mean ${axis} error${axis === 'up' && heights !== undefined ? ` (${heights})` : ''}, mm`;
+
 function panelView(
-  axis: Axis,
+  title: string,
   rows: readonly MeanRow[],
   labels: readonly string[],
   domain: readonly [number, number],
@@ -108,7 +115,7 @@ function panelView(
   const x = {
     type: 'quantitative',
     scale: { domain, nice: false },
-    axis: { title: `mean ${axis} error, mm`, tickCount: 5 },
+    axis: { title, tickCount: 5 },
   };
   const withBar = rows.filter(({ low }) => low !== null);
   const unknown = labels.filter((label) => !rows.some((row) => row.label === label));

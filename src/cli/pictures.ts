@@ -34,7 +34,10 @@ export async function drawPictures(
     );
     if (picture !== null) maps.push(picture);
   }
-  const markMeans = await draw('mark-means', marks.length === 0 ? null : markMeansChart({ marks }));
+  const markMeans = await draw(
+    'mark-means',
+    marks.length === 0 ? null : markMeansChart({ marks, heights: run.results.heights }),
+  );
   return { pictures: { horizontal, vertical, maps, markMeans }, files };
 }
 
@@ -52,5 +55,6 @@ function errorChart({ errors, models, results }: StudyRun, component: Component)
     ),
     ...(results.specSheet === null ? {} : { specSheet: results.specSheet }),
     ...(rule === undefined ? {} : { tolerance: rule, rule }),
+    heights: results.heights,
   });
 }

@@ -6,6 +6,7 @@ export {
   type CommonCauses,
   type CommonParameter,
   commonCauses,
+  isTold,
   type LikelyCause,
   type ReadAs,
 } from './causes/index.js';

@@ -3,21 +3,21 @@ import type { FitResult, LengthClass, Results } from '../study/index.js';
 import { count, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
 import { type Html, html } from './html.js';
 import { type Column, table } from './table.js';
-import { componentTitle, REFERENCE_WORDS, shownFits } from './words.js';
+import { componentTitle, type HeightKind, REFERENCE_WORDS, shownFits } from './words.js';
 
 /** How the errors grow with distance: charts, fitted models and what was measured by length. */
 export function fitSection(
   results: Results,
   charts: { readonly horizontal: Html | null; readonly vertical: Html | null },
 ): Html {
-  const { fits, lengthClasses, specSheet } = results;
+  const { fits, lengthClasses, specSheet, heights } = results;
   if (fits.length === 0)
     return html`<section id="fit"><h2>How errors grow with distance</h2><p>No fit was possible.</p></section>\n`;
   return html`<section id="fit"><h2>How errors grow with distance</h2>
 ${charts.horizontal}${charts.vertical}${manyTolerances(results)}
-${fitTable(shownFits(results))}
-${shownFits(results).map(fitRemarks)}
-${lengthTable(lengthClasses, specSheet)}
+${fitTable(shownFits(results), heights)}
+${shownFits(results).map((fit) => fitRemarks(fit, heights))}
+${lengthTable(lengthClasses, specSheet, heights)}
 </section>
 `;
 }
@@ -33,10 +33,10 @@ const COUNTED_FROM = {
   relative: "the setup's offset",
 } as const;
 
-function fitTable(fits: readonly FitResult[]): Html {
+function fitTable(fits: readonly FitResult[], heights: HeightKind): Html {
   const level = percent(fits[0]!.confidence);
   const columns: Column<FitResult>[] = [
-    { head: 'Component', cell: ({ component }) => componentTitle(component), text: true },
+    { head: 'Component', cell: ({ component }) => componentTitle(component, heights), text: true },
     { head: 'Counted from', cell: ({ reference }) => COUNTED_FROM[reference], text: true },
     { head: 'Constant, mm', cell: ({ constantMm }) => withLimits(constantMm, mm) },
     { head: 'ppm, mm per km', cell: (fit) => withLimits(fit.ppm, ppm) },
@@ -51,7 +51,7 @@ function fitTable(fits: readonly FitResult[]): Html {
   );
 }
 
-function fitRemarks(fit: FitResult): Html {
+function fitRemarks(fit: FitResult, heights: HeightKind): Html {
   const { low, high } = fit.ppmIfIndependent;
   const independent =
     low === null || high === null
@@ -61,11 +61,11 @@ function fitRemarks(fit: FitResult): Html {
     fit.mostInfluentialDay === null
       ? null
       : html` The day that moves the ppm most is ${fit.mostInfluentialDay.day}: without it the ppm is ${ppm(fit.mostInfluentialDay.ppmWithout)}.`;
-  return html`<p class="small">${componentTitle(fit.component)}: ${REFERENCE_WORDS[fit.reference]}; interval by ${fit.interval}.${independent}${influential}</p>
+  return html`<p class="small">${componentTitle(fit.component, heights)}: ${REFERENCE_WORDS[fit.reference]}; interval by ${fit.interval}.${independent}${influential}</p>
 `;
 }
 
-function lengthTable(classes: readonly LengthClass[], spec: SpecSheet | null): Html {
+function lengthTable(classes: readonly LengthClass[], spec: SpecSheet | null, heights: HeightKind): Html {
   const rms = (interval: LengthClass['horizontalRmsMm']): string =>
     interval === null ? NOT_GIVEN : withLimits(interval, mm);
   const columns: Column<LengthClass>[] = [
@@ -97,7 +97,7 @@ function lengthTable(classes: readonly LengthClass[], spec: SpecSheet | null): H
       ? []
       : ['The spec sheet is for ideal conditions, converted to the same kind of spread.']),
   ];
-  return html`${table('Measured by distance (shown, not fitted)', classes, columns)}
+  return html`${table(`Measured by distance (shown, not fitted); vertical: ${heights} heights`, classes, columns)}
 <p class="small">${notes.join(' ')}</p>
 `;
 }

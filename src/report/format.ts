@@ -9,6 +9,12 @@ const fixed = (value: number, digits: number): string => {
   return Number(text) === 0 ? text.replace('-', '') : text.replace('-', '−');
 };
 
+/** A signed number with its sign; what rounds to nothing has none. */
+export function signed(value: number, digits: number): string {
+  const text = fixed(value, digits);
+  return Number(value.toFixed(digits)) > 0 ? `+${text}` : text;
+}
+
 export const mm = (value: number | null): string => (value === null ? NOT_GIVEN : fixed(value, 1));
 
 export const ppm = (value: number | null): string => (value === null ? NOT_GIVEN : fixed(value, 2));

@@ -1,15 +1,18 @@
 import type { MarkMean } from '../split/index.js';
 import type { Results } from '../study/index.js';
+import { controlTable } from './controlTable.js';
 import { count, km, mm, NOT_GIVEN } from './format.js';
 import { type Html, html } from './html.js';
 import { table } from './table.js';
 
 /** Where the marks are and what their mean errors are. */
 export function marksSection(
-  { marks }: Results,
+  results: Results,
   charts: { readonly map: readonly Html[]; readonly means: Html | null },
 ): Html {
+  const { marks, heights, siteMarks } = results;
   if (marks.length === 0) return html``;
+  const residuals = new Set(siteMarks);
   const mean =
     (component: 'east' | 'north' | 'up') =>
     (row: MarkMean): string => {
@@ -21,15 +24,22 @@ export function marksSection(
 is large beside its standard error asks for a look at the coordinates.</p>
 ${charts.map}${charts.means}
 ${table('Mean error of each mark ± its day-clustered standard error, mm', marks, [
-  { head: 'Mark', cell: ({ mark }) => mark, text: true },
+  { head: 'Mark', cell: ({ mark }) => (residuals.has(mark) ? `${mark} (residual)` : mark), text: true },
   { head: 'Base', cell: ({ base }) => base, text: true },
   { head: 'Distance, km', cell: ({ baselineKm }) => km(baselineKm) },
   { head: 'Occupations', cell: ({ occupations }) => count(occupations) },
   { head: 'Days', cell: ({ days }) => count(days) },
   { head: 'East', cell: mean('east') },
   { head: 'North', cell: mean('north') },
-  { head: 'Up', cell: mean('up') },
+  { head: `Up (${heights})`, cell: mean('up') },
 ])}
-</section>
+${residualWords(marks.some(({ mark }) => residuals.has(mark)))}${controlTable(results)}</section>
 `;
 }
+
+const residualWords = (any: boolean): Html | null =>
+  any
+    ? html`<p class="small">A site mark is one to which the job was fitted: what stands there is a residual of that fit and no check. It
+takes part in the fits all the same and makes errors look smaller than they are.</p>
+`
+    : null;

@@ -1,5 +1,7 @@
 import type { Results } from '../study/index.js';
 import { accountSection, messagesSection } from './accountSection.js';
+import { blundersSection } from './blundersSection.js';
+import { commonSection } from './commonSection.js';
 import { fitSection } from './fitSection.js';
 import { plural } from './format.js';
 import { date, type Html, html, trusted } from './html.js';
@@ -45,9 +47,10 @@ export function reportHtml(results: Results, pictures: ReportPictures): string {
 <p class="lead">${lead}</p>
 ${ruleSection(results)}
 ${fitSection(results, { horizontal: figure(pictures.horizontal), vertical: figure(pictures.vertical) })}
+${commonSection(results)}
 ${marksSection(results, { map: pictures.maps.map(pictureHtml), means: figure(pictures.markMeans) })}
 ${accountSection(results)}
-${messagesSection(results)}
+${blundersSection(results)}${messagesSection(results)}
 ${METHOD}
 <section id="glossary"><h2>Words</h2><dl>${GLOSSARY.map(([word, meaning]) => html`<dt>${word}</dt><dd>${meaning}</dd>\n`)}</dl></section>
 <section id="cautions"><h2>Cautions</h2><div class="cautions">${[...CAUTIONS, ...LIMITS].map((caution) => html`<p>${caution}</p>`)}</div></section>

@@ -2,7 +2,7 @@ import type { Rule } from '../rule/index.js';
 import type { Results } from '../study/index.js';
 import { km, kmDown, NOT_GIVEN, plural } from './format.js';
 import { date, type Html, html, trusted } from './html.js';
-import { capital, ruleParts, spoiling, unseenDays, whyNoRule } from './words.js';
+import { capital, type HeightKind, ruleParts, spoiling, unseenDays, whyNoRule } from './words.js';
 
 /** The rules, before everything else. */
 export function ruleSection(results: Results): Html {
@@ -13,7 +13,7 @@ export function ruleSection(results: Results): Html {
   return html`<section id="rule"><h2>How far from the base</h2>
 ${spoiling(results.messages).map(({ text }) => html`<p class="first">${text}</p>`)}
 <ul class="rules">
-${rules.map(ruleItem)}</ul>
+${rules.map((rule) => ruleItem(rule, results.heights))}</ul>
 ${conditionsOfComponents(rules)}
 <p class="small">The distance is a lower limit, found from the days observed and rounded down. It holds over all days together,
 so on a worse day fewer positions are within the limit. ${rules[0]!.conditions.days > 0 ? unseenDays(rules[0]!.conditions.days) : null}</p>
@@ -21,8 +21,8 @@ so on a worse day fewer positions are within the limit. ${rules[0]!.conditions.d
 `;
 }
 
-function ruleItem(rule: Rule): Html {
-  const { head, body } = ruleParts(rule);
+function ruleItem(rule: Rule, heights: HeightKind): Html {
+  const { head, body } = ruleParts(rule, heights);
   // Where the data end the limit, an estimate cut there too would say nothing.
   const best =
     rule.bestEstimateKm && rule.reason === null

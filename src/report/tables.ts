@@ -1,5 +1,6 @@
 import type { OccupationError } from '../errors/index.js';
 import type { StudyRun } from '../study/index.js';
+import { controlTables } from './controlTables.js';
 
 export type Cell = string | number | boolean | null;
 
@@ -203,6 +204,7 @@ export function reportTables({ errors, weights, setAside, visits, results }: Stu
         c.tooFew,
       ]),
     },
+    ...controlTables(results),
     {
       name: 'messages',
       header: ['severity', 'code', 'file', 'row', 'column', 'text'],

@@ -30,6 +30,15 @@ export const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
   ['visit', "a crew's stay at a mark, with or without a fix"],
   ['occupation', 'consecutive fixed positions of one visit, averaged; the unit that is analysed'],
   ['error', 'measured minus known, in mm'],
+  ['ellipsoidal height', 'height above the ellipsoid of the reference frame, which satellites give'],
+  [
+    'orthometric height',
+    'height above the geoid, about sea level: ellipsoidal height minus geoid separation',
+  ],
+  [
+    'combined factor',
+    'length on the grid over length on the ground: point scale of the projection times height factor',
+  ],
   ['constant', 'the part of the spread that does not depend on distance, mm'],
   ['ppm', 'the part that grows with distance: 1 ppm is 1 mm per km'],
   ['radial RMS', 'root of the mean of east² + north²; about 63 % of positions are within it'],
@@ -43,23 +52,29 @@ export const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
   ],
 ];
 
-export const componentTitle = (component: Rule['component']): string =>
-  component === 'horizontal' ? 'Horizontal (radial)' : 'Vertical (ellipsoidal heights)';
+/** What is named with every vertical error. */
+export type HeightKind = Results['heights'];
 
-const positions = (rule: Rule): string =>
-  `${percent(rule.share)} of ${rule.component} positions within ${Number(rule.limitMm.toFixed(1))}\u00a0mm`;
+export const componentTitle = (component: Rule['component'], heights: HeightKind): string =>
+  component === 'horizontal' ? 'Horizontal (radial)' : `Vertical (${heights} heights)`;
+
+const positions = (rule: Rule, heights: HeightKind | undefined): string =>
+  `${percent(rule.share)} of ${rule.component} positions${rule.component === 'vertical' && heights !== undefined ? ` (${heights} heights)` : ''} within ${Number(rule.limitMm.toFixed(1))}\u00a0mm`;
 
 /** A rule in two parts: how far, and what holds there or why nothing does. */
-export function ruleParts(rule: Rule): { readonly head: string; readonly body: string } {
+export function ruleParts(
+  rule: Rule,
+  heights?: HeightKind,
+): { readonly head: string; readonly body: string } {
   const { maximumBaselineKm: limit, reason } = rule;
-  if (limit === null) return { head: 'No rule', body: `for ${positions(rule)}: ${reason}.` };
+  if (limit === null) return { head: 'No rule', body: `for ${positions(rule, heights)}: ${reason}.` };
   if (limit === 0) {
     return {
       head: 'At no distance from the base',
-      body: `${positions(rule)} cannot be promised: ${reason}.`,
+      body: `${positions(rule, heights)} cannot be promised: ${reason}.`,
     };
   }
-  const body = `${positions(rule)}, with ${percent(rule.confidence)} confidence over all days together.`;
+  const body = `${positions(rule, heights)}, with ${percent(rule.confidence)} confidence over all days together.`;
   return {
     head: `Up to ${kmDown(limit)}\u00a0km from the base`,
     body: reason === null ? body : `${body} ${capital(reason)}.`,
@@ -67,8 +82,8 @@ export function ruleParts(rule: Rule): { readonly head: string; readonly body: s
 }
 
 /** A rule as one sentence that can stand in a method statement. */
-export function ruleSentence(rule: Rule): string {
-  const { head, body } = ruleParts(rule);
+export function ruleSentence(rule: Rule, heights?: HeightKind): string {
+  const { head, body } = ruleParts(rule, heights);
   return rule.maximumBaselineKm === null ? `${head} ${body}` : `${head}: ${body}`;
 }
 
@@ -99,7 +114,7 @@ export const REFERENCE_WORDS: Readonly<Record<FitResult['reference'], string>> =
 };
 
 /** A fit as one sentence. */
-export function fitSentence(fit: FitResult): string {
+export function fitSentence(fit: FitResult, heights: HeightKind): string {
   const level = percent(fit.confidence);
   const constant = `${withLimits(fit.constantMm, mm)} mm`;
   const distance = withLimits(fit.ppm, ppm);
@@ -107,7 +122,7 @@ export function fitSentence(fit: FitResult): string {
     distance === NOT_GIVEN
       ? `${constant} at all distances in the data`
       : `${constant} and ${distance} ppm, ${ADDED[fit.form]}`;
-  return `${componentTitle(fit.component)}, ${REFERENCE_WORDS[fit.reference]}: ${form} (${fit.basis}; ${level} intervals in brackets).`;
+  return `${componentTitle(fit.component, heights)}, ${REFERENCE_WORDS[fit.reference]}: ${form} (${fit.basis}; ${level} intervals in brackets).`;
 }
 
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
@@ -124,6 +139,13 @@ export function setAsideWords(setAside: FileResult['setAside']): string {
 
 /** Findings that spoil every number: they are told first, and beside the rule. */
 const SPOILING: ReadonlySet<string> = new Set([
+  'swapped-axes',
+  'plan-unit',
+  'height-unit',
+  'wrong-zone',
+  'height-kind',
+  'base-coordinate',
+  'frame-or-base',
   'mark-far-off',
   'marks-far-off',
   'error-over-10-m',

@@ -4,6 +4,7 @@ import type { Component, EstimateWithLimits, Form, Reference, SetupOffsets } fro
 import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
 import type { Rule, SpecSheet } from '../rule/index.js';
 import type { Interval, MarkMean } from '../split/index.js';
+import type { ControlMark } from './controlMarks.js';
 
 /** One fitted model, as `results.json` states it. */
 export interface FitResult {
@@ -213,6 +214,8 @@ export interface Results {
   readonly commonCauses: CommonCauses;
   /** Occupations taken for blunders, which are among those set aside. */
   readonly blunders: readonly BlunderResult[];
+  /** Where the coordinates behind the errors come from. */
+  readonly controlMarks: readonly ControlMark[];
   /** Marks to which a job was fitted: their errors are residuals, not checks. */
   readonly siteMarks: readonly string[];
   /** Days with at least one used occupation. */

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { OCCUPATION_REASONS, ROW_REASONS } from '../logs/index.js';
+import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
 import type { Results } from './results.js';
 
 const component = z.enum(['horizontal', 'vertical']);
@@ -219,14 +220,6 @@ const rule = z.strictObject({
 
 const constantAndPpm = z.strictObject({ constantMm: z.number(), ppm: z.number() });
 
-const commonParameter = z.strictObject({
-  name: z.enum(['shift-east', 'shift-north', 'shift-up', 'scale', 'rotation', 'tilt-east', 'tilt-north']),
-  unit: z.enum(['mm', 'ppm', 'arcsec', 'mm/km']),
-  estimate: z.number(),
-  standardError: nullable,
-  degreesOfFreedom: count,
-});
-
 /** Schema of `results.json`; its type is {@link Results}. */
 export const resultsSchema = z.strictObject({
   version: z.literal(1),
@@ -254,23 +247,9 @@ export const resultsSchema = z.strictObject({
     setAside: z.partialRecord(z.enum(OCCUPATION_REASONS), count),
   }),
   heights: z.enum(['ellipsoidal', 'orthometric']).describe('Kind of the heights that were compared.'),
-  commonCauses: z.strictObject({
-    bases: z.array(
-      z.strictObject({ base: z.string(), marks: count, days: count, parameters: z.array(commonParameter) }),
-    ),
-    causes: z.array(z.strictObject({ code: z.string(), text: z.string(), remedy: z.string() })),
-  }),
-  blunders: z.array(
-    z.strictObject({
-      mark: z.string(),
-      day,
-      crew: z.string(),
-      rover: z.string(),
-      cause: z.string(),
-      file: z.string(),
-      row: count,
-    }),
-  ),
+  commonCauses,
+  blunders,
+  controlMarks,
   siteMarks: z.array(z.string()).describe('Marks to which a job was fitted: residuals, not checks.'),
   days: count,
   period: z.strictObject({ from: day, to: day }).nullable(),

@@ -16,6 +16,7 @@ import {
   roundingSigmaMm,
   totalAccount,
 } from '../logs/index.js';
+import { controlMarks } from './controlMarks.js';
 import type { FileResult, Results } from './results.js';
 import type { Study } from './study.js';
 
@@ -59,6 +60,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     heights: study.heightKind,
     commonCauses: causes,
     blunders: blunders(setAside),
+    controlMarks: controlMarks(study, control, errors),
     siteMarks: study.siteMarks,
     days: days.length,
     period: days.length === 0 ? null : { from: days[0]!, to: days.at(-1)! },

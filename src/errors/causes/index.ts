@@ -7,4 +7,4 @@ export {
   type ReadAs,
 } from './commonCauses.js';
 export { type MarkVector, markVectors } from './markVectors.js';
-export { type CommonParameter, commonParameters } from './similarity.js';
+export { type CommonParameter, commonParameters, isTold } from './similarity.js';
