@@ -8,9 +8,13 @@ title: Check shots
 # Zone of your days, as an IANA name. Without it a day is the local mean solar day at the base.
 # timeZone: Europe/Lisbon
 
-# Coordinates of marks, bases and logs: geographic (degrees, WGS 84), geocentric (metres),
-# or a proj string such as "+proj=utm +zone=29 +ellps=GRS80". Heights are ellipsoidal.
+# Coordinates of marks, bases and logs: geographic (degrees, WGS 84), geocentric (metres), a code of the EPSG
+# register such as EPSG:25829, or a proj string such as "+proj=utm +zone=29 +ellps=GRS80".
 coordinates: geographic
+
+# Heights are ellipsoidal unless you say otherwise; marks, bases and each log may have heights of their own, and a geoid
+# separation leads from one kind to the other (geoid: column, constant or grid):
+# heights: {kind: orthometric, geoid: grid, file: geoid.asc}
 
 marks: marks.csv
 # Where logs name marks inside longer texts, such as "CHK A3 ok", a regular expression (of JavaScript) reads them out:
@@ -23,6 +27,10 @@ logs:
     #   kind: delimited
     #   columns: {mark: Point, latitude: Lat, longitude: Lon, height: Ellipsoid height}
     #   fixValues: {1: fixed, 2: float}
+    # Only positions from a single base are fitted. Where the log does not tell from where corrections came:
+    # corrections: single-base
+    # Where the log gives the coordinates that the base was run with, and they are not those of bases.csv:
+    # moveToPublishedBase: true
 
 # What your clients demand; each line becomes a rule. Horizontal limits are radial.
 tolerances:
@@ -35,8 +43,9 @@ tolerances:
 `,
   'marks.csv': `# One row a mark: coordinates from an independent source, not from the base that is tested.
 # Replace the example. A blank coordinate means not known.
-mark,latitude,longitude,height,source
-EXAMPLE,44.310886625,-18.400700010,133.7214,static session
+# Precisions are mm and need their level (rms, 68 or 95). sky: open, partly or obstructed.
+mark,latitude,longitude,height,horizontalSigmaMm,verticalSigmaMm,sigmaLevel,source,frame,epoch,sky
+EXAMPLE,44.310886625,-18.400700010,133.7214,4,8,rms,static session,,,open
 `,
   'bases.csv': `# One row a base point. mounting: pillar (keeps its place overnight) or tripod (a new setup every day).
 base,latitude,longitude,height,mounting
