@@ -30,8 +30,8 @@ const mark = (
 
 /** The invented firm's campaign; what is not said here is as in `CAMPAIGN_DEFAULTS`. */
 export const DEMO_OPTIONS: CampaignOptions = {
-  // A seed whose days are near the average, so that a reader meets an ordinary season first.
-  seed: 2022,
+  // A season with an event of two bad days, two more bad days, and an ordinary number of wrong fixes.
+  seed: 2035,
   days: 45,
   startDate: '2025-03-03',
   utcOffsetHours: -1,
@@ -59,24 +59,41 @@ export const DEMO_OPTIONS: CampaignOptions = {
     mark('CP13', 27.35, 208.7, 893.264),
     mark('CP14', 33.92, 340.3, 37.6925),
   ],
-  crews: ['harbour', 'ridge', 'causeway'],
+  // While the pillar was repaired, the base stood on a tripod over a ground mark nearby.
+  otherBase: {
+    name: 'YARD',
+    latitudeDeg: 44.313907264,
+    longitudeDeg: -18.406538791,
+    heightM: 146.0385,
+    mounting: 'tripod',
+    fromDay: 27,
+    toDay: 35,
+  },
+  crews: ['harbour', 'ridge'],
   rovers: ['R1', 'R2', 'R3'],
   occupationsPerDay: { from: 30, to: 60 },
   epochsPerOccupation: 5,
   constantMm: { east: 5.4, north: 5.8, up: 11 },
   ppm: { east: 0.52, north: 0.58, up: 1.1 },
   noFix: { shareAt1Km: 0.004, shareAt12Km: 0.03 },
+  wrongFixes: { shareAt1Km: 0.002, shareAt12Km: 0.015, shortestMm: 50, longestMm: 1000, meanBurst: 1.3 },
+  blunders: { rodHeights: 1, rodErrorMm: 200, wrongMarks: 1 },
+  markSigmaMm: { east: 4, north: 4, up: 5 },
+  statedMarkSigmaMm: { horizontal: 4, vertical: 5 },
+  setupSigmaMm: { east: 1, north: 1, up: 1.5 },
+  middayRise: 0.2,
+  badDays: { runs: 1, runLength: 2, singles: 2, factor: { from: 2, to: 4 } },
 };
 
 /** All files of the demo study by their path below its folder. Writes nothing; every call gives the same. */
 export function demoStudy(): ReadonlyMap<string, string> {
   const campaign = simulateLog(DEMO_OPTIONS);
-  const { base, marks, rows, truth } = campaign;
+  const { bases, marks, rows, truth } = campaign;
   const rounded = (_key: string, value: unknown): unknown =>
     typeof value === 'number' ? Number(value.toFixed(9)) : value;
   const data: [string, string][] = [
     ['marks.csv', marksText(marks, truth.settings.statedMarkSigmaMm)],
-    ['bases.csv', basesText([base])],
+    ['bases.csv', basesText(bases)],
     ...[...rowsByMonth(rows)].map(([month, own]): [string, string] => [`logs/${month}.csv`, logText(own)]),
     ['another-layout/points-2025-03-14.txt', pointListText(rows, '2025-03-14')],
     ['truth.json', `${JSON.stringify(truth, rounded, 1)}\n`],

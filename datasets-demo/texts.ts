@@ -1,4 +1,4 @@
-import type { SimulatedCampaign } from '../src/campaign/index.js';
+import type { CampaignTruth, SimulatedCampaign } from '../src/campaign/index.js';
 
 /** The demo's study file: comments are for a survey manager who opens it first. */
 export const STUDY_TEXT = `# Study file of the demo: check shots of Quillfen Survey on the island of Tellmarrow.
@@ -53,8 +53,13 @@ export function readmeText({ marks, rows, truth }: SimulatedCampaign, files: rea
   const { visits, components } = truth;
   const list = files.map((file) => `| \`${file}\` | ${FILES[file] ?? FILES.log} |`).join('\n');
   const far = truth.visitsWithoutFix.filter((visit) => visit.baselineKm > 10).length;
-  const factors = truth.days.map((day) => day.factor);
+  const bad = truth.days.filter((day) => day.bad);
+  const ordinary = truth.days.filter((day) => !day.bad).map((day) => day.factor);
   const two = (value: number): string => value.toFixed(2);
+  const percent = (share: number): string => (100 * share).toFixed(1);
+  const { fromDay, toDay } = truth.settings.otherBase!;
+  const other = { from: truth.days[fromDay - 1]!.day, to: truth.days[toDay - 1]!.day };
+  const blunders = truth.blunders.map(blunderText).join('; ');
   const parameters = (['east', 'north', 'up', 'horizontal'] as const)
     .map((name) => {
       const c = components[name];
@@ -67,9 +72,10 @@ Quillfen Survey is an invented firm on the invented island of Tellmarrow. Its cr
 invented too, and every position was simulated: nobody ever stood on these points. The island was put into the open
 ocean on purpose.
 
-In the spring of 2025 the firm's three crews shot checks on ${marks.length} marks, ${marks[0]!.baselineKm.toFixed(1)} to ${marks.at(-1)!.baselineKm.toFixed(0)} km from the one base, a pillar, on ${truth.days.length}
-working days. All crews used all marks, and every crew went to near and far ones every day. The three rovers were
-dealt out to the crews anew each morning.
+In the spring of 2025 the firm's two crews shot checks on ${marks.length} marks, ${marks[0]!.baselineKm.toFixed(1)} to ${marks.at(-1)!.baselineKm.toFixed(0)} km from the firm's own base, on ${truth.days.length}
+working days. The base stood on a pillar; while that was repaired (${other.from} to ${other.to}), on a tripod over a ground
+mark nearby, set up anew every morning. Both crews used all marks, and each went to near and far ones every day. Three
+rovers were dealt out to the two crews anew each morning.
 
 ## Files
 
@@ -82,12 +88,21 @@ Text files are UTF-8 with line feeds. Coordinates are degrees on WGS 84 and elli
 ## What is in the logs
 
 ${rows.length} rows: ${counts.fixed} fixed positions on known marks (${visits.withFix} occupations), ${counts.float} float positions, ${counts.unknownMark} on mistyped mark
-names, ${counts.duplicate} that stand twice. ${visits.withoutFix} visits never got a fix, ${far} of them more than 10 km from the base. The columns \`satellites\`,
+names, ${counts.wrongMark} under the name of another mark, ${counts.duplicate} that stand twice. ${visits.withoutFix} visits never got a fix, ${far} of them more than 10 km from the base. The columns \`satellites\`,
 \`pdop\` and \`age\` look plausible but say nothing about the error.
 
-There are no wrong fixes, no runs of bad days, no daily course and no errors in the coordinates of marks or base in
-this study: it shows a planned campaign at its best. Days still differ as they do in an ordinary season: the factors on
-the ppm go from ${two(Math.min(...factors))} to ${two(Math.max(...factors))}.
+What a season brings is in it:
+
+- **Wrong fixes**: ${truth.wrongFixes.length} of the ${visits.withFix} occupations (${percent(truth.wrongFixes.length / visits.withFix)} %), the more of them the farther from the base. Each adds a vector of
+  50 mm to 1 m in a random direction.
+- **Degraded days**: ${bad.map(({ day, factor }) => `${day} (${two(factor)})`).join(', ')}; in brackets the factor on the ppm. The other
+  days differ as they do in an ordinary season: their factors go from ${two(Math.min(...ordinary))} to ${two(Math.max(...ordinary))}.
+- **A daily course**: the ppm is highest about 14 h solar time, ${two(Math.exp(truth.settings.middayRise))} times the middle of the day's course.
+- **Errors of marks**: the published coordinates are off by ${truth.settings.markSigmaMm.east} mm in east and in north and ${truth.settings.markSigmaMm.up} mm in height
+  (standard deviations), as \`marks.csv\` states.
+- **Errors of setups**: ${truth.settings.setupSigmaMm.east} mm in east and in north and ${truth.settings.setupSigmaMm.up} mm in height (standard deviations), one draw for the pillar, one
+  for every morning on the tripod.
+- **Blunders**: ${blunders}.
 
 ## The truth
 
@@ -99,16 +114,16 @@ mm per km, as root-mean-square (horizontal: radial):
 ${parameters}
 
 The error of an occupation is the constant part and the part that grows with distance, added as independent normal
-errors. The second is multiplied by a factor of the day, log-normal with median 1. Of the first, 40 % of the
-variance lasts for about ten minutes; the second is common to all crews of a day and lasts for about 40 minutes.
+errors. The second is multiplied by a factor of the day, log-normal with median 1 and two to four times as large on
+degraded days. Of the first, 40 % of the variance lasts for about ten minutes; the second is common to all crews of a day and lasts for about 40 minutes.
 So the occupations of a day are not independent.
 
 - \`settings\`: everything the simulation was told.
 - \`components\`: the table above in full, and the ppm of each day (\`dayPpm\`, in the order of \`days\`).
-  \`absoluteConstantMm\` would also hold the errors of marks and setups, which are none here.
-- \`days\`: each day's factor. \`marks\`, \`setups\`: errors of coordinates and setups, mm (all 0 here).
-- \`visits\`, \`rows\`: counts. \`rows.written\` is the sum of the other four.
-- \`visitsWithoutFix\`, \`unknownMarks\`, \`wrongFixes\`: each visit concerned.
+  \`absoluteConstantMm\` also holds the errors of marks and setups.
+- \`days\`: each day's factor. \`marks\`, \`setups\`: errors of coordinates and setups, mm; \`baselineKm\` is from the pillar.
+- \`visits\`, \`rows\`: counts. \`rows.written\` is the sum of the other five.
+- \`visitsWithoutFix\`, \`unknownMarks\`, \`wrongFixes\`, \`blunders\`: each visit concerned.
 
 ## How it was made
 
@@ -121,10 +136,17 @@ MIT, as the whole project.
 `;
 }
 
+function blunderText({ kind, day, mark, rover, upMm, writtenAs }: CampaignTruth['blunders'][number]): string {
+  const where = `on ${day} with rover ${rover}`;
+  if (kind === 'wrong-mark') return `${where} an occupation on ${mark} was logged as ${writtenAs}`;
+  const size = Math.abs(upMm);
+  return `${where} the height of the rod on ${mark} was wrong, so that the point came out ${size} mm too ${upMm < 0 ? 'low' : 'high'}`;
+}
+
 const FILES: Readonly<Record<string, string>> & { readonly log: string } = {
   'study.yaml': 'the study file, with comments: start here',
   'marks.csv': 'the marks with their known coordinates',
-  'bases.csv': 'the base',
+  'bases.csv': 'the bases: the pillar and the ground mark',
   'another-layout/points-2025-03-14.txt':
     'one day as another controller would export it: a point list to try recognising on',
   'truth.json': 'what the positions were made from',

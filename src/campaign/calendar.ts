@@ -1,6 +1,6 @@
-import { normalDeviates, type Random, uniformBetween } from '../stats/index.js';
+import { normalDeviates, type Random, shuffle, uniformBetween } from '../stats/index.js';
 import { wholeBetween } from './draw.js';
-import type { CampaignSettings } from './options.js';
+import type { BadDayOptions, CampaignSettings } from './options.js';
 
 /** A working day of a campaign. */
 export interface CampaignDay {
@@ -42,16 +42,26 @@ function workingDates(settings: CampaignSettings): number[] {
 function badDayFactors(settings: CampaignSettings, random: Random): Map<number, number> {
   const factors = new Map<number, number>();
   if (settings.badDays === null) return factors;
-  const { runs, runLength, factor } = settings.badDays;
-  const spare = settings.days - daysNeeded(runs, runLength);
-  const gaps = Array.from({ length: runs }, () => wholeBetween(random, 0, spare)).sort((a, b) => a - b);
-  for (const [run, gap] of gaps.entries())
-    for (let i = 0; i < runLength; i++)
-      factors.set(gap + run * (runLength + 1) + i, uniformBetween(random, factor.from, factor.to));
+  const { singles, factor } = settings.badDays;
+  const given = runLengths(settings.badDays);
+  const lengths = singles === 0 ? given : shuffle(given, random);
+  const spare = settings.days - daysNeeded(lengths);
+  const gaps = lengths.map(() => wholeBetween(random, 0, spare)).sort((a, b) => a - b);
+  let taken = 0;
+  for (const [run, gap] of gaps.entries()) {
+    for (let i = 0; i < lengths[run]!; i++)
+      factors.set(gap + taken + i, uniformBetween(random, factor.from, factor.to));
+    taken += lengths[run]! + 1;
+  }
   return factors;
 }
 
-/** The fewest days in which so many runs fit with one ordinary day between two of them. */
-export function daysNeeded(runs: number, runLength: number): number {
-  return runs * runLength + Math.max(0, runs - 1);
+/** The lengths of all runs of bad days, single days among them. */
+export function runLengths({ runs, runLength, singles }: BadDayOptions): number[] {
+  return [...new Array<number>(runs).fill(runLength), ...new Array<number>(singles).fill(1)];
+}
+
+/** The fewest days in which the runs fit with one ordinary day between two of them. */
+export function daysNeeded(lengths: readonly number[]): number {
+  return lengths.reduce((sum, length) => sum + length, 0) + Math.max(0, lengths.length - 1);
 }

@@ -1,4 +1,5 @@
 import { median } from '../stats/index.js';
+import { runLengths } from './calendar.js';
 import type { DrawnCampaign } from './drawCampaign.js';
 import { hourFactor } from './hourFactor.js';
 import type { Axes, CampaignSettings } from './options.js';
@@ -62,8 +63,8 @@ export function componentTruths(
 function meanSquareDayFactor(settings: CampaignSettings): number {
   const ordinary = Math.exp(2 * settings.dayFactorLogSd ** 2);
   if (settings.badDays === null) return ordinary;
-  const { runs, runLength, factor } = settings.badDays;
-  const share = (runs * runLength) / settings.days;
+  const { factor } = settings.badDays;
+  const share = runLengths(settings.badDays).reduce((sum, length) => sum + length, 0) / settings.days;
   const meanSquare = (factor.from ** 2 + factor.from * factor.to + factor.to ** 2) / 3;
   return ordinary * (1 - share + share * meanSquare);
 }

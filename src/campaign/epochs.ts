@@ -47,9 +47,9 @@ export function epochWriter(
     const satellites = wholeBetween(random, 11, 24);
     const row = (second: number, offset: Axes, fix: LogRow['fix']): LogRow => ({
       timeMs: visit.startMs + 1000 * second,
-      base: settings.base.name,
+      base: visit.base,
       setup: visit.setup,
-      mark: visit.outcome === 'unknown-mark' ? mistypedName(visit.mark.name, marks) : visit.mark.name,
+      mark: writtenName(visit, marks),
       rover: visit.rover,
       crew: visit.crew,
       ...written(frame, offset),
@@ -67,6 +67,14 @@ export function epochWriter(
       ...noise.map((offset, i) => row(i, added(visit.error, offset), 'fixed')),
     ];
   };
+}
+
+/** The mark's name as it stands in the log. */
+export function writtenName(
+  { outcome, mark, blunder }: DrawnVisit,
+  marks: readonly Pick<CampaignMark, 'name'>[],
+): string {
+  return outcome === 'unknown-mark' ? mistypedName(mark.name, marks) : (blunder?.writtenAs ?? mark.name);
 }
 
 const seconds = (first: number, count: number): number[] =>

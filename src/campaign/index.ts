@@ -1,3 +1,4 @@
+export type { Blunder } from './blunders.js';
 export type { ComponentTruth } from './componentTruth.js';
 export { basesText, marksText } from './controlText.js';
 export { CAMPAIGN_DEFAULTS, MARK_GENERATOR_DEFAULTS, SWITCHED_ON_DEFAULTS } from './defaults.js';
@@ -7,10 +8,12 @@ export type { CampaignMark, MarkGenerator, MarkPlan } from './marks.js';
 export type {
   Axes,
   BadDayOptions,
+  BlunderOptions,
   CampaignBase,
   CampaignOptions,
   CampaignSettings,
   HabitualOptions,
+  OtherBase,
   Range,
   ShareByDistance,
   WrongFixOptions,

@@ -91,14 +91,16 @@ export function placeMark(base: Geodetic, plan: MarkPlan): CampaignMark {
     longitudeDeg: roundTo(position.longitudeDeg, 9),
     heightM: roundTo(plan.heightM, 4),
   };
-  const baseline = baselineBetween(base, published);
-  return {
-    name: plan.name,
-    ...published,
-    baselineKm: baseline.lengthKm,
-    azimuthDeg: baseline.azimuthDeg,
-    heightDifferenceM: baseline.heightDifferenceM,
-    source: plan.source ?? 'simulated',
-    sky: plan.sky ?? 'open',
-  };
+  const { name, source = 'simulated', sky = 'open' } = plan;
+  return { name, ...published, ...baselineTo(base, published), source, sky };
+}
+
+/** The same mark with its baseline from another base. */
+export function seenFrom(base: Geodetic, mark: CampaignMark): CampaignMark {
+  return { ...mark, ...baselineTo(base, mark) };
+}
+
+function baselineTo(base: Geodetic, mark: Geodetic) {
+  const { lengthKm, azimuthDeg, heightDifferenceM } = baselineBetween(base, mark);
+  return { baselineKm: lengthKm, azimuthDeg, heightDifferenceM };
 }

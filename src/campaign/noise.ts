@@ -1,4 +1,5 @@
 import { normalDeviates, type Random } from '../stats/index.js';
+import type { Axes, CampaignSettings } from './options.js';
 import type { PlannedVisit } from './schedule.js';
 
 /** Share of the constant part's variance that lasts for minutes; the rest is new at every occupation. */
@@ -52,6 +53,36 @@ export function componentNoise(
     distance[i] = Math.cos(azimuth) * north(visit.startMs) + Math.sin(azimuth) * east(visit.startMs);
   }
   return { constant, distance };
+}
+
+/** Noise of every component, each from its own stream; east and north correlated as the settings say. */
+export function correlatedNoise(
+  { dependent, eastNorthCorrelation: r }: CampaignSettings,
+  visits: readonly PlannedVisit[],
+  stream: (label: keyof Axes) => Random,
+): Record<keyof Axes, ComponentNoise> {
+  const [east, own, up] = (['east', 'north', 'up'] as const).map((axis) =>
+    componentNoise(visits, dependent, stream(axis)),
+  ) as [ComponentNoise, ComponentNoise, ComponentNoise];
+  const rest = Math.sqrt(1 - r * r);
+  const mixed = (part: keyof ComponentNoise): Float64Array =>
+    r === 0 ? own[part] : own[part].map((value, i) => r * east[part][i]! + rest * value);
+  return { east, north: { constant: mixed('constant'), distance: mixed('distance') }, up };
+}
+
+/**
+ * What turns normal errors of unit variance into t errors of unit variance, one factor for each visit:
+ * √((ν − 2)/χ²_ν); all 1 for normal errors.
+ */
+export function tailFactors(degrees: number | null, visits: number, random: Random): Float64Array {
+  const factors = new Float64Array(visits).fill(1);
+  if (degrees === null) return factors;
+  const normal = normalDeviates(random);
+  return factors.map(() => {
+    let chiSquare = 0;
+    for (let k = 0; k < degrees; k++) chiSquare += normal() ** 2;
+    return Math.sqrt((degrees - 2) / chiSquare);
+  });
 }
 
 /** The value at a time, milliseconds; times never go back. */

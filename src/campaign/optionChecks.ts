@@ -48,6 +48,15 @@ const generator = objectOf({
   highestM: numberFrom(-500, 9000),
 });
 
+const baseChecks = {
+  name: plainText,
+  latitudeDeg: numberFrom(-89, 89),
+  longitudeDeg: numberFrom(-180, 180),
+  heightM: numberFrom(-500, 9000),
+  mounting: oneOf('pillar', 'tripod'),
+  setupsPerDay: wholeNumberFrom(1, 24),
+};
+
 const names = listOf(plainText, (element) => element);
 
 /** What every option must be, taken by itself. */
@@ -58,14 +67,10 @@ export const OPTION_CHECKS: { readonly [K in keyof CampaignSettings]: Check } = 
   weekdaysOnly: oneOf(true, false),
   utcOffsetHours: numberFrom(-12, 14),
   workHours: rangeOf(numberFrom(0, 24)),
-  base: objectOf({
-    name: plainText,
-    latitudeDeg: numberFrom(-89, 89),
-    longitudeDeg: numberFrom(-180, 180),
-    heightM: numberFrom(-500, 9000),
-    mounting: oneOf('pillar', 'tripod'),
-    setupsPerDay: wholeNumberFrom(1, 24),
-  }),
+  base: objectOf(baseChecks),
+  otherBase: nullOr(
+    objectOf({ ...baseChecks, fromDay: wholeNumberFrom(1, 10_000), toDay: wholeNumberFrom(1, 10_000) }),
+  ),
   marks: (value, path) =>
     (Array.isArray(value) ? listOf(markPlan, (mark: { name: string }) => mark.name) : generator)(value, path),
   crews: names,
@@ -78,6 +83,8 @@ export const OPTION_CHECKS: { readonly [K in keyof CampaignSettings]: Check } = 
   constantMm: axesFrom(0),
   ppm: axesFrom(0),
   dayFactorLogSd: numberFrom(0, 2),
+  eastNorthCorrelation: numberFrom(-1, 1),
+  tailDegrees: nullOr(wholeNumberFrom(3, 100)),
   dependent: oneOf(true, false),
   floatRowShare: numberFrom(0, 0.2),
   noFix: all(objectOf({ shareAt1Km: share, shareAt12Km: share }), bothOrNone),
@@ -95,14 +102,22 @@ export const OPTION_CHECKS: { readonly [K in keyof CampaignSettings]: Check } = 
       bothOrNone,
     ),
   ),
+  blunders: nullOr(
+    objectOf({
+      rodHeights: wholeNumberFrom(0, 1000),
+      rodErrorMm: numberFrom(1),
+      wrongMarks: wholeNumberFrom(0, 1000),
+    }),
+  ),
   markSigmaMm: axesFrom(0),
   statedMarkSigmaMm: objectOf({ horizontal: numberFrom(0), vertical: numberFrom(0) }),
   setupSigmaMm: axesFrom(0),
   middayRise: numberFrom(0, 3),
   badDays: nullOr(
     objectOf({
-      runs: wholeNumberFrom(1, 1000),
+      runs: wholeNumberFrom(0, 1000),
       runLength: wholeNumberFrom(1, 1000),
+      singles: wholeNumberFrom(0, 1000),
       factor: rangeOf(numberFrom(1, 100)),
     }),
   ),

@@ -42,7 +42,24 @@ export interface WrongFixOptions extends ShareByDistance {
 export interface BadDayOptions {
   readonly runs: number;
   readonly runLength: number;
+  /** Further bad days that stand alone. */
+  readonly singles: number;
   readonly factor: Range;
+}
+
+/** Mistakes of people, each in one occupation with a fix on a known mark. */
+export interface BlunderOptions {
+  /** Occupations with a wrong height of the rod, too high or too low by `rodErrorMm`. */
+  readonly rodHeights: number;
+  readonly rodErrorMm: number;
+  /** Occupations logged under the name of another mark. */
+  readonly wrongMarks: number;
+}
+
+/** A second base that takes the place of the first for some working days, counted from 1, both ends included. */
+export interface OtherBase extends CampaignBase {
+  readonly fromDay: number;
+  readonly toDay: number;
 }
 
 /** A firm that only checks in: few shots a day, mostly at near marks. Replaces `occupationsPerDay`. */
@@ -67,6 +84,8 @@ export interface CampaignSettings {
   /** Local clock hours between which occupations start. */
   readonly workHours: Range;
   readonly base: CampaignBase;
+  /** Null: the one base all through. */
+  readonly otherBase: OtherBase | null;
   /** The marks themselves, or how to invent them. */
   readonly marks: readonly MarkPlan[] | MarkGenerator;
   readonly crews: readonly string[];
@@ -88,6 +107,13 @@ export interface CampaignSettings {
   readonly ppm: Axes;
   /** Standard deviation of the log of the ordinary day factor (log-normal, median 1). */
   readonly dayFactorLogSd: number;
+  /** Correlation of the random errors of east and north, −1 to 1. */
+  readonly eastNorthCorrelation: number;
+  /**
+   * Null: normal errors. Else the random error of an occupation is multivariate t with so many degrees of freedom, scaled
+   * to the same root-mean-square.
+   */
+  readonly tailDegrees: number | null;
   /** Whether shots near each other in time share errors; `false` makes shots of a day independent. */
   readonly dependent: boolean;
   /** Float rows before the first fixed one, as a share of the rows of visits that got a fix. */
@@ -100,6 +126,8 @@ export interface CampaignSettings {
   readonly duplicateRowShare: number;
   /** Null: none. */
   readonly wrongFixes: WrongFixOptions | null;
+  /** Null: none. */
+  readonly blunders: BlunderOptions | null;
   /** Error of the marks' published coordinates, standard deviation per axis, mm; one draw a mark. */
   readonly markSigmaMm: Axes;
   /** What the list of marks states about that, standard deviation per axis, mm. */
@@ -118,6 +146,6 @@ type Inner<T> = T extends readonly unknown[] ? T : T extends object ? Partial<T>
 
 /**
  * Settings as a caller gives them: all optional, and of a nested object the given keys only. `{}` for
- * `wrongFixes`, `badDays` or `habitual` switches them on with the values of `SWITCHED_ON_DEFAULTS`.
+ * `wrongFixes`, `blunders`, `badDays` or `habitual` switches them on with the values of `SWITCHED_ON_DEFAULTS`.
  */
 export type CampaignOptions = { readonly [K in keyof CampaignSettings]?: Inner<CampaignSettings[K]> };

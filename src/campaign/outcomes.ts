@@ -4,7 +4,7 @@ import type { CampaignSettings } from './options.js';
 import type { PlannedVisit } from './schedule.js';
 import { shareAtKm } from './shareAtKm.js';
 
-/** How a visit ended: with a fix, without one, or with a fix under a mark name that nobody knows. */
+/** How a visit ended: with a fix, without one, or with a fix under a mark name that nobody knows; or, by a blunder, under another mark's name. */
 export type VisitOutcome = 'fixed' | 'no-fix' | 'unknown-mark';
 
 /** Draws every visit's outcome; `random` is used twice a visit, so shares do not disturb each other. */

@@ -1,4 +1,4 @@
-import { daysNeeded } from './calendar.js';
+import { daysNeeded, runLengths } from './calendar.js';
 import { refuse, unknownKey } from './checks.js';
 import { CAMPAIGN_DEFAULTS, MARK_GENERATOR_DEFAULTS, SWITCHED_ON_DEFAULTS } from './defaults.js';
 import { OPTION_CHECKS } from './optionChecks.js';
@@ -28,12 +28,14 @@ function filledIn(key: keyof CampaignSettings, options: CampaignOptions): unknow
   const inner: unknown =
     key === 'marks'
       ? MARK_GENERATOR_DEFAULTS
-      : (CAMPAIGN_DEFAULTS[key] ?? SWITCHED_ON_DEFAULTS[key as keyof typeof SWITCHED_ON_DEFAULTS]);
+      : key === 'otherBase'
+        ? { mounting: 'tripod', setupsPerDay: 1 }
+        : (CAMPAIGN_DEFAULTS[key] ?? SWITCHED_ON_DEFAULTS[key as keyof typeof SWITCHED_ON_DEFAULTS]);
   return { ...(inner as object), ...given };
 }
 
 function checkTogether(settings: CampaignSettings): void {
-  const { workHours, crews, rovers, badDays, days, wrongFixes, marks } = settings;
+  const { workHours, crews, rovers, badDays, days, wrongFixes, marks, base, otherBase } = settings;
   if (workHours.from === workHours.to) refuse('workHours', '"from" before "to"', workHours);
   if (rovers.length < crews.length)
     refuse('rovers', `at least as many as crews (${crews.length})`, rovers.length);
@@ -41,7 +43,16 @@ function checkTogether(settings: CampaignSettings): void {
     refuse('wrongFixes', '"shortestMm" not above "longestMm"', wrongFixes);
   if (!('length' in marks) && (marks.nearestKm > marks.farthestKm || marks.lowestM > marks.highestM))
     refuse('marks', '"nearestKm" not above "farthestKm" and "lowestM" not above "highestM"', marks);
-  const needed = badDays === null ? 0 : daysNeeded(badDays.runs, badDays.runLength);
+  if (otherBase !== null) {
+    if (otherBase.name === base.name)
+      refuse('otherBase.name', "a name other than the first base's", base.name);
+    if (otherBase.fromDay > otherBase.toDay || otherBase.toDay > days)
+      refuse('otherBase', `"fromDay" not after "toDay", and both among the ${days} days`, {
+        fromDay: otherBase.fromDay,
+        toDay: otherBase.toDay,
+      });
+  }
+  const needed = badDays === null ? 0 : daysNeeded(runLengths(badDays));
   if (badDays !== null && needed > days)
     refuse(
       'badDays',
@@ -49,6 +60,7 @@ function checkTogether(settings: CampaignSettings): void {
       {
         runs: badDays.runs,
         runLength: badDays.runLength,
+        singles: badDays.singles,
       },
     );
 }

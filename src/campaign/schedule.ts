@@ -2,7 +2,7 @@ import { type Random, shuffle } from '../stats/index.js';
 import type { CampaignDay } from './calendar.js';
 import { wholeBetween } from './draw.js';
 import type { CampaignMark } from './marks.js';
-import type { CampaignSettings } from './options.js';
+import type { CampaignBase, CampaignSettings } from './options.js';
 
 /** A visit as planned: who goes to which mark when. */
 export interface PlannedVisit {
@@ -10,6 +10,8 @@ export interface PlannedVisit {
   readonly day: string;
   readonly crew: string;
   readonly rover: string;
+  readonly base: string;
+  /** As seen from the base. */
   readonly mark: CampaignMark;
   readonly setup: string;
   /** Second of the first fixed position, UTC milliseconds. */
@@ -19,11 +21,17 @@ export interface PlannedVisit {
 /** Starts of two visits of a rover lie at least this share of the mean spacing apart. */
 export const SMALLEST_SPACING = 0.4;
 
+/** A base on duty and the marks as seen from it. */
+export interface BaseOnDuty {
+  readonly base: CampaignBase;
+  readonly marks: readonly CampaignMark[];
+}
+
 /** All planned visits in order of time (of rover names at equal times). */
 export function planVisits(
   settings: CampaignSettings,
   days: readonly CampaignDay[],
-  marks: readonly CampaignMark[],
+  onDuty: (dayIndex: number) => BaseOnDuty,
   random: Random,
 ): PlannedVisit[] {
   const visits: PlannedVisit[] = [];
@@ -31,13 +39,23 @@ export function planVisits(
     const range = settings.habitual?.occupationsPerDay ?? settings.occupationsPerDay;
     const counts = dealOut(wholeBetween(random, range.from, range.to), settings.crews.length, random);
     const rovers = shuffle(settings.rovers, random);
+    const { base, marks } = onDuty(dayIndex);
     for (const [i, crew] of settings.crews.entries()) {
       const stops = stopsOf(settings, marks, counts[i]!, random);
       const starts = startsMs(settings, day, stops.length, random);
       for (const [j, mark] of stops.entries()) {
         const startMs = starts[j]!;
-        const setup = setupName(settings, day, startMs);
-        visits.push({ dayIndex, day: day.day, crew, rover: rovers[i]!, mark, setup, startMs });
+        const setup = setupName(settings, base, day, startMs);
+        visits.push({
+          dayIndex,
+          day: day.day,
+          crew,
+          rover: rovers[i]!,
+          base: base.name,
+          mark,
+          setup,
+          startMs,
+        });
       }
     }
   }
@@ -101,8 +119,12 @@ function startsMs(settings: CampaignSettings, day: CampaignDay, count: number, r
   });
 }
 
-function setupName(settings: CampaignSettings, day: CampaignDay, startMs: number): string {
-  const { name, mounting, setupsPerDay } = settings.base;
+function setupName(
+  settings: CampaignSettings,
+  { name, mounting, setupsPerDay }: CampaignBase,
+  day: CampaignDay,
+  startMs: number,
+): string {
   if (mounting === 'pillar') return name;
   const { from, to } = settings.workHours;
   const hour = (startMs - day.midnightMs) / 3_600_000;

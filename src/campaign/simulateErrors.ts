@@ -1,6 +1,6 @@
 import { type DrawnCampaign, drawCampaign } from './drawCampaign.js';
 import type { CampaignMark } from './marks.js';
-import type { CampaignBase, CampaignOptions } from './options.js';
+import type { CampaignBase, CampaignOptions, CampaignSettings } from './options.js';
 import { resolveOptions } from './resolveOptions.js';
 import { type CampaignTruth, truthOf } from './truth.js';
 
@@ -26,6 +26,8 @@ export interface SimulatedOccupation {
   readonly up: number;
   /** Whether wrong integers spoilt it: known here, never in the field. */
   readonly wrongFix: boolean;
+  /** Whether the height of the rod was wrong. */
+  readonly rodBlunder: boolean;
   /** The day's factor on the ppm, without the daily course. */
   readonly dayFactor: number;
 }
@@ -33,6 +35,8 @@ export interface SimulatedOccupation {
 /** A simulated campaign as errors: one row for every occupation with a fix on a known mark, in time order. */
 export interface SimulatedErrors {
   readonly base: CampaignBase;
+  /** The base, and the other one where there is one. */
+  readonly bases: readonly CampaignBase[];
   readonly marks: readonly CampaignMark[];
   readonly rows: readonly SimulatedOccupation[];
   readonly truth: CampaignTruth;
@@ -47,19 +51,27 @@ export function simulateErrors(options: CampaignOptions = {}): SimulatedErrors {
   const campaign = drawCampaign(resolveOptions(options));
   return {
     base: campaign.settings.base,
+    bases: basesOf(campaign.settings),
     marks: campaign.marks,
     rows: occupationsOf(campaign),
     truth: truthOf(campaign, null),
   };
 }
 
+/** All bases of a campaign, without the days of the other one. */
+export function basesOf({ base, otherBase }: CampaignSettings): CampaignBase[] {
+  if (otherBase === null) return [base];
+  const { fromDay, toDay, ...other } = otherBase;
+  return [base, other];
+}
+
 /** The occupations that an analysis can use, in time order. */
 export function occupationsOf(campaign: DrawnCampaign): SimulatedOccupation[] {
   return campaign.visits
-    .filter((visit) => visit.outcome === 'fixed')
+    .filter((visit) => visit.outcome === 'fixed' && visit.blunder?.kind !== 'wrong-mark')
     .map((visit) => ({
       day: visit.day,
-      base: campaign.settings.base.name,
+      base: visit.base,
       setup: visit.setup,
       mark: visit.mark.name,
       rover: visit.rover,
@@ -73,6 +85,7 @@ export function occupationsOf(campaign: DrawnCampaign): SimulatedOccupation[] {
       north: visit.error.north,
       up: visit.error.up,
       wrongFix: visit.wrongFix !== null,
+      rodBlunder: visit.blunder?.kind === 'rod-height',
       dayFactor: campaign.days[visit.dayIndex]!.factor,
     }));
 }

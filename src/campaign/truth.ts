@@ -1,3 +1,4 @@
+import type { Blunder } from './blunders.js';
 import { type ComponentTruth, componentTruths } from './componentTruth.js';
 import type { DrawnCampaign, DrawnVisit } from './drawCampaign.js';
 import type { Axes, CampaignSettings } from './options.js';
@@ -12,7 +13,7 @@ export interface InjectedVisit {
   readonly baselineKm: number;
 }
 
-/** How many rows of each kind a log holds; `written` is the sum of the four others. */
+/** How many rows of each kind a log holds; `written` is the sum of the five others. */
 export interface RowCounts {
   readonly written: number;
   /** Fixed, on a known mark, counted once. */
@@ -20,6 +21,8 @@ export interface RowCounts {
   /** Float: before a fix, and in visits that never got one. */
   readonly float: number;
   readonly unknownMark: number;
+  /** Fixed, under the name of another mark. */
+  readonly wrongMark: number;
   /** Second copies. */
   readonly duplicate: number;
 }
@@ -47,11 +50,14 @@ export interface CampaignTruth {
     readonly withFix: number;
     readonly withoutFix: number;
     readonly unknownMark: number;
+    readonly wrongMark: number;
   };
   readonly visitsWithoutFix: readonly InjectedVisit[];
   readonly unknownMarks: readonly (InjectedVisit & { readonly writtenAs: string })[];
   /** Wrong fixes among the occupations with a fix on a known mark; east, north, up: the vector added, mm. */
   readonly wrongFixes: readonly (InjectedVisit & Axes)[];
+  /** Mistakes of people; `upMm` is what a wrong height of the rod adds, `writtenAs` the mark's name in the log. */
+  readonly blunders: readonly (InjectedVisit & Blunder)[];
   /** Null where errors alone were simulated. */
   readonly rows: RowCounts | null;
 }
@@ -60,7 +66,9 @@ export interface CampaignTruth {
 export function truthOf(campaign: DrawnCampaign, rows: RowCounts | null): CampaignTruth {
   const { settings, days, marks, visits, markErrors, setupErrors } = campaign;
   const withOutcome = (outcome: DrawnVisit['outcome']) => visits.filter((visit) => visit.outcome === outcome);
-  const fixed = withOutcome('fixed');
+  const known = withOutcome('fixed');
+  const wrongMark = known.filter(({ blunder }) => blunder?.kind === 'wrong-mark');
+  const fixed = known.filter((visit) => !wrongMark.includes(visit));
   const withoutFix = withOutcome('no-fix');
   const unknown = withOutcome('unknown-mark');
   return {
@@ -74,6 +82,7 @@ export function truthOf(campaign: DrawnCampaign, rows: RowCounts | null): Campai
       withFix: fixed.length,
       withoutFix: withoutFix.length,
       unknownMark: unknown.length,
+      wrongMark: wrongMark.length,
     },
     visitsWithoutFix: withoutFix.map(injected),
     unknownMarks: unknown.map((visit) => ({
@@ -82,6 +91,9 @@ export function truthOf(campaign: DrawnCampaign, rows: RowCounts | null): Campai
     })),
     wrongFixes: fixed.flatMap((visit) =>
       visit.wrongFix === null ? [] : [{ ...injected(visit), ...visit.wrongFix }],
+    ),
+    blunders: known.flatMap((visit) =>
+      visit.blunder === null ? [] : [{ ...injected(visit), ...visit.blunder }],
     ),
     rows,
   };

@@ -162,11 +162,18 @@ function largestMean(marks: readonly MarkMean[]): Largest | null {
     }, null);
 }
 
+/** A mark shot from two bases has two means. */
+function marksCounted(marks: readonly MarkMean[]): string {
+  const bases = new Set(marks.map(({ base }) => base)).size;
+  const names = counted(new Set(marks.map(({ mark }) => mark)).size, 'mark');
+  return bases > 1 ? `${names} from ${bases} bases` : names;
+}
+
 function title(marks: readonly MarkMean[]): string {
   const most = largestMean(marks);
   return most === null
-    ? `Mean error of ${counted(marks.length, 'mark')}: none known`
-    : `Mean error of ${counted(marks.length, 'mark')}: largest ${most.axis} ${signedNumber(most.mean)} mm at ${most.mark}`;
+    ? `Mean error of ${marksCounted(marks)}: none known`
+    : `Mean error of ${marksCounted(marks)}: largest ${most.axis} ${signedNumber(most.mean)} mm at ${most.mark}`;
 }
 
 function subtitle(marks: readonly MarkMean[], drawn: number): string[] {
@@ -181,5 +188,5 @@ function subtitle(marks: readonly MarkMean[], drawn: number): string[] {
 
 function description(marks: readonly MarkMean[]): string {
   const lengths = marks.map(({ baselineKm }) => baselineKm);
-  return `Mean east, north and up errors in millimetres of ${counted(marks.length, 'mark')} from ${Math.min(...lengths).toFixed(1)} to ${Math.max(...lengths).toFixed(1)} km from the base, with two standard errors. ${title(marks)}.`;
+  return `Mean east, north and up errors in millimetres of ${marksCounted(marks)} from ${Math.min(...lengths).toFixed(1)} to ${Math.max(...lengths).toFixed(1)} km from the base, with two standard errors. ${title(marks)}.`;
 }

@@ -68,6 +68,9 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
   });
   const checked = suspectBlunders(computed.errors, computed.setAside, control);
   const left = leaveOutDays(checked, study);
+  // What is explained as a blunder needs no second message.
+  const stillFar = checked.setAside.some(({ reason }) => reason === 'error-over-10-m');
+  const computedMessages = computed.messages.filter(({ code }) => stillFar || code !== 'error-over-10-m');
   const { errors, setAside } = left;
   const results = await summarizeRun(study, control, {
     formed,
@@ -78,7 +81,7 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
       ...study.messages,
       ...controlMessages,
       ...formed.messages,
-      ...computed.messages,
+      ...computedMessages,
       ...causeMessages(causes),
       ...checked.messages,
       ...left.messages,

@@ -62,6 +62,7 @@ interface DayCase {
 const bad = (runs: number, runLength: number): BadDayOptions => ({
   runs,
   runLength,
+  singles: 0,
   factor: { from: 2, to: 5 },
 });
 

@@ -47,18 +47,34 @@ describe('demo study', () => {
     const float = cells.filter((cell) => cell[8] === 'float').length;
     const unknownMark = cells.filter((cell) => !marks.has(cell[2])).length;
     const duplicate = lines.length - new Set(lines).size;
+    // Known here only from the truth: in the log it looks like any other occupation.
+    const { wrongMark } = truth.rows;
+    expect(wrongMark).toBe(truth.settings.epochsPerOccupation);
     expect(truth.rows).toEqual({
       written: lines.length,
       float,
       unknownMark,
+      wrongMark,
       duplicate,
-      fixed: lines.length - float - unknownMark - duplicate,
+      fixed: lines.length - float - unknownMark - wrongMark - duplicate,
     });
     for (const count of [float, unknownMark, duplicate, truth.visits.withoutFix])
       expect(count).toBeGreaterThan(0);
     expect(float / lines.length).toBeLessThan(0.08);
     expect(truth.days).toHaveLength(45);
-    expect(truth.wrongFixes).toEqual([]);
+  });
+
+  it('holds what a season brings', () => {
+    const { wrongFixes, visits, days, blunders, marks, setups } = JSON.parse(study.get('truth.json')!);
+    expect(wrongFixes.length / visits.withFix).toBeGreaterThan(0.005);
+    expect(wrongFixes.length / visits.withFix).toBeLessThan(0.015);
+    const bad = [...days.entries()].filter(([, day]: [number, { bad: boolean }]) => day.bad).map(([k]) => k);
+    expect(bad).toHaveLength(4);
+    expect(bad.filter((k) => bad.includes(k + 1))).toHaveLength(1);
+    expect(blunders.map(({ kind }: { kind: string }) => kind).sort()).toEqual(['rod-height', 'wrong-mark']);
+    expect(marks.every(({ east }: { east: number }) => east !== 0)).toBe(true);
+    // The pillar, and the tripod on each of its days.
+    expect(setups).toHaveLength(1 + 9);
   });
 
   it('has a study file that fits its data', () => {

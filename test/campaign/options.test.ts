@@ -37,7 +37,7 @@ describe('campaign options', () => {
       longestMm: 1000,
       meanBurst: 1,
     });
-    expect(settings.badDays).toEqual({ runs: 2, runLength: 3, factor: { from: 2, to: 5 } });
+    expect(settings.badDays).toEqual({ runs: 2, runLength: 3, singles: 0, factor: { from: 2, to: 5 } });
     expect(settings.habitual?.nearShare).toBe(0.8);
   });
 
@@ -87,7 +87,7 @@ describe('campaign options', () => {
     ],
     [
       { days: 10, badDays: { runs: 3, runLength: 3 } },
-      'campaign option "badDays": expected runs that fit into 10 days with an ordinary day between two (they need 11), received {"runs":3,"runLength":3}',
+      'campaign option "badDays": expected runs that fit into 10 days with an ordinary day between two (they need 11), received {"runs":3,"runLength":3,"singles":0}',
     ],
     [
       { marks: [{ name: 'P1', baselineKm: 0, azimuthDeg: 0, heightM: 0 }] },

@@ -66,7 +66,14 @@ describe('simulated log', () => {
         });
         const known = new Set(marks.map((mark) => mark.name));
         const first = new Set<string>();
-        const found = { written: rows.length, fixed: 0, float: 0, unknownMark: 0, duplicate: 0 };
+        const found = {
+          written: rows.length,
+          fixed: 0,
+          float: 0,
+          unknownMark: 0,
+          wrongMark: 0,
+          duplicate: 0,
+        };
         for (const row of rows) {
           if (row.fix === 'float') found.float++;
           else if (!known.has(row.mark)) found.unknownMark++;

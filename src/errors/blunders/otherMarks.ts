@@ -21,12 +21,14 @@ export function otherMark(error: OccupationError, control: Control, planScale: n
   const size = Math.hypot(east, north);
   if (!(size > ELSEWHERE_MM) || size < TIMES_USUAL * planScale) return null;
   const own = coordinatesOn(control.marks.get(mark)!, day)!.position;
-  const frame = localFrame({ ...own, heightM: 0 });
   const within = Math.max(MET_MM, MET_TIMES * (planScale || 0));
   for (const [name, other] of control.marks) {
     const position = name === mark ? null : (coordinatesOn(other, day)?.position ?? null);
     if (position === null || Number.isNaN(position.latitudeDeg)) continue;
-    const { eastM, northM } = frame.toLocal(geodeticToGeocentric({ ...position, heightM: 0 }));
+    // The normals of two marks are not parallel: 20 km away 100 m of height move a place by 0.3 m in plan.
+    const known = !Number.isNaN(own.heightM) && !Number.isNaN(position.heightM);
+    const [from, to] = known ? [own, position] : [own, position].map((place) => ({ ...place, heightM: 0 }));
+    const { eastM, northM } = localFrame(from!).toLocal(geodeticToGeocentric(to!));
     if (Math.hypot(east - 1000 * eastM, north - 1000 * northM) < within) return name;
   }
   return null;
