@@ -1,12 +1,9 @@
 import { z } from 'zod';
+import { count, day, nullable } from './schemaParts.js';
 
 /*
  * Parts of the schema of results that say what is compared with what.
  */
-
-const count = z.number().int().gte(0);
-const nullable = z.number().nullable();
-const day = z.string();
 
 const commonParameter = z.strictObject({
   name: z.enum(['shift-east', 'shift-north', 'shift-up', 'scale', 'rotation', 'tilt-east', 'tilt-north']),

@@ -2,8 +2,9 @@ import type { OccupationError } from '../errors/index.js';
 import { type ErrorModel, fitWithoutEachDay, setupOffsets, wrongFixShareAtKm } from '../fit/index.js';
 import { markMeans } from '../split/index.js';
 import type { ComponentFits, FittedModel } from './fitComponents.js';
+import type { FitResult, MarkComponentResult, MarkResult } from './fitResultTypes.js';
 import { type JudgedDays, ppmInterval } from './judgeDays.js';
-import type { FitResult, MarkComponentResult, MarkResult, Results } from './results.js';
+import type { Results } from './results.js';
 import type { WrongFixes } from './screenStudy.js';
 
 /** Distances at which the share of wrong fixes is told, as far as the data reach, km. */
@@ -84,7 +85,9 @@ function fitResult(
   const { component, reference, form, screened, confidence, constantMm, ppmIfIndependent } = model;
   const { informationNumber, occupations, marks, shortestKm, longestKm, notes } = model;
   const isBasis = model === basis;
-  const { ppm, interval } = ppmInterval(model, isBasis ? days : undefined);
+  // A composed fit has the ppm of the basis, and so its interval.
+  const likeBasis = isBasis || (composed && sameButReference(model, basis));
+  const { ppm, interval } = ppmInterval(model, likeBasis ? days : undefined);
   return {
     component,
     reference,
@@ -111,6 +114,9 @@ function fitResult(
     notes: notes.map(({ text }) => text),
   };
 }
+
+const sameButReference = (a: ErrorModel, b: ErrorModel): boolean =>
+  b.reference === 'repeatability' && a.form === b.form && a.screened === b.screened;
 
 function wrongFixShare({ screening, growth }: WrongFixes, longestKm: number): FitResult['wrongFixShare'] {
   const { share } = screening;

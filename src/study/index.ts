@@ -1,6 +1,22 @@
 export type { ControlMark } from './controlMarks.js';
+export type {
+  DailyFactorResult,
+  DayModelResult,
+  DegradedDayResult,
+  TimeOfDayResult,
+} from './dayResultTypes.js';
+export type { EvidenceResult, TermsResult } from './evidenceResultTypes.js';
+export type {
+  ComparisonResult,
+  FitResult,
+  MarkComponentResult,
+  MarkResult,
+  SignedPpm,
+  WrongFixResult,
+  WrongFixShareResult,
+} from './fitResultTypes.js';
 export { readStudy } from './readStudy.js';
-export type { BlunderResult, FileResult, FitResult, LengthClass, Results } from './results.js';
+export type { BlunderResult, FileResult, LengthClass, Results } from './results.js';
 export { resultsJsonSchema, resultsSchema } from './resultsSchema.js';
 export { type RunOptions, readStudyErrors, runStudy, type StudyErrors, type StudyRun } from './run.js';
 export { type StudySettings, studyJsonSchema } from './settings.js';

@@ -10,10 +10,11 @@ import {
 } from '../days/index.js';
 import type { OccupationError, Visit } from '../errors/index.js';
 import type { ErrorModel, EstimateWithLimits } from '../fit/index.js';
-import type { Message } from '../logs/index.js';
+import { type Message, message, quoted } from '../logs/index.js';
 import { randomStream } from '../stats/index.js';
+import type { DayModelResult, DegradedDayResult } from './dayResultTypes.js';
 import type { ComponentFits } from './fitComponents.js';
-import type { DayModelResult, DegradedDayResult, Results } from './results.js';
+import type { Results } from './results.js';
 import type { Study } from './study.js';
 
 /** The day model of a fit, and what single days and hours are like under it. */
@@ -76,9 +77,10 @@ export function judgeDays(
           timeOfDay: [{ component, pValue: hours.pValue, hours: hours.hours, harmonics: hours.harmonics }],
         },
         messages: [
-          // Each degraded day is told with what it is put down to.
-          ...model.notes.filter(({ code }) => code !== 'degraded-days' || explanations.length === 0),
-          ...explanations.map(({ note }) => note),
+          ...model.notes.filter(({ code }) => code !== 'degraded-days'),
+          ...degradedMessage(component, explanations),
+          // What speaks for and against each is in the report.
+          ...explanations.map(({ note }) => ({ ...note, severity: 'info' as const })),
           ...dependence.notes,
           ...hours.notes,
         ].map((note) => ({
@@ -88,6 +90,25 @@ export function judgeDays(
       },
     ];
   });
+}
+
+/** All degraded days in one sentence, each with what it is put down to. */
+function degradedMessage(component: string, explanations: readonly DayExplanation[]): Message[] {
+  if (explanations.length === 0) return [];
+  const days = explanations
+    .map(
+      ({ day, factor, verdict, subject }) =>
+        `${day} (${factor.toFixed(1)} times, ${verdict}${subject === null ? '' : ` ${quoted(subject)}`})`,
+    )
+    .join(', ');
+  const count = explanations.length === 1 ? 'One day was' : `${explanations.length} days were`;
+  return [
+    message(
+      'warning',
+      'degraded-days',
+      `${count} worse than the median day in ${component} ppm: ${days}. They stay in the fit; a day is left out only where leaveOutDays names it.`,
+    ),
+  ];
 }
 
 function degradedDay({

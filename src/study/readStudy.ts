@@ -66,6 +66,9 @@ export async function readStudy(path: string): Promise<Study> {
     ...settings.model,
     tolerances: settings.tolerances.map(tolerance),
     specSheet: settings.specSheet === undefined ? null : specSheet(settings.specSheet),
+    centringSigmaMm: settings.centringSigmaMm,
+    terms: settings.terms,
+    by: settings.by,
     leaveOutDays: settings.leaveOutDays,
     seed: settings.seed,
   };

@@ -12,6 +12,7 @@ import type { ErrorModel } from '../fit/index.js';
 import { type Message, readLogs, type SetAsideRow } from '../logs/index.js';
 import { maximumBaseline, noRule } from '../rule/index.js';
 import { causeMessages } from './causeMessages.js';
+import { studyEvidence } from './evidence.js';
 import { fitComponents } from './fitComponents.js';
 import { fitResults, markResults } from './fitResults.js';
 import { dayResults, type JudgedDays, judgeDays } from './judgeDays.js';
@@ -103,6 +104,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const { components, messages } = fitComponents(errors, weights, study);
   const models = components.map(({ basis }) => basis);
   const judged = judgeDays(errors, weights, read.visits, components, study);
+  const evidence = studyEvidence(errors, weights, components, study);
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
   const rules = study.tolerances.map((tolerance) => {
     const model = models.find(({ component }) => component === tolerance.component);
@@ -116,11 +118,13 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...(wrongFixes?.messages ?? []),
       ...messages,
       ...judged.flatMap((each) => each.messages),
+      ...evidence.messages,
       ...ruleMessages(rules.length),
     ],
     occupations: withSuspects(read.results.occupations, errors.length - used.length),
     ...fitResults(components, errors, wrongFixes, judged),
     ...dayResults(judged),
+    ...evidence.results,
     wrongFixes: wrongFixResults(errors, wrongFixes),
     lengthClasses: lengthClasses(used, read.visits, read.control, study.confidence),
     marks: markResults(used, components),

@@ -1,7 +1,8 @@
 import type { OccupationError, SetAsideOccupation } from '../errors/index.js';
 import { type Screening, screenWrongFixes, type WrongFixGrowth, wrongFixGrowth } from '../fit/index.js';
 import type { Message } from '../logs/index.js';
-import type { Results, WrongFixResult } from './results.js';
+import type { WrongFixResult } from './fitResultTypes.js';
+import type { Results } from './results.js';
 import type { Study } from './study.js';
 
 /** What a run knows of wrong fixes. */

@@ -1,7 +1,8 @@
 import { z } from 'zod';
-import { COLUMN_ROLES, CORRECTION_KINDS, ENCODINGS } from '../logs/index.js';
+import { COLUMN_ROLES, CORRECTION_KINDS } from '../logs/index.js';
 import { isTimeZone, parseIsoTime } from '../time/index.js';
 import { coordinateKeys, coordinates, heights } from './coordinateSettings.js';
+import { heightOf, layout, units } from './layoutSettings.js';
 
 /*
  * The study file as a schema. Descriptions become the help that editors show and the reference page, so each key says
@@ -16,21 +17,6 @@ const share = z.number().gt(0).lt(1);
 const columns = z
   .partialRecord(z.enum(COLUMN_ROLES), z.string().min(1))
   .describe('Role → header, where the file does not spell the role itself.');
-const lengthUnit = z.enum(['metre', 'international-foot', 'us-survey-foot']);
-const units = z
-  .union([
-    lengthUnit,
-    z.strictObject({
-      length: lengthUnit.optional(),
-      height: lengthUnit.optional(),
-      angle: z.enum(['degrees', 'dms']).optional(),
-    }),
-  ])
-  .describe(
-    'Unit of all lengths, or of plane, heights and angles apart; default that of the coordinates, degrees.',
-  );
-const heightOf = z.enum(['mark', 'antenna']).describe('What the heights are those of; default mark.');
-
 const controlFile = z.union([
   z.string().min(1),
   z.strictObject({
@@ -62,67 +48,6 @@ const marksFile = z.union([
       .optional(),
   }),
 ]);
-
-const valuesOutsideColumns = {
-  constants: z
-    .partialRecord(z.enum(COLUMN_ROLES), z.union([z.string(), z.number()]).transform(String))
-    .optional()
-    .describe('Role → value, where the file has no such column or the cell is blank.'),
-  fromFileName: z
-    .string()
-    .min(1)
-    .optional()
-    .describe('Regular expression whose named groups are roles, matched against the name of the file.'),
-};
-
-const delimitedLayout = z.strictObject({
-  kind: z.literal('delimited'),
-  delimiter: z
-    .string()
-    .min(1)
-    .optional()
-    .describe('`comma`, `semicolon`, `tab`, `pipe`, `blanks` or the character; without it the file decides.'),
-  decimal: z.string().min(1).optional().describe('`point`, `comma` or the character; default point.'),
-  header: z.boolean().optional().describe('Whether the first line names the columns; default true.'),
-  skipLines: z.number().int().gte(0).optional().describe('Lines at the top to pass over; default 0.'),
-  comment: z.string().min(1).optional().describe('Lines that begin with this are passed over; default `#`.'),
-  encoding: z.enum(ENCODINGS).optional().describe('Without it the first bytes decide.'),
-  columns: z
-    .partialRecord(z.enum(COLUMN_ROLES), z.union([z.string().min(1), z.number().int().gte(1)]))
-    .optional()
-    .describe('Role → header, or number of the column from 1.'),
-  units: units.optional(),
-  coordinates: coordinates.optional(),
-  heightOf: heightOf.optional(),
-  time: z
-    .strictObject({
-      format: z
-        .string()
-        .min(1)
-        .optional()
-        .describe('Tokens `yyyy MM dd HH hh mm ss SSS a`, `day-of-year` or `excel`; default ISO 8601.'),
-      zone: z
-        .union([z.string().min(1), z.number()])
-        .transform(String)
-        .optional()
-        .describe('IANA zone, `UTC` or an offset like "+02:00"; default the timeZone of the study.'),
-      scale: z.enum(['utc', 'gps']).optional().describe('`gps` takes off the leap seconds.'),
-    })
-    .optional(),
-  fixValues: z
-    .record(z.string(), z.enum(['fixed', 'float', 'other']))
-    .optional()
-    .describe('Text or number in the fix column → its meaning.'),
-  correctionValues: z
-    .record(z.string(), z.enum(CORRECTION_KINDS))
-    .optional()
-    .describe('Text in the corrections column → its meaning.'),
-  ...valuesOutsideColumns,
-});
-
-const nmeaLayout = z.strictObject({ kind: z.literal('nmea'), ...valuesOutsideColumns });
-
-const layout = z.discriminatedUnion('kind', [delimitedLayout, nmeaLayout]);
 
 const log = z.strictObject({
   files: z
@@ -226,6 +151,21 @@ export const studySchema = z.strictObject({
     .default({ gapSeconds: 60 }),
   tolerances: z.array(tolerance).default([]).describe('What clients demand; each becomes a rule.'),
   specSheet: specSheet.optional().describe('The spec sheet to compare with.'),
+  centringSigmaMm: z
+    .number()
+    .gte(0)
+    .default(0)
+    .describe(
+      'Centring of the rod, standard deviation of one axis, mm: taken out of the constant in quadrature.',
+    ),
+  terms: z
+    .array(z.enum(['height-difference', 'pdop', 'reported-sigma']))
+    .default([])
+    .describe('Further terms to estimate beside constant and ppm.'),
+  by: z
+    .array(z.enum(['crew', 'rover', 'base']))
+    .default([])
+    .describe('Whether these differ in constant and ppm.'),
   leaveOutDays: z
     .array(day)
     .default([])

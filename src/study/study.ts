@@ -1,5 +1,5 @@
 import type { ControlFile } from '../control/index.js';
-import type { Form, Reference } from '../fit/index.js';
+import type { Form, Reference, Term } from '../fit/index.js';
 import type { LogFile, Message } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 import type { HeightKind } from './coordinateChanges.js';
@@ -47,6 +47,10 @@ export interface Study {
   readonly screen: boolean;
   readonly tolerances: readonly Tolerance[];
   readonly specSheet: SpecSheet | null;
+  /** Standard deviation of centring the rod, one axis, mm. */
+  readonly centringSigmaMm: number;
+  readonly terms: readonly Term[];
+  readonly by: readonly ('crew' | 'rover' | 'base')[];
   readonly leaveOutDays: readonly string[];
   readonly seed: number;
 }

@@ -33,6 +33,9 @@ describe('a study file', () => {
       model: { form: 'root-sum-square', reference: 'auto', confidence: 0.95, screen: true },
       occupations: { gapSeconds: 60 },
       tolerances: [],
+      centringSigmaMm: 0,
+      terms: [],
+      by: [],
       leaveOutDays: [],
       seed: 1,
     });
@@ -65,7 +68,7 @@ describe('a key', () => {
     ['titel: x', ':5 [titel] The key "titel" is not known. Did you mean "title"? Correct or remove it.'],
     [
       'colour: x',
-      ':5 [colour] The key "colour" is not known. Known here: title, timeZone, coordinates, heights, marks, bases, logs, period, model, occupations, tolerances, specSheet, leaveOutDays, seed. Correct or remove it.',
+      ':5 [colour] The key "colour" is not known. Known here: title, timeZone, coordinates, heights, marks, bases, logs, period, model, occupations, tolerances, specSheet, centringSigmaMm, terms, by, leaveOutDays, seed. Correct or remove it.',
     ],
     ['4: x', /^:5 \[4\] The key "4" is not known\. Known here: /],
     [

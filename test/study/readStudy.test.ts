@@ -77,6 +77,9 @@ describe('readStudy', () => {
       screen: true,
       tolerances: [],
       specSheet: null,
+      centringSigmaMm: 0,
+      terms: [],
+      by: [],
       leaveOutDays: [],
       seed: 1,
     });

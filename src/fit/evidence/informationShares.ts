@@ -25,6 +25,8 @@ export interface InformationShares {
 const NEEDED = { mark: 'mark', day: 'day', direction: 'azimuthDeg', crew: 'crew' } as const;
 const SECTORS = ['north', 'north-east', 'east', 'south-east', 'south', 'south-west', 'west', 'north-west'];
 const LARGE = 0.5;
+/** … and so many times an even share: of two crews each has half. */
+const TIMES_EVEN = 1.5;
 
 /**
  * Shares of the information on the ppm, Σ w (x - x̄)² σ²'²/μ² of the group over that of all (x is L², or L in the
@@ -90,14 +92,22 @@ function informationOf(
   return v.map((value, i) => value * (x[i]! - s1 / s0) ** 2);
 }
 
+const MORE: Readonly<Record<InformationBy, string>> = {
+  mark: 'at other marks',
+  day: 'on other days',
+  direction: 'on other sides of the base',
+  crew: 'with other crews',
+};
+
 function shareNote(by: InformationBy, shares: readonly InformationShare[]): Message[] {
   const [largest] = shares;
-  if (largest === undefined || shares.length < 2 || largest.share <= LARGE) return [];
+  if (largest === undefined || shares.length < 2) return [];
+  if (largest.share <= Math.max(LARGE, TIMES_EVEN / shares.length)) return [];
   return [
     message(
       'warning',
       'ppm-rests-on-few',
-      `${by[0]!.toUpperCase()}${by.slice(1)} ${largest.group} alone carries ${Math.round(100 * largest.share)} % of what is known of the ppm. Take far shots on other ${by === 'direction' ? 'sides of the base' : `${by}s`} too.`,
+      `${by[0]!.toUpperCase()}${by.slice(1)} ${largest.group} alone carries ${Math.round(100 * largest.share)} % of what is known of the ppm. Take far shots ${MORE[by]} too.`,
     ),
   ];
 }
