@@ -51,7 +51,7 @@ export class PointNumbers {
         message(
           'info',
           'point-number-gaps',
-          `Expected point numbers that run on, came ${gaps === 1 ? 'one gap' : `${gaps} gaps`} with ${missing} numbers missing. If shots were deleted in the field, the errors look smaller than they are: keep both shots and note why one is bad.`,
+          `Expected point numbers that run on, came ${gaps === 1 ? 'one gap' : `${gaps} gaps`} with ${missing === 1 ? '1 number' : `${missing} numbers`} missing. If shots were deleted in the field, the errors look smaller than they are: keep both shots and note why one is bad.`,
           { file: key.split('\u0000', 1)[0]!, row: firstRow },
         ),
       );

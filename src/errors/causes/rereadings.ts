@@ -70,7 +70,7 @@ function best(
   const least = Math.min(...good.map(({ after }) => after));
   // Logs or marks, read the other way, may agree alike: what is far from the base is what was misread.
   const found = good
-    .filter(({ after }) => after < ALIKE * least)
+    .filter(({ after }) => after <= ALIKE * least)
     .sort((a, b) => fromBaseM(places, b.whose) - fromBaseM(places, a.whose) || a.after - b.after)[0];
   if (found === undefined) return [];
   const { whose, candidate, after } = found;
