@@ -48,7 +48,7 @@ const NAMES: Readonly<Record<CommonParameter['name'], string>> = {
 const UNITS: Readonly<Record<CommonParameter['unit'], string>> = {
   mm: 'mm',
   ppm: 'ppm',
-  arcsec: 'seconds of arc',
+  arcsec: '″',
   'mm/km': 'mm per km',
 };
 
@@ -67,7 +67,7 @@ function parameterTable(rows: readonly Row[], heights: Results['heights']): Html
           standardError === null ? NOT_GIVEN : standardError.toFixed(decimals(rest)),
       },
       { head: 'Unit', cell: ({ parameter }) => UNITS[parameter.unit], text: true },
-      { head: 'Marks to spare', cell: ({ parameter }) => count(parameter.degreesOfFreedom) },
+      { head: 'Degrees of freedom', cell: ({ parameter }) => count(parameter.degreesOfFreedom) },
       { head: 'Told from nothing (99 %)', cell: ({ parameter }) => toldWords(parameter), text: true },
     ],
   )}

@@ -39,7 +39,7 @@ ${residualWords(marks.some(({ mark }) => residuals.has(mark)))}${controlTable(re
 
 const residualWords = (any: boolean): Html | null =>
   any
-    ? html`<p class="small">A site mark is one to which the job was fitted: what stands there is a residual of that fit and no check. It
+    ? html`<p class="small">Residual: the job was fitted to this mark, so that what stands there is what that fit left over and no check. It
 takes part in the fits all the same and makes errors look smaller than they are.</p>
 `
     : null;
