@@ -77,7 +77,11 @@ export class EpochSorter {
     for (const watched of this.#watch.rest()) this.#sort(watched);
     const visits: Visit[] = [];
     const occupations: Occupation[] = [];
-    const ranks: NameRanks = { file: this.#fileNames.ranks(), crew: this.#crewNames.ranks() };
+    const ranks: NameRanks = {
+      file: this.#fileNames.ranks(),
+      crew: this.#crewNames.ranks(),
+      support: this.#supportNames.ranks(),
+    };
     for (const { key, days } of this.#store.bags()) {
       const context = this.#placer.context(key);
       const builder = new VisitBuilder({

@@ -10,6 +10,7 @@ export type Verdict =
 export interface NameRanks {
   readonly file: ArrayLike<number>;
   readonly crew: ArrayLike<number>;
+  readonly support: ArrayLike<number>;
 }
 
 /** What tells rows of the same time apart, before the place where they stand. */
@@ -32,6 +33,7 @@ export function timeOrder(records: Float64Array, ranks: NameRanks): Int32Array {
     }
     return (
       rank(ranks.crew, a + RECORD.crew) - rank(ranks.crew, b + RECORD.crew) ||
+      rank(ranks.support, a + RECORD.support) - rank(ranks.support, b + RECORD.support) ||
       rank(ranks.file, a + RECORD.file) - rank(ranks.file, b + RECORD.file) ||
       records[a + RECORD.row]! - records[b + RECORD.row]!
     );

@@ -2,14 +2,19 @@
 export class Names {
   readonly list: string[] = [];
   readonly #indices = new Map<string, number>();
+  #last = '';
+  #lastIndex = -1;
 
   index(name: string): number {
+    // Most rows name what the row before names.
+    if (name === this.#last && this.#lastIndex >= 0) return this.#lastIndex;
     let index = this.#indices.get(name);
     if (index === undefined) {
       index = this.list.length;
       this.list.push(name);
       this.#indices.set(name, index);
     }
+    [this.#last, this.#lastIndex] = [name, index];
     return index;
   }
 

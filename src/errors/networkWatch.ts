@@ -13,30 +13,35 @@ interface Seen {
   readonly places: SpreadPlaces;
 }
 
+/** What the row before said. */
+interface Latest {
+  readonly extras: PositionExtras | null;
+  readonly rover: string;
+  readonly base: string;
+  readonly day: string;
+}
+
 /**
  * Tells corrections of a network from those of a base: within a day the station number, or the base coordinates that
  * the log gives, keep changing with the rover. What is found does not depend on the order of rows.
  */
 export class NetworkWatch {
   readonly #seen = new Map<string, Seen>();
-  #lastKey = '';
-  #last: Seen | null = null;
-  #lastExtras: PositionExtras | null = null;
+  #last: Latest = { extras: null, rover: '', base: '', day: '' };
 
   /** Some rover's positions on some day are from a network. */
   any = false;
 
   see({ extras, rover }: Position, base: string, day: string): void {
     if (extras === null) return;
+    const before = this.#last;
+    const same = rover === before.rover && base === before.base && day === before.day;
+    if (same && extras === before.extras) return;
+    this.#last = { extras, rover, base, day };
     const key = keyOf(rover, base, day);
-    if (key === this.#lastKey && extras === this.#lastExtras) return;
-    if (key !== this.#lastKey || this.#last === null) {
-      this.#lastKey = key;
-      this.#last = this.#seen.get(key) ?? { stations: new Set(), places: new SpreadPlaces() };
-      this.#seen.set(key, this.#last);
-    }
-    this.#lastExtras = extras;
-    const { stations, places } = this.#last;
+    const seen = this.#seen.get(key) ?? { stations: new Set(), places: new SpreadPlaces() };
+    this.#seen.set(key, seen);
+    const { stations, places } = seen;
     if (extras.station !== '' && stations.size < MANY) stations.add(extras.station);
     if (!Number.isNaN(extras.baseLatitudeDeg)) places.add(fieldPlace(extras));
     this.any ||= stations.size >= MANY || places.spread;

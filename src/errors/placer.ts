@@ -114,6 +114,7 @@ export class Placer {
       sameStay(last.position, position) &&
       this.#dayOfPosition(position, last.base) === last.day;
     if (same) {
+      if (position.extras === null) return last;
       const moved = notSingleBase(position, last.markFromBaseM ?? baseDistanceM(position, last.baseAt));
       return moved === null ? last : { reason: 'not-single-base', detail: moved };
     }

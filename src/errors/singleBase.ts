@@ -16,7 +16,8 @@ const KIND_WORDS: Readonly<Record<Exclude<Corrections, 'single-base'>, string>> 
  * have another error model, in which the distance to a base is not what counts.
  * @param markFromBaseM distance of the mark from the base of the bases file; NaN when the mark is not known in plan
  */
-export function notSingleBase({ extras, ...position }: Position, markFromBaseM: number): string | null {
+export function notSingleBase(position: Position, markFromBaseM: number): string | null {
+  const { extras, latitudeDeg, longitudeDeg } = position;
   if (extras === null) return null;
   const { corrections } = extras;
   if (corrections !== '' && corrections !== 'single-base') {
@@ -27,8 +28,11 @@ export function notSingleBase({ extras, ...position }: Position, markFromBaseM: 
   }
   // A mark beside the base is measured from beside the base.
   if (markFromBaseM <= VIRTUAL_M) return null;
-  if (Number.isNaN(extras.baseLatitudeDeg) || Number.isNaN(position.latitudeDeg)) return null;
-  const apartM = distanceM(fieldPlace(extras), geodeticToGeocentric({ ...position, heightM: 0 }));
+  if (Number.isNaN(extras.baseLatitudeDeg) || Number.isNaN(latitudeDeg)) return null;
+  const apartM = distanceM(
+    fieldPlace(extras),
+    geodeticToGeocentric({ latitudeDeg, longitudeDeg, heightM: 0 }),
+  );
   return apartM < VIRTUAL_M
     ? `the base coordinates in the log are ${apartM.toFixed(0)} m from the rover: a virtual base`
     : null;

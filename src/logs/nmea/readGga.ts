@@ -147,11 +147,18 @@ function readPlace(fields: GgaFields, changes: CoordinateChanges): Place | Refus
   }
   try {
     const stated = blank && !asItStands ? changes.separation : undefined;
-    const place = { latitudeDeg, longitudeDeg, heightM: orthometricM };
-    const separationM = stated === undefined ? given : stated(place);
-    const written = { ...place, heightM: orthometricM + separationM };
+    const separationM =
+      stated === undefined ? given : stated({ latitudeDeg, longitudeDeg, heightM: orthometricM });
+    const written = { latitudeDeg, longitudeDeg, heightM: orthometricM + separationM };
     toGeodetic(latitudeDeg, longitudeDeg, written.heightM);
-    return { kind: 'place', ...changedPlace(written, separationM, changes, WGS84) };
+    const place = changedPlace(written, separationM, changes, WGS84);
+    // Written out: this runs for every sentence, and spreading objects takes long.
+    return {
+      kind: 'place',
+      latitudeDeg: place.latitudeDeg,
+      longitudeDeg: place.longitudeDeg,
+      heightM: place.heightM,
+    };
   } catch (error) {
     if (!(error instanceof CoordinateFault)) throw error;
     return unreadable('height', error.message);
