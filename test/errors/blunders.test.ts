@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { type CampaignOptions, simulateLog } from '../../src/campaign/index.js';
 import type { Control } from '../../src/control/index.js';
@@ -192,9 +193,14 @@ describe('blunders', () => {
     },
   );
 
-  it('are none in the demo study', async () => {
+  it('are in the demo study exactly those that were put in (datasets-demo/truth.json)', async () => {
     const { results } = await readStudyErrors(await readStudy(`${REPOSITORY}/datasets-demo/study.yaml`));
-    expect(results.blunders).toEqual([]);
+    const truth = JSON.parse(readFileSync(`${REPOSITORY}/datasets-demo/truth.json`, 'utf8')) as {
+      blunders: readonly { day: string; writtenAs: string; rover: string }[];
+    };
+    expect(results.blunders.map(({ day, mark, rover }) => ({ day, mark, rover }))).toEqual(
+      truth.blunders.map(({ day, writtenAs, rover }) => ({ day, mark: writtenAs, rover })),
+    );
     expect(results.commonCauses.causes).toEqual([]);
   });
 });

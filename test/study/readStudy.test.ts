@@ -51,7 +51,7 @@ describe('readStudy', () => {
       },
       siteMarks: [],
       logFrames: [],
-      controlTransformed: false,
+      broughtToOneFrame: false,
       constantSeparation: false,
       namePattern: null,
       aliases: null,
