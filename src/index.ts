@@ -321,17 +321,7 @@ export {
 } from './logs/index.js';
 export * from './notebook/index.js';
 export { reportHtml, summaryText } from './report/index.js';
-export {
-  longestSupportedKm,
-  maximumBaseline,
-  type Rule,
-  type RuleConditions,
-  type SpecSheet,
-  specSheetSigmaMm,
-  type Tolerance,
-  toleranceFactor,
-  toleranceFactorAt,
-} from './rule/index.js';
+export * from './rule/index.js';
 export {
   type Interval,
   LENGTH_EDGES_KM,

@@ -28,6 +28,7 @@ export {
   judgeDegradedDays,
 } from './explainDay.js';
 export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
+export { type HourClasses, hourClasses } from './hourClasses.js';
 export type { HourHarmonics } from './hourHarmonics.js';
 export { type ModeratedDay, moderatedDays, moderatedDaysOf } from './moderatedVariance.js';
 export type { OffsetTest } from './setupOffsets.js';

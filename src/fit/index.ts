@@ -79,6 +79,7 @@ export type { SetupOffset, SetupSeparation } from './reference/relative.js';
 export type { MarkDay, Repeatability } from './reference/repeatability.js';
 export type { ScaleTrend } from './reference/scaleTrend.js';
 export { type SetupOffsets, setupOffsets } from './reference/setupOffsets.js';
+export { azimuthSpread } from './reference/visits.js';
 export { type MarkTest, type TestMarksOptions, testMarks } from './reference/testMarks.js';
 export { scoreLimits } from './scoreInterval.js';
 export type { FormSolution, SquaredErrors } from './scoring.js';

@@ -74,7 +74,9 @@ export function ruleParts(
       body: `${positions(rule, heights)} cannot be promised: ${reason}.`,
     };
   }
-  const body = `${positions(rule, heights)}, with ${percent(rule.confidence)} confidence over all days together.`;
+  const when =
+    rule.method === 'pooled' ? 'over all days together' : `on at least ${percent(rule.dayShare)} of days`;
+  const body = `${positions(rule, heights)}, with ${percent(rule.confidence)} confidence ${when}.`;
   return {
     head: `Up to ${kmDown(limit)}\u00a0km from the base`,
     body: reason === null ? body : `${body} ${capital(reason)}.`,

@@ -1,4 +1,12 @@
-export { lengthWithin, maximumBaseline, noRule, type Rule, type RuleConditions } from './maximumBaseline.js';
+export { reviewBy, type Surroundings } from './conditions.js';
+export { type DayBound, daysNeeded, goodDayShareLimit } from './dayBound.js';
+export { crowdedDaysKept, type HeightAllowance, type RuleGround, type RuleOptions } from './ground.js';
+export { type GroupRule, type GroupRuleOptions, ruleByHour, ruleBySeason } from './groupedRules.js';
+export { heightAllowance } from './heightAllowance.js';
+export { lengthWithin, maximumBaseline, noRule, ruleFinder } from './maximumBaseline.js';
+export { type PositionPromise, type PromiseDemand, promiseAtKm, promiser } from './promise.js';
+export type { Rule, RuleConditions, SeenRange } from './rule.js';
+export { type RuleTableOptions, type RuleTableRow, ruleTable } from './ruleTable.js';
 export { type SpecSheet, specSheetSigmaMm } from './specSheet.js';
 export { longestSupportedKm } from './supportedLength.js';
-export { type Tolerance, toleranceFactor, toleranceFactorAt } from './tolerance.js';
+export { checkTolerance, type Tolerance, toleranceFactor, toleranceFactorAt } from './tolerance.js';

@@ -1,4 +1,5 @@
 import { type Component, type ErrorModel, fittedSigmaMm } from '../fit/index.js';
+import { inputError } from '../logs/index.js';
 import { normalQuantile, radialQuantile } from '../stats/index.js';
 
 /** What a client demands: on `dayShare` of the days, `share` of that day's positions within `limitMm`. */
@@ -36,4 +37,23 @@ export function toleranceFactorAt(model: ErrorModel, share: number, baselineKm: 
   return radialMm > 0
     ? radialQuantile(east, north, share) / radialMm
     : toleranceFactor(model.component, share, true);
+}
+
+/** @throws InputError for a tolerance that cannot be, or of another component than the model */
+export function checkTolerance(tolerance: Tolerance, component: Component): void {
+  const fault = (what: string, expected: string, came: unknown): Error =>
+    inputError(
+      'bad-tolerance',
+      `Expected ${expected} as ${what} of a tolerance, came ${JSON.stringify(came)}. Correct the tolerance.`,
+    );
+  if (tolerance.component !== component) {
+    throw fault('component', `"${component}", that of the model,`, tolerance.component);
+  }
+  if (!(tolerance.limitMm > 0 && Number.isFinite(tolerance.limitMm))) {
+    throw fault('limitMm', 'a number above 0', tolerance.limitMm);
+  }
+  for (const key of ['share', 'dayShare', 'confidence'] as const) {
+    const value = tolerance[key];
+    if (!(value > 0 && value < 1)) throw fault(key, 'a number between 0 and 1', value);
+  }
 }

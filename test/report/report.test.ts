@@ -11,7 +11,7 @@ import {
   summaryText,
 } from '../../src/report/index.js';
 import { shownFits } from '../../src/report/words.js';
-import type { Rule } from '../../src/rule/index.js';
+import { noRule, type Rule } from '../../src/rule/index.js';
 import { type Results, readStudy, runStudy, type StudyRun } from '../../src/study/index.js';
 import { REPOSITORY } from '../cli/ppmwise.js';
 
@@ -118,19 +118,25 @@ describe('messages', () => {
 });
 
 describe('a rule in words', () => {
-  const rule = (more: Partial<Rule>): Rule => ({
+  const tolerance = {
     component: 'horizontal',
     limitMm: 25,
     share: 0.95,
     dayShare: 0.9,
     confidence: 0.95,
+  } as const;
+  const rule = (more: Partial<Rule>): Rule => ({
+    ...tolerance,
     method: 'pooled',
     maximumBaselineKm: 7.96,
     bestEstimateKm: 9,
     allDaysKm: 7.96,
     longestSupportedKm: 30,
+    wrongFixShare: null,
+    dayBound: null,
     reason: null,
-    conditions: { occupations: 1, days: 1, from: '', to: '', marks: [], bases: [] },
+    remarks: [],
+    conditions: noRule([], tolerance, 'no errors').conditions,
     ...more,
   });
   it('rounds the distance down', () => {
@@ -139,6 +145,11 @@ describe('a rule in words', () => {
     );
     expect(kmDown(0.3 * 3)).toBe('0.9');
     expect(kmDown(12)).toBe('12.0');
+  });
+  it('says on how many days it holds where that was judged', () => {
+    expect(ruleSentence(rule({ method: 'day-model' }))).toBe(
+      'Up to 7.9\u00a0km from the base: 95\u00a0% of horizontal positions within 25\u00a0mm, with 95\u00a0% confidence on at least 90\u00a0% of days.',
+    );
   });
   it('gives the reason when there is none', () => {
     expect(ruleSentence(rule({ maximumBaselineKm: null, reason: '9 days are too few' }))).toBe(
