@@ -58,12 +58,22 @@ const FARTHEST = 3;
  * likelihoods of the days computed anew at each. A constant of 0 is the only node there is.
  */
 export function dayModelNodes(posterior: DayPosterior): DayModelNode[] {
-  const { A, B, standardErrorA, cells, effectiveShare, comboWeights } = posterior;
-  if (A <= 0) return [{ A, weight: 1, comboWeights }];
-  return NODES.map(([z, weight]) => {
-    if (z === 0) return { A, weight, comboWeights };
-    const node = A * Math.exp(Math.max(-FARTHEST, Math.min(FARTHEST, (z * standardErrorA) / A)));
-    const likelihood = relativeLikelihood(dayLogLikelihood(cells, node, B, effectiveShare));
-    return { A: node, weight, comboWeights: comboFit(likelihood).weights };
+  const { B, cells, effectiveShare, comboWeights } = posterior;
+  return constantNodes(posterior).map(({ A, weight }) => {
+    if (A === posterior.A) return { A, weight, comboWeights };
+    const likelihood = relativeLikelihood(dayLogLikelihood(cells, A, B, effectiveShare));
+    return { A, weight, comboWeights: comboFit(likelihood).weights };
   });
+}
+
+/** The seven values of the constant with their weights; a constant of 0 alone. */
+export function constantNodes({
+  A,
+  standardErrorA,
+}: DayPosterior): { readonly A: number; readonly weight: number }[] {
+  if (A <= 0) return [{ A, weight: 1 }];
+  return NODES.map(([z, weight]) => ({
+    A: z === 0 ? A : A * Math.exp(Math.max(-FARTHEST, Math.min(FARTHEST, (z * standardErrorA) / A))),
+    weight,
+  }));
 }

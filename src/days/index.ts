@@ -31,6 +31,7 @@ export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
 export { type HourClasses, hourClasses } from './hourClasses.js';
 export type { HourHarmonics } from './hourHarmonics.js';
 export { type ModeratedDay, moderatedDays, moderatedDaysOf } from './moderatedVariance.js';
+export { nodesWithoutDay } from './nodesWithoutDay.js';
 export type { OffsetTest } from './setupOffsets.js';
 export {
   type HourClass,

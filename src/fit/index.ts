@@ -45,6 +45,7 @@ export { type ReshotOptions, type Reshots, reshots } from './evidence/reshots.js
 export { fitErrorModel } from './fitErrorModel.js';
 export {
   type Axis,
+  axesOf,
   BASIS,
   COMPONENT_COLUMNS,
   type Component,
@@ -79,8 +80,8 @@ export type { SetupOffset, SetupSeparation } from './reference/relative.js';
 export type { MarkDay, Repeatability } from './reference/repeatability.js';
 export type { ScaleTrend } from './reference/scaleTrend.js';
 export { type SetupOffsets, setupOffsets } from './reference/setupOffsets.js';
-export { azimuthSpread } from './reference/visits.js';
 export { type MarkTest, type TestMarksOptions, testMarks } from './reference/testMarks.js';
+export { azimuthSpread } from './reference/visits.js';
 export { scoreLimits } from './scoreInterval.js';
 export type { FormSolution, SquaredErrors } from './scoring.js';
 export {

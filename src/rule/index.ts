@@ -1,3 +1,4 @@
+export * from './backtest/index.js';
 export { reviewBy, type Surroundings } from './conditions.js';
 export { type DayBound, daysNeeded, goodDayShareLimit } from './dayBound.js';
 export { crowdedDaysKept, type HeightAllowance, type RuleGround, type RuleOptions } from './ground.js';

@@ -43,11 +43,19 @@ export function prepareGround(
   const posterior = model.form === 'root-sum-square' ? (dayModel?.posterior ?? null) : null;
   const days = posterior && dayNodes(posterior);
   const added = addedVariance(model.component, options);
+  return preparedDays({ model, ground, shares: wrongFixShares(wrongFixes ?? null), added }, days);
+}
+
+/** The same ground with other nodes of the days. */
+export function preparedDays(
+  { model, ground, shares, added }: Pick<PreparedGround, 'model' | 'ground' | 'shares' | 'added'>,
+  days: DayNodes | null,
+): PreparedGround {
   const remembered = new Map<number, DayLimits>();
   return {
     model,
     ground,
-    shares: wrongFixShares(wrongFixes ?? null),
+    shares,
     added,
     days,
     limits: (dayShare) => {
