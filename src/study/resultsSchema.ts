@@ -5,6 +5,7 @@ import { dailyFactor, dayModel, degradedDay, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
 import type { Results } from './results.js';
+import { rule } from './ruleSchema.js';
 import { component, count, day, form, interval, nullable } from './schemaParts.js';
 
 const message = z.strictObject({
@@ -26,45 +27,6 @@ const lengthClass = z.strictObject({
   horizontalRmsMm: interval.nullable(),
   verticalRmsMm: interval.nullable(),
   tooFew: z.boolean(),
-});
-
-const seenRange = z.strictObject({ from: z.number(), to: z.number() });
-
-const rule = z.strictObject({
-  component,
-  limitMm: z.number(),
-  share: z.number(),
-  dayShare: z.number(),
-  confidence: z.number(),
-  method: z.enum(['day-model', 'pooled']),
-  maximumBaselineKm: nullable.describe('Lower confidence limit; 0 or null with a reason.'),
-  bestEstimateKm: nullable,
-  allDaysKm: nullable,
-  longestSupportedKm: nullable,
-  wrongFixShare: nullable.describe('Share of wrong fixes reckoned with at the maximum baseline.'),
-  dayBound: z
-    .strictObject({ days: count, daysNeeded: count, baselineKm: nullable, sentence: z.string() })
-    .nullable(),
-  reason: z.string().nullable(),
-  remarks: z.array(z.string()),
-  conditions: z.strictObject({
-    occupations: count,
-    days: count,
-    from: day,
-    to: day,
-    marks: z.array(z.string()),
-    bases: z.array(z.string()),
-    epochs: seenRange.nullable(),
-    solarHours: seenRange.nullable(),
-    supports: z.array(z.string()),
-    tiltDeg: seenRange.nullable(),
-    skies: z.array(z.string()),
-    visitsWithFix: nullable,
-    f107: seenRange.nullable(),
-    baseSigmaMm: nullable,
-    heightDifferenceM: nullable,
-    reviewBy: day.nullable(),
-  }),
 });
 
 const constantAndPpm = z.strictObject({ constantMm: z.number(), ppm: z.number() });
