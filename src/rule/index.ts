@@ -1,4 +1,5 @@
 export * from './backtest/index.js';
+export * from './checkshot/index.js';
 export { reviewBy, type Surroundings } from './conditions.js';
 export { type DayBound, daysNeeded, goodDayShareLimit } from './dayBound.js';
 export { crowdedDaysKept, type HeightAllowance, type RuleGround, type RuleOptions } from './ground.js';
@@ -10,4 +11,11 @@ export type { Rule, RuleConditions, SeenRange } from './rule.js';
 export { type RuleTableOptions, type RuleTableRow, ruleTable } from './ruleTable.js';
 export { type SpecSheet, specSheetSigmaMm } from './specSheet.js';
 export { longestSupportedKm } from './supportedLength.js';
+export {
+  type SpecSheetRatio,
+  type SpecSheetTest,
+  type SpecSheetTestOptions,
+  type SpecSheetVerdict,
+  testSpecSheet,
+} from './testSpecSheet.js';
 export { checkTolerance, type Tolerance, toleranceFactor, toleranceFactorAt } from './tolerance.js';
