@@ -1,0 +1,9 @@
+export type { DayStatistic } from './dayStatistic.js';
+export { type WatchBasis, type WatchStart, watchBasis } from './watchBasis.js';
+export {
+  type Watch,
+  type WatchAlarm,
+  type WatchedDay,
+  type WatchOptions,
+  watchDays,
+} from './watchDays.js';
