@@ -1,7 +1,7 @@
 import type { CommonCauses, StaticShots } from '../errors/index.js';
 import type { GroupComparison, SetupOffsets } from '../fit/index.js';
 import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
-import type { Rule, SpecSheet } from '../rule/index.js';
+import type { CheckShotLimits, Rule, RuleTableRow, SpecSheet, SpecSheetTest } from '../rule/index.js';
 import type { Interval } from '../split/index.js';
 import type { ControlMark } from './controlMarks.js';
 import type {
@@ -18,6 +18,7 @@ import type {
   MarkResult,
   WrongFixResult,
 } from './fitResultTypes.js';
+import type { BackTestResult, HourRule, SeasonRule, WatchResult } from './ruleResultTypes.js';
 
 /** Measured spread by class of baseline length. Shown, never fitted. */
 export interface LengthClass {
@@ -106,5 +107,13 @@ export interface Results {
   readonly lengthClasses: readonly LengthClass[];
   readonly marks: readonly MarkResult[];
   readonly rules: readonly Rule[];
+  readonly ruleTable: readonly RuleTableRow[];
+  readonly rulesByHour: readonly HourRule[];
+  readonly rulesBySeason: readonly SeasonRule[];
+  readonly backTest: readonly BackTestResult[];
+  readonly specSheetTest: readonly SpecSheetTest[];
+  readonly checkShotLimits: readonly CheckShotLimits[];
+  readonly watch: readonly WatchResult[];
+  /** The spec sheet as stated. */
   readonly specSheet: SpecSheet | null;
 }

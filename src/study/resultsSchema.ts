@@ -1,12 +1,13 @@
 import { z } from 'zod';
 import { OCCUPATION_REASONS, ROW_REASONS } from '../logs/index.js';
+import { backTest, watch } from './backTestSchemas.js';
 import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
 import { dailyFactor, dayModel, degradedDay, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
 import type { Results } from './results.js';
-import { rule } from './ruleSchema.js';
-import { component, count, day, form, interval, nullable } from './schemaParts.js';
+import { checkShotLimits, hourRule, rule, ruleTableRow, seasonRule, specSheetTest } from './ruleSchema.js';
+import { count, day, form, interval, nullable } from './schemaParts.js';
 
 const message = z.strictObject({
   code: z.string().describe('Stable name of the kind of message.'),
@@ -80,6 +81,13 @@ export const resultsSchema = z.strictObject({
   lengthClasses: z.array(lengthClass),
   marks: z.array(mark),
   rules: z.array(rule),
+  ruleTable: z.array(ruleTableRow),
+  rulesByHour: z.array(hourRule),
+  rulesBySeason: z.array(seasonRule),
+  backTest: z.array(backTest),
+  specSheetTest: z.array(specSheetTest),
+  checkShotLimits: z.array(checkShotLimits),
+  watch: z.array(watch),
   specSheet: z
     .strictObject({
       horizontal: constantAndPpm,

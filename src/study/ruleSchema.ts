@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { component, count, day, nullable } from './schemaParts.js';
+import { component, count, day, form, nullable } from './schemaParts.js';
 
 const seenRange = z.strictObject({ from: z.number(), to: z.number() });
 
@@ -39,4 +39,68 @@ export const rule = z.strictObject({
     heightDifferenceM: nullable,
     reviewBy: day.nullable(),
   }),
+});
+
+const tableKeys = {
+  component,
+  limitMm: z.number(),
+  share: z.number(),
+  maximumBaselineKm: nullable,
+  bestEstimateKm: nullable,
+  reason: z.string().nullable(),
+};
+
+export const ruleTableRow = z.strictObject({
+  ...tableKeys,
+  dayShare: z.number(),
+  confidence: z.number(),
+  method: z.enum(['day-model', 'pooled']),
+  allDaysKm: nullable,
+});
+
+export const hourRule = z.strictObject({ ...tableKeys, hours: z.string().describe('Solar time.') });
+export const seasonRule = z.strictObject({ ...tableKeys, month: z.string() });
+
+const reference = z.enum(['absolute', 'repeatability', 'relative']);
+
+export const specSheetTest = z.strictObject({
+  component,
+  reference,
+  constantMm: z.number(),
+  ppm: z.number(),
+  form,
+  ratios: z.array(
+    z.strictObject({
+      baselineKm: z.number(),
+      ratio: z.number().describe("The own spread over the sheet's."),
+      low: z.number(),
+      high: z.number(),
+      verdict: z.enum(['worse', 'better', 'not worse by more than 10 %', 'not shown to differ']),
+    }),
+  ),
+  verdict: z.enum([
+    'worse',
+    'better',
+    'not worse by more than 10 %',
+    'not shown to differ',
+    'cannot be judged',
+  ]),
+  sentence: z.string(),
+});
+
+export const checkShotLimits = z.strictObject({
+  component,
+  alarmShare: z.number(),
+  falseAlarmsPerYear: z.number(),
+  checksPerYear: z.number(),
+  limits: z.array(
+    z.strictObject({
+      baselineKm: z.number(),
+      knownMarkMm: z.number(),
+      otherDayMm: z.number(),
+      twoBasesMm: z.number(),
+    }),
+  ),
+  reason: z.string().nullable(),
+  sentence: z.string(),
 });

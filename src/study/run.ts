@@ -9,8 +9,8 @@ import {
   type Visit,
 } from '../errors/index.js';
 import type { ErrorModel } from '../fit/index.js';
-import { type Message, readLogs, type SetAsideRow } from '../logs/index.js';
-import { maximumBaseline, noRule } from '../rule/index.js';
+import { type Message, message, readLogs, type SetAsideRow } from '../logs/index.js';
+import type { Rule } from '../rule/index.js';
 import { causeMessages } from './causeMessages.js';
 import { studyEvidence } from './evidence.js';
 import { fitComponents } from './fitComponents.js';
@@ -19,11 +19,13 @@ import { dayResults, type JudgedDays, judgeDays } from './judgeDays.js';
 import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
 import { loadControl } from './loadControl.js';
+import { makeRules } from './makeRules.js';
 import { readAs } from './readAs.js';
 import type { Results } from './results.js';
 import { screenStudy, suspects, withSuspects, wrongFixResults } from './screenStudy.js';
 import type { Study } from './study.js';
 import { summarizeRun } from './summarizeRun.js';
+import { testRules } from './testRules.js';
 
 export interface RunOptions {
   /** Is given every set-aside row as soon as it is known. */
@@ -106,11 +108,17 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const judged = judgeDays(errors, weights, read.visits, components, study);
   const evidence = studyEvidence(errors, weights, components, study);
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
-  const rules = study.tolerances.map((tolerance) => {
-    const model = models.find(({ component }) => component === tolerance.component);
-    if (model !== undefined) return maximumBaseline(used, model, tolerance);
-    return noRule(used, tolerance, `no fit of the ${tolerance.component} component was possible`);
-  });
+  const ground = {
+    errors,
+    used,
+    visits: read.visits,
+    control: read.control,
+    models,
+    days: judged,
+    wrongFixes,
+  };
+  const made = makeRules(ground, study);
+  const tested = testRules(ground, study);
   const results: Results = {
     ...read.results,
     messages: [
@@ -119,7 +127,8 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...messages,
       ...judged.flatMap((each) => each.messages),
       ...evidence.messages,
-      ...ruleMessages(rules.length),
+      ...tested.messages,
+      ...ruleMessages(made.rules),
     ],
     occupations: withSuspects(read.results.occupations, errors.length - used.length),
     ...fitResults(components, errors, wrongFixes, judged),
@@ -128,7 +137,8 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     wrongFixes: wrongFixResults(errors, wrongFixes),
     lengthClasses: lengthClasses(used, read.visits, read.control, study.confidence),
     marks: markResults(used, components),
-    rules,
+    ...made,
+    backTest: tested.backTest,
   };
   const setAside = [...read.setAside, ...suspects(errors, wrongFixes)];
   return {
@@ -141,16 +151,14 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   };
 }
 
-const ruleMessages = (rules: number): Message[] =>
-  rules === 0
+/** What must be said of rules that are not made for single days. */
+const ruleMessages = (rules: readonly Rule[]): Message[] =>
+  rules.every(({ method, maximumBaselineKm }) => method === 'day-model' || maximumBaselineKm === null)
     ? []
     : [
-        {
-          code: 'rule-over-all-days',
-          severity: 'info',
-          text: 'The rules hold over all days together. How many single days meet them is not judged here: on a worse day fewer positions hold the tolerance.',
-          file: null,
-          row: null,
-          column: null,
-        },
+        message(
+          'info',
+          'rule-over-all-days',
+          'Rules without a day model hold over all days together. How many single days meet them is not judged: on a worse day fewer positions hold the tolerance.',
+        ),
       ];

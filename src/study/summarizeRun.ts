@@ -80,6 +80,13 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     lengthClasses: [],
     marks: [],
     rules: [],
+    ruleTable: [],
+    rulesByHour: [],
+    rulesBySeason: [],
+    backTest: [],
+    specSheetTest: [],
+    checkShotLimits: [],
+    watch: [],
     specSheet: study.specSheet,
   };
 }

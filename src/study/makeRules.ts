@@ -1,0 +1,122 @@
+import type { Control } from '../control/index.js';
+import type { OccupationError, Visit } from '../errors/index.js';
+import type { Component, ErrorModel } from '../fit/index.js';
+import {
+  checkShotLimits,
+  crowdedDaysKept,
+  noRule,
+  type Rule,
+  type RuleOptions,
+  ruleByHour,
+  ruleBySeason,
+  ruleFinder,
+  ruleTable,
+  type Tolerance,
+  testSpecSheet,
+  watchBasis,
+} from '../rule/index.js';
+import type { JudgedDays } from './judgeDays.js';
+import type { Results } from './results.js';
+import type { PartRule } from './ruleResultTypes.js';
+import type { WrongFixes } from './screenStudy.js';
+import type { Study } from './study.js';
+
+/** What rules are made from. */
+export interface RuleInput {
+  /** All errors that were fitted, suspected wrong fixes too, and those of them that count. */
+  readonly errors: readonly OccupationError[];
+  readonly used: readonly OccupationError[];
+  readonly visits: readonly Visit[];
+  readonly control: Control;
+  readonly models: readonly ErrorModel[];
+  readonly days: readonly JudgedDays[];
+  readonly wrongFixes: WrongFixes | null;
+}
+
+/**
+ * The rules that the study asks for, and what else follows from the same models: a table of rules, rules of single hours
+ * and months, the comparison with the spec sheet, limits of check shots, and what new days can be watched by.
+ */
+export function makeRules(
+  input: RuleInput,
+  { tolerances, specSheet }: Study,
+): Pick<
+  Results,
+  'rules' | 'ruleTable' | 'rulesByHour' | 'rulesBySeason' | 'specSheetTest' | 'checkShotLimits' | 'watch'
+> {
+  const { used, models, wrongFixes } = input;
+  const options = new Map(models.map((model) => [model.component, ruleOptions(model, input)]));
+  const finders = new Map(
+    models.map((model) => [model.component, ruleFinder(used, model, options.get(model.component)!)]),
+  );
+  const dayModel = (component: Component) => options.get(component)!.dayModel ?? null;
+  const usedWeights = wrongFixes?.weights?.filter((weight) => weight >= 0.5);
+  const grouped = (make: typeof ruleByHour): (PartRule & { readonly group: string })[] =>
+    tolerances.flatMap((tolerance) => {
+      const model = models.find(({ component }) => component === tolerance.component);
+      if (model === undefined) return [];
+      const { dayModel: _, crowdedDaysKept: __, ...rest } = options.get(model.component)!;
+      return make(used, model, tolerance, { ...rest, weights: usedWeights }).map(({ group, rule }) => ({
+        group,
+        ...short(rule),
+      }));
+    });
+  return {
+    rules: tolerances.map(
+      (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
+    ),
+    ruleTable: models.flatMap((model) => ruleTable(used, model, options.get(model.component)!)),
+    rulesByHour: grouped(ruleByHour).map(({ group, ...rule }) => ({ hours: group, ...rule })),
+    rulesBySeason: grouped(ruleBySeason).map(({ group, ...rule }) => ({ month: group, ...rule })),
+    specSheetTest:
+      specSheet === null
+        ? []
+        : models.map((model) =>
+            testSpecSheet(used, model, specSheet, { dayModel: dayModel(model.component) }),
+          ),
+    checkShotLimits: models.map((model) => checkShotLimits(model, dayModel(model.component))),
+    watch: models.map((model) => ({
+      component: model.component,
+      ...watchBasis(model, dayModel(model.component)),
+    })),
+  };
+}
+
+/** What a rule of some hours or months keeps. */
+const short = ({ component, limitMm, share, maximumBaselineKm, bestEstimateKm, reason }: Rule): PartRule => ({
+  component,
+  limitMm,
+  share,
+  maximumBaselineKm,
+  bestEstimateKm,
+  reason,
+});
+
+const withoutFit = (used: readonly OccupationError[], tolerance: Tolerance): Rule =>
+  noRule(used, tolerance, `no fit of the ${tolerance.component} component was possible`);
+
+function ruleOptions(model: ErrorModel, input: RuleInput): RuleOptions {
+  const { errors, visits, wrongFixes, days } = input;
+  const judged = days.find(({ component }) => component === model.component);
+  const screening = wrongFixes?.weights ? wrongFixes.screening : null;
+  return {
+    dayModel: judged?.model.posterior ? judged.model : null,
+    wrongFixes: wrongFixes?.growth ?? null,
+    crowdedDaysKept: screening === null ? null : crowdedDaysKept(errors, model, screening),
+    visits,
+    baseSigmaMm: baseSigma(model.component, input),
+  };
+}
+
+/** The largest stated standard deviation among the bases that were used; undefined where none is stated. */
+export function baseSigma(
+  component: Component,
+  { used, control }: Pick<RuleInput, 'used' | 'control'>,
+): number | undefined {
+  const names = new Set(used.map(({ base }) => base));
+  const stated = [...names]
+    .map((name) => control.bases.get(name)!)
+    .map((base) => (component === 'horizontal' ? base.horizontalSigmaMm : base.verticalSigmaMm))
+    .filter((sigma) => !Number.isNaN(sigma));
+  return stated.length === 0 ? undefined : Math.max(...stated);
+}

@@ -1,0 +1,25 @@
+import type { Component } from '../fit/index.js';
+import type { BackTest, BackTestScore, ForwardTest, LeftOutGroup, Rule, WatchStart } from '../rule/index.js';
+
+/** The rule of a part of the shots. */
+export interface PartRule
+  extends Pick<Rule, 'component' | 'limitMm' | 'share' | 'maximumBaselineKm' | 'bestEstimateKm' | 'reason'> {}
+
+/** The rule of one third of the working hours, solar time. */
+export interface HourRule extends PartRule {
+  readonly hours: string;
+}
+
+/** The rule of one month. */
+export interface SeasonRule extends PartRule {
+  readonly month: string;
+}
+
+/** How limits and rules held on days that they had not seen; the score itself is that of the own model. */
+export interface BackTestResult extends Omit<BackTest, 'own' | 'notes'>, BackTestScore {
+  readonly forward: ForwardTest;
+  readonly groups: readonly (LeftOutGroup & { readonly by: 'crew' | 'rover' | 'base' })[];
+}
+
+/** What new days can be watched by, or why they cannot. */
+export type WatchResult = WatchStart & { readonly component: Component };
