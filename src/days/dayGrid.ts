@@ -72,6 +72,27 @@ function makePrior(): Float64Array {
   return table;
 }
 
+/** Probabilities below this change nothing in sixteen digits of a sum. */
+const NOTHING = 1e-20;
+let support: { readonly first: Uint8Array; readonly end: Uint8Array } | null = null;
+
+/** For every combo the first θ whose probability counts, and the one after the last. */
+export function priorSupport(): { readonly first: Uint8Array; readonly end: Uint8Array } {
+  support ??= makeSupport();
+  return support;
+}
+
+function makeSupport(): { first: Uint8Array; end: Uint8Array } {
+  const table = dayPrior();
+  const [first, end] = [new Uint8Array(DAY_COMBOS.length), new Uint8Array(DAY_COMBOS.length)];
+  DAY_COMBOS.forEach((_, j) => {
+    const row = table.subarray(j * THETA_COUNT, (j + 1) * THETA_COUNT);
+    first[j] = row.findIndex((value) => value > NOTHING);
+    end[j] = row.findLastIndex((value) => value > NOTHING) + 1;
+  });
+  return { first, end };
+}
+
 /**
  * For every combo the log factor that a share of days does not exceed.
  * @param dayShare between 0 and 1

@@ -1,5 +1,5 @@
 import type { FitData } from '../fit/index.js';
-import { DAY_COMBOS, dayPrior, THETAS } from './dayGrid.js';
+import { DAY_COMBOS, dayPrior, priorSupport, THETAS } from './dayGrid.js';
 import { type DayIndex, dayIndex, rowsWithinDays } from './dayIndex.js';
 
 /**
@@ -94,12 +94,14 @@ export function comboFit(likelihood: Float64Array): ComboFit {
   const days = likelihood.length / thetas;
   const marginals = new Float64Array(DAY_COMBOS.length * days);
   const logs = new Float64Array(DAY_COMBOS.length);
+  const { first, end } = priorSupport();
   for (let j = 0; j < DAY_COMBOS.length; j++) {
     const from = j * thetas;
+    const [low, high] = [first[j]!, end[j]!];
     for (let d = 0; d < days; d++) {
       const at = d * thetas;
       let total = 0;
-      for (let k = 0; k < thetas; k++) total += prior[from + k]! * likelihood[at + k]!;
+      for (let k = low; k < high; k++) total += prior[from + k]! * likelihood[at + k]!;
       // A combo that makes a day impossible keeps a finite logarithm.
       marginals[j * days + d] = total + 1e-300;
       logs[j]! += Math.log(total + 1e-300);
