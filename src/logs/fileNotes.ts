@@ -27,7 +27,7 @@ export class FileNotes {
 
   #dateOnly = 0;
 
-  add({ position, faults, unknownFix, unknownCorrections }: Extract<RowOutcome, { kind: 'position' }>): void {
+  add({ position, faults, unknownFix }: Extract<RowOutcome, { kind: 'position' }>): void {
     if (position.dateOnly !== '') this.#dateOnly += 1;
     for (const fault of faults) {
       const entry = this.#faults.get(fault.column);
@@ -35,7 +35,11 @@ export class FileNotes {
       else entry.count += 1;
     }
     if (unknownFix !== null) this.#unknownFixes.add(unknownFix, position.row);
-    if (unknownCorrections !== null) this.#unknownCorrections.add(unknownCorrections, position.row);
+    // Words that are understood have become one of these.
+    const corrections = position.extras?.corrections ?? '';
+    if (corrections !== '' && !(CORRECTION_KINDS as readonly string[]).includes(corrections)) {
+      this.#unknownCorrections.add(corrections, position.row);
+    }
   }
 
   messages(): Message[] {

@@ -5,14 +5,13 @@ import { fieldBasePlace } from './fieldBasePlace.js';
 import type { DelimitedHeader } from './header.js';
 import { type DelimitedLayout, decimalCharacter, resolvedUnits } from './layout.js';
 import { quoted } from './messages.js';
-import type { Corrections, Fix, Position, PositionExtras } from './position.js';
+import type { Corrections, Fix, Position } from './position.js';
 import type { RowReason, SetAsideRow } from './reasons.js';
 import type { ColumnRole } from './roles.js';
 import type { RowCells } from './rowCells.js';
 import { extrasReader } from './rowExtras.js';
 import { coordinateReader, numberReaders } from './rowNumbers.js';
 import { timePlan } from './timePlan.js';
-import { plainWord } from './wordMeanings.js';
 
 /** A covariate that could not be read: the row is used without it, and this is told. */
 export interface CellFault {
@@ -29,8 +28,6 @@ export type RowOutcome =
       readonly faults: readonly CellFault[];
       /** The cell of the fix column when nobody has said what it means. */
       readonly unknownFix: string | null;
-      /** The cell of the corrections column when nobody has said what it means. */
-      readonly unknownCorrections: string | null;
     }
   | { readonly kind: 'set-aside'; readonly row: SetAsideRow };
 
@@ -121,8 +118,6 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
     correctionValues,
     toStudy: fieldBasePlace(options.changes ?? {}),
   });
-  const isUnknown = ({ corrections }: PositionExtras): boolean =>
-    corrections !== '' && !correctionValues.has(plainWord(corrections));
 
   return (row, cells) => {
     const when = time.read(cells);
@@ -187,7 +182,6 @@ export function rowPosition(options: RowPositionOptions): (row: number, cells: R
       position,
       faults,
       unknownFix: fix === undefined && hasPosition ? fixText : null,
-      unknownCorrections: also !== null && isUnknown(also) ? also.corrections : null,
     };
   };
 }
