@@ -119,7 +119,7 @@ describe('readNmea', () => {
       'no separation',
       gga('101500', { separation: '' }),
       'geoidSeparation',
-      'expected the geoid separation, came a blank field: the height is orthometric, and an ellipsoidal height cannot be formed',
+      'expected the geoid separation, came a blank field: the height is orthometric, and an ellipsoidal height cannot be formed; state geoid: constant or grid under the heights of this log',
     ],
     ['time', gga('106000'), 'time', 'expected a time of day hhmmss, came "106000"'],
     ['no time', gga(''), 'time', 'expected a time of day hhmmss, came ""'],
