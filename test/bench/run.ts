@@ -1,6 +1,6 @@
 /*
  * Speed and memory, printed, never asserted: machines are noisy, so ratios are taken within one run.
- * `npm run bench` runs all parts, `npm run bench -- fit` those named; `days` takes some minutes.
+ * `npm run bench` runs all parts, `npm run bench -- fit` those named; `days` and `rule` take some minutes.
  */
 import { benchDays } from './days.js';
 import { benchDemo } from './demo.js';
@@ -9,6 +9,7 @@ import { benchFuzz } from './fuzz.js';
 import { benchGroups } from './groups.js';
 import { benchIonosphere } from './ionosphere.js';
 import { benchRead } from './read.js';
+import { benchRule } from './rule.js';
 
 const PARTS = {
   demo: benchDemo,
@@ -18,6 +19,7 @@ const PARTS = {
   groups: benchGroups,
   ionosphere: benchIonosphere,
   days: benchDays,
+  rule: benchRule,
 };
 
 const wanted = process.argv.slice(2);
