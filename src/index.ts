@@ -63,6 +63,8 @@ export {
   formOccupations,
   type Occupation,
   type OccupationError,
+  type PlacedVisit,
+  placeVisits,
   type SetAsideOccupation,
   type Visit,
 } from './errors/index.js';
@@ -323,13 +325,26 @@ export * from './notebook/index.js';
 export { reportHtml, summaryText } from './report/index.js';
 export * from './rule/index.js';
 export {
+  type CellSummary,
+  type Group,
   type Interval,
   LENGTH_EDGES_KM,
   type MarkMean,
   markMeans,
+  type ShareInside,
+  type ShareInsideOptions,
   type SplitBy,
+  type SplitTable,
+  STANDARD_SPLITS,
+  type StandardSplit,
+  type SummarizeOptions,
   type SummaryRow,
+  shareInsideByDistance,
+  standardSplits,
   summarizeBy,
+  summarizeByTwo,
+  type TwoWayRow,
+  type VisitCounts,
 } from './split/index.js';
 export {
   type ControlMark,

@@ -22,4 +22,5 @@ export type { FarOffPlace } from './farOffPlaces.js';
 export { type FormedOccupations, type FormOccupationsOptions, formOccupations } from './formOccupations.js';
 export { groupIndices } from './groupIndices.js';
 export type { Occupation, Visit } from './occupation.js';
+export { type PlacedVisit, placeVisits } from './placeVisits.js';
 export { type StaticShots, staticMessage, staticShots } from './staticShots.js';

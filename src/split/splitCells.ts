@@ -1,0 +1,52 @@
+import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import { type CellSummary, cellSummary, errorValues } from './cellSummary.js';
+import { withDerived } from './derivedColumns.js';
+import { type Group, groupComparison, groupsOf, type SplitBy } from './groups.js';
+import { cellKey, countVisits, type VisitCounts, visitCounts } from './visitCounts.js';
+
+/** One cell by its groups, one for each column. */
+export interface SplitCell {
+  readonly groups: readonly Group[];
+  readonly cell: CellSummary & VisitCounts;
+}
+
+/**
+ * Splits by all columns at once. Cells with neither occupations nor visits are left out.
+ * @throws InputError when a column is missing
+ */
+export function splitCells(
+  errors: ErrorsInput,
+  by: readonly SplitBy[],
+  { confidence = 0.95, visits }: { confidence?: number | undefined; visits?: ErrorsInput | undefined },
+): SplitCell[] {
+  const columns = withDerived(errorColumns(errors));
+  const values = errorValues(columns, 'summary tables');
+  const groups = by.map((each) => groupsOf(columns, each));
+  const cells = new Map<string, { groups: readonly Group[]; members: number[] }>();
+  for (let row = 0; row < columns.length; row++) {
+    const own = groups.map((each) => each[row]!);
+    const key = cellKey(own);
+    const known = cells.get(key);
+    if (known === undefined) cells.set(key, { groups: own, members: [row] });
+    else known.members.push(row);
+  }
+  const counted = visits === undefined ? null : countVisits(visits, by);
+  for (const [key, cell] of counted ?? []) {
+    if (!cells.has(key)) cells.set(key, { groups: cell.groups, members: [] });
+  }
+  const comparisons = by.map(groupComparison);
+  return [...cells]
+    .map(([key, { groups: own, members }]) => ({
+      groups: own,
+      cell: {
+        ...cellSummary(values, members, confidence),
+        ...visitCounts(counted === null ? null : counted.get(key)),
+      },
+    }))
+    .sort((a, b) =>
+      comparisons.reduce(
+        (found, compare, k) => (found === 0 ? compare(a.groups[k]!, b.groups[k]!) : found),
+        0,
+      ),
+    );
+}
