@@ -353,9 +353,17 @@ export {
   readStudyErrors,
   resultsJsonSchema,
   runStudy,
+  type Sky,
+  type SkyAssociation,
+  type SkyDay,
+  type SkyInput,
+  type SkyMeasure,
+  type SkyOutcome,
+  type SkyThreshold,
   type Study,
   type StudyErrors,
   type StudyRun,
+  skyOfDays,
   studyJsonSchema,
 } from './study/index.js';
 export { equationOfTimeMinutes, LEAP_SECONDS_KNOWN_UNTIL, solarHour } from './time/index.js';

@@ -27,6 +27,7 @@ export {
   explainDaysOf,
   judgeDegradedDays,
 } from './explainDay.js';
+export { falseDiscoveryAdjusted, familyAdjusted } from './falseDiscovery.js';
 export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
 export { type HourClasses, hourClasses } from './hourClasses.js';
 export type { HourHarmonics } from './hourHarmonics.js';

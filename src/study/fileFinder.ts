@@ -113,6 +113,26 @@ export class FileFinder {
     return lists;
   }
 
+  /** Files of the sky, each once, in the order in which they are named. */
+  sky(key: 'indices' | 'maps'): NamedFile[] {
+    const found = new Set<string>();
+    this.settings[key].forEach((pattern, k) => {
+      const paths = this.#matching(pattern);
+      for (const path of paths) found.add(path);
+      if (paths.length > 0) return;
+      this.mistake(
+        'missing-file',
+        `Expected files of ${key === 'maps' ? 'ionosphere maps' : 'indices'} that match ${quoted(pattern)} in the folder of the study file, there are none. Put them there or correct the name.`,
+        [key, k],
+      );
+    });
+    return [...found].map((path) => ({ path, file: relative(this.folder, path) }));
+  }
+
+  #matching(pattern: string): string[] {
+    return globSync(pattern, { cwd: this.folder, absolute: true, expandDirectories: false }).sort();
+  }
+
   #file(name: string, path: Path): NamedFile | null {
     const found = resolve(this.folder, name);
     if (isFile(found)) return { path: found, file: relative(this.folder, found) };
@@ -130,11 +150,7 @@ export class FileFinder {
       const { files, layout, coordinates, nearestMarkM, markTimes, transformation } = entry;
       const system = this.#system(coordinates, ['logs', k, 'coordinates'], transformation !== undefined);
       for (const pattern of [files].flat()) {
-        const paths = globSync(pattern, {
-          cwd: this.folder,
-          absolute: true,
-          expandDirectories: false,
-        }).sort();
+        const paths = this.#matching(pattern);
         if (paths.length === 0) {
           this.mistake(
             'no-log',

@@ -30,6 +30,7 @@ export async function readStudy(path: string): Promise<Study> {
   const [marks, bases, found] = [finder.control('marks'), finder.control('bases'), finder.logs()];
   const from = sources(settings, finder.grids(), finder.mistake);
   const [namePattern, aliases, markTimes] = [finder.namePattern(), finder.aliases(), finder.markTimes(found)];
+  const [indices, maps] = [finder.sky('indices'), finder.sky('maps')];
   if (finder.mistakes.length > 0 || marks === null || bases === null) throw new InputError(finder.mistakes);
   const timeZone = settings.timeZone ?? null;
   const read = await logLayouts(found, {
@@ -69,6 +70,8 @@ export async function readStudy(path: string): Promise<Study> {
     centringSigmaMm: settings.centringSigmaMm,
     terms: settings.terms,
     by: settings.by,
+    indices,
+    maps,
     leaveOutDays: settings.leaveOutDays,
     seed: settings.seed,
   };

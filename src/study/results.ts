@@ -19,6 +19,7 @@ import type {
   WrongFixResult,
 } from './fitResultTypes.js';
 import type { BackTestResult, HourRule, SeasonRule, WatchResult } from './ruleResultTypes.js';
+import type { Sky } from './skyResult.js';
 
 /** Measured spread by class of baseline length. Shown, never fitted. */
 export interface LengthClass {
@@ -106,6 +107,8 @@ export interface Results {
   readonly timeOfDay: readonly TimeOfDayResult[];
   readonly lengthClasses: readonly LengthClass[];
   readonly marks: readonly MarkResult[];
+  /** The sky of the days and what goes with it; null without files that tell of it. */
+  readonly sky: Sky | null;
   readonly rules: readonly Rule[];
   readonly ruleTable: readonly RuleTableRow[];
   readonly rulesByHour: readonly HourRule[];

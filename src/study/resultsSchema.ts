@@ -8,6 +8,7 @@ import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSche
 import type { Results } from './results.js';
 import { checkShotLimits, hourRule, rule, ruleTableRow, seasonRule, specSheetTest } from './ruleSchema.js';
 import { count, day, form, interval, nullable } from './schemaParts.js';
+import { skySchema } from './skySchema.js';
 
 const message = z.strictObject({
   code: z.string().describe('Stable name of the kind of message.'),
@@ -80,6 +81,7 @@ export const resultsSchema = z.strictObject({
   timeOfDay: z.array(timeOfDay),
   lengthClasses: z.array(lengthClass),
   marks: z.array(mark),
+  sky: skySchema.nullable().describe('The sky of the days and what goes with it.'),
   rules: z.array(rule),
   ruleTable: z.array(ruleTableRow),
   rulesByHour: z.array(hourRule),

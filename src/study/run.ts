@@ -24,6 +24,7 @@ import { readAs } from './readAs.js';
 import type { Results } from './results.js';
 import { screenStudy, suspects, withSuspects, wrongFixResults } from './screenStudy.js';
 import type { Study } from './study.js';
+import { studySky } from './studySky.js';
 import { summarizeRun } from './summarizeRun.js';
 import { testRules } from './testRules.js';
 
@@ -119,6 +120,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   };
   const made = makeRules(ground, study);
   const tested = testRules(ground, study);
+  const sky = await studySky(study, read, dayResults(judged).dailyFactors);
   const results: Results = {
     ...read.results,
     messages: [
@@ -127,6 +129,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...messages,
       ...judged.flatMap((each) => each.messages),
       ...evidence.messages,
+      ...sky.messages,
       ...tested.messages,
       ...ruleMessages(made.rules),
     ],
@@ -139,6 +142,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     marks: markResults(used, components),
     ...made,
     backTest: tested.backTest,
+    sky: sky.sky,
   };
   const setAside = [...read.setAside, ...suspects(errors, wrongFixes)];
   return {

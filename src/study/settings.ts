@@ -104,6 +104,9 @@ const specSheet = z.strictObject({
     .describe('What share the figures hold: rms, 68 or 95 %.'),
 });
 
+/** Patterns relative to the study file. */
+const skyFiles = z.array(z.string().min(1)).default([]);
+
 /** The schema of a study file. */
 export const studySchema = z.strictObject({
   title: z.string().min(1).default('Check shots').describe('Heads every report.'),
@@ -166,6 +169,8 @@ export const studySchema = z.strictObject({
     .array(z.enum(['crew', 'rover', 'base']))
     .default([])
     .describe('Whether these differ in constant and ppm.'),
+  indices: skyFiles.describe('Public files of Kp, Hp30, Dst or F10.7 to compare days with.'),
+  maps: skyFiles.describe('Maps of the electron content (IONEX) to compare days with.'),
   leaveOutDays: z
     .array(day)
     .default([])

@@ -3,6 +3,7 @@ import type { Form, Reference, Term } from '../fit/index.js';
 import type { LogFile, Message } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 import type { HeightKind } from './coordinateChanges.js';
+import type { NamedFile } from './fileFinder.js';
 
 /** A study ready to run: settings with every default filled in, files found. */
 export interface Study {
@@ -29,9 +30,9 @@ export interface Study {
   readonly constantSeparation: boolean;
   /** How logs name marks. */
   readonly namePattern: RegExp | null;
-  readonly aliases: { readonly path: string; readonly file: string } | null;
+  readonly aliases: NamedFile | null;
   /** Log → list of stays on marks. */
-  readonly markTimes: ReadonlyMap<string, { readonly path: string; readonly file: string }>;
+  readonly markTimes: ReadonlyMap<string, NamedFile>;
   readonly logs: readonly LogFile[];
   /** What is to be told of the layouts that were recognised. */
   readonly messages: readonly Message[];
@@ -51,6 +52,9 @@ export interface Study {
   readonly centringSigmaMm: number;
   readonly terms: readonly Term[];
   readonly by: readonly ('crew' | 'rover' | 'base')[];
+  /** Files of geomagnetic indices, and of ionosphere maps. */
+  readonly indices: readonly NamedFile[];
+  readonly maps: readonly NamedFile[];
   readonly leaveOutDays: readonly string[];
   readonly seed: number;
 }

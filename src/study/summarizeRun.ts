@@ -79,6 +79,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     timeOfDay: [],
     lengthClasses: [],
     marks: [],
+    sky: null,
     rules: [],
     ruleTable: [],
     rulesByHour: [],

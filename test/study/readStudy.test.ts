@@ -80,6 +80,8 @@ describe('readStudy', () => {
       centringSigmaMm: 0,
       terms: [],
       by: [],
+      indices: [],
+      maps: [],
       leaveOutDays: [],
       seed: 1,
     });

@@ -1,0 +1,73 @@
+import type { Control } from '../control/index.js';
+import type { DailyFactor } from '../days/index.js';
+import type { OccupationError, Visit } from '../errors/index.js';
+import { joinIndices } from '../ionosphere/index.js';
+import { type Message, message } from '../logs/index.js';
+import { readSkyFiles } from './skyFiles.js';
+import { skyOfDays } from './skyOfDays.js';
+import type { Sky } from './skyResult.js';
+import type { Study } from './study.js';
+
+/** What of a run the sky is compared with. */
+export interface ReadStudy {
+  readonly control: Control;
+  readonly errors: readonly OccupationError[];
+  readonly visits: readonly Visit[];
+}
+
+/**
+ * The sky over a study out of its index and map files; null, with the reason in a message, where there are none or none
+ * can be read. Nothing else of a run depends on it.
+ * @param factors of both components; empty where days cannot be judged
+ */
+export async function studySky(
+  study: Study,
+  { control, errors, visits }: ReadStudy,
+  factors: readonly DailyFactor[],
+): Promise<{ sky: Sky | null; messages: readonly Message[] }> {
+  if (study.indices.length + study.maps.length === 0) return { sky: null, messages: [noFiles()] };
+  const { indices, maps, files, messages: told } = await readSkyFiles(study);
+  const base = usualBase(errors);
+  if ((indices === null && maps === null) || base === null)
+    return { sky: null, messages: [...told, nothingKnown(base === null)] };
+  const { latitudeDeg, longitudeDeg } = control.bases.get(base)!.position;
+  const days = [...new Set([...errors, ...visits].map(({ day }) => day))].sort();
+  const site = { latitudeDeg, longitudeDeg };
+  const { timeZone, confidence, seed } = study;
+  const found = skyOfDays({ days, timeZone, site, indices, maps, factors, visits, confidence, seed });
+  const joined = indices === null ? [] : joinIndices(errors, indices).messages;
+  return {
+    sky: {
+      site: { base, ...site },
+      files,
+      days: found.days,
+      associations: found.associations,
+      thresholds: found.thresholds,
+    },
+    messages: [...told, ...joined, ...found.messages],
+  };
+}
+
+/** The base with the most occupations, of several the first by name; null without occupations. */
+function usualBase(errors: readonly OccupationError[]): string | null {
+  const counts = new Map<string, number>();
+  for (const { base } of errors) counts.set(base, (counts.get(base) ?? 0) + 1);
+  const [first] = [...counts].sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
+  return first?.[0] ?? null;
+}
+
+const noFiles = (): Message =>
+  message(
+    'info',
+    'no-sky-files',
+    'The study names no file of geomagnetic indices or ionosphere maps, so its days are not compared with the sky. Name public files under indices and maps to have that.',
+  );
+
+const nothingKnown = (noOccupations: boolean): Message =>
+  message(
+    'warning',
+    'sky-not-known',
+    noOccupations
+      ? 'Without occupations there are no days to compare with the sky. The account above says what became of the rows.'
+      : 'No file of indices or maps could be used, so the days are not compared with the sky. The messages above say what is wrong with each.',
+  );
