@@ -37,7 +37,10 @@ export {
   explainDay,
   type GuiltyPart,
   type HourClass,
+  type HourDayCell,
+  type HourDayOptions,
   type HourHarmonics,
+  hourDayRatios,
   judgeDegradedDays,
   type KpThreshold,
   type ModeratedDay,
@@ -326,6 +329,8 @@ export { reportHtml, summaryText } from './report/index.js';
 export * from './rule/index.js';
 export {
   type CellSummary,
+  type FlaggedClass,
+  flaggedByLength,
   type Group,
   type Interval,
   LENGTH_EDGES_KM,
@@ -359,11 +364,13 @@ export {
   type SkyInput,
   type SkyMeasure,
   type SkyOutcome,
+  type SkyPoint,
   type SkyThreshold,
   type Study,
   type StudyErrors,
   type StudyRun,
   skyOfDays,
+  skyPoints,
   studyJsonSchema,
 } from './study/index.js';
 export { equationOfTimeMinutes, LEAP_SECONDS_KNOWN_UNTIL, solarHour } from './time/index.js';

@@ -21,5 +21,6 @@ export { resultsJsonSchema, resultsSchema } from './resultsSchema.js';
 export { type RunOptions, readStudyErrors, runStudy, type StudyErrors, type StudyRun } from './run.js';
 export { type StudySettings, studyJsonSchema } from './settings.js';
 export { type SkyInput, skyOfDays } from './skyOfDays.js';
+export { type SkyPoint, skyPoints } from './skyPoints.js';
 export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold } from './skyResult.js';
 export type { Study } from './study.js';

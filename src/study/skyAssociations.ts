@@ -1,46 +1,32 @@
 import { familyAdjusted, rankAssociation, thresholdRule } from '../days/index.js';
-import type { Component } from '../fit/index.js';
 import { type Message, message } from '../logs/index.js';
 import { randomStream } from '../stats/index.js';
 import type { SkyInput } from './skyOfDays.js';
+import { skyPoints } from './skyPoints.js';
 import {
   SKY_MEASURES,
   SKY_OUTCOMES,
   type SkyAssociation,
   type SkyDay,
-  type SkyMeasure,
-  type SkyOutcome,
   type SkyThreshold,
 } from './skyResult.js';
-
-const MEASURES: Readonly<Record<SkyMeasure, (day: SkyDay) => number | null>> = {
-  Ap: ({ ap }) => ap,
-  'greatest Kp': ({ kpMax }) => kpMax,
-  'F10.7': ({ f107 }) => f107,
-  'least Dst': ({ dstMin }) => dstMin,
-  TEC: ({ tecMean }) => tecMean,
-  'TEC gradient': ({ gradientMean }) => gradientMean,
-  // a change of the ionosphere disturbs in either direction
-  'TEC change': ({ tecChange }) => (tecChange === null ? null : Math.abs(tecChange)),
-};
 
 type Told = Pick<SkyInput, 'factors' | 'confidence' | 'seed'>;
 
 /** Every outcome against every measure that is known of any day. Each draws its own chance orders from the seed. */
 export function skyAssociations(
   days: readonly SkyDay[],
-  input: Told,
+  { factors, confidence, seed }: Told,
 ): { associations: SkyAssociation[]; messages: Message[] } {
-  const { confidence, seed } = input;
-  const found = SKY_OUTCOMES.flatMap((outcome) => {
-    const values = outcomeValues(outcome, days, input);
-    return SKY_MEASURES.flatMap((measure) => {
-      const covariate = days.map((day) => MEASURES[measure](day) ?? Number.NaN);
+  const found = SKY_OUTCOMES.flatMap((outcome) =>
+    SKY_MEASURES.flatMap((measure) => {
+      const points = skyPoints(days, factors, outcome, measure);
+      const [values, covariate] = [points.map((one) => one.outcome), points.map((one) => one.measure)];
       if (isUnknown(values) || isUnknown(covariate)) return [];
       const random = randomStream(seed, `${outcome} with ${measure}`);
       return [{ outcome, measure, ...rankAssociation(values, covariate, { random, confidence }) }];
-    });
-  });
+    }),
+  );
   const tested = found.filter(({ pValue }) => pValue !== null);
   const adjusted = familyAdjusted(tested.map(({ pValue }) => pValue!));
   const associations = found.map((one): SkyAssociation => {
@@ -51,16 +37,6 @@ export function skyAssociations(
 }
 
 const isUnknown = (values: readonly number[]): boolean => values.every(Number.isNaN);
-
-function outcomeValues(outcome: SkyOutcome, days: readonly SkyDay[], { factors }: Told): number[] {
-  if (outcome === 'share without a fix')
-    return days.map(({ shareWithoutFix }) => shareWithoutFix ?? Number.NaN);
-  const component: Component = outcome === 'horizontal daily factor' ? 'horizontal' : 'vertical';
-  const byDay = new Map(
-    factors.filter((one) => one.component === component).map(({ day, factor }) => [day, factor]),
-  );
-  return days.map(({ day }) => byDay.get(day) ?? Number.NaN);
-}
 
 /** What stands when so many comparisons are made at once. */
 function associationNote(associations: readonly SkyAssociation[], confidence: number): Message {
