@@ -1,5 +1,14 @@
+export { type AssociationInput, associationChart } from './associationChart.js';
 export type { ChartSpec } from './chartSpec.js';
+export { type DaysInput, daysChart } from './daysChart.js';
+export type { DayCause } from './daysFactors.js';
 export { type ErrorByBaselineInput, errorByBaselineChart } from './errorByBaselineChart.js';
+export { type HourDayInput, hourDayChart } from './hourDayChart.js';
+export { type HourPpmInput, hourPpmChart } from './hourPpmChart.js';
 export { type MarkMapInput, markMapChart } from './markMapChart.js';
 export { type MarkMeansInput, markMeansChart } from './markMeansChart.js';
 export { renderPng, renderSvg } from './renderChart.js';
+export { type ShareInsideInput, shareInsideChart } from './shareInsideChart.js';
+export { type SplitInput, splitChart } from './splitChart.js';
+export { type TwoWayInput, twoWayChart } from './twoWayChart.js';
+export { type WrongFixShareInput, wrongFixShareChart } from './wrongFixShareChart.js';

@@ -11,6 +11,9 @@ export const COLORS = {
 /** Amounts: one hue of water, light to middling, so that curves in full water still stand out on it. */
 export const AMOUNT_RAMP: readonly string[] = ['#e4eef3', '#bcd4e0', '#8fb6c9', '#6296b0'];
 
+/** The same hue in five steps for cells on white, the last one dark. */
+export const AMOUNT_STEPS: readonly string[] = ['#e4eef3', '#bcd4e0', '#8fb6c9', '#4f88a6', '#1d4f6b'];
+
 /** The fallbacks have nearly the widths of the first font, for readers who do not have it. */
 const FONT = 'DejaVu Sans, Verdana, sans-serif';
 

@@ -52,3 +52,15 @@ export function roundUp(value: number): number {
   const step = 10 ** Math.floor(Math.log10(value)) / 5;
   return Number((Math.ceil(value / step - 1e-9) * step).toPrecision(6));
 }
+
+/** `Horizontal` or `Vertical`, at the head of a title. */
+export const componentTitle = (component: 'horizontal' | 'vertical'): string =>
+  component === 'horizontal' ? 'Horizontal' : 'Vertical';
+
+/** What an RMS of a component is called: never a bare "RMS". */
+export const rmsWords = (component: 'horizontal' | 'vertical'): string =>
+  component === 'horizontal' ? 'radial RMS' : 'vertical RMS';
+
+/** `p = 0.03`, `p < 0.001`. */
+export const pWords = (p: number): string =>
+  p < 0.001 ? 'p\u00a0<\u00a00.001' : `p\u00a0=\u00a0${p < 0.1 ? Number(p.toPrecision(2)) : p.toFixed(2)}`;

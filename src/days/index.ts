@@ -30,6 +30,7 @@ export {
 export { falseDiscoveryAdjusted, familyAdjusted } from './falseDiscovery.js';
 export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
 export { type HourClasses, hourClasses } from './hourClasses.js';
+export { type HourDayCell, type HourDayOptions, hourDayRatios } from './hourDayRatios.js';
 export type { HourHarmonics } from './hourHarmonics.js';
 export { type ModeratedDay, moderatedDays, moderatedDaysOf } from './moderatedVariance.js';
 export { nodesWithoutDay } from './nodesWithoutDay.js';

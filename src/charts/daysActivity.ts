@@ -1,0 +1,43 @@
+import type { View } from './chartSpec.js';
+import { DAYS_WIDTH_PX, degradedColumns } from './daysFactors.js';
+import { COLORS, QUIET_INK } from './theme.js';
+import { roundUp } from './words.js';
+
+const HEIGHT_PX = 90;
+/** Kp 5 is where the NOAA scale begins: G1, minor. */
+const STORM_KP = 5;
+
+/** Bars of geomagnetic activity, one a day. */
+export function activityPanel(
+  measure: 'kpMax' | 'ap',
+  bars: readonly { readonly day: string; readonly value: number }[],
+  x: View,
+  degraded: readonly string[],
+): View {
+  const isKp = measure === 'kpMax';
+  const most = isKp ? 9 : roundUp(Math.max(...bars.map(({ value }) => value), 10));
+  const y = {
+    type: 'quantitative',
+    scale: { domain: [0, most], nice: false },
+    axis: { title: isKp ? 'greatest Kp' : 'Ap', ...(isKp ? { values: [0, 3, 5, 7, 9] } : { tickCount: 4 }) },
+  };
+  return {
+    width: DAYS_WIDTH_PX,
+    height: HEIGHT_PX,
+    layer: [
+      degradedColumns(degraded, x),
+      {
+        data: { values: bars },
+        mark: { type: 'bar', color: COLORS.water },
+        encoding: { x: { ...x, field: 'day' }, y: { ...y, field: 'value' } },
+      },
+      ...(isKp ? [stormLine(y)] : []),
+    ],
+  };
+}
+
+const stormLine = (y: View): View => ({
+  data: { values: [{ value: STORM_KP }] },
+  mark: { type: 'rule', color: QUIET_INK, strokeDash: [2, 3] },
+  encoding: { y: { ...y, field: 'value' } },
+});
