@@ -43,6 +43,11 @@ tolerances:
 # radial, and it is a root-mean-square.
 specSheet: {horizontal: {constantMm: 8, ppm: 1}, vertical: {constantMm: 15, ppm: 1}, form: linear-sum, axis: radial, level: rms}
 
+# Public files of geomagnetic activity, as they were published, to see what days went with. The one here is
+# invented; of the maps of the electron content ("maps") the demo has none.
+indices:
+  - indices/activity-invented.txt
+
 # Whatever is drawn at random while computing starts from this number, so that a run can be repeated exactly.
 seed: 1
 `;
@@ -98,6 +103,8 @@ What a season brings is in it:
 - **Degraded days**: ${bad.map(({ day, factor }) => `${day} (${two(factor)})`).join(', ')}; in brackets the factor on the ppm. The other
   days differ as they do in an ordinary season: their factors go from ${two(Math.min(...ordinary))} to ${two(Math.max(...ordinary))}.
 - **A daily course**: the ppm is highest about 14 h solar time, ${two(Math.exp(truth.settings.middayRise))} times the middle of the day's course.
+- **Geomagnetic activity**: invented like all else. One storm falls on the two degraded days in a row, others on
+  ordinary days, and the single degraded days are quiet.
 - **Errors of marks**: the published coordinates are off by ${truth.settings.markSigmaMm.east} mm in east and in north and ${truth.settings.markSigmaMm.up} mm in height
   (standard deviations), as \`marks.csv\` states.
 - **Errors of setups**: ${truth.settings.setupSigmaMm.east} mm in east and in north and ${truth.settings.setupSigmaMm.up} mm in height (standard deviations), one draw for the pillar, one
@@ -149,6 +156,8 @@ const FILES: Readonly<Record<string, string>> & { readonly log: string } = {
   'bases.csv': 'the bases: the pillar and the ground mark',
   'another-layout/points-2025-03-14.txt':
     'one day as another controller would export it: a point list to try recognising on',
+  'indices/activity-invented.txt':
+    'geomagnetic activity of the season, invented, in the layout of the public daily file',
   'truth.json': 'what the positions were made from',
   'README.md': 'this page',
   log: 'the log of that month (UTC), one row a position',

@@ -48,7 +48,13 @@ export function daysChart({ factors, explanations = [], sky = [], activity }: Da
     return factorPanel(component, own, verdicts, dayChannel(days, isLast), degraded);
   });
   if (bars.length > 0) panels.push(activityPanel(measure, bars, dayChannel(days, true), degraded));
-  const words = { factors, components, hasBars: bars.length > 0, measure };
+  const words = {
+    factors,
+    components,
+    hasBars: bars.length > 0,
+    isExplained: explanations.length > 0,
+    measure,
+  };
   return chartSpec(daysTitle(words), daysSubtitle(words), daysDescription(words), {
     vconcat: panels,
     spacing: 14,

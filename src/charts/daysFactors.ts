@@ -112,11 +112,7 @@ function runLabels(bad: readonly LabelRow[], all: readonly { readonly day: strin
     else runs.push([row]);
   }
   return runs.map((run) => {
-    const words = [...new Set(run.map(({ word }) => word))].filter((word) => word !== 'degraded');
-    return {
-      day: run[0]!.day,
-      word: ['degraded', words.join(', ')].filter((part) => part !== '').join(': '),
-    };
+    return { day: run[0]!.day, word: [...new Set(run.map(({ word }) => word))].join(', ') };
   });
 }
 

@@ -8,6 +8,7 @@ export interface DaysWords {
   readonly factors: readonly DailyFactor[];
   readonly components: readonly Component[];
   readonly hasBars: boolean;
+  readonly isExplained: boolean;
   readonly measure: 'kpMax' | 'ap';
 }
 
@@ -37,10 +38,10 @@ export function daysTitle(words: DaysWords): string {
   return `Degraded days of ${days}: ${parts.join(', ')}`;
 }
 
-export function daysSubtitle({ hasBars, measure }: DaysWords): string[] {
+export function daysSubtitle({ hasBars, isExplained, measure }: DaysWords): string[] {
   return [
     'A day’s ppm over that of the median day, with 95 % bands; dashed: 1.5 times',
-    `Diamonds, grey columns: degraded days${hasBars ? `; bars: ${measure === 'kpMax' ? 'greatest Kp of the day, dotted: minor storm, G1' : 'Ap of the day'}` : ''}`,
+    `Diamonds, grey columns: degraded days${isExplained ? ' and what they are put down to' : ''}${hasBars ? `; bars: ${measure === 'kpMax' ? 'greatest Kp, dotted: minor storm' : 'Ap'}` : ''}`,
   ];
 }
 

@@ -6,8 +6,8 @@ import { componentTitle, counted, pWords, roundUp } from './words.js';
 
 /** What {@link hourPpmChart} draws. */
 export interface HourPpmInput {
-  /** From `timeOfDay`. */
-  readonly timeOfDay: TimeOfDay;
+  /** From `timeOfDay`, or of `results.timeOfDay`, which has its notes among the messages. */
+  readonly timeOfDay: Omit<TimeOfDay, 'notes'> & Partial<Pick<TimeOfDay, 'notes'>>;
 }
 
 const LEVEL = 0.05;
@@ -30,16 +30,16 @@ interface HourRow {
  * @throws InputError when there are no hours to compare
  */
 export function hourPpmChart({ timeOfDay }: HourPpmInput): ChartSpec {
-  const rows = hourRows(timeOfDay.hours);
+  const { pValue, hours, notes = [] } = timeOfDay;
+  const rows = hourRows(hours);
   if (rows.length === 0) {
-    const why = timeOfDay.notes[0]?.text ?? 'No hours could be compared.';
+    const why = notes[0]?.text ?? 'No hours could be compared.';
     throw inputError('bad-option', `Expected the ppm of some hours, came none. ${why}`);
   }
-  const { pValue } = timeOfDay;
   const title = titleOf(timeOfDay);
   const subtitle = [
     `Equal thirds of the working hours, adjusted for the days they fall on${pValue === null ? '' : `; ${pWords(pValue)} by days`}`,
-    ...timeOfDay.notes.filter(({ code }) => code !== 'hours-differ').map(({ text }) => text),
+    ...notes.filter(({ code }) => code !== 'hours-differ').map(({ text }) => text),
   ];
   return chartSpec(title, subtitle, describe(timeOfDay, title), {
     width: WIDTH_PX,
@@ -127,7 +127,7 @@ function layers(rows: readonly HourRow[]): View[] {
 
 const hourWords = ({ from, to }: HourClass): string => `${from.toFixed(1)} to ${to.toFixed(1)} h`;
 
-function titleOf({ component, pValue, hours }: TimeOfDay): string {
+function titleOf({ component, pValue, hours }: HourPpmInput['timeOfDay']): string {
   const name = `${componentTitle(component)} ppm`;
   if (pValue === null) return `${name} by hour: too few days to tell`;
   if (pValue >= LEVEL) return `${name}: no hour is shown to differ`;
@@ -136,7 +136,7 @@ function titleOf({ component, pValue, hours }: TimeOfDay): string {
   return `${name} depends on the hour: ${worst.ppm.estimate!.toFixed(2)} from ${hourWords(worst)}`;
 }
 
-function describe({ component, hours }: TimeOfDay, title: string): string {
+function describe({ component, hours }: HourPpmInput['timeOfDay'], title: string): string {
   const parts = hours.flatMap((one) => {
     const { estimate, low, high } = one.ppm;
     if (estimate === null) return [];

@@ -4,6 +4,7 @@ import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
 import { parse } from 'yaml';
 import { demoStudy } from '../../datasets-demo/make.js';
+import { dayIndices, localDaySpan, readIndices } from '../../src/ionosphere/index.js';
 
 const folder = join(dirname(fileURLToPath(import.meta.url)), '../../datasets-demo');
 const study = demoStudy();
@@ -92,12 +93,34 @@ describe('demo study', () => {
       'occupations',
       'tolerances',
       'specSheet',
+      'indices',
       'seed',
     ]);
     expect(settings.timeZone).toBe('Etc/GMT+1');
     expect(truth.settings.utcOffsetHours).toBe(-1);
     expect(settings.period).toEqual({ from: truth.days[0].day, to: truth.days.at(-1).day });
     expect(study.has(settings.marks) && study.has(settings.bases)).toBe(true);
+  });
+
+  it('has invented activity that reads like a public file and covers the season', () => {
+    const path = 'indices/activity-invented.txt';
+    const text = study.get(path)!;
+    expect(text.startsWith('# INVENTED')).toBe(true);
+    const { rowsRead, rowsUsed, messages, indices } = readIndices(text, path);
+    expect(messages).toEqual([]);
+    expect(rowsUsed).toBe(rowsRead);
+    const { days } = JSON.parse(study.get('truth.json')!) as { days: { day: string; bad: boolean }[] };
+    const activity = dayIndices(
+      days.map(({ day }) => localDaySpan(day, 'Etc/GMT+1')),
+      indices,
+    );
+    expect(activity.every(({ knownShare }) => knownShare === 1)).toBe(true);
+    const stormy = days.filter((_, k) => activity[k]!.kpMax >= 5);
+    const bad = days.filter((day) => day.bad);
+    // a storm on the two degraded days in a row, none on the single ones, and some on ordinary days
+    expect(stormy.filter((day) => day.bad)).toHaveLength(2);
+    expect(bad).toHaveLength(4);
+    expect(stormy.length).toBeGreaterThan(3);
   });
 
   it('names every file in its README', () => {

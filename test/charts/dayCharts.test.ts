@@ -173,7 +173,7 @@ describe('daysChart', () => {
       subject: 'ridge',
     }));
     const chart = daysChart({ factors, explanations });
-    expect(allRows(chart, 'word').some(({ word }) => word === 'degraded: one crew ridge')).toBe(true);
+    expect(allRows(chart, 'word').some(({ word }) => word === 'one crew ridge')).toBe(true);
     const neighbours = [1, 2].map((k) => ({ ...factors[k]!, degraded: true }));
     const run = factors.map(
       (one) => neighbours.find(({ day }) => day === one.day) ?? { ...one, degraded: false },
