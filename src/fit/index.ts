@@ -98,6 +98,9 @@ export {
 } from './screening/wrongFixGrowth.js';
 export type { WrongFixShare } from './screening/wrongFixShare.js';
 export { type SignFlipTest, signFlipTest } from './signFlips.js';
+export { type Coefficient, coefficientTable } from './summary/coefficientTable.js';
+export { type FitExtras, type FitSummary, fitSummary } from './summary/fitSummary.js';
+export { coefficientTexts, formatFit } from './summary/formatFit.js';
 export { fitTerms, type TermEstimate, type TermOptions, type TermsModel } from './terms/fitTerms.js';
 export type { KnownSigmas } from './terms/knownParts.js';
 export type { Term } from './terms/termData.js';

@@ -31,10 +31,14 @@ export interface ScoreGain {
   readonly winner: -1 | 0 | 1;
 }
 
+/** Two descriptions that say the same differ by this much through rounding; no gain this small matters. */
+const ROUNDING = 1e-9;
+
 /** The one-standard-error rule (Breiman et al. 1984, from memory) on gains per shot, one for each day. */
 export function scoreGain(gains: readonly number[]): ScoreGain {
   const gain = gains.reduce((sum, value) => sum + value, 0) / gains.length;
   const squares = gains.reduce((sum, value) => sum + (value - gain) ** 2, 0);
   const se = Math.sqrt(squares / (gains.length - 1) / gains.length);
-  return { gain, se, winner: gain > se ? 1 : gain < -se ? -1 : 0 };
+  const clear = Math.abs(gain) > Math.max(se, ROUNDING);
+  return { gain, se, winner: clear ? (gain > 0 ? 1 : -1) : 0 };
 }

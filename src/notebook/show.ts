@@ -1,12 +1,14 @@
 import type { ColumnTable } from 'arquero';
 import { type ChartSpec, renderPng } from '../charts/index.js';
+import { type ErrorModel, type FitComponent, formatFit } from '../fit/index.js';
+import { fitHtml, isFit } from './fitHtml.js';
 import { type DisplayBundle, runningCell } from './kernel.js';
 import { isColumnTable, textTable } from './tableCells.js';
 import { tableHtml } from './tableHtml.js';
 import { tableText } from './tableText.js';
 
-/** What {@link show} can show: a chart, a table, records, or a text. */
-export type Showable = ChartSpec | ColumnTable | readonly object[] | string;
+/** What {@link show} can show: a chart, a fit, a table, records, or a text. */
+export type Showable = ChartSpec | ErrorModel<FitComponent> | ColumnTable | readonly object[] | string;
 
 /** Longer tables are cut, so that a notebook stays readable. */
 const MOST_ROWS = 20;
@@ -14,8 +16,8 @@ const MOST_ROWS = 20;
 const SCALE = 2;
 
 /**
- * Shows a chart, a table or a text below the running cell of a notebook; anywhere else writes the table, or the words
- * of the chart, to the standard output. Tables are cut after 20 rows and say how many more there are.
+ * Shows a chart, a fit, a table or a text below the running cell of a notebook; anywhere else writes the table, the fit, or the
+ * words of the chart, to the standard output. Tables are cut after 20 rows and say how many more there are.
  * @throws TypeError when it is something else
  */
 export async function show(what: Showable): Promise<void> {
@@ -29,6 +31,7 @@ export async function show(what: Showable): Promise<void> {
 async function bundleOf(what: Showable): Promise<DisplayBundle> {
   const plain = { 'text/plain': plainText(what) };
   if (typeof what === 'string') return { data: plain, metadata: {} };
+  if (isFit(what)) return { data: { 'text/html': fitHtml(what), ...plain }, metadata: {} };
   if (isChart(what)) {
     const png = await renderPng(what, SCALE);
     return {
@@ -41,10 +44,11 @@ async function bundleOf(what: Showable): Promise<DisplayBundle> {
 
 function plainText(what: Showable): string {
   if (typeof what === 'string') return what;
+  if (isFit(what)) return formatFit(what);
   if (isChart(what)) return [what.title, ...what.subtitle, what.description].join('\n');
   if (isColumnTable(what) || Array.isArray(what)) return tableText(textTable(what, MOST_ROWS));
   throw new TypeError(
-    `Expected a chart, a table, an array of records or a text to show, came ${JSON.stringify(what) ?? typeof what}. Hand in one of these.`,
+    `Expected a chart, a fit, a table, an array of records or a text to show, came ${JSON.stringify(what) ?? typeof what}. Hand in one of these.`,
   );
 }
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { simulateErrors } from '../../src/campaign/index.js';
 import { compareForms } from '../../src/fit/index.js';
 import { normalDeviates, randomStream } from '../../src/stats/index.js';
 import { referenceErrors, referenceFits } from './reference.js';
@@ -28,6 +29,20 @@ describe.each(['ref1_mild15', 'ref3_linear_base10'])('forms of %s', (name) => {
       gain! > se! ? 'root-sum-square' : gain! < -se! ? 'linear-sum' : 'cannot be told apart',
     );
   });
+});
+
+// Wrong fixes that are not screened make both forms fall back to the constant alone; rounding then named a winner.
+it('names no form where both say the same', () => {
+  const { rows } = simulateErrors({
+    seed: 3,
+    days: 16,
+    markSigmaMm: { east: 5, north: 5, up: 5 },
+    wrongFixes: { shareAt1Km: 0.01, shareAt12Km: 0.01 },
+    base: { mounting: 'tripod' },
+  });
+  const { gain, verdict } = compareForms(rows, { component: 'horizontal' });
+  expect(Math.abs(gain!)).toBeLessThan(1e-12);
+  expect(verdict).toBe('cannot be told apart');
 });
 
 describe('the verdict', () => {

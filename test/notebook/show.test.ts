@@ -4,7 +4,9 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { table } from 'arquero';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { simulateErrors } from '../../src/campaign/index.js';
 import { type ChartSpec, markMeansChart } from '../../src/charts/index.js';
+import { fitErrorModel, formatFit } from '../../src/fit/index.js';
 import { show } from '../../src/notebook/index.js';
 
 interface Sent {
@@ -96,7 +98,7 @@ describe('show in a terminal', () => {
 
   it('refuses what it cannot show', async () => {
     await expect(show(7 as unknown as string)).rejects.toThrow(
-      'Expected a chart, a table, an array of records or a text to show, came 7.',
+      'Expected a chart, a fit, a table, an array of records or a text to show, came 7.',
     );
     await expect(show(undefined as unknown as string)).rejects.toThrow('came undefined.');
   });
@@ -156,6 +158,21 @@ describe('show in a cell of a notebook', () => {
     expect(html).not.toContain('<i>');
     expect(html).toContain('&lt;script&gt;alert(&quot;1&quot;)&lt;/script&gt;&amp;');
     expect(html).toContain('&lt;i&gt;');
+  });
+
+  it('sends a fit as HTML and as text', async () => {
+    const { rows: errors } = simulateErrors({ seed: 2, days: 9 });
+    const model = fitErrorModel(
+      errors.map((row) => ({ ...row, mark: `<${row.mark}>` })),
+      { component: 'horizontal' },
+    );
+    await show(model);
+    const { data } = sent[0]!;
+    expect(Object.keys(data)).toEqual(['text/html', 'text/plain']);
+    expect(data['text/plain']).toBe(formatFit(model));
+    expect(data['text/html']).toContain('<b>Horizontal error model, radial RMS</b>');
+    expect(data['text/html']).toContain(`${model.ppm.low!.toFixed(2)} to ${model.ppm.high!.toFixed(2)}</td>`);
+    expect(data['text/html']).not.toContain('<M');
   });
 
   it('sends texts as texts', async () => {
