@@ -141,7 +141,7 @@ const WIDE_SPREAD = 0.35;
  */
 export function ppmInterval(
   { ppm, interval }: ErrorModel,
-  judged: JudgedDays | undefined,
+  judged: Pick<JudgedDays, 'model'> | undefined,
 ): { readonly ppm: EstimateWithLimits; readonly interval: string } {
   const { estimate } = ppm;
   if (judged === undefined || estimate === null) return { ppm, interval };

@@ -1,7 +1,8 @@
 /*
  * Speed and memory, printed, never asserted: machines are noisy, so ratios are taken within one run.
- * `npm run bench` runs all parts, `npm run bench -- fit` those named; `days` and `rule` take some minutes.
+ * `npm run bench` runs all parts, `npm run bench -- fit` those named; `days`, `rule` and `coverage` take some minutes.
  */
+import { benchCoverage } from './coverage.js';
 import { benchDays } from './days.js';
 import { benchDemo } from './demo.js';
 import { benchFit } from './fit.js';
@@ -20,6 +21,7 @@ const PARTS = {
   ionosphere: benchIonosphere,
   days: benchDays,
   rule: benchRule,
+  coverage: benchCoverage,
 };
 
 const wanted = process.argv.slice(2);
