@@ -3,7 +3,7 @@ import { type ErrorsInput, errorColumns } from '../errors/index.js';
 import { type ErrorModel, fitErrorModel } from '../fit/index.js';
 import { InputError } from '../logs/index.js';
 import type { RuleOptions } from './ground.js';
-import { maximumBaseline, noRule } from './maximumBaseline.js';
+import { noRule, ruleFinder } from './maximumBaseline.js';
 import { recordsOf } from './records.js';
 import type { Rule } from './rule.js';
 import type { Tolerance } from './tolerance.js';
@@ -45,20 +45,20 @@ const MONTHS = [
 export function ruleByHour(
   errors: ErrorsInput,
   model: ErrorModel,
-  tolerance: Tolerance,
+  tolerances: Tolerance | readonly Tolerance[],
   options: GroupRuleOptions = {},
 ): GroupRule[] {
   const classes = hourClasses(errorColumns(errors).numbers('solarHour', 'rules by hour'));
   if (classes === null) return [];
   const { edges, classOf } = classes;
   const clock = (hour: number): string => (hour % 24).toFixed(1);
-  return [0, 1, 2].map((k) =>
-    groupRule(
+  return [0, 1, 2].flatMap((k) =>
+    groupRules(
       errors,
       `${clock(edges[k]!)} to ${clock(edges[k + 1]!)} h`,
       (row) => classOf[row] === k,
       model,
-      tolerance,
+      [tolerances].flat(),
       options,
     ),
   );
@@ -72,7 +72,7 @@ export function ruleByHour(
 export function ruleBySeason(
   errors: ErrorsInput,
   model: ErrorModel,
-  tolerance: Tolerance,
+  tolerances: Tolerance | readonly Tolerance[],
   options: GroupRuleOptions = {},
 ): GroupRule[] {
   const months = errorColumns(errors)
@@ -80,19 +80,20 @@ export function ruleBySeason(
     .map((day) => (/^\d{4}-\d{2}-\d{2}$/.test(day) ? Number(day.slice(5, 7)) - 1 : -1));
   return MONTHS.flatMap((name, m) =>
     months.includes(m)
-      ? [groupRule(errors, name, (row) => months[row] === m, model, tolerance, options)]
+      ? groupRules(errors, name, (row) => months[row] === m, model, [tolerances].flat(), options)
       : [],
   );
 }
 
-function groupRule(
+/** What the tolerances of a group share is fitted once. */
+function groupRules(
   errors: ErrorsInput,
   group: string,
   belongs: (row: number) => boolean,
   { component, form, reference, confidence, screened }: ErrorModel,
-  tolerance: Tolerance,
+  tolerances: readonly Tolerance[],
   { weights, ...options }: GroupRuleOptions,
-): GroupRule {
+): GroupRule[] {
   const records = recordsOf(errors);
   const rows = Array.from(records.keys()).filter(belongs);
   const own = rows.map((row) => records[row]!);
@@ -101,17 +102,11 @@ function groupRule(
   try {
     const fit = fitErrorModel(own, { component, form, reference, confidence, weights: ownWeights });
     const days = form === 'root-sum-square' ? dayModel(own, fit, ownWeights) : null;
-    return { group, rule: maximumBaseline(used, fit, tolerance, { ...options, dayModel: days }) };
+    const find = ruleFinder(used, fit, { ...options, dayModel: days });
+    return tolerances.map((tolerance) => ({ group, rule: find(tolerance) }));
   } catch (error) {
     if (!(error instanceof InputError)) throw error;
-    return {
-      group,
-      rule: noRule(
-        used,
-        tolerance,
-        'the shots of this group alone cannot be fitted: add days with near and far shots',
-        options,
-      ),
-    };
+    const reason = 'the shots of this group alone cannot be fitted: add days with near and far shots';
+    return tolerances.map((tolerance) => ({ group, rule: noRule(used, tolerance, reason, options) }));
   }
 }

@@ -52,11 +52,11 @@ export function makeRules(
   const dayModel = (component: Component) => options.get(component)!.dayModel ?? null;
   const usedWeights = wrongFixes?.weights?.filter((weight) => weight >= 0.5);
   const grouped = (make: typeof ruleByHour): (PartRule & { readonly group: string })[] =>
-    tolerances.flatMap((tolerance) => {
-      const model = models.find(({ component }) => component === tolerance.component);
-      if (model === undefined) return [];
+    models.flatMap((model) => {
       const { dayModel: _, crowdedDaysKept: __, ...rest } = options.get(model.component)!;
-      return make(used, model, tolerance, { ...rest, weights: usedWeights }).map(({ group, rule }) => ({
+      const own = tolerances.filter(({ component }) => component === model.component);
+      if (own.length === 0) return [];
+      return make(used, model, own, { ...rest, weights: usedWeights }).map(({ group, rule }) => ({
         group,
         ...short(rule),
       }));

@@ -10,10 +10,14 @@ export interface WrongFixShares {
   readonly mean: (km: number) => number;
 }
 
+/** Shares by step of length, for as long as their growth is in use. */
+const computed = new WeakMap<WrongFixGrowth, Map<number, { mean: number; high80: number }>>();
+
 /** Remembers what it computed: a quantile of the posterior is a sort, and a table of rules asks for thousands. */
 export function wrongFixShares(growth: WrongFixGrowth | null): WrongFixShares {
   if (growth === null) return { reckoned: () => 0, mean: () => 0 };
-  const known = new Map<number, { mean: number; high80: number }>();
+  const known = computed.get(growth) ?? new Map<number, { mean: number; high80: number }>();
+  computed.set(growth, known);
   const at = (step: number) => {
     let share = known.get(step);
     if (share === undefined) {

@@ -4,6 +4,7 @@ import { type Tolerance, toleranceFactor, toleranceFactorAt } from '../tolerance
 import { type AllDays, allDays } from './allDays.js';
 import { type DayLimits, type DayNodes, dayLimits, dayNodes } from './dayLimits.js';
 import { demandedShare, type WrongFixShares, wrongFixShares } from './demandedShare.js';
+import { monotone } from './scan.js';
 
 /** Whether a tolerance holds at a length, in three senses. */
 export interface Reach {
@@ -122,14 +123,14 @@ function dayModelReach(
     if (demanded >= 1) return 0;
     return all!.confidence(km, equalAxesLimit(model, limitMm, demanded, km), demanded);
   };
-  const holdsOverAllDays = (km: number): boolean => overAllDays(km, shares.reckoned(km)) >= confidence;
+  const holdsOverAllDays = monotone((km) => overAllDays(km, shares.reckoned(km)) >= confidence);
+  const likelyOverAllDays = monotone((km) => overAllDays(km, shares.mean(km)) >= 0.5);
   const rare = share > LARGEST_RMS_SHARE;
   return {
     method: 'day-model',
     // A day's own errors have longer tails than a normal law of its RMS: a rare error needs the mixture as well.
     holds: (km) => days.confidence(km, allowed(km)) >= confidence && (!rare || holdsOverAllDays(km)),
-    likelyHolds: (km) =>
-      days.confidence(km, likelyAllowed(km)) >= 0.5 && (!rare || overAllDays(km, shares.mean(km)) >= 0.5),
+    likelyHolds: (km) => days.confidence(km, likelyAllowed(km)) >= 0.5 && (!rare || likelyOverAllDays(km)),
     holdsOverAllDays,
     confidence: (km) => days.confidence(km, allowed(km)),
     allowedVariance: allowed,

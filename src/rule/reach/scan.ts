@@ -1,5 +1,7 @@
 /** Lengths are tried in these steps, outward from the base. */
 export const STEP_KM = 0.1;
+/** How much farther a look ahead goes. */
+const AHEAD = 1.4;
 
 /** How far something holds. */
 export interface Reached {
@@ -41,4 +43,26 @@ export function reachExactly(holds: (km: number) => boolean, lastKm: number): nu
     else high = middle;
   }
   return low < 2e-9 ? 0 : low;
+}
+
+/**
+ * The same question for something costly that, once it fails, fails at all greater lengths: asked in small steps outward
+ * it looks ahead and remembers, so that most answers cost nothing.
+ */
+export function monotone(holds: (km: number) => boolean): (km: number) => boolean {
+  let [held, failed] = [0, Number.POSITIVE_INFINITY];
+  return (km) => {
+    if (km <= held) return true;
+    if (km >= failed) return false;
+    const ahead = Math.min(AHEAD * km + STEP_KM, (km + failed) / 2);
+    if (holds(ahead)) {
+      held = ahead;
+      return true;
+    }
+    failed = ahead;
+    const here = holds(km);
+    if (here) held = km;
+    else failed = km;
+    return here;
+  };
 }
