@@ -88,20 +88,56 @@ export function wrongFixGrowth(errors: ErrorsInput, screening: Screening): Wrong
 /** The share at a length by the posterior. */
 export function wrongFixShareAtKm(growth: WrongFixGrowth, baselineKm: number): WrongFixShareAtKm {
   const away = logKm(baselineKm) - growth.meanLogKm;
-  const shares = growth.posterior.map((_, k) => Math.exp(logShare(k, away)));
-  const order = Uint32Array.from(shares.keys()).sort((i, j) => shares[i]! - shares[j]!);
-  const mean = shares.reduce((sum, share, k) => sum + growth.posterior[k]! * share, 0);
-  const wanted = [0.05, 0.8, 0.95];
-  const found: number[] = [];
-  let reached = 0;
-  for (const k of order) {
-    reached += growth.posterior[k]!;
-    while (found.length < wanted.length && reached >= wanted[found.length]!) found.push(shares[k]!);
-  }
-  // Rounding may leave the sum a hair below the last level.
-  while (found.length < wanted.length) found.push(shares[order.at(-1)!]!);
-  const [low5, high80, high95] = found as [number, number, number];
+  const mean = growth.posterior.reduce((sum, weight, k) => sum + weight * Math.exp(logShare(k, away)), 0);
+  const upToLevel = runningSums(growth.posterior);
+  const [low5, high80, high95] = [0.05, 0.8, 0.95].map((level) =>
+    Math.exp(logQuantile(upToLevel, away, level)),
+  ) as [number, number, number];
   return { baselineKm, mean, low5, high80, high95 };
+}
+
+/** Sums of the posterior up to each level, of every exponent by itself. */
+function runningSums(posterior: Float64Array): Float64Array {
+  const sums = posterior.slice();
+  for (let k = 0; k < sums.length; k++) if (k % LEVELS.length > 0) sums[k]! += sums[k - 1]!;
+  return sums;
+}
+
+const LEVEL_STEP = LEVELS[1]! - LEVELS[0]!;
+
+/**
+ * The smallest log share up to which the posterior has a probability: halving between the grid's ends, then the grid
+ * point itself. For each exponent the levels ascend, so that no sorting is needed.
+ */
+function logQuantile(upToLevel: Float64Array, away: number, level: number): number {
+  const count = LEVELS.length;
+  const most = Math.log(LARGEST_SHARE);
+  const lastUpTo = (e: number, log: number): number =>
+    Math.min(count, Math.floor((log - EXPONENTS[e]! * away - LEVELS[0]!) / LEVEL_STEP + 1e-9) + 1);
+  const below = (log: number): number => {
+    if (log >= most) return 1;
+    let total = 0;
+    for (let e = 0; e < EXPONENTS.length; e++) {
+      const levels = lastUpTo(e, log);
+      if (levels > 0) total += upToLevel[e * count + levels - 1]!;
+    }
+    return total;
+  };
+  const widest = Math.abs(away) * EXPONENTS.at(-1)!;
+  let [low, high] = [LEVELS[0]! - widest - 1, most];
+  while (high - low > 1e-10) {
+    const middle = (low + high) / 2;
+    if (below(middle) >= level) high = middle;
+    else low = middle;
+  }
+  if (high >= most) return most;
+  // The greatest grid point up to there is the one that brought the sum to the level.
+  let found = Number.NEGATIVE_INFINITY;
+  for (let e = 0; e < EXPONENTS.length; e++) {
+    const levels = lastUpTo(e, high);
+    if (levels > 0) found = Math.max(found, LEVELS[levels - 1]! + EXPONENTS[e]! * away);
+  }
+  return Math.min(found, most);
 }
 
 const logKm = (km: number): number => Math.log(Math.max(km, NEAREST_KM));

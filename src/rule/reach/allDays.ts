@@ -1,4 +1,4 @@
-import { dayPrior, THETAS } from '../../days/index.js';
+import { DAY_COMBOS, dayPrior, MEDIAN_COUNT, THETAS } from '../../days/index.js';
 import type { Component } from '../../fit/index.js';
 import { normalCdf } from '../../stats/index.js';
 import type { DayNodes } from './dayLimits.js';
@@ -21,6 +21,13 @@ export function shareWithin(component: Component, limitMm: number, variance: num
     : 1 - 2 * normalCdf(-limitMm / Math.sqrt(variance));
 }
 
+/** Sums of the weights up to each median, of every spread and family by itself. */
+function runningSums(weights: Float64Array): Float64Array {
+  const sums = weights.slice();
+  for (let j = 0; j < sums.length; j++) if (j % MEDIAN_COUNT > 0) sums[j]! += sums[j - 1]!;
+  return sums;
+}
+
 /** @param addedVariance what comes to σ² at every length, mm² */
 export function allDays(component: Component, { B, nodes }: DayNodes, addedVariance: number): AllDays {
   const prior = dayPrior();
@@ -31,6 +38,7 @@ export function allDays(component: Component, { B, nodes }: DayNodes, addedVaria
     weight,
     comboWeights,
     used: Uint32Array.from(comboWeights.keys()).filter((j) => comboWeights[j]! > NEGLIGIBLE),
+    upToMedian: runningSums(comboWeights),
   }));
   const inside = (A: number, km: number, limitMm: number): Float64Array =>
     slopes.map((slope) => shareWithin(component, limitMm, A + slope * km * km));
@@ -41,10 +49,19 @@ export function allDays(component: Component, { B, nodes }: DayNodes, addedVaria
   };
   return {
     confidence: (km, limitMm, share) =>
-      parts.reduce((sum, { A, weight, comboWeights, used }) => {
+      parts.reduce((sum, { A, weight, upToMedian }) => {
         const values = inside(A, km, limitMm);
         let held = 0;
-        for (const j of used) if (ofCombo(values, j) >= share) held += comboWeights[j]!;
+        for (let first = 0; first < DAY_COMBOS.length; first += MEDIAN_COUNT) {
+          // A larger median day means fewer shots within: the medians that hold are the first ones.
+          let [low, high] = [0, MEDIAN_COUNT];
+          while (low < high) {
+            const middle = (low + high) >> 1;
+            if (ofCombo(values, first + middle) >= share) low = middle + 1;
+            else high = middle;
+          }
+          if (low > 0) held += upToMedian[first + low - 1]!;
+        }
         return sum + weight * held;
       }, 0),
     shareWithin: (km, limitMm) =>
