@@ -140,20 +140,22 @@ describe('suspected wrong fixes', () => {
     expect(near.length).toBeGreaterThan(0);
   });
   it('that stand alone on their mark and day are judged all the same', () => {
-    const lone = errors.findIndex(
-      ({ mark, day }) => errors.filter((row) => row.mark === mark && row.day === day).length === 1,
+    const days40 = [...new Set(errors.map(({ day }) => day))].slice(0, 40);
+    const some = errors.filter(({ day }) => days40.includes(day));
+    const visits = some.map(({ mark, day }) => `${mark} ${day}`);
+    const lone = visits.findIndex(
+      (visit, i) => visits.indexOf(visit) === i && visits.lastIndexOf(visit) === i,
     );
-    const spoilt = errors.map((row, i) => (i === lone ? { ...row, east: row.east + 500 } : row));
-    const own = suspecting([lone], errors.length);
+    const spoilt = some.map((row, i) => (i === lone ? { ...row, east: row.east + 500 } : row));
+    const own = suspecting([lone], some.length);
     const fit = fitErrorModel(spoilt, {
       component: 'horizontal',
       reference: 'repeatability',
       weights: own.weights,
     });
-    const far = Math.max(9, errors[lone]!.baselineKm);
     const { specSheetRules } = backTest(spoilt, fit, {
       screening: own,
-      tolerances: [tolerance(1000 * far, { limitMm: 200 })],
+      tolerances: [tolerance(200)],
       specSheet: spec,
     });
     expect(specSheetRules[0]!.failures.filter(({ suspected }) => suspected)).toHaveLength(1);
