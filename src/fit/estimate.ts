@@ -1,6 +1,7 @@
 import { dot } from '../stats/index.js';
 import { FORM_CURVES, type Form } from './forms.js';
 import { type FormSolution, type SquaredErrors, solveForm } from './scoring.js';
+import { sumsByLength } from './sumsByLength.js';
 
 /** Root-sum-square model μ = A + B l: A in mm², B in ppm² (mm²/km²). */
 export interface VarianceEstimate {
@@ -40,10 +41,11 @@ export function estimateVariance(
 
 /** Fits a form and applies the rules of display. Errors that are all 0 give 0 and 0. */
 export function estimateForm(
-  data: SquaredErrors,
+  errors: SquaredErrors,
   form: Form,
   start?: { readonly p: number; readonly q: number },
 ): FormEstimate {
+  const data = sumsByLength(errors);
   const { y, w } = data;
   const meanSquare = dot(w, y) / w.reduce((sum, value) => sum + value, 0);
   if (!(meanSquare > 0)) {

@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { fitErrorModel, screenWrongFixes } from '../../src/fit/index.js';
 import { normalDeviates, randomStream } from '../../src/stats/index.js';
+import { benchEverything } from './everything.js';
 import { medianSeconds } from './timing.js';
 
 const OCCUPATIONS = 100_000;
@@ -27,6 +28,7 @@ export async function benchFit(): Promise<void> {
   );
   console.log(`  constant ${show(constantMm)} mm, ppm ${show(ppm)}`);
   compareWithR(rows, ours);
+  benchEverything();
   await benchScreening();
 }
 

@@ -136,10 +136,15 @@ function alternate(
     const mu = Float64Array.from(cells.cells, (cell) => varianceAt(model, cell.l));
     const byCell = othersVariance(cells, rho, mu);
     const before = share;
-    share = Float64Array.from(cellOf, (k) => byCell[k]!);
-    const y = squares.map((value, k) => value / (1 + share[k]!));
+    share = new Float64Array(cellOf.length);
+    const y = new Float64Array(cellOf.length);
+    for (let k = 0; k < y.length; k++) {
+      share[k] = byCell[cellOf[k]!]!;
+      y[k] = squares[k]! / (1 + share[k]!);
+    }
     model = varianceModel({ ...picked, y }, pass === 0 ? undefined : model);
-    const scatter = within.reduce((sum, value, i) => sum + value / varianceAt(model, l[i]!), 0);
+    let scatter = 0;
+    for (let i = 0; i < l.length; i++) scatter += within[i]! / varianceAt(model, l[i]!);
     const next = repeats > 0 ? Math.min(1, Math.max(0, 1 - scatter / repeats)) : 0;
     const still =
       Math.abs(next - rho) < TOLERANCE && share.every((value, k) => Math.abs(value - before[k]!) < TOLERANCE);

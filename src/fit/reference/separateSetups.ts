@@ -61,14 +61,20 @@ export function separateSetups(
     for (let c = 0; c < axes; c++) {
       const column = components[c]!;
       if (marks !== null) {
-        const free = column.map((value, i) => value - state.offset[c]![setupOf[i]!]!);
+        const [free, own] = [new Float64Array(l.length), new Float64Array(l.length)];
+        const offset = state.offset[c]!;
+        for (let i = 0; i < free.length; i++) free[i] = column[i]! - offset[setupOf[i]!]!;
         const others = othersMeans(marks, cellMeans(marks, free, w));
-        const own = Float64Array.from(marks.cellOf, (k) => others[k]!);
+        for (let i = 0; i < own.length; i++) own[i] = others[marks.cellOf[i]!]!;
         // What all marks and all setups have in common cannot be told apart: it is counted to the setups.
         const common = weightedMean(visit.mean(own), visitWeight);
-        state.mark[c] = own.map((value) => value - common);
+        for (let i = 0; i < own.length; i++) own[i]! -= common;
+        state.mark[c] = own;
       }
-      const means = visit.mean(column.map((value, i) => value - state.mark[c]![i]!));
+      const mark = state.mark[c]!;
+      const alone = new Float64Array(l.length);
+      for (let i = 0; i < alone.length; i++) alone[i] = column[i]! - mark[i]!;
+      const means = visit.mean(alone);
       const sums = new Float64Array(setups.length);
       visitWeight.forEach((value, v) => {
         sums[visit.setup[v]!]! += value * means[v]!;
@@ -77,11 +83,20 @@ export function separateSetups(
     }
     return total;
   };
-  const residual = (c: number): Float64Array =>
-    components[c]!.map((value, i) => value - state.mark[c]![i]! - state.offset[c]![setupOf[i]!]!);
+  // Plain loops here and in the turns: they run in every pass, and map takes several times as long.
+  const residual = (c: number): Float64Array => {
+    const [column, mark, offset] = [components[c]!, state.mark[c]!, state.offset[c]!];
+    const values = new Float64Array(column.length);
+    for (let i = 0; i < values.length; i++) values[i] = column[i]! - mark[i]! - offset[setupOf[i]!]!;
+    return values;
+  };
   const squares = (): Float64Array => {
-    const columns = components.map((_, c) => residual(c));
-    return l.map((_, i) => columns.reduce((sum, column) => sum + column[i]! ** 2, 0));
+    const sums = new Float64Array(l.length);
+    for (let c = 0; c < axes; c++) {
+      const values = residual(c);
+      for (let i = 0; i < sums.length; i++) sums[i]! += values[i]! ** 2;
+    }
+    return sums;
   };
 
   for (let k = 0; k < (marks === null ? 1 : TURNS); k++) turn(visit.weight);
@@ -93,7 +108,8 @@ export function separateSetups(
   for (let pass = 0; pass < MOST_PASSES && !converged; pass++) {
     const mu = (length: number): number => A + B * length;
     if (visit.repeats > 0) {
-      const scatter = visit.within.reduce((sum, value, i) => sum + value / mu(l[i]!), 0);
+      let scatter = 0;
+      for (let i = 0; i < l.length; i++) scatter += visit.within[i]! / mu(l[i]!);
       rho = Math.min(1, Math.max(0, 1 - scatter / visit.repeats));
     }
     const perAxis = visit.l.map((length) => mu(length) / axes);
@@ -107,10 +123,12 @@ export function separateSetups(
         rho,
         Float64Array.from(marks.cells, (cell) => mu(cell.l)),
       );
-      share = Float64Array.from(marks.cellOf, (k) => byCell[k]!);
+      share = new Float64Array(l.length);
+      for (let i = 0; i < share.length; i++) share[i] = byCell[marks.cellOf[i]!]!;
     }
     state.standardError = standardErrors(visit, visitWeight, total, perAxis, meanShare, share);
-    y = squares().map((value, i) => (value + axes / total[setupOf[i]!]!) / (1 + share[i]!));
+    y = squares();
+    for (let i = 0; i < y.length; i++) y[i] = (y[i]! + axes / total[setupOf[i]!]!) / (1 + share[i]!);
     model = varianceModel({ y, l, w }, { p: A, q: Math.max(B, 1e-6) });
     const change =
       Math.abs(model.displayP - A) / Math.max(A, 1e-9) + Math.abs(model.displayQ - B) / (B + 1e-9);
