@@ -7,6 +7,7 @@ import { layoutCommand } from './layout.js';
 import { newCommand } from './new.js';
 import { packageVersion } from './package.js';
 import { runCommand } from './run.js';
+import { watchCommand } from './watch.js';
 
 const EXIT_MISTAKE = 2;
 
@@ -29,6 +30,7 @@ async function main(argv: readonly string[]): Promise<number> {
     layoutCommand(done),
     demoCommand(done),
     newCommand(done),
+    watchCommand(done),
   ]) {
     program.addCommand(command.exitOverride().showHelpAfterError('Run with --help to see how it is called.'));
   }

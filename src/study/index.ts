@@ -18,9 +18,11 @@ export type {
 export { readStudy } from './readStudy.js';
 export type { BlunderResult, FileResult, LengthClass, Results } from './results.js';
 export { resultsJsonSchema, resultsSchema } from './resultsSchema.js';
+export type { BackTestResult, HourRule, PartRule, SeasonRule, WatchResult } from './ruleResultTypes.js';
 export { type RunOptions, readStudyErrors, runStudy, type StudyErrors, type StudyRun } from './run.js';
 export { type StudySettings, studyJsonSchema } from './settings.js';
 export { type SkyInput, skyOfDays } from './skyOfDays.js';
 export { type SkyPoint, skyPoints } from './skyPoints.js';
 export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold } from './skyResult.js';
 export type { Study } from './study.js';
+export { readResults, type WatchRun, watchStudy } from './watchStudy.js';
