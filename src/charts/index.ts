@@ -1,4 +1,5 @@
 export { type AssociationInput, associationChart } from './associationChart.js';
+export { type BackTestChartInput, backTestChart } from './backTestChart.js';
 export type { ChartSpec } from './chartSpec.js';
 export { type DaysInput, daysChart } from './daysChart.js';
 export type { DayCause } from './daysFactors.js';
@@ -8,6 +9,7 @@ export { type HourPpmInput, hourPpmChart } from './hourPpmChart.js';
 export { type MarkMapInput, markMapChart } from './markMapChart.js';
 export { type MarkMeansInput, markMeansChart } from './markMeansChart.js';
 export { renderPng, renderSvg } from './renderChart.js';
+export { type RuleMovesInput, ruleMovesChart } from './ruleMovesChart.js';
 export { type ShareInsideInput, shareInsideChart } from './shareInsideChart.js';
 export { type SplitInput, splitChart } from './splitChart.js';
 export { type TwoWayInput, twoWayChart } from './twoWayChart.js';

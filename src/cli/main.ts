@@ -1,11 +1,11 @@
 #!/usr/bin/env node
 import { Command, CommanderError } from 'commander';
 import { formatMessage, InputError } from '../logs/index.js';
+import { softwareVersion } from '../study/index.js';
 import { checkCommand } from './check.js';
 import { demoCommand } from './demo.js';
 import { layoutCommand } from './layout.js';
 import { newCommand } from './new.js';
-import { packageVersion } from './package.js';
 import { runCommand } from './run.js';
 import { watchCommand } from './watch.js';
 
@@ -21,7 +21,7 @@ async function main(argv: readonly string[]): Promise<number> {
     .description(
       'From exported RTK check shots on known marks to your own "a mm + b ppm", with honest intervals, and the maximum baseline that holds a tolerance.',
     )
-    .version(packageVersion())
+    .version(softwareVersion())
     .exitOverride()
     .showHelpAfterError('Run with --help to see how it is called.');
   for (const command of [

@@ -2,7 +2,15 @@ import { existsSync, readdirSync, readFileSync, rmSync, statSync } from 'node:fs
 import { copyFile, mkdir, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { inputError } from '../logs/index.js';
-import { csvText, reportHtml, reportTables } from '../report/index.js';
+import {
+  annexHtml,
+  cardHtml,
+  csvText,
+  markdownOf,
+  reportHtml,
+  reportTables,
+  weightsHtml,
+} from '../report/index.js';
 import type { Results, StudyRun } from '../study/index.js';
 import { drawPictures } from './pictures.js';
 
@@ -56,7 +64,16 @@ export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: 
   }
   const { pictures, files } = await drawPictures(run);
   for (const [name, svg] of files) await writeFile(join(folder, 'charts', `${name}.svg`), svg);
-  await writeFile(join(folder, 'report.html'), reportHtml(run.results, pictures));
+  const pages = {
+    report: reportHtml(run.results, pictures),
+    annex: annexHtml(run, pictures),
+    card: cardHtml(run.results),
+    weights: weightsHtml(run.results),
+  };
+  for (const [name, page] of Object.entries(pages)) {
+    await writeFile(join(folder, `${name}.html`), page);
+    await writeFile(join(folder, `${name}.md`), markdownOf(page));
+  }
   await writeFile(join(folder, 'results.json'), resultsText(run.results));
 }
 

@@ -1,14 +1,16 @@
 import {
+  backTestChart,
   type ChartSpec,
   errorByBaselineChart,
   markMapChart,
   markMeansChart,
   renderSvg,
+  ruleMovesChart,
 } from '../charts/index.js';
 import type { Component } from '../fit/index.js';
-import type { ReportPicture, ReportPictures } from '../report/index.js';
+import { changeWords, Page, type ReportPicture, type ReportPictures } from '../report/index.js';
 import { LENGTH_EDGES_KM, summarizeBy } from '../split/index.js';
-import type { StudyRun } from '../study/index.js';
+import { readerUnits, type StudyRun } from '../study/index.js';
 
 /** The charts of a run, drawn: for the report, and as files by name. */
 export async function drawPictures(
@@ -38,7 +40,25 @@ export async function drawPictures(
     'mark-means',
     marks.length === 0 ? null : markMeansChart({ marks, heights: run.results.heights }),
   );
-  return { pictures: { horizontal, vertical, maps, markMeans }, files };
+  const moves = await draw('rule-moves', movesChart(run));
+  const proof = await draw('back-test', proofChart(run));
+  return { pictures: { proof, moves, horizontal, vertical, maps, markMeans }, files };
+}
+
+function proofChart({ results: { backTest, study } }: StudyRun): ChartSpec | null {
+  if (!backTest.some(({ lengthClasses }) => lengthClasses.length > 0)) return null;
+  return backTestChart({ backTest, units: readerUnits(study.reportUnits) });
+}
+
+function movesChart({ results }: StudyRun): ChartSpec | null {
+  const { ruleMoves: moves, study } = results;
+  if (!moves.some(({ maximumBaselineKm }) => maximumBaselineKm)) return null;
+  const page = new Page(results);
+  return ruleMovesChart({
+    moves,
+    words: (move) => changeWords(page, move),
+    units: readerUnits(study.reportUnits),
+  });
 }
 
 function errorChart({ errors, models, results }: StudyRun, component: Component): ChartSpec | null {

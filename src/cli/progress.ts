@@ -1,4 +1,4 @@
-import { count } from '../report/format.js';
+import { count } from '../report/index.js';
 
 /** Counts rows on a terminal; silent where the output goes to a file. */
 export function rowCounter(stream: NodeJS.WriteStream = process.stderr): {

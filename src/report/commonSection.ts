@@ -1,7 +1,8 @@
 import { type CommonParameter, isTold } from '../errors/index.js';
 import type { Results } from '../study/index.js';
-import { count, NOT_GIVEN, plural, signed } from './format.js';
+import type { NumberKind } from './format.js';
 import { type Html, html } from './html.js';
+import type { Page } from './page.js';
 import { table } from './table.js';
 
 type BaseParameters = Results['commonCauses']['bases'][number];
@@ -11,26 +12,26 @@ interface Row {
 }
 
 /** What all positions from a base have in common, what likely caused it, and what to do. */
-export function commonSection({ commonCauses, heights }: Results): Html {
-  const { bases, causes } = commonCauses;
+export function commonSection(page: Page): Html {
+  const { bases, causes } = page.results.commonCauses;
   const rows = bases.flatMap((base) => base.parameters.map((parameter): Row => ({ base, parameter })));
   if (rows.length === 0 && causes.length === 0) return html``;
   return html`<section id="common"><h2>What all positions have in common</h2>
 <p>Another frame or unit, a grid taken for the ground, a geoid, a rod or the coordinate of a base moves all marks together.
 Such errors are signed: they have a direction and are the same on all days. They are no part of the random spread of which
 constant and ppm are the measure, and a ppm in this table is another thing than the ppm of the error model.</p>
-${causeList(causes)}
-${bases.map(({ base, marks, days }) => html`<p class="small">Base ${base}: mean errors of ${plural(marks, 'mark')} on ${plural(days, 'day')}.</p>\n`)}
-${rows.length === 0 ? null : parameterTable(rows, heights)}
+${causeList(page, causes)}
+${bases.map((base) => html`<p class="small">Base ${page.name(base.base)}: mean errors of ${page.counted(base, 'marks', 'mark')} on ${page.counted(base, 'days', 'day')}.</p>\n`)}
+${rows.length === 0 ? null : parameterTable(page, rows)}
 </section>
 `;
 }
 
-function causeList(causes: Results['commonCauses']['causes']): Html {
+function causeList(page: Page, causes: Results['commonCauses']['causes']): Html {
   if (causes.length === 0) {
     return html`<p>Nothing was found that all positions have in common beyond what chance explains or a fit leaves aside.</p>\n`;
   }
-  return html`${causes.map(({ text, remedy }) => html`<p class="first">${text} <strong>${remedy}</strong></p>\n`)}
+  return html`${causes.map(({ text, remedy }) => html`<p class="first">${page.text(text)} <strong>${page.text(remedy)}</strong></p>\n`)}
 <p>Nothing was repaired. State the remedy in the study file and run it again.</p>
 `;
 }
@@ -45,29 +46,30 @@ const NAMES: Readonly<Record<CommonParameter['name'], string>> = {
   'tilt-north': 'Growth of the height error to the north',
 };
 
-const UNITS: Readonly<Record<CommonParameter['unit'], string>> = {
-  mm: 'mm',
+const UNITS = {
   ppm: 'ppm',
   arcsec: '″',
-  'mm/km': 'mm per km',
-};
+  'mm/km': 'ppm',
+} as const;
 
-function parameterTable(rows: readonly Row[], heights: Results['heights']): Html {
+function parameterTable(page: Page, rows: readonly Row[]): Html {
   const several = new Set(rows.map(({ base }) => base.base)).size > 1;
   return html`${table(
-    `Shift, scale, rotation and tilts of the marks about their base; heights are ${heights}`,
+    `Shift, scale, rotation and tilts of the marks about their base; heights are ${page.results.heights}`,
     rows,
     [
-      ...(several ? [{ head: 'Base', cell: ({ base }: Row) => base.base, text: true }] : []),
+      ...(several ? [{ head: 'Base', cell: ({ base }: Row) => page.name(base.base), text: true }] : []),
       { head: 'What', cell: ({ parameter }) => NAMES[parameter.name], text: true },
-      { head: 'Estimate', cell: ({ parameter }) => signed(parameter.estimate, decimals(parameter)) },
+      { head: 'Estimate', cell: ({ parameter }) => page.number(parameter, 'estimate', kind(parameter)) },
       {
         head: 'Standard error',
-        cell: ({ parameter: { standardError, ...rest } }) =>
-          standardError === null ? NOT_GIVEN : standardError.toFixed(decimals(rest)),
+        cell: ({ parameter }) => page.number(parameter, 'standardError', kind(parameter)),
       },
-      { head: 'Unit', cell: ({ parameter }) => UNITS[parameter.unit], text: true },
-      { head: 'Degrees of freedom', cell: ({ parameter }) => count(parameter.degreesOfFreedom) },
+      { head: 'Unit', cell: ({ parameter }) => unitOf(page, parameter), text: true },
+      {
+        head: 'Degrees of freedom',
+        cell: ({ parameter }) => page.number(parameter, 'degreesOfFreedom', 'count'),
+      },
       { head: 'Told from nothing (99 %)', cell: ({ parameter }) => toldWords(parameter), text: true },
     ],
   )}
@@ -76,7 +78,11 @@ the scatter of days and the marks' own errors.</p>
 `;
 }
 
-const decimals = ({ unit }: Pick<CommonParameter, 'unit'>): number => (unit === 'mm' ? 1 : 2);
+const kind = ({ unit }: CommonParameter): NumberKind => (unit === 'mm' ? 'signed error' : 'signed ppm');
+
+/** `mm per km` is a part in a million. */
+const unitOf = ({ units }: Page, { unit }: CommonParameter): string =>
+  unit === 'mm' ? units.error.name : UNITS[unit];
 
 const toldWords = (parameter: CommonParameter): string =>
   parameter.standardError === null ? 'too few marks to tell' : isTold(parameter) ? 'yes' : 'no';

@@ -1,114 +1,78 @@
-import { type SpecSheet, specSheetSigmaMm } from '../rule/index.js';
-import type { FitResult, LengthClass, Results } from '../study/index.js';
-import { count, mm, NOT_GIVEN, percent, ppm, withLimits } from './format.js';
+import type { FitResult, LengthClass } from '../study/index.js';
+import { FORMULAS, fitTable } from './fitTable.js';
+import { percent } from './format.js';
 import { type Html, html } from './html.js';
+import type { Page } from './page.js';
 import { type Column, table } from './table.js';
-import { componentTitle, type HeightKind, REFERENCE_WORDS, shownFits } from './words.js';
+import { shownFits } from './words.js';
 
-/** How the errors grow with distance: charts, fitted models and what was measured by length. */
-export function fitSection(
-  results: Results,
-  charts: { readonly horizontal: Html | null; readonly vertical: Html | null },
-): Html {
-  const { fits, lengthClasses, specSheet, heights } = results;
+/** How the errors grow with distance: the fitted model, the spec sheet, and what was measured by length. */
+export function fitSection(page: Page, chart: Html | null): Html {
+  const { fits } = page.results;
   if (fits.length === 0)
     return html`<section id="fit"><h2>How errors grow with distance</h2><p>No fit was possible.</p></section>\n`;
+  const shown = shownFits(page.results);
+  const forms = [...new Set(shown.map(({ form }) => FORMULAS[form]))].join(' or ');
   return html`<section id="fit"><h2>How errors grow with distance</h2>
-${charts.horizontal}${charts.vertical}${manyTolerances(results)}
-${fitTable(shownFits(results), heights)}
-${shownFits(results).map((fit) => fitRemarks(fit, heights))}
-${lengthTable(lengthClasses, specSheet, heights)}
+${chart}${specSheetWords(page)}
+${fitTable(page, `Own error model, ${forms}, with ${percent(shown[0]!.confidence)} intervals`, shown)}
+${lengthTable(page)}
 </section>
 `;
 }
 
-const FORMULAS = {
-  'root-sum-square': 'spread² = constant² + (ppm × distance)²',
-  'linear-sum': 'spread = constant + ppm × distance',
-} as const;
-
-const COUNTED_FROM = {
-  absolute: 'published coordinates',
-  repeatability: "the mark's other days",
-  relative: "the setup's offset",
-} as const;
-
-function fitTable(fits: readonly FitResult[], heights: HeightKind): Html {
-  const level = percent(fits[0]!.confidence);
-  const columns: Column<FitResult>[] = [
-    { head: 'Component', cell: ({ component }) => componentTitle(component, heights), text: true },
-    { head: 'Counted from', cell: ({ reference }) => COUNTED_FROM[reference], text: true },
-    { head: 'Constant, mm', cell: ({ constantMm }) => withLimits(constantMm, mm) },
-    { head: 'ppm, mm per km', cell: (fit) => withLimits(fit.ppm, ppm) },
-    { head: 'Spread is', cell: ({ basis }) => basis, text: true },
-    { head: 'Occupations', cell: ({ occupations }) => count(occupations) },
-    { head: 'Days', cell: ({ days }) => count(days) },
-  ];
-  return table(
-    `Own error model, ${[...new Set(fits.map(({ form }) => FORMULAS[form]))].join(' or ')}, with ${level} intervals`,
-    fits,
-    columns,
-  );
-}
-
-function fitRemarks(fit: FitResult, heights: HeightKind): Html {
-  const { low, high } = fit.ppmIfIndependent;
-  const independent =
-    low === null || high === null
-      ? null
-      : html` If every shot were independent the ppm would seem to lie between ${ppm(low)} and ${ppm(high)}: shots of one day are alike, so days are counted instead.`;
-  const influential =
-    fit.mostInfluentialDay === null
-      ? null
-      : html` The day that moves the ppm most is ${fit.mostInfluentialDay.day}: without it the ppm is ${ppm(fit.mostInfluentialDay.ppmWithout)}.`;
-  return html`<p class="small">${componentTitle(fit.component, heights)}: ${REFERENCE_WORDS[fit.reference]}; interval by ${fit.interval}.${independent}${influential}</p>
-`;
-}
-
-function lengthTable(classes: readonly LengthClass[], spec: SpecSheet | null, heights: HeightKind): Html {
-  const rms = (interval: LengthClass['horizontalRmsMm']): string =>
-    interval === null ? NOT_GIVEN : withLimits(interval, mm);
-  const columns: Column<LengthClass>[] = [
-    { head: 'Distance, km', cell: ({ fromKm, toKm }) => `${fromKm} to ${toKm}`, text: true },
-    { head: 'Occupations', cell: ({ occupations }) => count(occupations) },
-    { head: 'Days', cell: ({ days }) => count(days) },
-    { head: 'Visits without a fix', cell: ({ visitsWithoutFix }) => count(visitsWithoutFix) },
-    { head: 'Radial RMS, mm', cell: ({ horizontalRmsMm, tooFew }) => mark(rms(horizontalRmsMm), tooFew) },
-    { head: 'Vertical RMS, mm', cell: ({ verticalRmsMm, tooFew }) => mark(rms(verticalRmsMm), tooFew) },
-  ];
-  if (spec !== null) {
-    const stated =
-      (component: 'horizontal' | 'vertical') =>
-      ({ baselineKm }: LengthClass): string =>
-        mm(specSheetSigmaMm(spec, component, baselineKm));
-    columns.push(
-      { head: 'Spec sheet, radial', cell: stated('horizontal') },
-      { head: 'Spec sheet, vertical', cell: stated('vertical') },
-    );
+/** The spec sheet beside the own model, in one sentence for each component. */
+function specSheetWords(page: Page): Html {
+  const { specSheet, specSheetTest, fits } = page.results;
+  if (specSheet === null) {
+    return html`<p>The study file gives no spec sheet, so there is none to compare with.</p>\n`;
   }
-  const starred = classes.some(({ tooFew, occupations }) => tooFew && occupations > 0);
-  const notes = [
-    ...(starred
-      ? [
-          '* too few: fewer than 10 occupations or 3 days; the figure describes these occupations and nothing more.',
-        ]
-      : []),
-    ...(spec === null
-      ? []
-      : ['The spec sheet is for ideal conditions, converted to the same kind of spread.']),
-  ];
-  return html`${table(`Measured by distance (shown, not fitted); vertical: ${heights} heights`, classes, columns)}
-<p class="small">${notes.join(' ')}</p>
+  const { error } = page.units;
+  const words = (fit: FitResult): Html => {
+    const stated = specSheet[fit.component];
+    return html`<li>${fit.component === 'horizontal' ? 'In plan' : 'In height'} the spec sheet states ${page.number(stated, 'constantMm', 'error')} ${error.name}
++ ${page.number(stated, 'ppm', 'ppm')} ppm (${SHEET_LEVELS[specSheet.level]}${fit.component === 'vertical' ? '' : `, ${specSheet.axis}`}, ${specSheet.form});
+your own shots show ${page.number(fit.constantMm, 'estimate', 'error')} ${error.name} + ${page.number(fit.ppm, 'estimate', 'ppm')} ppm (${fit.basis}, ${fit.form}).</li>\n`;
+  };
+  const own = fits.filter(({ basisOfRule }) => basisOfRule);
+  return html`<ul>${own.map(words)}</ul>
+${specSheetTest.map(({ component, sentence }) => html`<p><strong>${component === 'horizontal' ? 'In plan' : 'In height'}.</strong> ${page.text(sentence)}</p>\n`)}
+<p class="small">Numbers of different form, axis or level cannot be compared as they stand; the table below has both as the same kind of
+spread.</p>
 `;
 }
 
-const mark = (text: string, tooFew: boolean): string => (tooFew && text !== NOT_GIVEN ? `${text} *` : text);
+const SHEET_LEVELS = { rms: 'root-mean-square', '68': 'for 68 %', '95': 'for 95 %' } as const;
 
-/** A chart shows one tolerance; where a component has more, this says which. */
-function manyTolerances({ rules }: Results): Html | null {
-  const several = rules.some(
-    ({ component }, k) => rules.findIndex((rule) => rule.component === component) !== k,
-  );
-  if (!several) return null;
-  return html`<p class="small">Each chart shows the first tolerance of its component; the others stand in the list of rules above.</p>\n`;
+/** Measured spread by class of length, with the spec sheet's. */
+export function lengthTable(page: Page): Html {
+  const { lengthClasses, heights, specSheet } = page.results;
+  const { distance, error } = page.units;
+  const rms = (row: LengthClass, key: 'horizontalRmsMm' | 'verticalRmsMm'): Html => {
+    const value = row[key];
+    return value === null ? html`—` : html`${page.limits(value, 'error')}${row.tooFew ? ' *' : ''}`;
+  };
+  const edge = (row: LengthClass, key: 'fromKm' | 'toKm'): Html => page.number(row, key, 'edge of a class');
+  const stated = (key: 'horizontal' | 'vertical') => ({
+    head: `Spec sheet, ${key === 'horizontal' ? 'radial' : 'vertical'}`,
+    cell: ({ specSheetMm }: LengthClass) =>
+      specSheetMm === null ? '—' : page.number(specSheetMm, key, 'error'),
+  });
+  const columns: Column<LengthClass>[] = [
+    {
+      head: `Distance, ${distance.name}`,
+      cell: (row) => html`${edge(row, 'fromKm')} to ${edge(row, 'toKm')}`,
+      text: true,
+    },
+    { head: 'Occupations', cell: (row) => page.number(row, 'occupations', 'count') },
+    { head: 'Days', cell: (row) => page.number(row, 'days', 'count') },
+    { head: 'Visits without a fix', cell: (row) => page.number(row, 'visitsWithoutFix', 'count') },
+    { head: `Radial RMS, ${error.name}`, cell: (row) => rms(row, 'horizontalRmsMm') },
+    { head: `Vertical RMS, ${error.name}`, cell: (row) => rms(row, 'verticalRmsMm') },
+    ...(specSheet === null ? [] : [stated('horizontal'), stated('vertical')]),
+  ];
+  const starred = lengthClasses.some(({ tooFew, occupations }) => tooFew && occupations > 0);
+  return html`${table(`Measured by distance (shown, not fitted); vertical: ${heights} heights`, lengthClasses, columns)}
+<p class="small">${starred ? '* too few: fewer than 10 occupations or 3 days; the figure describes these occupations and nothing more. ' : ''}${specSheet === null ? '' : 'The spec sheet is for ideal conditions; it stands here as the same kind of spread.'}</p>
+`;
 }

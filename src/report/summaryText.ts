@@ -1,27 +1,21 @@
 import { formatMessage, type Message } from '../logs/index.js';
-import type { FileResult, Results } from '../study/index.js';
+import { type FileResult, type Results, readerUnits } from '../study/index.js';
 import { count, plural } from './format.js';
-import {
-  fitSentence,
-  groupedMessages,
-  otherFilesWords,
-  ruleSentence,
-  setAsideWords,
-  shownFits,
-  spoiling,
-  whyNoRule,
-} from './words.js';
+import { groupedMessages, otherFilesWords, spoiling } from './groupedMessages.js';
+import { textInUnits } from './textInUnits.js';
+import { fitSentence, ruleSentence, setAsideWords, shownFits, whyNoRule } from './words.js';
 
 /** What a run found, in a few lines for a terminal. */
 export function summaryText(results: Results): string {
+  const units = readerUnits(results.study.reportUnits);
   return [
     results.study.title,
     '',
-    ...spoiling(results.messages).map(({ text }) => `First: ${text}`),
-    ...results.rules.map((rule) => ruleSentence(rule, results.heights)),
+    ...spoiling(results.messages).map(({ text }) => `First: ${textInUnits(text, units)}`),
+    ...results.rules.map((rule) => ruleSentence(rule, results.heights, units)),
     ...(results.rules.length === 0 ? [`There is no rule: ${whyNoRule(results)}.`] : []),
     '',
-    ...shownFits(results).map((fit) => fitSentence(fit, results.heights)),
+    ...shownFits(results).map((fit) => fitSentence(fit, results.heights, units)),
     ...(results.fits.length === 0 ? ['No fit.'] : []),
     '',
     ...accountLines(results),

@@ -93,7 +93,7 @@ function fitComponent(
   const basis = fitErrorModel(errors, { component, form: basisForm, reference, confidence, ...screened });
   const common = { component, confidence };
   const others = FORMS.flatMap((form) =>
-    [...(weights === null ? [] : [screened]), {}].flatMap((screening) =>
+    (weights === null ? [screened] : [screened, {}]).flatMap((screening) =>
       REFERENCES.flatMap((each): FittedModel[] => {
         const isBasis = form === basisForm && each === reference && screening === screened;
         if (isBasis) return [{ model: basis, composed: false }];

@@ -1,3 +1,4 @@
+export type { AdjustmentWeight, ConstantAndPpm } from './adjustmentWeights.js';
 export type { ControlMark } from './controlMarks.js';
 export type {
   DailyFactorResult,
@@ -15,14 +16,23 @@ export type {
   WrongFixResult,
   WrongFixShareResult,
 } from './fitResultTypes.js';
+export {
+  REPORT_UNITS,
+  type ReaderUnit,
+  type ReaderUnits,
+  type ReportUnits,
+  readerUnits,
+} from './readerUnits.js';
 export { readStudy } from './readStudy.js';
 export type { BlunderResult, FileResult, LengthClass, Results } from './results.js';
 export { resultsJsonSchema, resultsSchema } from './resultsSchema.js';
+export type { RuleMove, RuleMoveKind } from './ruleMoves.js';
 export type { BackTestResult, HourRule, PartRule, SeasonRule, WatchResult } from './ruleResultTypes.js';
 export { type RunOptions, readStudyErrors, runStudy, type StudyErrors, type StudyRun } from './run.js';
 export { type StudySettings, studyJsonSchema } from './settings.js';
 export { type SkyInput, skyOfDays } from './skyOfDays.js';
 export { type SkyPoint, skyPoints } from './skyPoints.js';
 export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold } from './skyResult.js';
+export { softwareVersion } from './softwareVersion.js';
 export type { Study } from './study.js';
 export { readResults, type WatchRun, watchStudy } from './watchStudy.js';

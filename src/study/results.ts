@@ -18,8 +18,10 @@ import type {
   MarkResult,
   WrongFixResult,
 } from './fitResultTypes.js';
+import type { RuleOutcomes } from './ruleOutcomes.js';
 import type { BackTestResult, HourRule, SeasonRule, WatchResult } from './ruleResultTypes.js';
 import type { Sky } from './skyResult.js';
+import type { StatedStudy } from './statedStudy.js';
 
 /** Measured spread by class of baseline length. Shown, never fitted. */
 export interface LengthClass {
@@ -31,6 +33,8 @@ export interface LengthClass {
   readonly visitsWithoutFix: number;
   readonly horizontalRmsMm: Interval | null;
   readonly verticalRmsMm: Interval | null;
+  /** What the spec sheet states at `baselineKm`, as radial RMS and vertical RMS; null without one. */
+  readonly specSheetMm: { readonly horizontal: number; readonly vertical: number } | null;
   readonly tooFew: boolean;
 }
 
@@ -58,9 +62,8 @@ export interface BlunderResult {
 }
 
 /** Everything a run found: the value from which every output is written. `results.json` is this, in JSON. */
-export interface Results {
+export interface Results extends StatedStudy, RuleOutcomes {
   readonly version: 1;
-  readonly study: { readonly title: string; readonly timeZone: string | null; readonly seed: number };
   readonly messages: readonly Message[];
   readonly rows: {
     readonly read: number;
@@ -92,6 +95,9 @@ export interface Results {
   readonly days: number;
   readonly period: { readonly from: string; readonly to: string } | null;
   readonly bases: readonly string[];
+  /** As the logs name them; pages number crews unless the study shows them. */
+  readonly crews: readonly string[];
+  readonly rovers: readonly string[];
   readonly fits: readonly FitResult[];
   readonly comparison: readonly ComparisonResult[];
   readonly setups: readonly SetupOffsets[];

@@ -6,9 +6,11 @@ import { dailyFactor, dayModel, degradedDay, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
 import type { Results } from './results.js';
+import { ruleOutcomes } from './ruleOutcomeSchemas.js';
 import { checkShotLimits, hourRule, rule, ruleTableRow, seasonRule, specSheetTest } from './ruleSchema.js';
 import { count, day, form, interval, nullable } from './schemaParts.js';
 import { skySchema } from './skySchema.js';
+import { statedStudy } from './statedStudySchema.js';
 
 const message = z.strictObject({
   code: z.string().describe('Stable name of the kind of message.'),
@@ -28,6 +30,7 @@ const lengthClass = z.strictObject({
   visitsWithoutFix: count,
   horizontalRmsMm: interval.nullable(),
   verticalRmsMm: interval.nullable(),
+  specSheetMm: z.strictObject({ horizontal: z.number(), vertical: z.number() }).nullable(),
   tooFew: z.boolean(),
 });
 
@@ -36,7 +39,7 @@ const constantAndPpm = z.strictObject({ constantMm: z.number(), ppm: z.number() 
 /** Schema of `results.json`; its type is {@link Results}. */
 export const resultsSchema = z.strictObject({
   version: z.literal(1),
-  study: z.strictObject({ title: z.string(), timeZone: z.string().nullable(), seed: z.number() }),
+  ...statedStudy,
   messages: z.array(message),
   rows: z.strictObject({ read: count, used: count, setAside: z.partialRecord(z.enum(ROW_REASONS), count) }),
   files: z.array(
@@ -67,6 +70,8 @@ export const resultsSchema = z.strictObject({
   days: count,
   period: z.strictObject({ from: day, to: day }).nullable(),
   bases: z.array(z.string()),
+  crews: z.array(z.string()),
+  rovers: z.array(z.string()),
   fits: z.array(fit),
   comparison: z.array(comparison),
   setups: z.array(setup),
@@ -83,6 +88,7 @@ export const resultsSchema = z.strictObject({
   marks: z.array(mark),
   sky: skySchema.nullable().describe('The sky of the days and what goes with it.'),
   rules: z.array(rule),
+  ...ruleOutcomes,
   ruleTable: z.array(ruleTableRow),
   rulesByHour: z.array(hourRule),
   rulesBySeason: z.array(seasonRule),

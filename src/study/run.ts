@@ -11,6 +11,7 @@ import {
 import type { ErrorModel } from '../fit/index.js';
 import { type Message, message, readLogs, type SetAsideRow } from '../logs/index.js';
 import type { Rule } from '../rule/index.js';
+import { adjustmentWeights } from './adjustmentWeights.js';
 import { causeMessages } from './causeMessages.js';
 import { studyEvidence } from './evidence.js';
 import { fitComponents } from './fitComponents.js';
@@ -20,6 +21,7 @@ import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
 import { loadControl } from './loadControl.js';
 import { makeRules } from './makeRules.js';
+import { movedRules } from './movedRules.js';
 import { readAs } from './readAs.js';
 import type { Results } from './results.js';
 import { screenStudy, suspects, withSuspects, wrongFixResults } from './screenStudy.js';
@@ -120,6 +122,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   };
   const made = makeRules(ground, study);
   const tested = testRules(ground, study);
+  const fitted = fitResults(components, errors, wrongFixes, judged);
   const sky = await studySky(study, read, dayResults(judged).dailyFactors);
   const results: Results = {
     ...read.results,
@@ -134,13 +137,15 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...ruleMessages(made.rules),
     ],
     occupations: withSuspects(read.results.occupations, errors.length - used.length),
-    ...fitResults(components, errors, wrongFixes, judged),
+    ...fitted,
     ...dayResults(judged),
     ...evidence.results,
     wrongFixes: wrongFixResults(errors, wrongFixes),
-    lengthClasses: lengthClasses(used, read.visits, read.control, study.confidence),
+    lengthClasses: lengthClasses(used, read.visits, read.control, study),
     marks: markResults(used, components),
     ...made,
+    ruleMoves: movedRules(ground, components, made.rules),
+    adjustmentWeights: adjustmentWeights(fitted.fits, study.centringSigmaMm),
     backTest: tested.backTest,
     sky: sky.sky,
   };

@@ -1,18 +1,15 @@
 import { z } from 'zod';
 import { COLUMN_ROLES, CORRECTION_KINDS } from '../logs/index.js';
-import { isTimeZone, parseIsoTime } from '../time/index.js';
+import { isTimeZone } from '../time/index.js';
 import { coordinateKeys, coordinates, heights } from './coordinateSettings.js';
 import { heightOf, layout, units } from './layoutSettings.js';
+import { day, reportKeys } from './reportSettings.js';
 
 /*
  * The study file as a schema. Descriptions become the help that editors show and the reference page, so each key says
  * what it means, its unit and its default.
  */
 
-const day = z
-  .string()
-  .regex(/^\d{4}-\d{2}-\d{2}$/, { message: 'a day like 2025-03-01', abort: true })
-  .refine((text) => parseIsoTime(text).kind === 'date', { message: 'a day that exists' });
 const share = z.number().gt(0).lt(1);
 const columns = z
   .partialRecord(z.enum(COLUMN_ROLES), z.string().min(1))
@@ -110,6 +107,7 @@ const skyFiles = z.array(z.string().min(1)).default([]);
 /** The schema of a study file. */
 export const studySchema = z.strictObject({
   title: z.string().min(1).default('Check shots').describe('Heads every report.'),
+  ...reportKeys,
   timeZone: z
     .string()
     .refine(isTimeZone, { message: 'an IANA time zone like Europe/Lisbon or Etc/GMT+1' })

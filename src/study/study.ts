@@ -4,6 +4,7 @@ import type { LogFile, Message } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 import type { HeightKind } from './coordinateChanges.js';
 import type { NamedFile } from './fileFinder.js';
+import type { ReportUnits } from './readerUnits.js';
 
 /** A study ready to run: settings with every default filled in, files found. */
 export interface Study {
@@ -11,6 +12,13 @@ export interface Study {
   readonly file: string;
   readonly folder: string;
   readonly title: string;
+  /** Who answers for the report, and its day. */
+  readonly surveyor: string | null;
+  readonly reportDate: string | null;
+  /** Units of pages and charts. */
+  readonly reportUnits: ReportUnits;
+  /** Name crews on pages instead of numbering them. */
+  readonly showCrews: boolean;
   readonly timeZone: string | null;
   /** Kind of heights that are compared: that of the marks. */
   readonly heightKind: HeightKind;

@@ -18,6 +18,7 @@ import {
 } from '../logs/index.js';
 import { controlMarks } from './controlMarks.js';
 import type { FileResult, Results } from './results.js';
+import { statedStudy } from './statedStudy.js';
 import type { Study } from './study.js';
 
 /** What reading gave, before any fit. */
@@ -49,7 +50,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
   const shots = study.windowSeconds === null ? null : staticShots(errors, study.windowSeconds);
   return {
     version: 1,
-    study: { title: study.title, timeZone: study.timeZone, seed: study.seed },
+    ...statedStudy(study),
     messages: [...messages, ...(shots === null ? [] : staticMessage(shots))],
     rows: totalAccount(formed.files),
     files,
@@ -65,6 +66,8 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     days: days.length,
     period: days.length === 0 ? null : { from: days[0]!, to: days.at(-1)! },
     bases: [...control.bases.keys()].filter((base) => errors.some((error) => error.base === base)),
+    crews: distinct(formed.visits.map(({ crew }) => crew)),
+    rovers: distinct(formed.visits.map(({ rover }) => rover)),
     fits: [],
     comparison: [],
     setups: [],
@@ -81,6 +84,8 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     marks: [],
     sky: null,
     rules: [],
+    ruleMoves: [],
+    adjustmentWeights: [],
     ruleTable: [],
     rulesByHour: [],
     rulesBySeason: [],
@@ -91,6 +96,9 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     specSheet: study.specSheet,
   };
 }
+
+const distinct = (names: readonly string[]): string[] =>
+  [...new Set(names)].filter((name) => name !== '').sort();
 
 /** The occupations taken for blunders, in the order of days. */
 const blunders = (setAside: readonly SetAsideOccupation[]): Results['blunders'] =>

@@ -5,7 +5,14 @@ import { testFolder } from '../files.js';
 import { BASE, MARK_PLACES, planeRows, ZONE_32 } from '../study/spoiledStudy.js';
 
 const folder = testFolder();
-const NO_PICTURES = { horizontal: null, vertical: null, maps: [], markMeans: null };
+const NO_PICTURES = {
+  proof: null,
+  moves: null,
+  horizontal: null,
+  vertical: null,
+  maps: [],
+  markMeans: null,
+};
 let run: StudyRun;
 let page: string;
 

@@ -15,7 +15,14 @@ import { noRule, type Rule } from '../../src/rule/index.js';
 import { type Results, readStudy, runStudy, type StudyRun } from '../../src/study/index.js';
 import { REPOSITORY } from '../cli/ppmwise.js';
 
-const NO_PICTURES: ReportPictures = { horizontal: null, vertical: null, maps: [], markMeans: null };
+const NO_PICTURES: ReportPictures = {
+  proof: null,
+  moves: null,
+  horizontal: null,
+  vertical: null,
+  maps: [],
+  markMeans: null,
+};
 let run: StudyRun;
 let page: string;
 

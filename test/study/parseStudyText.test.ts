@@ -26,6 +26,8 @@ describe('a study file', () => {
   it('with the needed keys gets all defaults', () => {
     expect(parseStudyText(NEEDED, 'study.yaml').settings).toEqual({
       title: 'Check shots',
+      reportUnits: 'metric',
+      showCrews: false,
       coordinates: 'geographic',
       marks: 'm.csv',
       bases: 'b.csv',
@@ -70,7 +72,7 @@ describe('a key', () => {
     ['titel: x', ':5 [titel] The key "titel" is not known. Did you mean "title"? Correct or remove it.'],
     [
       'colour: x',
-      ':5 [colour] The key "colour" is not known. Known here: title, timeZone, coordinates, heights, marks, bases, logs, period, model, occupations, tolerances, specSheet, centringSigmaMm, terms, by, indices, maps, leaveOutDays, seed. Correct or remove it.',
+      ':5 [colour] The key "colour" is not known. Known here: title, surveyor, reportDate, reportUnits, showCrews, timeZone, coordinates, heights, marks, bases, logs, period, model, occupations, tolerances, specSheet, centringSigmaMm, terms, by, indices, maps, leaveOutDays, seed. Correct or remove it.',
     ],
     ['4: x', /^:5 \[4\] The key "4" is not known\. Known here: /],
     [

@@ -35,6 +35,10 @@ describe('readStudy', () => {
       file: join(folder.path, 'study.yaml'),
       folder: folder.path,
       title: 'Check shots',
+      surveyor: null,
+      reportDate: null,
+      reportUnits: 'metric',
+      showCrews: false,
       timeZone: null,
       heightKind: 'ellipsoidal',
       marks: {

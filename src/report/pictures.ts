@@ -1,0 +1,28 @@
+import { type Html, html } from './html.js';
+
+/** A drawn chart: an SVG picture and what it shows, in words. */
+export interface ReportPicture {
+  readonly svg: string;
+  readonly description: string;
+}
+
+/** Pictures of the pages; null where there was nothing to draw. */
+export interface ReportPictures {
+  /** Share of positions inside the limit on unseen days, by distance. */
+  readonly proof: ReportPicture | null;
+  /** How the limit moves. */
+  readonly moves: ReportPicture | null;
+  readonly horizontal: ReportPicture | null;
+  readonly vertical: ReportPicture | null;
+  /** One for each base. */
+  readonly maps: readonly ReportPicture[];
+  readonly markMeans: ReportPicture | null;
+}
+
+/** A picture inside the page, with its words for those who do not see it. */
+export function figure(picture: ReportPicture | null): Html | null {
+  if (picture === null) return null;
+  const { svg, description } = picture;
+  const source = `data:image/svg+xml;base64,${Buffer.from(svg, 'utf8').toString('base64')}`;
+  return html`<figure><img src="${source}" alt="${description}"></figure>\n`;
+}
