@@ -1,8 +1,11 @@
-import { beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { reportHtml, reportTables, summaryText } from '../../src/report/index.js';
 import { type Results, readStudy, runStudy, type StudyRun } from '../../src/study/index.js';
 import { testFolder } from '../files.js';
 import { BASE, MARK_PLACES, planeRows, ZONE_32 } from '../study/spoiledStudy.js';
+
+// Each run fits every reference and form, judges days and proves rules.
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 120_000 });
 
 const folder = testFolder();
 const NO_PICTURES = {
