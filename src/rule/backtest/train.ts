@@ -1,6 +1,14 @@
 import type { ErrorColumns } from '../../errors/index.js';
-import { type ErrorModel, estimateForm, type FormEstimate, referenceData } from '../../fit/index.js';
+import {
+  type ErrorModel,
+  estimateForm,
+  type FitData,
+  type Form,
+  type FormEstimate,
+  referenceData,
+} from '../../fit/index.js';
 import { inputError } from '../../logs/index.js';
+import { RankDeficientError } from '../../stats/index.js';
 import { type FrozenMark, meansOf, type NewErrors, newErrors } from '../frozenMarks.js';
 
 /** The errors that a back-test divides into those learnt from and those judged. */
@@ -44,9 +52,22 @@ export function train({ records, weights, model }: BackTestData, rows: readonly 
   );
   const { repeatability } = referenced;
   return {
-    fitted: estimateForm(referenced.data, form),
+    fitted: estimated(referenced.data, form),
     marks: repeatability && meansOf(repeatability.markDays, repeatability.rho),
   };
+}
+
+/** Without the judged day all lengths may be the same. */
+function estimated(data: FitData, form: Form): FormEstimate {
+  try {
+    return estimateForm(data, form);
+  } catch (error) {
+    if (!(error instanceof RankDeficientError)) throw error;
+    throw inputError(
+      'lengths-too-alike',
+      'Expected near and far shots on the other days too, came baselines of one length. Add days with other distances.',
+    );
+  }
 }
 
 /** The errors of other rows as the trained marks count them. */
