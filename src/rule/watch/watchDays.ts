@@ -156,6 +156,6 @@ function newMarkReasons(onNewMarks: number, all: number): string[] {
 const sentenceOf = (days: number, alarmAt: number): string =>
   `${days} new ${days === 1 ? 'day was' : 'days were'} watched. ${
     alarmAt === 8
-      ? 'A false alarm comes about once in 5 crew-years where disturbed days occur and once in 50 where they do not; a doubled ppm shows within one to seven weeks by the number of shots a day, half as much again later or not at all.'
+      ? 'In simulations a false alarm comes once in 4 to 50 crew-years, the more often the fewer days were fitted; a doubled ppm shows within one to seven weeks by the number of shots a day, half as much again later or not at all.'
       : `The rate of false alarms is known for sums of 8 alone; here alarms come at ${alarmAt}.`
   }`;
