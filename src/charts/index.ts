@@ -1,5 +1,6 @@
 export { type AssociationInput, associationChart } from './associationChart.js';
 export { type BackTestChartInput, backTestChart } from './backTestChart.js';
+export { chartInUnits } from './chartInUnits.js';
 export type { ChartSpec } from './chartSpec.js';
 export { type DaysInput, daysChart } from './daysChart.js';
 export type { DayCause } from './daysFactors.js';

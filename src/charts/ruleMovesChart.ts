@@ -118,14 +118,14 @@ function panelView(
     height: labels.length * ROW_PX,
     layer: [
       {
-        data: { values: rows },
-        mark: { type: 'bar' },
-        encoding: { y, x: { ...x, field: 'km' }, color: { field: 'color', type: 'nominal', scale: null } },
-      },
-      {
         data: { values: [{ km: rows[0]!.km }] },
         mark: { type: 'rule', color: COLORS.ink, strokeWidth: 1.2 },
         encoding: { x: { ...x, field: 'km' } },
+      },
+      {
+        data: { values: rows },
+        mark: { type: 'bar' },
+        encoding: { y, x: { ...x, field: 'km' }, color: { field: 'color', type: 'nominal', scale: null } },
       },
       {
         data: { values: rows.filter(({ inside }) => inside) },

@@ -4,9 +4,11 @@ import { join } from 'node:path';
 import { inputError } from '../logs/index.js';
 import {
   annexHtml,
+  arrowBytes,
   cardHtml,
   csvText,
   markdownOf,
+  marksGeoJson,
   reportHtml,
   reportTables,
   weightsHtml,
@@ -15,7 +17,10 @@ import type { Results, StudyRun } from '../study/index.js';
 import { drawPictures } from './pictures.js';
 
 /** Folders that belong to a result: those of an old one are replaced whole, so that no stale table stays behind. */
-const OWN_FOLDERS = ['tables', 'charts'];
+const OWN_FOLDERS = ['tables', 'charts', 'exports'];
+
+/** Long tables that analysts load: beside CSV with types. */
+const ARROW_TABLES = ['errors', 'set-aside-occupations', 'visits-without-fix'];
 
 /**
  * Checks that results may be written into a folder: it is new, empty, holds an old result, or --force is given. Nothing is
@@ -59,9 +64,14 @@ export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: 
     await mkdir(join(folder, name), { recursive: true });
   }
   await copyFile(setAsideRows, join(folder, 'tables', 'set-aside.csv'));
-  for (const { name, header, rows } of reportTables(run)) {
+  for (const table of reportTables(run)) {
+    const { name, header, rows } = table;
     await writeFile(join(folder, 'tables', `${name}.csv`), csvText(header, rows));
+    if (ARROW_TABLES.includes(name)) {
+      await writeFile(join(folder, 'exports', `${name}.arrow`), arrowBytes(table));
+    }
   }
+  await writeFile(join(folder, 'exports', 'marks.geojson'), marksGeoJson(run));
   const { pictures, files } = await drawPictures(run);
   for (const [name, svg] of files) await writeFile(join(folder, 'charts', `${name}.svg`), svg);
   const pages = {

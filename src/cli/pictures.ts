@@ -1,6 +1,7 @@
 import {
   backTestChart,
   type ChartSpec,
+  chartInUnits,
   errorByBaselineChart,
   markMapChart,
   markMeansChart,
@@ -19,9 +20,10 @@ export async function drawPictures(
   const files: [string, string][] = [];
   const draw = async (name: string, chart: ChartSpec | null): Promise<ReportPicture | null> => {
     if (chart === null) return null;
-    const svg = await renderSvg(chart);
+    const shown = chartInUnits(chart, readerUnits(run.results.study.reportUnits));
+    const svg = await renderSvg(shown);
     files.push([name, svg]);
-    return { svg, description: chart.description };
+    return { svg, description: shown.description };
   };
   const { marks } = run.results;
   const horizontal = await draw('horizontal-error', errorChart(run, 'horizontal'));

@@ -1,4 +1,5 @@
 export { annexHtml } from './annexHtml.js';
+export { arrowBytes } from './arrow.js';
 export { cardHtml } from './cardHtml.js';
 export { CAUTIONS } from './cautions.js';
 export { csvLine, csvText } from './csv.js';
@@ -6,6 +7,7 @@ export { count } from './format.js';
 export { GLOSSARY } from './glossary.js';
 export { escapeHtml } from './html.js';
 export { markdownOf } from './markdown.js';
+export { marksGeoJson } from './marksGeoJson.js';
 export { changeWords } from './movesSection.js';
 export { Page } from './page.js';
 export type { ReportPicture, ReportPictures } from './pictures.js';

@@ -1,9 +1,8 @@
 import type { EstimateWithLimits } from '../fit/index.js';
-import { type ReaderUnits, type Results, readerUnits } from '../study/index.js';
+import { type ReaderUnits, type Results, readerUnits, textInUnits } from '../study/index.js';
 import { maskedText } from './crewNames.js';
 import { formatNumber, NOT_GIVEN, type NumberKind } from './format.js';
 import { type Html, html } from './html.js';
-import { textInUnits } from './textInUnits.js';
 
 /**
  * Writes what results hold onto pages: numbers in the units of the reader, each with the place in `results.json` from

@@ -1,8 +1,7 @@
 import { formatMessage, type Message } from '../logs/index.js';
-import { type FileResult, type Results, readerUnits } from '../study/index.js';
+import { type FileResult, type Results, readerUnits, textInUnits } from '../study/index.js';
 import { count, plural } from './format.js';
 import { groupedMessages, otherFilesWords, spoiling } from './groupedMessages.js';
-import { textInUnits } from './textInUnits.js';
 import { fitSentence, ruleSentence, setAsideWords, shownFits, whyNoRule } from './words.js';
 
 /** What a run found, in a few lines for a terminal. */

@@ -1,6 +1,7 @@
 import type { OccupationError } from '../errors/index.js';
 import type { StudyRun } from '../study/index.js';
 import { controlTables } from './controlTables.js';
+import { findingTables } from './findingTables.js';
 
 export type Cell = string | number | boolean | null;
 
@@ -205,6 +206,7 @@ export function reportTables({ errors, weights, setAside, visits, results }: Stu
       ]),
     },
     ...controlTables(results),
+    ...findingTables(results),
     {
       name: 'messages',
       header: ['severity', 'code', 'file', 'row', 'column', 'text'],

@@ -18,7 +18,7 @@ function tables(page: Page): Html {
   const { heights, settings } = page.results;
   return html`<section id="which"><h2>Which one to enter</h2>
 <ul>
-<li>Most adjustments ask for <strong>one standard deviation per axis</strong>. Never enter a radial RMS or a 95&nbsp;% figure there: it is
+<li>Most adjustments ask for <strong>one standard deviation per axis</strong>. Never enter a radial RMS or a 95 % figure there: it is
 larger by 1.41 or 2.45.</li>
 <li>The marks’ own errors belong in the weight only when marks are held fixed as free of error. Where the adjustment carries
 their standard deviations, take the rows <strong>without</strong> mark error.</li>

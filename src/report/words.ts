@@ -6,10 +6,10 @@ import {
   type ReaderUnits,
   type Results,
   readerUnits,
+  textInUnits,
 } from '../study/index.js';
 import { count, formatNumber, NOT_GIVEN, type NumberKind, percent } from './format.js';
 import { type Html, html, plainText } from './html.js';
-import { textInUnits } from './textInUnits.js';
 
 /** What is named with every vertical error. */
 export type HeightKind = Results['heights'];

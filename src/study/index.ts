@@ -36,3 +36,4 @@ export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold 
 export { softwareVersion } from './softwareVersion.js';
 export type { Study } from './study.js';
 export { readResults, type WatchRun, watchStudy } from './watchStudy.js';
+export { textInUnits } from './textInUnits.js';

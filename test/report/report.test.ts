@@ -1,10 +1,15 @@
+import { existsSync, readFileSync, statSync } from 'node:fs';
+import { join } from 'node:path';
+import { fromArrow } from 'arquero';
 import { beforeAll, describe, expect, it } from 'vitest';
+import { writeOutputs } from '../../src/cli/outputs.js';
 import type { Message } from '../../src/logs/index.js';
 import { csvText } from '../../src/report/csv.js';
 import { formatNumber, kmDown, mm, percent } from '../../src/report/format.js';
 import { html } from '../../src/report/html.js';
 import {
   annexHtml,
+  arrowBytes,
   cardHtml,
   markdownOf,
   Page,
@@ -25,6 +30,8 @@ import {
   type StudyRun,
 } from '../../src/study/index.js';
 import { REPOSITORY } from '../cli/ppmwise.js';
+import { testFolder } from '../files.js';
+import { printed, shownBlock } from './exports.js';
 import { atPointer, otherWords, pageNumbers, readNumber } from './numbers.js';
 
 const NO_PICTURES: ReportPictures = {
@@ -347,7 +354,10 @@ describe('pages for everybody', () => {
     });
     // 304.8 mm and 1.609344 km are a foot and a mile by definition.
     expect(feet.text('off by 304.8 mm, stops at 1.609344 km, 2 mm per km')).toBe(
-      'off by 1.000 ft, stops at 1.00 mi, 2 mm per km',
+      'off by 1.000 ft, stops at 1.0 mi, 2 mm per km',
+    );
+    expect(feet.text('P1 (−304.8, +609.6 mm), 152.4 to 304.8 mm on 7 days; 15.9 km')).toBe(
+      'P1 (−1.000, +2.000 ft), 0.500 to 1.000 ft on 7 days; 9.8 mi',
     );
     expect(formatNumber(1609.347 / 1000, 'distance', readerUnits('us-survey-foot'))).toBe('1.0');
     expect(
@@ -372,6 +382,88 @@ describe('pages for everybody', () => {
     }
     const tables = pagesOf(run).weights!;
     expect(tables).toContain('One standard deviation per axis');
+  });
+});
+
+describe('what analysts load', () => {
+  const folder = testFolder();
+
+  beforeAll(async () => {
+    await writeOutputs(run, folder.path, folder.write('rows.csv', 'file,row\n'));
+  }, 120_000);
+
+  const read = (name: string): string => readFileSync(join(folder.path, name), 'utf8');
+
+  it('is Arrow with types and nulls, the same as the CSV', () => {
+    const { header, rows } = reportTables(run).find(({ name }) => name === 'errors')!;
+    const arrow = fromArrow(readFileSync(join(folder.path, 'exports/errors.arrow')));
+    expect(arrow.columnNames()).toEqual(header);
+    expect(arrow.numRows()).toBe(rows.length);
+    rows.forEach((row, i) => {
+      for (const [k, name] of header.entries())
+        expect(arrow.get(name, i) ?? null, name).toEqual(row[k] ?? null);
+    });
+    expect(
+      arrowBytes({
+        name: 'x',
+        header: ['a', 'b'],
+        rows: [
+          ['1', Number.NaN],
+          ['2', 3],
+        ],
+      }),
+    ).toEqual(
+      arrowBytes({
+        name: 'x',
+        header: ['a', 'b'],
+        rows: [
+          ['1', null],
+          ['2', 3],
+        ],
+      }),
+    );
+  });
+
+  it('is GeoJSON of all marks with their mean errors', () => {
+    const { type, features } = JSON.parse(read('exports/marks.geojson'));
+    expect(type).toBe('FeatureCollection');
+    expect(features).toHaveLength(run.results.marks.length);
+    for (const { geometry, properties } of features) {
+      const { position } = run.control.marks.get(properties.mark)!;
+      const [longitude, latitude] = geometry.coordinates;
+      expect(longitude).toBeCloseTo(position.longitudeDeg, 8);
+      expect(latitude).toBeCloseTo(position.latitudeDeg, 8);
+    }
+    const { mark, base, east } = run.results.marks[3]!;
+    expect(features[3].properties).toMatchObject({ mark, base, eastMm: east });
+  });
+
+  it.for([
+    ['r', 'Rscript', ['-e']],
+    ['r-arrow', 'Rscript', ['-e']],
+    ['python', 'python3', ['-c']],
+    ['python-arrow', 'python3', ['-c']],
+  ] as const)('is loaded as the page of %s shows', ([kind, program, args], { skip }) => {
+    const needs = kind === 'r-arrow' ? 'library(arrow)' : kind === 'python-arrow' ? 'import pyarrow' : '1';
+    if (printed(program, [...args, needs], folder.path) === null) {
+      skip(`${program} or the package for ${kind} is not installed`);
+    }
+    const near = run.errors.filter(({ baselineKm }, i) => baselineKm < 5 && run.weights[i]! >= 0.5);
+    const squares = near.map(({ east, north }) => east ** 2 + north ** 2);
+    const rms = Math.sqrt(squares.reduce((a, b) => a + b, 0) / squares.length);
+    // Errors are written to a hundredth of a millimetre.
+    expect(Number(printed(program, [...args, shownBlock(kind)], folder.path))).toBeCloseTo(rms, 2);
+  });
+
+  it('has one CSV for every table, and Markdown beside every page', () => {
+    const names = reportTables(run).map(({ name }) => name);
+    expect(new Set(names).size).toBe(names.length);
+    for (const name of names) expect(existsSync(join(folder.path, 'tables', `${name}.csv`)), name).toBe(true);
+    for (const name of ['report', 'annex', 'card', 'weights']) {
+      expect(read(`${name}.md`)).toBe(markdownOf(read(`${name}.html`)));
+      expect(statSync(join(folder.path, `${name}.html`)).size).toBeLessThan(3_000_000);
+    }
+    expect(read('tables/weights.csv').split('\n')[0]).toContain('perAxisConstantMm');
   });
 });
 
