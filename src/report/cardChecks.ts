@@ -33,7 +33,7 @@ function limitTable(page: Page, given: readonly CheckShotLimits[]): Html {
     kinds.map(
       ([key, words]): Column<CheckShotLimit> => ({
         head: `${component === 'horizontal' ? 'Plan' : 'Height'}, ${words}`,
-        cell: (_, k) => page.number(limits[k]!, key, 'error'),
+        cell: (_, k) => page.number(limits[k]!, key, 'error on a card'),
       }),
     ),
   );

@@ -8,6 +8,7 @@ export type NumberKind =
   | 'error'
   | 'error to a hundredth'
   | 'signed error'
+  | 'error on a card'
   | 'limit'
   | 'distance'
   | 'distance, rounded down'
@@ -32,6 +33,8 @@ export function formatNumber(value: number | null, kind: NumberKind, units: Read
       return inUnit(value, error);
     case 'error to a hundredth':
       return inUnit(value, { ...error, decimals: error.decimals + 1 });
+    case 'error on a card':
+      return inUnit(value, { ...error, decimals: error.decimals - 1 });
     case 'signed error':
       return signed(value * error.perOurs, error.decimals);
     case 'limit':

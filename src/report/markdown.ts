@@ -31,11 +31,15 @@ export function markdownOf(page: string): string {
     )
     .replace(/<p[^>]*>([\s\S]*?)<\/p>/g, (_, words: string) => block(inline(words)));
   // What is left are frames around blocks, and blanks between them.
-  return `${[...blocks.matchAll(/\u0001([^\u0001]*)\u0001/g)].map(([, text]) => text).join('\n\n')}\n`;
+  return `${[...blocks.matchAll(BLOCKS)].map(([, text]) => text).join('\n\n')}\n`;
 }
 
 /** Fences off a finished block: no page holds this character, which HTML forbids. */
-const block = (text: string): string => `\u0001${text}\u0001`;
+/** Stands in no text of a page. */
+const FENCE = '\u0001';
+const BLOCKS = new RegExp(`${FENCE}([^${FENCE}]*)${FENCE}`, 'g');
+
+const block = (text: string): string => `${FENCE}${text}${FENCE}`;
 
 function tableText(table: string): string {
   const caption = inline(/<caption>([\s\S]*?)<\/caption>/.exec(table)?.[1] ?? '');

@@ -26,7 +26,7 @@ export function reportHtml(results: Results, pictures: ReportPictures): string {
 ${ruleSection(page)}
 ${proofSection(page, pictures.proof)}
 ${movesSection(page, figure(pictures.moves))}
-${fitSection(page, figure(pictures.horizontal))}
+${fitSection(page)}
 ${daysSection(page)}
 ${ruleTableSection(page)}
 ${accountSection(page)}

@@ -26,11 +26,13 @@ They hold under the conditions of these days:</p>
 <ul>${[...statements(page, c), ...remarks].map((statement) => html`<li>${statement}</li>\n`)}</ul>`;
 }
 
+/** What the days say by their order alone stands in the table of rules. */
+const ownRemarks = ({ remarks, dayBound }: Rule): string[] =>
+  remarks.filter((remark) => remark !== dayBound?.sentence);
+
 /** What must be known beside the numbers, each sentence once. */
 const remarksOf = (page: Page, of: (rule: Rule) => boolean): Html[] =>
-  [...new Set(page.results.rules.filter(of).flatMap(({ remarks }) => remarks))].map(
-    (remark) => html`${page.text(remark)}`,
-  );
+  [...new Set(page.results.rules.filter(of).flatMap(ownRemarks))].map((remark) => html`${page.text(remark)}`);
 
 /** Conditions that are known, one a line. */
 export function statements(page: Page, c: Rule['conditions']): Html[] {

@@ -27,7 +27,7 @@ ${ruleTable(page)}
 function howToRead(rules: readonly Rule[]): string {
   const cut = 'A distance is a lower limit, found from the days observed and rounded down.';
   return rules.some(byDays)
-    ? `${cut} “All days together” counts the positions of all days as one: on a worse day fewer are within the limit.`
+    ? `${cut} “All days together” counts the positions of all days as one: on a worse day fewer are within the limit. “By days alone” is the length on the day that bounds the share of days, without any model of how days differ.`
     : `${cut} It holds over all days together, so on a worse day fewer positions are within the limit.`;
 }
 
@@ -69,6 +69,15 @@ function ruleTable(page: Page): Html {
     { head: `Best estimate, ${unit}`, cell: (rule) => km(rule, 'bestEstimateKm') },
     ...(page.results.rules.some(byDays)
       ? [{ head: `All days together, ${unit}`, cell: (rule: Rule) => km(rule, 'allDaysKm') }]
+      : []),
+    ...(page.results.rules.some(({ dayBound }) => dayBound !== null)
+      ? [
+          {
+            head: `By days alone, ${unit}`,
+            cell: ({ dayBound }: Rule) =>
+              dayBound === null ? '—' : page.number(dayBound, 'baselineKm', 'distance, rounded down'),
+          },
+        ]
       : []),
     { head: `Data reach, ${unit}`, cell: (rule) => km(rule, 'longestSupportedKm') },
   ]);

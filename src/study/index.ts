@@ -35,5 +35,5 @@ export { type SkyPoint, skyPoints } from './skyPoints.js';
 export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold } from './skyResult.js';
 export { softwareVersion } from './softwareVersion.js';
 export type { Study } from './study.js';
-export { readResults, type WatchRun, watchStudy } from './watchStudy.js';
 export { textInUnits } from './textInUnits.js';
+export { readResults, type WatchRun, watchStudy } from './watchStudy.js';

@@ -7,6 +7,18 @@ import { emptyFolder, ppmwise, REPOSITORY } from './ppmwise.js';
 
 const folder = emptyFolder();
 const demo = join(folder, 'try');
+/** Of each kind of output one. */
+const WRITTEN = [
+  'results.json',
+  'report.html',
+  'annex.html',
+  'card.html',
+  'weights.html',
+  'report.md',
+  'tables/errors.csv',
+  'charts/rule-moves.svg',
+  'exports/errors.arrow',
+];
 
 beforeAll(() => {
   expect(ppmwise(['demo', demo]).code).toBe(0);
@@ -65,12 +77,33 @@ describe('demo and run', () => {
       /^Up to [\d.]+\u00a0km from the base: 95\u00a0% of horizontal positions within 25\u00a0mm/,
     );
     expect(text).toContain(`Report: ${join(out, 'report.html')}`);
-    expect(readdirSync(out).sort()).toEqual(['charts', 'report.html', 'results.json', 'tables']);
+    expect(readdirSync(out).sort()).toEqual([
+      'annex.html',
+      'annex.md',
+      'card.html',
+      'card.md',
+      'charts',
+      'exports',
+      'report.html',
+      'report.md',
+      'results.json',
+      'tables',
+      'weights.html',
+      'weights.md',
+    ]);
+    expect(readdirSync(join(out, 'exports')).sort()).toEqual([
+      'errors.arrow',
+      'marks.geojson',
+      'set-aside-occupations.arrow',
+      'visits-without-fix.arrow',
+    ]);
     expect(readdirSync(join(out, 'charts')).sort()).toEqual([
+      'back-test.svg',
       'horizontal-error.svg',
       'map-1.svg',
       'map-2.svg',
       'mark-means.svg',
+      'rule-moves.svg',
       'vertical-error.svg',
     ]);
   });
@@ -98,9 +131,9 @@ describe('demo and run', () => {
   });
   it('gives the same bytes when run again, over its own old result', () => {
     const read = (name: string): string => readFileSync(join(out, name), 'utf8');
-    const before = ['results.json', 'report.html', 'tables/errors.csv'].map(read);
+    const before = WRITTEN.map(read);
     expect(ppmwise(['run', join(demo, 'study.yaml'), '--out', out]).code).toBe(0);
-    expect(['results.json', 'report.html', 'tables/errors.csv'].map(read)).toEqual(before);
+    expect(WRITTEN.map(read)).toEqual(before);
   });
   it('prints results.json with --json, and nothing else', () => {
     const { code, out: text } = ppmwise(['run', join(demo, 'study.yaml'), '--out', out, '--json']);

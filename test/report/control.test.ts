@@ -1,11 +1,8 @@
-import { beforeAll, describe, expect, it, vi } from 'vitest';
-import { reportHtml, reportTables, summaryText } from '../../src/report/index.js';
+import { beforeAll, describe, expect, it } from 'vitest';
+import { annexHtml, reportHtml, reportTables, summaryText } from '../../src/report/index.js';
 import { type Results, readStudy, runStudy, type StudyRun } from '../../src/study/index.js';
 import { testFolder } from '../files.js';
 import { BASE, MARK_PLACES, planeRows, ZONE_32 } from '../study/spoiledStudy.js';
-
-// Each run fits every reference and form, judges days and proves rules.
-vi.setConfig({ testTimeout: 120_000, hookTimeout: 120_000 });
 
 const folder = testFolder();
 const NO_PICTURES = {
@@ -18,6 +15,10 @@ const NO_PICTURES = {
 };
 let run: StudyRun;
 let page: string;
+let annex: string;
+
+/** What a reader sees of a part of a page. */
+const seen = (html: string): string => html.replace(/<data [^>]*>/g, '').replaceAll('</data>', '');
 
 /** A study in the plane of zone 32 whose heights are all 90 mm too high and one of them 340 mm. */
 beforeAll(async () => {
@@ -43,13 +44,14 @@ beforeAll(async () => {
   );
   run = await runStudy(await readStudy(path));
   page = reportHtml(run.results, NO_PICTURES);
-});
+  annex = seen(annexHtml(run, NO_PICTURES));
+}, 60_000);
 
 describe('the report on what is compared with what', () => {
   it('tells what all positions have in common, with size, cause and remedy', () => {
-    const section = page.slice(page.indexOf('id="common"'), page.indexOf('id="marks"'));
-    expect(section).toMatch(/<td>Shift up<\/td><td class="number">\+(89|90|91)\.\d<\/td>/);
-    expect(section).toMatch(/<td>Shift east<\/td>.*<td>no<\/td>/);
+    const section = annex.slice(annex.indexOf('id="common"'), annex.indexOf('id="marks"'));
+    expect(section).toMatch(/<th scope="row">Shift up<\/th><td class="number">\+(89|90|91)\.\d<\/td>/);
+    expect(section).toMatch(/<th scope="row">Shift east<\/th>.*<td>no<\/td>/);
     expect(section).toContain('the plan is not: a rod height');
     expect(section).toContain('state heightOf: antenna');
     expect(section).toContain('another thing than the ppm of the error model');
@@ -64,7 +66,7 @@ describe('the report on what is compared with what', () => {
       commonCauses: { ...run.results.commonCauses, causes: [] },
       blunders: [],
     };
-    const text = reportHtml(clean, NO_PICTURES);
+    const text = annexHtml({ ...run, results: clean }, NO_PICTURES);
     expect(text).toContain('Nothing was found that all positions have in common');
     expect(text).not.toContain('id="blunders"');
   });
@@ -77,23 +79,23 @@ describe('the report on what is compared with what', () => {
       'Up (orthometric)',
       'heights are orthometric',
     ])
-      expect(page).toContain(where);
-    expect(page).not.toContain('ellipsoidal heights)');
+      expect(page + annex).toContain(where);
+    expect(page + annex).not.toContain('ellipsoidal heights)');
     expect(summaryText(run.results)).toContain('Vertical (orthometric heights)');
   });
 
   it('lists suspected blunders with their cause', () => {
-    const section = page.slice(page.indexOf('id="blunders"'), page.indexOf('id="messages"'));
+    const section = annex.slice(annex.indexOf('id="blunders"'), annex.indexOf('id="occupations"'));
     expect(section).toContain('1 occupation looks like a mistake of a person');
     expect(section).toMatch(/The height alone is off by \+2\d\d mm: rod height or antenna reference/);
-    expect(section).toContain('<td>Ann, </td>'.replace(', ', ''));
-    expect(section).toContain('log.csv, line 102');
+    expect(section).toContain('<td>crew 1</td>');
+    expect(section).toContain('line 102');
   });
 
   it('shows where coordinates come from, and which marks are residuals', () => {
-    expect(page).toContain('P1 (residual)');
-    expect(page).toContain('P1 (site mark)');
-    expect(page).toContain('static &lt;2019&gt;');
+    expect(annex).toContain('<bdi>P1</bdi> (residual)');
+    expect(annex).toContain('<bdi>P1</bdi> (site mark)');
+    expect(annex).toContain('static &lt;2019&gt;');
     const p3 = run.results.controlMarks.find(({ mark }) => mark === 'P3')!;
     expect(p3).toMatchObject({ frame: 'Regional', epoch: 2010.5, sky: 'open', siteMark: false, from: null });
     // A 95 % figure is 1.960 standard deviations.
@@ -101,7 +103,7 @@ describe('the report on what is compared with what', () => {
     expect(p3.verticalSigmaMm).toBeCloseTo(10, 3);
     // UTM 44 km from its meridian at 640 m: 0.9996 (1 + 44.6²/(2 · 6382²)) (1 − 640/6382000) = 0.999524.
     expect(p3.combinedFactor).toBeCloseTo(0.999524, 5);
-    expect(page).toContain(p3.combinedFactor!.toFixed(7));
+    expect(annex).toContain(p3.combinedFactor!.toFixed(7));
   });
 
   it('writes all of it as tables too', () => {

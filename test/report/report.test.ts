@@ -59,7 +59,7 @@ beforeAll(async () => {
   run = await runStudy(await readStudy(`${REPOSITORY}/datasets-demo/study.yaml`));
   page = reportHtml(run.results, {
     ...NO_PICTURES,
-    horizontal: { svg: '<svg xmlns="http://www.w3.org/2000/svg"></svg>', description: 'errors & "distance"' },
+    proof: { svg: '<svg xmlns="http://www.w3.org/2000/svg"></svg>', description: 'errors & "distance"' },
   });
 }, 300_000);
 
@@ -150,7 +150,7 @@ describe('numbers on pages', () => {
         if (kind === undefined || text.startsWith('below')) continue;
         const shown = readNumber(text);
         const expected = value * perOurs(kind, reader);
-        const decimals = /\.(\d+)/.exec(text)?.[1]!.length ?? 0;
+        const decimals = (/\.(\d+)/.exec(text)?.[1] ?? '').length;
         const step = kind === 'hour' ? 1 / 60 : 10 ** -decimals;
         if (kind.includes('down')) {
           expect(shown, where).toBeLessThanOrEqual(expected + 1e-9);
