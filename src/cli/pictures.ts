@@ -8,7 +8,8 @@ import {
   renderSvg,
   ruleMovesChart,
 } from '../charts/index.js';
-import type { Component } from '../fit/index.js';
+import type { OccupationError } from '../errors/index.js';
+import { type Component, type ErrorModel, referenceData } from '../fit/index.js';
 import { changeWords, Page, type ReportPicture, type ReportPictures } from '../report/index.js';
 import { LENGTH_EDGES_KM, summarizeBy } from '../split/index.js';
 import { readerUnits, type StudyRun } from '../study/index.js';
@@ -63,9 +64,11 @@ function movesChart({ results }: StudyRun): ChartSpec | null {
   });
 }
 
-function errorChart({ errors, models, results }: StudyRun, component: Component): ChartSpec | null {
+function errorChart(run: StudyRun, component: Component): ChartSpec | null {
+  const { models, results } = run;
   const model = models.find((candidate) => candidate.component === component);
   if (model === undefined) return null;
+  const errors = errorsAsFitted(run, model);
   const rule = results.rules.find((candidate) => candidate.component === component);
   return errorByBaselineChart({
     errors,
@@ -79,4 +82,24 @@ function errorChart({ errors, models, results }: StudyRun, component: Component)
     ...(rule === undefined ? {} : { tolerance: rule, rule }),
     heights: results.heights,
   });
+}
+
+/**
+ * The errors counted from the reference of a fit, so that points and curve tell of the same; suspected wrong fixes are no
+ * part of it.
+ */
+function errorsAsFitted(
+  { errors, weights }: StudyRun,
+  { component, reference }: ErrorModel,
+): OccupationError[] {
+  const { data } = referenceData(errors, { component, reference, weights });
+  return Array.from(data.rows.keys())
+    .filter((i) => data.w[i]! >= 0.5)
+    .map((i) => {
+      const error = errors[data.rows[i]!]!;
+      const [first, second] = data.components;
+      return component === 'horizontal'
+        ? { ...error, east: first![i]!, north: second![i]! }
+        : { ...error, up: first![i]! };
+    });
 }
