@@ -8,6 +8,9 @@ const ENTITIES: Readonly<Record<string, string>> = {
   '&nbsp;': '\u00a0',
 };
 
+/** Private characters that stand for fences, bold text and blank lines while a page is turned. */
+const OWN_SIGNS = /[\ue001-\ue003]/g;
+
 /** What Markdown would take for its own marks, or for HTML. */
 const SPECIAL = /[\\`*_{}[\]<>|~]/g;
 
@@ -16,7 +19,7 @@ const SPECIAL = /[\\`*_{}[\]<>|~]/g;
  * @param page as the functions of this folder write it; other HTML is not understood
  */
 export function markdownOf(page: string): string {
-  const body = /<main>([\s\S]*)<\/main>/.exec(page)?.[1] ?? '';
+  const body = (/<main>([\s\S]*)<\/main>/.exec(page)?.[1] ?? '').replace(OWN_SIGNS, '\ufffd');
   const blocks = body
     .replace(/<nav[\s\S]*?<\/nav>/g, '')
     .replace(/<figure><img [^>]*alt="([^"]*)"[^>]*><\/figure>/g, (_, alt: string) => `<p>${alt}</p>`)
@@ -31,15 +34,11 @@ export function markdownOf(page: string): string {
     )
     .replace(/<p[^>]*>([\s\S]*?)<\/p>/g, (_, words: string) => block(inline(words)));
   // What is left are frames around blocks, and blanks between them.
-  return `${[...blocks.matchAll(BLOCKS)].map(([, text]) => text).join('\n\n')}\n`;
+  return `${[...blocks.matchAll(/\ue001([^\ue001]*)\ue001/g)].map(([, text]) => text).join('\n\n')}\n`;
 }
 
-/** Fences off a finished block: no page holds this character, which HTML forbids. */
-/** Stands in no text of a page. */
-const FENCE = '\u0001';
-const BLOCKS = new RegExp(`${FENCE}([^${FENCE}]*)${FENCE}`, 'g');
-
-const block = (text: string): string => `${FENCE}${text}${FENCE}`;
+/** Fences off a finished block, with a character that is taken off names beforehand. */
+const block = (text: string): string => `\ue001${text}\ue001`;
 
 function tableText(table: string): string {
   const caption = inline(/<caption>([\s\S]*?)<\/caption>/.exec(table)?.[1] ?? '');
@@ -72,13 +71,13 @@ const listText = (items: string, mark: string): string =>
 
 function inline(words: string): string {
   return words
-    .replace(/<strong>([\s\S]*?)<\/strong>/g, '\u0002$1\u0002 ')
-    .replace(/<span class="blank"><\/span>/g, '\u0003')
+    .replace(/<strong>([\s\S]*?)<\/strong>/g, '\ue002$1\ue002 ')
+    .replace(/<span class="blank"><\/span>/g, '\ue003')
     .replace(/<[^>]*>/g, '')
     .replace(/&(?:amp|lt|gt|quot|nbsp|#39);/g, (entity) => ENTITIES[entity]!)
     .replace(SPECIAL, (character) => `\\${character}`)
-    .replaceAll('\u0002', '**')
-    .replaceAll('\u0003', '\\_\\_\\_\\_\\_\\_\\_\\_')
+    .replaceAll('\ue002', '**')
+    .replaceAll('\ue003', '\\_\\_\\_\\_\\_\\_\\_\\_')
     .replace(/[^\S\u00a0\u202f]+/g, ' ')
     .trim();
 }

@@ -10,10 +10,10 @@ export function movesSection(page: Page, picture: Html | null): Html {
   const { ruleMoves, rules } = page.results;
   if (ruleMoves.length === 0 || rules.every(({ maximumBaselineKm }) => !maximumBaselineKm)) return html``;
   return html`<section id="moves"><h2>How the limit moves</h2>
-<p>Each limit was found again with one thing changed. A limit that stays where it is does not hang on one mark, one day or
-one crew.</p>
+<p>The first limit in plan and in height was found again with one thing changed. A limit that stays where it is does not hang
+on one mark, one day or one crew.</p>
 ${picture ?? movesTables(page)}
-<p class="small">The numbers of all limits stand in the annex.</p>
+<p class="small">The numbers stand in the annex too.</p>
 </section>
 `;
 }

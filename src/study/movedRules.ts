@@ -21,7 +21,7 @@ export function movedRules(
   const { errors, wrongFixes } = input;
   return ruleMoves(errors, wrongFixes?.weights ?? null, components, rules, (groundwork) => {
     const { model, weights } = groundwork;
-    const tolerances = rules.filter(({ component }) => component === model.component);
+    const tolerances = rules.filter(({ component }) => component === model.component).slice(0, 1);
     const used =
       weights === null ? groundwork.errors : groundwork.errors.filter((_, i) => weights[i]! >= 0.5);
     try {
