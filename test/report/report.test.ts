@@ -150,7 +150,7 @@ describe('numbers on pages', () => {
         if (kind === undefined || text.startsWith('below')) continue;
         const shown = readNumber(text);
         const expected = value * perOurs(kind, reader);
-        const decimals = (/\.(\d+)/.exec(text)?.[1] ?? '').length;
+        const decimals = /\.(\d+)/.exec(text)?.[1]?.length ?? 0;
         const step = kind === 'hour' ? 1 / 60 : 10 ** -decimals;
         if (kind.includes('down')) {
           expect(shown, where).toBeLessThanOrEqual(expected + 1e-9);
