@@ -83,6 +83,17 @@ describe('leaving out each day', () => {
     expect(found.specSheetRules[0]!.lengthKm!.from).toBeGreaterThan(count!.lengthKm!.to);
     expect(found.specSheetRules[0]!.failures.length).toBeGreaterThan(count!.failures.length);
   });
+  it('judges nothing where distances are too alike, and says so', () => {
+    const alike = rows.filter(({ mark }) => mark === rows[0]!.mark);
+    const fit = fitErrorModel(alike, { component: 'horizontal' });
+    const { own, predictive, rules, notes } = backTest(alike, fit, { tolerances: [tolerance(25)] });
+    expect([own, predictive]).toEqual([null, null]);
+    expect(rules[0]!.sentence).toContain('nothing can be counted');
+    expect(notes[0]!.text).toMatch(
+      /^\d+ days take no part in the back-test: .* Add days with both near and far shots\.$/,
+    );
+    expect(leaveGroupOut(alike, fit, { by: 'crew' }).every(({ score }) => score === null)).toBe(true);
+  });
   it('refuses a reference that needs the judged day', () => {
     expect(() => backTest(rows, { ...model, reference: 'relative' })).toThrow(
       'cannot be known before its day',
