@@ -2,7 +2,9 @@ import {
   backTestChart,
   type ChartSpec,
   chartInUnits,
+  daysChart,
   errorByBaselineChart,
+  hourPpmChart,
   markMapChart,
   markMeansChart,
   renderSvg,
@@ -43,9 +45,20 @@ export async function drawPictures(
     'mark-means',
     marks.length === 0 ? null : markMeansChart({ marks, heights: run.results.heights }),
   );
+  await draw('days', daysPicture(run));
+  for (const hours of run.results.timeOfDay) {
+    const told = hours.hours.length > 0 ? hourPpmChart({ timeOfDay: hours }) : null;
+    await draw(`hours-${hours.component}`, told);
+  }
   const moves = await draw('rule-moves', movesChart(run));
   const proof = await draw('back-test', proofChart(run));
   return { pictures: { proof, moves, horizontal, vertical, maps, markMeans }, files };
+}
+
+/** The days with what the sky did on them, as far as index files tell. */
+function daysPicture({ results: { dailyFactors, degradedDays, sky } }: StudyRun): ChartSpec | null {
+  if (dailyFactors.length === 0) return null;
+  return daysChart({ factors: dailyFactors, explanations: degradedDays, sky: sky?.days });
 }
 
 function proofChart({ results: { backTest, study } }: StudyRun): ChartSpec | null {

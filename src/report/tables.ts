@@ -2,6 +2,7 @@ import type { OccupationError } from '../errors/index.js';
 import type { StudyRun } from '../study/index.js';
 import { controlTables } from './controlTables.js';
 import { findingTables } from './findingTables.js';
+import { splitTable } from './splitTable.js';
 
 export type Cell = string | number | boolean | null;
 
@@ -46,7 +47,8 @@ const ERROR_COLUMNS: readonly [head: string, cell: (error: OccupationError) => C
 ];
 
 /** Every table of a run. */
-export function reportTables({ errors, weights, setAside, visits, results }: StudyRun): ReportTable[] {
+export function reportTables(run: StudyRun): ReportTable[] {
+  const { errors, weights, setAside, visits, results } = run;
   const { fits, rules, marks, lengthClasses, messages } = results;
   const errorHeads = ERROR_COLUMNS.map(([head]) => head);
   const errorCells = (error: OccupationError): Cell[] => ERROR_COLUMNS.map(([, cell]) => cell(error));
@@ -207,6 +209,7 @@ export function reportTables({ errors, weights, setAside, visits, results }: Stu
     },
     ...controlTables(results),
     ...findingTables(results),
+    splitTable(run),
     {
       name: 'messages',
       header: ['severity', 'code', 'file', 'row', 'column', 'text'],

@@ -60,6 +60,7 @@ describe('demo and run', () => {
       'README.md',
       'another-layout',
       'bases.csv',
+      'indices',
       'logs',
       'marks.csv',
       'study.yaml',
@@ -99,7 +100,10 @@ describe('demo and run', () => {
     ]);
     expect(readdirSync(join(out, 'charts')).sort()).toEqual([
       'back-test.svg',
+      'days.svg',
       'horizontal-error.svg',
+      'hours-horizontal.svg',
+      'hours-vertical.svg',
       'map-1.svg',
       'map-2.svg',
       'mark-means.svg',
