@@ -136,8 +136,9 @@ export const dayResults = (judged: readonly JudgedDays[]): JudgedDays['results']
 const WIDE_SPREAD = 0.35;
 
 /**
- * The interval of the ppm that the data allow: where days differ much, that of the long-run ppm from the day model,
- * since an interval from the scatter of the observed days does not know of worse days to come.
+ * The interval of the ppm that the data allow: where days differ much, what either the scatter of the observed days or
+ * the posterior of the day model allows. The first does not know of worse days to come, the second is too narrow where
+ * many days were seen; docs/evidence-coverage.md shows both.
  */
 export function ppmInterval(
   { ppm, interval }: ErrorModel,
@@ -151,9 +152,9 @@ export function ppmInterval(
   return {
     ppm: {
       estimate,
-      low: Math.min(longRunPpm.low, estimate),
-      high: Math.max(longRunPpm.high, estimate),
+      low: Math.min(longRunPpm.low, ppm.low ?? estimate),
+      high: Math.max(longRunPpm.high, ppm.high ?? estimate),
     },
-    interval: 'posterior of the day model, for days to come',
+    interval: `${interval}, widened by the posterior of the day model for days to come`,
   };
 }
