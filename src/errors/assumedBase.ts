@@ -3,7 +3,7 @@ const SATELLITE_DISTANCE_KM = 20_000;
 
 /**
  * What an error of the base's own coordinate adds to every baseline, ppm: its size over the distance of the satellites,
- * so that 20 m make 1 ppm (Rizos 1999, UNSW lecture notes, section 6.2.6; common practice).
+ * so that 20 m make 1 ppm (Rizos 1999, University of New South Wales, section 6.2.6; common practice).
  * @param errorM size of the coordinate error, m
  */
 export function assumedBasePpm(errorM: number): number {
