@@ -331,7 +331,21 @@ export {
   type UnrecognizedLog,
 } from './logs/index.js';
 export * from './notebook/index.js';
-export { reportHtml, summaryText } from './report/index.js';
+export {
+  annexHtml,
+  arrowBytes,
+  type Cell,
+  cardHtml,
+  markdownOf,
+  marksGeoJson,
+  type ReportPicture,
+  type ReportPictures,
+  type ReportTable,
+  reportHtml,
+  reportTables,
+  summaryText,
+  weightsHtml,
+} from './report/index.js';
 export * from './rule/index.js';
 export {
   type CellSummary,
@@ -358,8 +372,16 @@ export {
   type VisitCounts,
 } from './split/index.js';
 export {
+  type AdjustmentWeight,
+  type ConstantAndPpm,
   type ControlMark,
+  type ReaderUnit,
+  type ReaderUnits,
+  type ReportUnits,
   type Results,
+  type RuleMove,
+  type RuleMoveKind,
+  readerUnits,
   readStudy,
   readStudyErrors,
   resultsJsonSchema,

@@ -9,12 +9,14 @@ import { benchFit } from './fit.js';
 import { benchFuzz } from './fuzz.js';
 import { benchGroups } from './groups.js';
 import { benchIonosphere } from './ionosphere.js';
+import { benchPages } from './pages.js';
 import { benchRead } from './read.js';
 import { benchRule } from './rule.js';
 
 const PARTS = {
   demo: benchDemo,
   read: benchRead,
+  pages: benchPages,
   fit: benchFit,
   fuzz: benchFuzz,
   groups: benchGroups,
