@@ -1,5 +1,6 @@
-import { dayPrior, MEDIAN_COUNT, THETAS } from './dayGrid.js';
-import type { ComboFit, DayCells } from './dayLikelihood.js';
+import { type ComboFit, daySupport } from './comboFit.js';
+import { dayPrior, MEDIAN_COUNT, priorSupport, THETAS } from './dayGrid.js';
+import type { DayCells } from './dayLikelihood.js';
 
 /** A day is called degraded when its ppm is at least this many times that of the median day. */
 export const DEGRADED_FACTOR = 1.5;
@@ -23,8 +24,8 @@ export interface DayEstimate {
   readonly probabilityDegraded: number;
 }
 
-/** A combo below this weight changes nothing in 15 digits. */
-const NEGLIGIBLE = 1e-17;
+/** A combo below this weight changes nothing in ten digits. */
+const NEGLIGIBLE = 1e-13;
 /**
  * Differences θ - m in steps of 1/150: θ = -2.2 + k/30 and m = -1 + i/50 give (5k - 3i - 180)/150, so that with
  * i = 0 … 100 and k = 0 … 138 the index 5k - 3i + 300 runs from 0 to 990.
@@ -42,21 +43,13 @@ export function dayEstimates(
   { weights, marginals }: ComboFit,
   fittedPpm: number,
 ): DayEstimate[] {
-  const prior = dayPrior();
-  const thetas = THETAS.length;
   const used = Array.from(weights.keys()).filter((j) => weights[j]! > NEGLIGIBLE);
+  const told = daySupport(likelihood);
+  const days = cells.days.length;
   return cells.days.map((day, d) => {
-    const own = new Float64Array(thetas);
-    const apart = new Float64Array(DIFFERENCES.length);
-    for (const j of used) {
-      const scale = weights[j]! / marginals[j * cells.days.length + d]!;
-      const shift = 300 - 3 * (j % MEDIAN_COUNT);
-      for (let k = 0; k < thetas; k++) {
-        const p = scale * prior[j * thetas + k]! * likelihood[d * thetas + k]!;
-        own[k]! += p;
-        apart[5 * k + shift]! += p;
-      }
-    }
+    const row = likelihood.subarray(d * THETAS.length, (d + 1) * THETAS.length);
+    const scales = Float64Array.from(used, (j) => weights[j]! / marginals[j * days + d]!);
+    const { own, apart } = dayPosterior(row, told.first[d]!, told.end[d]!, used, scales);
     const threshold = Math.log(DEGRADED_FACTOR);
     return {
       day,
@@ -69,6 +62,36 @@ export function dayEstimates(
       ),
     };
   });
+}
+
+/**
+ * Weights of a day's θ, and of its distance from the median, over the combos that count.
+ * @param scales of each combo: its weight over the day's likelihood under it
+ */
+function dayPosterior(
+  likelihood: Float64Array,
+  first: number,
+  end: number,
+  used: readonly number[],
+  scales: Float64Array,
+): { own: Float64Array; apart: Float64Array } {
+  const prior = dayPrior();
+  const possible = priorSupport();
+  const own = new Float64Array(THETAS.length);
+  const apart = new Float64Array(DIFFERENCES.length);
+  for (let i = 0; i < used.length; i++) {
+    const j = used[i]!;
+    const scale = scales[i]!;
+    const from = j * own.length;
+    const shift = 300 - 3 * (j % MEDIAN_COUNT);
+    const stop = Math.min(possible.end[j]!, end);
+    for (let k = Math.max(possible.first[j]!, first); k < stop; k++) {
+      const p = scale * prior[from + k]! * likelihood[k]!;
+      own[k]! += p;
+      apart[5 * k + shift]! += p;
+    }
+  }
+  return { own, apart };
 }
 
 function dayValue(logs: Float64Array, weights: Float64Array, unit: number): DayValue {

@@ -73,7 +73,7 @@ function makePrior(): Float64Array {
 }
 
 /** Probabilities below this change nothing in sixteen digits of a sum. */
-const NOTHING = 1e-20;
+export const NOTHING = 1e-20;
 let support: { readonly first: Uint8Array; readonly end: Uint8Array } | null = null;
 
 /** For every combo the first θ whose probability counts, and the one after the last. */

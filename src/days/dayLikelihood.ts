@@ -1,5 +1,5 @@
 import type { FitData } from '../fit/index.js';
-import { DAY_COMBOS, dayPrior, priorSupport, THETAS } from './dayGrid.js';
+import { THETAS } from './dayGrid.js';
 import { type DayIndex, dayIndex, rowsWithinDays } from './dayIndex.js';
 
 /**
@@ -77,59 +77,4 @@ export function relativeLikelihood(logLikelihood: Float64Array): Float64Array {
     for (let k = 0; k < THETAS.length; k++) table[at + k] = Math.exp(row[k]! - best);
   }
   return table;
-}
-
-/** What the likelihoods of all days say of the combos. */
-export interface ComboFit {
-  /** Probability of each combo; they sum to 1. */
-  readonly weights: Float64Array;
-  /** Likelihood of each day under each combo: combos × days. */
-  readonly marginals: Float64Array;
-}
-
-/** @param likelihood relative likelihoods, days × thetas */
-export function comboFit(likelihood: Float64Array): ComboFit {
-  const prior = dayPrior();
-  const thetas = THETAS.length;
-  const days = likelihood.length / thetas;
-  const marginals = new Float64Array(DAY_COMBOS.length * days);
-  const logs = new Float64Array(DAY_COMBOS.length);
-  const { first, end } = priorSupport();
-  for (let j = 0; j < DAY_COMBOS.length; j++) {
-    const from = j * thetas;
-    const [low, high] = [first[j]!, end[j]!];
-    let sumOfLogs = 0;
-    const settle = (d: number, total: number): void => {
-      // A combo that makes a day impossible keeps a finite logarithm.
-      marginals[j * days + d] = total + 1e-300;
-      sumOfLogs += Math.log(total + 1e-300);
-    };
-    let d = 0;
-    // Four days at a time: one sum alone waits for each of its additions.
-    for (; d + 4 <= days; d += 4) {
-      const at = d * thetas;
-      let [t0, t1, t2, t3] = [0, 0, 0, 0];
-      for (let k = low; k < high; k++) {
-        const p = prior[from + k]!;
-        t0 += p * likelihood[at + k]!;
-        t1 += p * likelihood[at + thetas + k]!;
-        t2 += p * likelihood[at + 2 * thetas + k]!;
-        t3 += p * likelihood[at + 3 * thetas + k]!;
-      }
-      settle(d, t0);
-      settle(d + 1, t1);
-      settle(d + 2, t2);
-      settle(d + 3, t3);
-    }
-    for (; d < days; d++) {
-      let total = 0;
-      for (let k = low; k < high; k++) total += prior[from + k]! * likelihood[d * thetas + k]!;
-      settle(d, total);
-    }
-    logs[j] = sumOfLogs;
-  }
-  const best = logs.reduce((a, b) => Math.max(a, b));
-  const weights = logs.map((value, j) => Math.exp(value - best) * DAY_COMBOS[j]!.width);
-  const total = weights.reduce((a, b) => a + b);
-  return { weights: weights.map((weight) => weight / total), marginals };
 }

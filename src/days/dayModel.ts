@@ -1,9 +1,10 @@
 import type { ErrorsInput } from '../errors/index.js';
 import type { Component, ErrorModel, EstimateWithLimits, FitData } from '../fit/index.js';
 import type { Message } from '../logs/index.js';
+import { comboFit } from './comboFit.js';
 import { type DayEstimate, dayEstimates } from './dayEstimates.js';
 import { comboQuantiles, comboRms, DAY_COMBOS } from './dayGrid.js';
-import { comboFit, type DayCells, dayCells, dayLogLikelihood, relativeLikelihood } from './dayLikelihood.js';
+import { type DayCells, dayCells, dayLogLikelihood, relativeLikelihood } from './dayLikelihood.js';
 import { dayNotes, daysNotJudged, namesDays } from './dayNotes.js';
 import { type DegradedEvent, degradedDays, degradedEvents } from './degradedDays.js';
 import { effectiveShare } from './effectiveShare.js';

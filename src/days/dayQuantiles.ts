@@ -1,5 +1,6 @@
+import { comboFit } from './comboFit.js';
 import { comboQuantiles, dayPrior, THETAS } from './dayGrid.js';
-import { comboFit, dayLogLikelihood, relativeLikelihood } from './dayLikelihood.js';
+import { dayLogLikelihood, relativeLikelihood } from './dayLikelihood.js';
 import type { DayPosterior } from './dayModel.js';
 import { weightedQuantiles } from './weightedQuantile.js';
 

@@ -12,7 +12,15 @@ export { type DailyFactor, dailyFactors } from './dailyFactors.js';
 export type { DayCondition } from './dayConditions.js';
 export { type DayEstimate, type DayValue, DEGRADED_FACTOR } from './dayEstimates.js';
 export type { DayExplanation, DayVerdict, TestedCondition, TestedSetup } from './dayExplanation.js';
-export { comboQuantiles, DAY_COMBOS, type DayCombo, dayPrior, MEDIAN_COUNT, THETAS } from './dayGrid.js';
+export {
+  comboQuantiles,
+  DAY_COMBOS,
+  type DayCombo,
+  dayPrior,
+  MEDIAN_COUNT,
+  priorSupport,
+  THETAS,
+} from './dayGrid.js';
 export type { DayIndex } from './dayIndex.js';
 export type { DayCells } from './dayLikelihood.js';
 export { type DayModel, type DayPosterior, dayModel, dayModelOf } from './dayModel.js';

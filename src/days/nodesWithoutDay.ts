@@ -1,5 +1,6 @@
+import { everyCombo } from './comboFit.js';
 import { DAY_COMBOS } from './dayGrid.js';
-import { comboFit, dayLogLikelihood, relativeLikelihood } from './dayLikelihood.js';
+import { dayLogLikelihood, relativeLikelihood } from './dayLikelihood.js';
 import type { DayPosterior } from './dayModel.js';
 import { constantNodes, type DayModelNode } from './dayQuantiles.js';
 
@@ -13,7 +14,7 @@ export function nodesWithoutDay(posterior: DayPosterior): (day: string) => DayMo
   const number = new Map(cells.days.map((day, d) => [day, d]));
   const days = cells.days.length;
   const nodes = constantNodes(posterior).map(({ A, weight }) => {
-    const { marginals } = comboFit(relativeLikelihood(dayLogLikelihood(cells, A, B, effectiveShare)));
+    const marginals = everyCombo(relativeLikelihood(dayLogLikelihood(cells, A, B, effectiveShare)));
     const logs = marginals.map(Math.log);
     const totals = Float64Array.from(DAY_COMBOS, (_, j) => {
       let total = 0;

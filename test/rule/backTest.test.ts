@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { simulateErrors } from '../../src/campaign/index.js';
-import { comboFit, dayCells, dayLogLikelihood, relativeLikelihood } from '../../src/days/dayLikelihood.js';
+import { comboFit } from '../../src/days/comboFit.js';
+import { dayCells, dayLogLikelihood, relativeLikelihood } from '../../src/days/dayLikelihood.js';
 import { dayModel, fittedData, nodesWithoutDay } from '../../src/days/index.js';
 import { errorColumns } from '../../src/errors/index.js';
 import { fitErrorModel } from '../../src/fit/index.js';

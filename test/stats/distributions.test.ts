@@ -12,6 +12,7 @@ import {
   studentTCdf,
   studentTQuantile,
 } from '../../src/stats/distributions.js';
+import { erfc } from '../../src/stats/errorFunction.js';
 import { logGamma, regularizedBeta, regularizedGamma } from '../../src/stats/specialFunctions.js';
 
 interface Row {
@@ -74,6 +75,21 @@ describe('against R (test/fixtures/distributions)', () => {
   it('reaches R log-gamma', () => {
     for (const { x, value } of fixture.logGamma)
       expect(Math.abs(logGamma(x) - value)).toBeLessThan(2e-15 * Math.max(1, Math.abs(value)));
+  });
+});
+
+describe('the complementary error function', () => {
+  it('agrees with the incomplete gamma function of order one half (NIST DLMF 7.11.2)', () => {
+    fc.assert(
+      fc.property(fc.double({ min: 0, max: 20, noNaN: true }), (y) => {
+        expect(relative(erfc(y), regularizedGamma(0.5, y * y).upper)).toBeLessThan(2e-13);
+      }),
+      { seed: 3, numRuns: 2000 },
+    );
+    for (const y of [0, 0.46875, 0.468751, 4, 4.000001]) {
+      expect(relative(erfc(y), regularizedGamma(0.5, y * y).upper)).toBeLessThan(1e-14);
+    }
+    expect(erfc(Number.POSITIVE_INFINITY)).toBe(0);
   });
 });
 

@@ -1,4 +1,4 @@
-import { DAY_COMBOS, dayPrior, MEDIAN_COUNT, THETAS } from '../../days/index.js';
+import { DAY_COMBOS, dayPrior, MEDIAN_COUNT, priorSupport, THETAS } from '../../days/index.js';
 import type { Component } from '../../fit/index.js';
 import { normalCdf } from '../../stats/index.js';
 import type { DayNodes } from './dayLimits.js';
@@ -28,10 +28,19 @@ function runningSums(weights: Float64Array): Float64Array {
   return sums;
 }
 
+/** Expectation of a value of each θ under a combo. */
+function ofCombo(values: Float64Array, j: number): number {
+  const prior = dayPrior();
+  const { first, end } = priorSupport();
+  const from = j * values.length;
+  const stop = end[j]!;
+  let total = 0;
+  for (let k = first[j]!; k < stop; k++) total += prior[from + k]! * values[k]!;
+  return total;
+}
+
 /** @param addedVariance what comes to σ² at every length, mm² */
 export function allDays(component: Component, { B, nodes }: DayNodes, addedVariance: number): AllDays {
-  const prior = dayPrior();
-  const size = THETAS.length;
   const slopes = THETAS.map((theta) => B * Math.exp(2 * theta));
   const parts = nodes.map(({ A, weight, comboWeights }) => ({
     A: A + addedVariance,
@@ -42,11 +51,6 @@ export function allDays(component: Component, { B, nodes }: DayNodes, addedVaria
   }));
   const inside = (A: number, km: number, limitMm: number): Float64Array =>
     slopes.map((slope) => shareWithin(component, limitMm, A + slope * km * km));
-  const ofCombo = (values: Float64Array, j: number): number => {
-    let total = 0;
-    for (let k = 0; k < size; k++) total += prior[j * size + k]! * values[k]!;
-    return total;
-  };
   return {
     confidence: (km, limitMm, share) =>
       parts.reduce((sum, { A, weight, upToMedian }) => {

@@ -23,10 +23,14 @@ export interface DayNodes {
   readonly nodes: readonly DayModelNode[];
 }
 
-export const dayNodes = (posterior: DayPosterior): DayNodes => ({
-  B: posterior.B,
-  nodes: dayModelNodes(posterior),
-});
+/** Nodes of posteriors that are in use: rules, their table and their test ask for the same ones. */
+const remembered = new WeakMap<DayPosterior, DayNodes>();
+
+export function dayNodes(posterior: DayPosterior): DayNodes {
+  const known = remembered.get(posterior) ?? { B: posterior.B, nodes: dayModelNodes(posterior) };
+  remembered.set(posterior, known);
+  return known;
+}
 
 /** A combo below this weight changes no promise. */
 const NEGLIGIBLE = 1e-12;
