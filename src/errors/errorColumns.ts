@@ -38,7 +38,12 @@ export function errorColumns(input: ErrorsInput): ErrorColumns {
       for (let i = 0; i < numbers.length; i++) numbers[i] = Number(values[i]);
       return numbers;
     },
-    texts: (name, neededFor) => Array.from(column(name, neededFor), String),
+    texts: (name, neededFor) => {
+      const values = column(name, neededFor);
+      const texts: string[] = [];
+      for (let i = 0; i < values.length; i++) texts.push(String(values[i]));
+      return texts;
+    },
   };
 }
 

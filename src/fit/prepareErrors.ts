@@ -1,7 +1,7 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
 import { inputError } from '../logs/index.js';
 import { COMPONENT_COLUMNS, type FitComponent } from './forms.js';
-import { orderRows } from './rowOrder.js';
+import { orderRows, rankOf } from './rowOrder.js';
 import type { SquaredErrors } from './scoring.js';
 
 /** The columns of one component, in an order that does not depend on the order of rows. */
@@ -108,12 +108,6 @@ function textsOf(order: Int32Array, texts: readonly string[]): string[] {
   const picked: string[] = [];
   for (const row of order) picked.push(texts[row]!);
   return picked;
-}
-
-/** Place of each name in the order of names. */
-function rankOf(names: readonly string[]): Int32Array {
-  const rank = new Map([...new Set(names)].sort().map((name, k) => [name, k]));
-  return Int32Array.from(names, (name) => rank.get(name)!);
 }
 
 /** The same data with the given entries only, in their order. */

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { expect, it } from 'vitest';
 import { orderRows } from '../../src/fit/rowOrder.js';
+import { randomStream } from '../../src/stats/index.js';
 
 it('orders numbers of all signs and sizes as they ascend, both zeros as one, NaN last', () => {
   const numbers = [3, -1, Number.NaN, 0, -0, -5.5, 1e-300, -1e-300, Infinity, -Infinity, 2, 1e300];
@@ -39,4 +40,18 @@ it('orders by day, then by each key in turn, as comparing rows one by one does',
     }),
     { seed: 11, numRuns: 200 },
   );
+});
+
+it('orders many rows as it orders few', () => {
+  const random = randomStream(7);
+  const numbers = Float64Array.from(
+    { length: 40_000 },
+    () => (random() - 0.5) * 10 ** Math.floor(20 * random() - 10),
+  );
+  const order = orderRows(
+    Int32Array.from(numbers.keys()),
+    Array.from(numbers, () => 'd'),
+    [numbers],
+  );
+  expect(Float64Array.from(order, (k) => numbers[k]!)).toEqual(numbers.slice().sort());
 });

@@ -1,4 +1,5 @@
 import type { ErrorColumns } from '../../errors/index.js';
+import { orderRows, rankOf } from '../rowOrder.js';
 
 /**
  * Lengths of runs of suspected occupations that follow one another on one day and rover, in time order. Without times no
@@ -11,24 +12,20 @@ export function suspectedRuns(
   rows: ArrayLike<number>,
   suspected: (row: number) => boolean,
 ): number[] {
-  const list = Array.from(rows);
-  if (!columns.has('startMs')) return list.filter(suspected).map(() => 1);
+  const list = Int32Array.from(rows);
+  if (!columns.has('startMs')) return Array.from(list.filter(suspected), () => 1);
   const days = columns.texts('day', 'runs of wrong fixes');
-  const rovers = columns.has('rover') ? columns.texts('rover', 'runs of wrong fixes') : null;
+  const rovers = columns.has('rover') ? rankOf(columns.texts('rover', 'runs of wrong fixes')) : null;
   const starts = columns.numbers('startMs', 'runs of wrong fixes');
-  const same = (i: number, j: number): boolean =>
-    days[i] === days[j] && (rovers === null || rovers[i] === rovers[j]);
+  const same = (i: number, j: number): boolean => days[i] === days[j] && rovers?.[i] === rovers?.[j];
   // Only days with suspects matter. Occupations that start together: the suspected one first, whatever the order of rows.
-  const daysWithSuspects = new Set(list.filter(suspected).map((i) => days[i]!));
-  const order = list
-    .filter((i) => daysWithSuspects.has(days[i]!))
-    .sort(
-      (i, j) =>
-        compare(days[i]!, days[j]!) ||
-        (rovers === null ? 0 : compare(rovers[i]!, rovers[j]!)) ||
-        compare(starts[i]!, starts[j]!) ||
-        Number(suspected(j)) - Number(suspected(i)),
-    );
+  const daysWithSuspects = new Set(Array.from(list.filter(suspected), (i) => days[i]!));
+  const late = starts.map((_, row) => Number(!suspected(row)));
+  const order = orderRows(
+    list.filter((i) => daysWithSuspects.has(days[i]!)),
+    days,
+    [...(rovers === null ? [] : [rovers]), starts, late],
+  );
   const runs: number[] = [];
   order.forEach((row, k) => {
     if (!suspected(row)) return;
@@ -38,5 +35,3 @@ export function suspectedRuns(
   });
   return runs;
 }
-
-const compare = <T>(a: T, b: T): number => (a < b ? -1 : a > b ? 1 : 0);

@@ -1,3 +1,5 @@
+import { sumsByLength } from '../sumsByLength.js';
+
 /** A and B on x; both at least 0. */
 type Pair = readonly [A: number, B: number];
 
@@ -61,7 +63,10 @@ export function startWithoutTails(y: Float64Array, x: Float64Array, size: number
   return iterate((pair) => step(y, x, null, pair, boundedMean), [half, half], 300, 1e-9, 1);
 }
 
-/** Up to ten steps of the weighted fit of the long run, which has no day factors. */
+/**
+ * Up to ten steps of the weighted fit of the long run, which has no day factors.
+ * @param y,w errors that are not known have weight 0, and any number as y
+ */
 export function weightedSteps(
   y: Float64Array,
   x: Float64Array,
@@ -69,5 +74,6 @@ export function weightedSteps(
   start: Pair,
   scale: number,
 ): Pair {
-  return iterate((pair) => step(y, x, w, pair, null), start, 10, 1e-12, scale);
+  const cells = sumsByLength({ y, l: x, w });
+  return iterate((pair) => step(cells.y, cells.l, cells.w, pair, null), start, 10, 1e-12, scale);
 }

@@ -56,6 +56,7 @@ export function fitMixture({ errors, l, dayOf, days }: MixtureData): Mixture {
   const x = l.map((value) => value / lMean);
   const squares = errors.map((column) => column.map((value) => value * value));
   const known = [0, 1, 2].filter((c) => squares[c]!.some((value) => !Number.isNaN(value)));
+  const filled = squares.map((column) => column.map((value) => (Number.isNaN(value) ? 0 : value)));
   const scales = known.map((c) => typicalSize(errors[c]!));
   const largest = Math.max(...scales);
   const leastVariance = Math.max(LEAST_WRONG_MM, (10 * largest) / Math.sqrt(known.length)) ** 2;
@@ -80,7 +81,7 @@ export function fitMixture({ errors, l, dayOf, days }: MixtureData): Mixture {
     share = Math.min(Math.max(sums.total / n, SHARE_LEAST), SHARE_MOST);
     variance = Math.max(sums.squares / Math.max(sums.components, 1e-9), leastVariance);
     for (const c of known) {
-      [A[c], B[c]] = weightedSteps(squares[c]!, x, w, [A[c]!, B[c]!], lMean);
+      [A[c], B[c]] = weightedSteps(filled[c]!, x, weightsOf(squares[c]!, w), [A[c]!, B[c]!], lMean);
       moveFactors(squares[c]!, x, w, dayOf, A[c]!, B[c]!, factors[c]!, iterations >= AVERAGE_FROM);
     }
     const now = [share, ...known.flatMap((c) => [A[c]!, B[c]! / lMean])];
@@ -96,6 +97,10 @@ export function fitMixture({ errors, l, dayOf, days }: MixtureData): Mixture {
     converged,
   };
 }
+
+/** Weights that are 0 where the error is not known. */
+const weightsOf = (squares: Float64Array, w: Float64Array): Float64Array =>
+  w.map((weight, i) => (Number.isNaN(squares[i]!) ? 0 : weight));
 
 /** Median size over that of a standard Gaussian error; the root mean square where more than half are 0. */
 function typicalSize(errors: Float64Array): number {
