@@ -130,5 +130,5 @@ function chanceWords(pValue: number | null, adjusted: number | null): string {
   if (pValue === null) return 'too few days for a test';
   return adjusted === null
     ? pWords(pValue)
-    : `${pWords(pValue)}, or ${adjusted.toFixed(3)} with all comparisons counted`;
+    : `${pWords(pValue)}; with all comparisons counted ${pWords(adjusted)}`;
 }

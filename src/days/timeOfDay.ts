@@ -1,7 +1,7 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
 import type { Component, ErrorModel, EstimateWithLimits, FitData } from '../fit/index.js';
 import { type Message, message } from '../logs/index.js';
-import type { Random } from '../stats/index.js';
+import { chanceText, type Random } from '../stats/index.js';
 import { dayIndex } from './dayIndex.js';
 import { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
 import { flippedScores } from './flippedScores.js';
@@ -209,6 +209,6 @@ function differsNote(component: Component, list: readonly HourClass[], pValue: n
   return message(
     'warning',
     'hours-differ',
-    `The ${component} ppm depends on the hour (p = ${pValue.toFixed(3)}), by solar time: ${parts.join(', ')}. Take far shots in the better hours, and check shots in the worse ones.`,
+    `The ${component} ppm depends on the hour (${chanceText(pValue)}), by solar time: ${parts.join(', ')}. Take far shots in the better hours, and check shots in the worse ones.`,
   );
 }

@@ -1,3 +1,4 @@
+export { chanceText } from './chanceText.js';
 export { type CholeskyFactor, choleskyFactor, choleskySolve } from './cholesky.js';
 export {
   betaQuantile,

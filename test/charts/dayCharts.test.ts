@@ -235,7 +235,7 @@ describe('associationChart', () => {
   it('goes by the chance adjusted for all comparisons, where it is given', () => {
     const adjusted = associationChart({ ...input, association: { ...association, adjustedPValue: 0.08 } });
     expect(adjusted.title).toContain('not shown to go together on 2 days');
-    expect(adjusted.subtitle[0]).toContain('0.080 with all comparisons counted');
+    expect(adjusted.subtitle[0]).toContain('with all comparisons counted p\u00a0=\u00a00.08');
     const opposite = associationChart({ ...input, association: { ...association, spearman: -0.7 } });
     expect(opposite.title).toContain('go opposite ways');
     for (const missing of [{ pValue: null }, { spearman: null, pValue: null }]) {

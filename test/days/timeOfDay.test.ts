@@ -6,7 +6,7 @@ import { hourDayFactors } from '../../src/days/hourScores.js';
 import { timeOfDay } from '../../src/days/index.js';
 import { hourTest } from '../../src/days/timeOfDay.js';
 import { estimateVariance, type FitData, fitErrorModel } from '../../src/fit/index.js';
-import { randomStream } from '../../src/stats/index.js';
+import { chanceText, randomStream } from '../../src/stats/index.js';
 import { referenceFits } from '../fit/reference.js';
 import { axisData, close, expectSentences, timedErrors } from './reference.js';
 
@@ -88,6 +88,17 @@ describe('timeOfDay', () => {
     expect(found.notes.map(({ code }) => code)).toEqual(['hours-differ']);
     expectSentences(found.notes);
     expect(found.harmonics).toBeNull();
+  });
+
+  // A random test of 9999 flips gives 0.0001 at least, which three decimals would turn into 0.
+  it('prints no chance of 0', () => {
+    const strong = simulateErrors({ seed: 12, days: 60, middayRise: 0.9 }).rows;
+    const { pValue, notes } = timeOfDay(strong, fitErrorModel(strong, { component: 'horizontal' }), {
+      random: random(),
+    });
+    expect(pValue!).toBeLessThan(0.0005);
+    expect(notes[0]!.text).toContain('(p < 0.001)');
+    expect(found.notes[0]!.text).toContain(`(${chanceText(found.pValue!)})`);
   });
 
   it('gives equal results for equal seeds, whatever the order of rows', () => {

@@ -1,6 +1,6 @@
 import type { ErrorsInput } from '../../errors/index.js';
 import { type Message, message } from '../../logs/index.js';
-import { type Random, studentTQuantile } from '../../stats/index.js';
+import { chanceText, type Random, studentTQuantile } from '../../stats/index.js';
 import type { ErrorModel, EstimateWithLimits, Reference } from '../errorModel.js';
 import { fitErrorModel } from '../fitErrorModel.js';
 import type { Component } from '../forms.js';
@@ -123,7 +123,7 @@ function verdictMessage(
       `Before there are ${models[0].days} days, after ${models[1].days}: too few to tell whether anything changed. Both need at least ${FEWEST_DAYS_TESTED} days.`,
     );
   }
-  const p = pValue < 0.001 ? 'p < 0.001' : `p = ${pValue.toFixed(3)}`;
+  const p = chanceText(pValue);
   const details = [told('constant', constantRatio), told('ppm', ppmRatio)]
     .filter((text) => text !== '')
     .join(', ');

@@ -1,6 +1,6 @@
 import { type ErrorsInput, errorColumns, groupIndices } from '../../errors/index.js';
 import { InputError, inputError, type Message, message } from '../../logs/index.js';
-import type { Random } from '../../stats/index.js';
+import { chanceText, type Random } from '../../stats/index.js';
 import type { ErrorModel, EstimateWithLimits, Reference } from '../errorModel.js';
 import { fitReferenced } from '../fitErrorModel.js';
 import type { Component } from '../forms.js';
@@ -161,7 +161,7 @@ function verdictMessage(
       `Whether ${by}s differ cannot be told: ${tested.length} of ${groups.length} have ${FEWEST_DAYS_TESTED} days and ${FEWEST_OCCUPATIONS_TESTED} occupations, and each comparison needs several days. Add days.`,
     );
   }
-  const p = pValue < 0.001 ? 'p < 0.001' : `p = ${pValue.toFixed(3)}`;
+  const p = chanceText(pValue);
   if (verdict === 'not shown to differ') {
     return message(
       'info',
