@@ -1,5 +1,6 @@
 import type { DailyFactor, DayVerdict, DegradedEvent, HourClass, HourHarmonics } from '../days/index.js';
 import type { Component, EstimateWithLimits } from '../fit/index.js';
+import type { Rule } from '../rule/index.js';
 
 /** How the ppm differs from day to day. */
 export interface DayModelResult {
@@ -42,4 +43,30 @@ export interface TimeOfDayResult {
   readonly pValue: number | null;
   readonly hours: readonly HourClass[];
   readonly harmonics: HourHarmonics | null;
+}
+
+/** What the fit behind the rules of one component would be with all days. */
+export interface FitWithAllDays {
+  readonly component: Component;
+  readonly constantMm: EstimateWithLimits;
+  readonly ppm: EstimateWithLimits;
+  readonly occupations: number;
+  readonly days: number;
+}
+
+/** A rule as it would be with all days. */
+export type RuleWithAllDays = Pick<
+  Rule,
+  'component' | 'limitMm' | 'share' | 'maximumBaselineKm' | 'bestEstimateKm' | 'reason'
+>;
+
+/** The days that a study leaves out, and what its results would be with them. */
+export interface LeftOutDays {
+  /** Those with occupations. */
+  readonly days: readonly string[];
+  readonly occupations: number;
+  /** Of the components that can be fitted with all days. */
+  readonly fits: readonly FitWithAllDays[];
+  /** One for each rule of the study, in the same order. */
+  readonly rules: readonly RuleWithAllDays[];
 }

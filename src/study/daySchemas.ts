@@ -62,3 +62,23 @@ export const timeOfDay = z.strictObject({
     })
     .nullable(),
 });
+
+export const leftOut = z.strictObject({
+  days: z.array(day),
+  occupations: count,
+  fits: z.array(
+    z.strictObject({ component, constantMm: limits, ppm: limits, occupations: count, days: count }),
+  ),
+  rules: z
+    .array(
+      z.strictObject({
+        component,
+        limitMm: z.number(),
+        share: z.number(),
+        maximumBaselineKm: nullable,
+        bestEstimateKm: nullable,
+        reason: z.string().nullable(),
+      }),
+    )
+    .describe('One for each of the rules, in their order.'),
+});

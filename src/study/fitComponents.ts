@@ -79,18 +79,47 @@ export function fitComponents(
   return { components, messages };
 }
 
+/** The fits behind the rules alone, of the components that can be fitted. */
+export function basisFits(
+  errors: readonly OccupationError[],
+  weights: Float64Array | null,
+  study: Study,
+): ErrorModel[] {
+  return COMPONENTS.flatMap((component) => {
+    try {
+      return [basisFit(errors, weights, component, study).basis];
+    } catch (error) {
+      if (error instanceof InputError) return [];
+      throw error;
+    }
+  });
+}
+
+/** The fit of a component behind the rules, and what its reference was chosen by. */
+function basisFit(
+  errors: readonly OccupationError[],
+  weights: Float64Array | null,
+  component: Component,
+  { reference: wanted, form, confidence }: Study,
+): { basis: ErrorModel; choice: ReferenceChoice } {
+  const screened = weights === null ? {} : { weights };
+  const choice = chooseReference(errors, { component, ...screened });
+  const reference = wanted === 'auto' ? choice.reference : wanted;
+  return { basis: fitErrorModel(errors, { component, form, reference, confidence, ...screened }), choice };
+}
+
 const title = (component: Component): string => (component === 'horizontal' ? 'Horizontal' : 'Vertical');
 
 function fitComponent(
   errors: readonly OccupationError[],
   weights: Float64Array | null,
   component: Component,
-  { reference: wanted, form: basisForm, confidence, seed }: Study,
+  study: Study,
 ): { fits: ComponentFits; told: Message[] } {
+  const { reference: wanted, confidence, seed } = study;
   const screened = weights === null ? {} : { weights };
-  const choice = chooseReference(errors, { component, ...screened });
-  const reference = wanted === 'auto' ? choice.reference : wanted;
-  const basis = fitErrorModel(errors, { component, form: basisForm, reference, confidence, ...screened });
+  const { basis, choice } = basisFit(errors, weights, component, study);
+  const { form: basisForm, reference } = basis;
   const common = { component, confidence };
   const others = FORMS.flatMap((form) =>
     (weights === null ? [screened] : [screened, {}]).flatMap((screening) =>

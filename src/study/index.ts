@@ -4,6 +4,9 @@ export type {
   DailyFactorResult,
   DayModelResult,
   DegradedDayResult,
+  FitWithAllDays,
+  LeftOutDays,
+  RuleWithAllDays,
   TimeOfDayResult,
 } from './dayResultTypes.js';
 export type { EvidenceResult, TermsResult } from './evidenceResultTypes.js';

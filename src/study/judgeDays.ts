@@ -26,6 +26,16 @@ export interface JudgedDays {
   readonly messages: readonly Message[];
 }
 
+/** The day model alone of a fit; none for a form that has no days. */
+export function dayModelOfFit(
+  errors: readonly OccupationError[],
+  weights: Float64Array | null,
+  basis: ErrorModel,
+): Pick<JudgedDays, 'component' | 'model'>[] {
+  if (basis.form !== 'root-sum-square') return [];
+  return [{ component: basis.component, model: dayModel(errors, basis, weights ?? undefined) }];
+}
+
 /** A moderated variance names a day from this adjusted chance on. */
 const SECOND_OPINION = 0.1;
 

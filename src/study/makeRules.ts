@@ -29,7 +29,7 @@ export interface RuleInput {
   readonly visits: readonly Visit[];
   readonly control: Control;
   readonly models: readonly ErrorModel[];
-  readonly days: readonly JudgedDays[];
+  readonly days: readonly Pick<JudgedDays, 'component' | 'model'>[];
   readonly wrongFixes: WrongFixes | null;
 }
 
@@ -80,6 +80,17 @@ export function makeRules(
       ...watchBasis(model, dayModel(model.component)),
     })),
   };
+}
+
+/** The rules of the study's tolerances, in their order, and nothing else. */
+export function toleranceRules(input: RuleInput, { tolerances }: Pick<Study, 'tolerances'>): Rule[] {
+  const { used, models } = input;
+  const finders = new Map(
+    models.map((model) => [model.component, ruleFinder(used, model, ruleOptions(model, input))]),
+  );
+  return tolerances.map(
+    (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
+  );
 }
 
 /** What a rule of some hours or months keeps. */

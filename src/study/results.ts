@@ -8,6 +8,7 @@ import type {
   DailyFactorResult,
   DayModelResult,
   DegradedDayResult,
+  LeftOutDays,
   TimeOfDayResult,
 } from './dayResultTypes.js';
 import type { EvidenceResult, TermsResult } from './evidenceResultTypes.js';
@@ -123,6 +124,8 @@ export interface Results extends StatedStudy, RuleOutcomes {
   readonly specSheetTest: readonly SpecSheetTest[];
   readonly checkShotLimits: readonly CheckShotLimits[];
   readonly watch: readonly WatchResult[];
+  /** The days left out by the study file, and the results with them; null where none is. */
+  readonly leftOut: LeftOutDays | null;
   /** The spec sheet as stated. */
   readonly specSheet: SpecSheet | null;
 }

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { OCCUPATION_REASONS, ROW_REASONS } from '../logs/index.js';
 import { backTest, watch } from './backTestSchemas.js';
 import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
-import { dailyFactor, dayModel, degradedDay, timeOfDay } from './daySchemas.js';
+import { dailyFactor, dayModel, degradedDay, leftOut, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
 import type { Results } from './results.js';
@@ -96,6 +96,7 @@ export const resultsSchema = z.strictObject({
   specSheetTest: z.array(specSheetTest),
   checkShotLimits: z.array(checkShotLimits),
   watch: z.array(watch),
+  leftOut: leftOut.nullable().describe('The days left out by the study file, and the results with them.'),
   specSheet: z
     .strictObject({
       horizontal: constantAndPpm,

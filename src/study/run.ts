@@ -29,6 +29,7 @@ import type { Study } from './study.js';
 import { studySky } from './studySky.js';
 import { summarizeRun } from './summarizeRun.js';
 import { testRules } from './testRules.js';
+import { leftOutMessages, withLeftOutDays } from './withLeftOutDays.js';
 
 export interface RunOptions {
   /** Is given every set-aside row as soon as it is known. */
@@ -43,6 +44,11 @@ export interface StudyErrors {
   readonly errors: readonly OccupationError[];
   readonly setAside: readonly SetAsideOccupation[];
   readonly visits: readonly Visit[];
+  /** The same errors and visits with the days that the study file leaves out; null when it leaves out none of them. */
+  readonly withLeftOut: {
+    readonly errors: readonly OccupationError[];
+    readonly visits: readonly Visit[];
+  } | null;
   /** Results without fits and rules. */
   readonly results: Results;
 }
@@ -94,7 +100,9 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
     ],
   });
   const visits = formed.visits.filter(({ day }) => !study.leaveOutDays.includes(day));
-  return { control, errors, setAside, visits, results };
+  const withLeftOut =
+    errors.length === checked.errors.length ? null : { errors: checked.errors, visits: formed.visits };
+  return { control, errors, setAside, visits, withLeftOut, results };
 }
 
 /**
@@ -123,6 +131,8 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const made = makeRules(ground, study);
   const tested = testRules(ground, study);
   const fitted = fitResults(components, errors, wrongFixes, judged);
+  const { withLeftOut, control } = read;
+  const leftOut = withLeftOut === null ? null : withLeftOutDays(withLeftOut, control, study);
   const sky = await studySky(study, read, dayResults(judged).dailyFactors);
   const results: Results = {
     ...read.results,
@@ -135,6 +145,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...sky.messages,
       ...tested.messages,
       ...ruleMessages(made.rules),
+      ...(leftOut === null ? [] : leftOutMessages(leftOut, { ...fitted, ...made })),
     ],
     occupations: withSuspects(read.results.occupations, errors.length - used.length),
     ...fitted,
@@ -144,6 +155,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     lengthClasses: lengthClasses(used, read.visits, read.control, study),
     marks: markResults(used, components),
     ...made,
+    leftOut,
     ruleMoves: movedRules(ground, components, made.rules),
     adjustmentWeights: adjustmentWeights(fitted.fits, study.centringSigmaMm),
     backTest: tested.backTest,

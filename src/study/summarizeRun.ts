@@ -83,6 +83,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     lengthClasses: [],
     marks: [],
     sky: null,
+    leftOut: null,
     rules: [],
     ruleMoves: [],
     adjustmentWeights: [],

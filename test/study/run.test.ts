@@ -170,6 +170,43 @@ describe('the demo study', () => {
     expectSound(results);
   });
 
+  it('leaves out degraded days only where they are named, and tells both results', async () => {
+    const { results: whole } = run;
+    const days = [...new Set(whole.degradedDays.map(({ day }) => day))].sort();
+    const { results } = await runStudy({ ...(await readStudy(demo('study.yaml'))), leaveOutDays: days });
+    expect(days.length).toBeGreaterThan(1);
+    expect([whole.days, results.days]).toEqual([45, 45 - days.length]);
+    expect(whole.leftOut).toBeNull();
+    expect(results.leftOut!.days).toEqual(days);
+    const basisOf = ({ fits }: Results) => fits.filter(({ basisOfRule }) => basisOfRule);
+    // With the days all is as in the study that leaves none out; without them the ppm is lower and the rule longer.
+    expect(results.leftOut!.fits).toEqual(
+      basisOf(whole).map(({ component, constantMm, ppm, occupations, days }) => ({
+        component,
+        constantMm,
+        ppm,
+        occupations,
+        days,
+      })),
+    );
+    expect(results.leftOut!.rules.map(({ maximumBaselineKm }) => maximumBaselineKm)).toEqual(
+      whole.rules.map(({ maximumBaselineKm }) => maximumBaselineKm),
+    );
+    const told = results.messages.filter(({ code }) => code === 'left-out-days-weigh');
+    basisOf(results).forEach(({ component, ppm }, k) => {
+      const before = results.leftOut!.fits[k]!.ppm;
+      expect(ppm.estimate!).toBeLessThan(before.estimate!);
+      for (const { estimate } of [before, ppm]) expect(told[k]!.text).toContain(estimate!.toFixed(2));
+      results.rules.forEach((rule, r) => {
+        if (rule.component !== component) return;
+        const kms = [results.leftOut!.rules[r]!, rule].map(({ maximumBaselineKm }) => maximumBaselineKm!);
+        expect(kms[1]!).toBeGreaterThan(kms[0]!);
+        const [withThem, without] = kms.map((km) => (Math.floor(km * 10 + 1e-9) / 10).toFixed(1));
+        expect(told[k]!.text).toContain(`${withThem} km with them, ${without} km without.`);
+      });
+    });
+  });
+
   it('gives the same again', async () => {
     const { results } = await runStudy(await readStudy(demo('study.yaml')));
     expect(results).toEqual(run.results);
@@ -270,6 +307,30 @@ describe('small studies', () => {
     expect(results.occupations.setAside).toEqual({ 'left-out-day': left });
     expect(setAside.every(({ reason, error }) => reason === 'left-out-day' && error.day === day)).toBe(true);
     expect(results.days).toBe(whole.results.days - 1);
+    // Both results stand side by side: those with the days are the ones of the study that leaves none out.
+    const { leftOut } = results;
+    expect(whole.results.leftOut).toBeNull();
+    expect(leftOut).toMatchObject({ days: [day], occupations: left });
+    const basis = whole.results.fits.filter(({ basisOfRule }) => basisOfRule);
+    expect(leftOut!.fits).toEqual(
+      basis.map(({ component, constantMm, ppm, occupations, days }) => ({
+        component,
+        constantMm,
+        ppm,
+        occupations,
+        days,
+      })),
+    );
+    expect(leftOut!.rules).toEqual(
+      whole.results.rules.map(({ component, limitMm, share, maximumBaselineKm, bestEstimateKm, reason }) => ({
+        component,
+        limitMm,
+        share,
+        maximumBaselineKm,
+        bestEstimateKm,
+        reason,
+      })),
+    );
     expect(results.messages.filter(({ code }) => code === 'left-out-day').map(({ text }) => text)).toEqual([
       `Day ${day} is left out as the study file asks. Say why in the report.`,
       'Day 2020-01-01 is to be left out and has no occupations. Check the date in leaveOutDays.',
