@@ -1,7 +1,7 @@
 import type { DayEstimate } from './dayEstimates.js';
 
 /** Expected share of days named wrongly among all that are named. */
-const FALSE_SHARE = 0.1;
+export const FALSE_SHARE = 0.1;
 /** A weekend between two days of work does not end an event. */
 const LONGEST_GAP_DAYS = 3;
 const DAY_MS = 86_400_000;

@@ -1,7 +1,9 @@
 import type { ErrorsInput } from '../errors/index.js';
 import type { ErrorModel, FitData } from '../fit/index.js';
 import { chiSquareCdf, digamma, fCdf, inverseTrigamma, median, sum, trigamma } from '../stats/index.js';
+import { DEGRADED_FACTOR } from './dayEstimates.js';
 import { dayRatios } from './dayRatios.js';
+import { FALSE_SHARE } from './degradedDays.js';
 import { effectiveShare } from './effectiveShare.js';
 import { falseDiscoveryAdjusted } from './falseDiscovery.js';
 import { fittedData, fittedSpread } from './fittedSpread.js';
@@ -31,8 +33,10 @@ export interface ModeratedDay {
   readonly moderatedRatio: number;
   readonly ppm: number;
   readonly pValue: number;
-  /** At most 0.1 among the days named at a false discovery rate of 10 %. */
+  /** At most 0.1 among the days found at a false discovery rate of 10 %. */
   readonly adjustedP: number;
+  /** Found so, and with a ppm of 1.5 times that of the median day: the first alone says that a day differs, not by how much. */
+  readonly degraded: boolean;
 }
 
 /**
@@ -66,6 +70,7 @@ export function moderatedDaysOf(data: FitData, A: number, B: number, share: numb
   const { moderated, pValues } = moderateVariances(factors, df, 'robust');
   const adjusted = falseDiscoveryAdjusted([...pValues]);
   const ppm = moderatedPpm(moderated, omegaSums, omegaSquares, B);
+  const least = DEGRADED_FACTOR * median(ppm);
   return days.map((day, d) => ({
     day,
     ratio: factors[d]!,
@@ -74,6 +79,7 @@ export function moderatedDaysOf(data: FitData, A: number, B: number, share: numb
     ppm: ppm[d]!,
     pValue: pValues[d]!,
     adjustedP: adjusted[d]!,
+    degraded: adjusted[d]! <= FALSE_SHARE && ppm[d]! >= least,
   }));
 }
 

@@ -36,9 +36,6 @@ export function dayModelOfFit(
   return [{ component: basis.component, model: dayModel(errors, basis, weights ?? undefined) }];
 }
 
-/** A moderated variance names a day from this adjusted chance on. */
-const SECOND_OPINION = 0.1;
-
 /**
  * Judges days and hours by the fit behind the rules of each component. A fit in another form than root-sum-square has
  * no day model.
@@ -61,7 +58,7 @@ export function judgeDays(
       random: randomStream(seed, `hours ${component}`),
       weights: own,
     });
-    const second = new Map(moderated.map(({ day, adjustedP }) => [day, adjustedP <= SECOND_OPINION]));
+    const second = new Map(moderated.map(({ day, degraded }) => [day, degraded]));
     const summary: DayModelResult = {
       component,
       medianDayPpm: model.medianDayPpm,
@@ -81,7 +78,7 @@ export function judgeDays(
           dayModels: [summary],
           dailyFactors: dailyFactors(model).map((factor) => ({
             ...factor,
-            secondOpinion: second.get(factor.day) ?? null,
+            secondOpinion: factor.degraded === null ? null : (second.get(factor.day) ?? null),
           })),
           degradedDays: explanations.map(degradedDay),
           timeOfDay: [{ component, pValue: hours.pValue, hours: hours.hours, harmonics: hours.harmonics }],

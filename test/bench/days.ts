@@ -126,9 +126,7 @@ function degraded(): void {
         const model = fitErrorModel(rows, { component });
         const named = new Set(dayModel(rows, model).degradedDays ?? []);
         tallies[k]!.grid.add(named, truth.days);
-        const each = moderatedDays(rows, model);
-        const usual = median(each.map(({ ppm }) => ppm));
-        const moderated = each.filter(({ adjustedP, ppm }) => adjustedP <= 0.1 && ppm >= 1.5 * usual);
+        const moderated = moderatedDays(rows, model).filter((each) => each.degraded);
         tallies[k]!.moderated.add(new Set(moderated.map(({ day }) => day)), truth.days);
       });
     }

@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
+import { simulateErrors } from '../../src/campaign/index.js';
 import { falseDiscoveryAdjusted, familyAdjusted } from '../../src/days/falseDiscovery.js';
-import { moderatedDaysOf, moderateVariances } from '../../src/days/moderatedVariance.js';
-import { estimateVariance, prepareErrors } from '../../src/fit/index.js';
-import { digamma, inverseTrigamma, tetragamma, trigamma } from '../../src/stats/index.js';
+import { moderatedDays, moderatedDaysOf, moderateVariances } from '../../src/days/moderatedVariance.js';
+import { estimateVariance, fitErrorModel, prepareErrors } from '../../src/fit/index.js';
+import { digamma, inverseTrigamma, median, tetragamma, trigamma } from '../../src/stats/index.js';
 import { referenceFits } from '../fit/reference.js';
 import { allClose, axisData, close, readDaysFixture, referenceWeights, timedErrors } from './reference.js';
 
@@ -84,6 +85,30 @@ it('names the degraded days of the set with gross errors at 10 % where R does', 
   expect(each.filter(({ adjustedP }) => adjustedP <= 0.1).map(({ day }) => day)).toEqual(
     days.day.filter((_: string, d: number) => days.squeezeVar_robust.BH[d] <= 0.1),
   );
+});
+
+it('calls a day degraded that is found and 1.5 times worse than the median day, not one that merely differs', () => {
+  const { rows } = simulateErrors({ seed: 41, days: 30, badDays: { runs: 2, runLength: 1 } });
+  const each = moderatedDays(rows, fitErrorModel(rows, { component: 'horizontal' }));
+  const usual = median(each.map(({ ppm }) => ppm));
+  const named = each.filter(({ degraded }) => degraded);
+  expect(named.length).toBeGreaterThan(0);
+  for (const { degraded, adjustedP, ppm } of each)
+    expect(degraded).toBe(adjustedP <= 0.1 && ppm >= 1.5 * usual);
+  // Days alike but for a factor of 1.3 on two of them, with hundreds of shots: clearly different, not degraded.
+  const alike = Array.from({ length: 12_000 }, (_, k) => {
+    const baselineKm = 1 + (k % 30);
+    const size = Math.hypot(5, (k % 24 < 22 ? 1 : 1.3) * baselineKm) * Math.SQRT2;
+    return {
+      day: `day ${String(k % 24).padStart(2, '0')}`,
+      startMs: k,
+      baselineKm,
+      up: size * Math.sin(2.399963 * k),
+    };
+  });
+  const differing = moderatedDays(alike, fitErrorModel(alike, { component: 'vertical' }));
+  expect(differing.some(({ adjustedP }) => adjustedP <= 0.1)).toBe(true);
+  expect(differing.some(({ degraded }) => degraded)).toBe(false);
 });
 
 describe('adjusted p-values', () => {
