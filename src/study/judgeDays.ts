@@ -1,6 +1,7 @@
 import {
   type DayExplanation,
   type DayModel,
+  type DegradedEvent,
   dailyFactors,
   dayDependence,
   dayModel,
@@ -85,7 +86,7 @@ export function judgeDays(
         },
         messages: [
           ...model.notes.filter(({ code }) => code !== 'degraded-days'),
-          ...degradedMessage(component, explanations),
+          ...degradedMessage(component, model.events, explanations),
           // What speaks for and against each is in the report.
           ...explanations.map(({ note }) => ({ ...note, severity: 'info' as const })),
           ...dependence.notes,
@@ -99,21 +100,33 @@ export function judgeDays(
   });
 }
 
-/** All degraded days in one sentence, each with what it is put down to. */
-function degradedMessage(component: string, explanations: readonly DayExplanation[]): Message[] {
+/** All degraded days in one sentence, days in a row together, each with what it is put down to. */
+export function degradedMessage(
+  component: string,
+  events: readonly DegradedEvent[],
+  explanations: readonly Pick<DayExplanation, 'day' | 'factor' | 'verdict' | 'subject'>[],
+): Message[] {
   if (explanations.length === 0) return [];
-  const days = explanations
+  const words = (day: string): string => {
+    const { factor, verdict, subject } = explanations.find((each) => each.day === day)!;
+    return `${factor.toFixed(1)} times, ${verdict}${subject === null ? '' : ` ${quoted(subject)}`}`;
+  };
+  const list = events
     .map(
-      ({ day, factor, verdict, subject }) =>
-        `${day} (${factor.toFixed(1)} times, ${verdict}${subject === null ? '' : ` ${quoted(subject)}`})`,
+      ({ days }) =>
+        `${days.length === 1 ? days[0] : `${days.join(', ')} in a row`} (${days.map(words).join('; ')})`,
     )
     .join(', ');
   const count = explanations.length === 1 ? 'One day was' : `${explanations.length} days were`;
+  const grouped =
+    events.length < explanations.length
+      ? `, which makes ${events.length === 1 ? 'one event' : `${events.length} events`}`
+      : '';
   return [
     message(
       'warning',
       'degraded-days',
-      `${count} worse than the median day in ${component} ppm: ${days}. They stay in the fit; a day is left out only where leaveOutDays names it.`,
+      `${count} worse than the median day in ${component} ppm${grouped}: ${list}. They stay in the fit; a day is left out only where leaveOutDays names it.`,
     ),
   ];
 }
