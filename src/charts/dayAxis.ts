@@ -2,6 +2,8 @@ import type { View } from './chartSpec.js';
 
 const DAY_MS = 86_400_000;
 const MOST_LABELS = 12;
+/** From three weeks on it is weeks that are read off the axis. */
+const FEWEST_DAYS_BY_WEEKS = 21;
 /** Beyond this many calendar days those without work are left out. */
 const MOST_CALENDAR_DAYS = 400;
 
@@ -30,13 +32,24 @@ export function dayWords(day: string): string {
 export const yearWords = (days: readonly string[]): string =>
   [...new Set(days.filter(isDate).map((day) => day.slice(0, 4)))].sort().join(' and ');
 
+/** Some of the days: Mondays where every day of some weeks is there. */
+function labelledDays(days: readonly string[]): readonly string[] {
+  const weekly = days.length >= FEWEST_DAYS_BY_WEEKS && isCalendar(days);
+  const choice = weekly ? days.filter((day) => new Date(`${day}T00:00:00Z`).getUTCDay() === 1) : days;
+  const step = Math.max(1, Math.ceil(choice.length / MOST_LABELS));
+  return choice.filter((_, k) => k % step === 0);
+}
+
+/** Whether the days are dates that follow each other without a gap. */
+const isCalendar = (days: readonly string[]): boolean =>
+  days.every(isDate) && (Date.parse(days.at(-1)!) - Date.parse(days[0]!)) / DAY_MS === days.length - 1;
+
 /**
  * The channel of days, evenly spaced bands with some of them labelled.
  * @param labels false leaves ticks and labels to a panel below
  */
 export function dayChannel(days: readonly string[], labels: boolean): View {
-  const step = Math.max(1, Math.ceil(days.length / MOST_LABELS));
-  const values = days.filter((_, k) => k % step === 0);
+  const values = labelledDays(days);
   const names = Object.fromEntries(values.map((day) => [day, dayWords(day)]));
   const years = yearWords(days);
   return {

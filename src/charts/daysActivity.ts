@@ -4,8 +4,8 @@ import { COLORS, QUIET_INK } from './theme.js';
 import { roundUp } from './words.js';
 
 const HEIGHT_PX = 90;
-/** Kp 5 is where the NOAA scale begins: G1, minor. */
-const STORM_KP = 5;
+/** Kp 5-, where the storm scale of NOAA begins: G1, a minor storm. */
+const STORM_KP = 14 / 3;
 
 /** Bars of geomagnetic activity, one a day. */
 export function activityPanel(
@@ -31,13 +31,24 @@ export function activityPanel(
         mark: { type: 'bar', color: COLORS.water },
         encoding: { x: { ...x, field: 'day' }, y: { ...y, field: 'value' } },
       },
-      ...(isKp ? [stormLine(y)] : []),
+      ...(isKp ? stormLine(y) : []),
     ],
   };
 }
 
-const stormLine = (y: View): View => ({
-  data: { values: [{ value: STORM_KP }] },
-  mark: { type: 'rule', color: QUIET_INK, strokeDash: [2, 3] },
-  encoding: { y: { ...y, field: 'value' } },
-});
+/** From here on a day is a storm; named at the right, outside the bars. */
+function stormLine(y: View): View[] {
+  const data = { values: [{ value: STORM_KP, word: 'G1 storm' }] };
+  return [
+    {
+      data,
+      mark: { type: 'rule', color: QUIET_INK, strokeDash: [2, 3] },
+      encoding: { y: { ...y, field: 'value' } },
+    },
+    {
+      data,
+      mark: { type: 'text', align: 'left', baseline: 'middle', x: DAYS_WIDTH_PX + 6, color: QUIET_INK },
+      encoding: { y: { ...y, field: 'value' }, text: { field: 'word' } },
+    },
+  ];
+}

@@ -4,7 +4,7 @@ import type { SkyDay } from '../study/index.js';
 import { type ChartSpec, chartSpec, type View } from './chartSpec.js';
 import { calendarDays, dayChannel } from './dayAxis.js';
 import { activityPanel } from './daysActivity.js';
-import { type DayCause, factorPanel } from './daysFactors.js';
+import { type DayCause, factorPanel, kindsOf } from './daysFactors.js';
 import { daysDescription, daysSubtitle, daysTitle } from './daysWords.js';
 
 /** What {@link daysChart} draws. */
@@ -41,18 +41,25 @@ export function daysChart({ factors, explanations = [], sky = [], activity }: Da
     factors.some((one) => one.component === component),
   );
   const degraded = [...new Set(factors.filter((one) => one.degraded === true).map(({ day }) => day))];
+  const kinds = kindsOf(factors, explanations);
   const panels = components.map((component, k): View => {
     const own = factors.filter((one) => one.component === component);
     const verdicts = explanations.filter((one) => one.component === component);
     const isLast = k === components.length - 1 && bars.length === 0;
-    return factorPanel(component, own, verdicts, dayChannel(days, isLast), degraded);
+    return factorPanel({
+      component,
+      factors: own,
+      verdicts,
+      x: dayChannel(days, isLast),
+      degraded,
+      kinds,
+    });
   });
   if (bars.length > 0) panels.push(activityPanel(measure, bars, dayChannel(days, true), degraded));
   const words = {
     factors,
     components,
     hasBars: bars.length > 0,
-    isExplained: explanations.length > 0,
     measure,
   };
   return chartSpec(daysTitle(words), daysSubtitle(words), daysDescription(words), {

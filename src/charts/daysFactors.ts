@@ -1,7 +1,8 @@
 import { type DailyFactor, type DayExplanation, DEGRADED_FACTOR } from '../days/index.js';
 import type { Component } from '../fit/index.js';
 import { LABEL_LINE_PX, type View } from './chartSpec.js';
-import { COLORS, FONT_SIZE, QUIET_INK, roughTextWidthPx } from './theme.js';
+import { type DayLabel, flagLayers, type PlacedLabel, placedLabels } from './daysLabels.js';
+import { COLORS, FONT_SIZE, QUIET_INK } from './theme.js';
 
 /** What a degraded day is put down to. */
 export type DayCause = Pick<DayExplanation, 'component' | 'day' | 'verdict' | 'subject'>;
@@ -10,6 +11,37 @@ export const DAYS_WIDTH_PX = 640;
 const HEIGHT_PX = 190;
 const TICKS = [0.1, 0.2, 0.3, 0.5, 0.7, 1, 1.5, 2, 3, 5, 10];
 
+/** How degraded days are told apart at a glance; a cause on the ground is named beside its day. */
+const KINDS = [
+  { kind: 'degraded', shape: 'diamond', fill: COLORS.ink },
+  { kind: 'grows with distance', shape: 'diamond', fill: COLORS.ink },
+  { kind: 'not explained', shape: 'diamond', fill: 'white' },
+  { kind: 'cause on the ground', shape: 'square', fill: COLORS.ink },
+] as const;
+type Kind = (typeof KINDS)[number]['kind'];
+
+function kindOf(day: string, verdicts: readonly DayCause[]): Kind {
+  const found = verdicts.find((one) => one.day === day);
+  if (found === undefined) return 'degraded';
+  const { verdict } = found;
+  return verdict === 'grows with distance' || verdict === 'not explained' ? verdict : 'cause on the ground';
+}
+
+/** The kinds of degraded days that a chart has, in the order of its legend. */
+export function kindsOf(factors: readonly DailyFactor[], verdicts: readonly DayCause[]): Kind[] {
+  const found = new Set(
+    factors
+      .filter(({ degraded }) => degraded === true)
+      .map(({ day, component }) =>
+        kindOf(
+          day,
+          verdicts.filter((one) => one.component === component),
+        ),
+      ),
+  );
+  return KINDS.map(({ kind }) => kind).filter((kind) => found.has(kind));
+}
+
 /** Days that any component calls degraded, as columns behind a panel, so that one follows them down to the bars. */
 export const degradedColumns = (degraded: readonly string[], x: View): View => ({
   data: { values: degraded.map((day) => ({ day })) },
@@ -17,24 +49,34 @@ export const degradedColumns = (degraded: readonly string[], x: View): View => (
   encoding: { x: { ...x, field: 'day' } },
 });
 
-/** Daily factors of one component with their bands; degraded days by shape and word. */
-export function factorPanel(
-  component: Component,
-  factors: readonly DailyFactor[],
-  verdicts: readonly DayCause[],
-  x: View,
-  degraded: readonly string[],
-): View {
+/** What a panel of daily factors is drawn from. */
+export interface FactorPanel {
+  readonly component: Component;
+  readonly factors: readonly DailyFactor[];
+  readonly verdicts: readonly DayCause[];
+  /** The channel of days. */
+  readonly x: View;
+  /** Days that any component calls degraded. */
+  readonly degraded: readonly string[];
+  /** Kinds of degraded days of the whole chart. */
+  readonly kinds: readonly Kind[];
+}
+
+/** Daily factors of one component with their bands; degraded days by shape, and by word where there is a cause. */
+export function factorPanel({ component, factors, verdicts, x, degraded, kinds }: FactorPanel): View {
   const rows = factors.map(({ day, factor, low, high, degraded: isDegraded }) => ({
     day,
     factor,
     low,
     high,
-    word: isDegraded === true ? wordsOf(day, verdicts) : '',
+    kind: isDegraded === true ? kindOf(day, verdicts) : null,
   }));
-  const [ordinary, bad] = [rows.filter(({ word }) => word === ''), rows.filter(({ word }) => word !== '')];
+  const [ordinary, bad] = [
+    rows.filter(({ kind }) => kind === null),
+    rows.filter(({ kind }) => kind !== null),
+  ];
   const { domain } = x.scale as { readonly domain: readonly string[] };
-  const labels = placedLabels(runLabels(bad, rows), domain);
+  const labels = placedLabels(runLabels(bad, rows, verdicts), domain, DAYS_WIDTH_PX);
   const [least, most] = factorRange(rows, labels);
   const y = {
     type: 'quantitative',
@@ -68,13 +110,33 @@ export function factorPanel(
         mark: { type: 'circle', color: COLORS.water, size: 40, opacity: 1 },
         encoding,
       },
-      {
-        data: { values: bad },
-        mark: { type: 'point', shape: 'diamond', filled: true, color: COLORS.ink, size: 130, opacity: 1 },
-        encoding,
-      },
-      ...labelLayers(labels, x),
+      ...(bad.length === 0 ? [] : [badLayer(bad, encoding, kinds)]),
+      ...flagLayers(labels, x, y),
     ],
+  };
+}
+
+/** Degraded days, told apart by shape and filling. */
+function badLayer(bad: readonly View[], encoding: View, kinds: readonly Kind[]): View {
+  const shown = KINDS.filter(({ kind }) => kinds.includes(kind));
+  const domain = shown.map(({ kind }) => kind);
+  // the same in every panel, so that one legend serves all
+  const legend = {
+    orient: 'top',
+    title: null,
+    offset: 6,
+    symbolSize: 110,
+    labelFontSize: FONT_SIZE.small,
+    columnPadding: 24,
+  };
+  return {
+    data: { values: bad },
+    mark: { type: 'point', stroke: COLORS.ink, strokeWidth: 1.8, size: 110, opacity: 1 },
+    encoding: {
+      ...encoding,
+      shape: { field: 'kind', scale: { domain, range: shown.map(({ shape }) => shape) }, legend },
+      fill: { field: 'kind', scale: { domain, range: shown.map(({ fill }) => fill) }, legend },
+    },
   };
 }
 
@@ -90,70 +152,26 @@ function factorRange(
   return [least, least * (highest / least) ** (1 / used)];
 }
 
-interface LabelRow {
-  readonly day: string;
-  readonly word: string;
-}
-
-const wordsOf = (day: string, verdicts: readonly DayCause[]): string => {
-  const found = verdicts.find((one) => one.day === day);
-  if (found === undefined) return 'degraded';
-  const { verdict, subject } = found;
-  return subject === null || verdict === 'grows with distance' ? verdict : `${verdict} ${subject}`;
-};
-
-/** One label for degraded days that follow each other: what they are put down to. */
-function runLabels(bad: readonly LabelRow[], all: readonly { readonly day: string }[]): LabelRow[] {
+/** Causes on the ground, one label for days in a row with the same cause. */
+function runLabels(
+  bad: readonly { readonly day: string; readonly high: number; readonly kind: Kind | null }[],
+  all: readonly { readonly day: string }[],
+  verdicts: readonly DayCause[],
+): DayLabel[] {
   const place = new Map(all.map(({ day }, k) => [day, k]));
-  const runs: LabelRow[][] = [];
-  for (const row of bad) {
-    const before = runs.at(-1)?.at(-1);
-    if (before !== undefined && place.get(row.day)! - place.get(before.day)! === 1) runs.at(-1)!.push(row);
-    else runs.push([row]);
+  const labels: DayLabel[] = [];
+  let previous: { readonly day: string; readonly word: string } | null = null;
+  for (const { day, high, kind } of bad) {
+    if (kind !== 'cause on the ground') {
+      previous = null;
+      continue;
+    }
+    const { verdict, subject } = verdicts.find((one) => one.day === day)!;
+    const word = subject === null ? verdict : `${verdict} ${subject}`;
+    const goesOn =
+      previous !== null && previous.word === word && place.get(day)! - place.get(previous.day)! === 1;
+    if (!goesOn) labels.push({ day, word, high });
+    previous = { day, word };
   }
-  return runs.map((run) => {
-    return { day: run[0]!.day, word: [...new Set(run.map(({ word }) => word))].join(', ') };
-  });
-}
-
-/** A label with its place: lines of text counted from the top of the panel. */
-interface PlacedLabel extends LabelRow {
-  readonly line: number;
-  readonly align: 'left' | 'right';
-}
-
-/** Words at the top of the panel beside their day; in the right half they end at it. Each takes the first free line. */
-function placedLabels(rows: readonly LabelRow[], days: readonly string[]): PlacedLabel[] {
-  const taken: { line: number; from: number; to: number }[] = [];
-  return rows.map((row) => {
-    const at = ((days.indexOf(row.day) + 0.5) / days.length) * DAYS_WIDTH_PX;
-    const widthPx = roughTextWidthPx(row.word, FONT_SIZE.small, true) + 8;
-    const align = at > DAYS_WIDTH_PX / 2 ? 'right' : 'left';
-    const [from, to] = align === 'left' ? [at - 6, at + widthPx] : [at - widthPx, at + 6];
-    let line = 0;
-    while (taken.some((one) => one.line === line && one.from < to && one.to > from)) line += 1;
-    taken.push({ line, from, to });
-    return { ...row, line, align };
-  });
-}
-
-/** On a white outline, so that they can be read over bands. */
-function labelLayers(labels: readonly PlacedLabel[], x: View): View[] {
-  return labels.flatMap(({ day, word, line, align }) => {
-    const data = { values: [{ day, word }] };
-    const mark = {
-      type: 'text',
-      align,
-      baseline: 'top',
-      y: 3 + line * LABEL_LINE_PX,
-      dx: align === 'left' ? -5 : 5,
-      fontSize: FONT_SIZE.small,
-      fontWeight: 'bold',
-    };
-    const encoding = { x: { ...x, field: 'day' }, text: { field: 'word' } };
-    return [
-      { data, mark: { ...mark, color: 'white', stroke: 'white', strokeWidth: 4 }, encoding },
-      { data, mark: { ...mark, color: COLORS.ink }, encoding },
-    ];
-  });
+  return labels;
 }

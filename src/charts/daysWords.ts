@@ -8,7 +8,6 @@ export interface DaysWords {
   readonly factors: readonly DailyFactor[];
   readonly components: readonly Component[];
   readonly hasBars: boolean;
-  readonly isExplained: boolean;
   readonly measure: 'kpMax' | 'ap';
 }
 
@@ -38,10 +37,16 @@ export function daysTitle(words: DaysWords): string {
   return `Degraded days of ${days}: ${parts.join(', ')}`;
 }
 
-export function daysSubtitle({ hasBars, isExplained, measure }: DaysWords): string[] {
+export function daysSubtitle(words: DaysWords): string[] {
+  const { hasBars, measure } = words;
+  const columns = countsOf(words).some(({ degraded }) => degraded !== null && degraded.length > 0)
+    ? ['grey columns: degraded days']
+    : [];
+  const bars = hasBars ? [`bars: ${measure === 'kpMax' ? 'greatest Kp' : 'Ap'} of the day`] : [];
+  const second = [...columns, ...bars].join('; ');
   return [
     'A day’s ppm over that of the median day, with 95 % bands; dashed: 1.5 times',
-    `Diamonds, grey columns: degraded days${isExplained ? ' and what they are put down to' : ''}${hasBars ? `; bars: ${measure === 'kpMax' ? 'greatest Kp, dotted: minor storm' : 'Ap'}` : ''}`,
+    ...(second === '' ? [] : [`${second[0]!.toUpperCase()}${second.slice(1)}`]),
   ];
 }
 

@@ -46,7 +46,7 @@ export function splitChart({ rows, component, by }: SplitInput): ChartSpec {
   return chartSpec(
     title,
     [
-      `${rmsWords(component)} of each class, bars: intervals counted by days; lengths may differ between classes`.replace(
+      `${rmsWords(component)} of each class, ${barWords(split)}; lengths may differ between classes`.replace(
         /^./,
         (first) => first.toUpperCase(),
       ),
@@ -59,6 +59,11 @@ export function splitChart({ rows, component, by }: SplitInput): ChartSpec {
     { width: WIDTH_PX, height: split.length * ROW_PX, layer: layers(split, component, by) },
   );
 }
+
+const barWords = (rows: readonly SplitRow[]): string =>
+  rows.some(({ low }) => low !== null)
+    ? 'bars: intervals counted by days'
+    : 'without intervals, for no class has two days';
 
 const rmsOf = (row: SummaryRow, component: Component): Interval | null =>
   component === 'horizontal' ? row.horizontalRms : row.verticalRms;
@@ -79,7 +84,7 @@ function splitRow(row: SummaryRow, component: Component): SplitRow {
     low,
     high,
     tooFew,
-    text: `${counted(occupations, 'shot')}, ${counted(days, 'day')}${missing}`,
+    text: `${counted(occupations, 'shot')}, ${counted(days, 'day')}${tooFew ? ': too few' : ''}${missing}`,
   };
 }
 

@@ -25,12 +25,15 @@ export interface CellSummary {
   readonly seEast: number;
   readonly seNorth: number;
   readonly seUp: number;
-  /** Fewer than 10 occupations or 3 days: the figures describe these occupations and nothing more. */
+  /**
+   * Fewer than 10 occupations or 3 days: the figures describe these occupations and nothing more. In a split by day or
+   * setup, whose cells are single days by their nature, the occupations alone count.
+   */
   readonly tooFew: boolean;
 }
 
 const FEWEST_OCCUPATIONS = 10;
-const FEWEST_DAYS = 3;
+export const FEWEST_DAYS = 3;
 
 /** The columns that a cell is summarised from. */
 export interface ErrorValues {
@@ -53,11 +56,15 @@ export function errorValues(columns: ErrorColumns, neededFor: string): ErrorValu
   };
 }
 
-/** @param members rows of the cell; may be none */
+/**
+ * @param members rows of the cell; may be none
+ * @param fewestDays days below which a cell holds too few
+ */
 export function cellSummary(
   { east, north, up, baselineKm, days }: ErrorValues,
   members: readonly number[],
   confidence: number,
+  fewestDays: number = FEWEST_DAYS,
 ): CellSummary {
   const plan = members.filter((i) => !Number.isNaN(east[i]!) && !Number.isNaN(north[i]!));
   const heights = members.filter((i) => !Number.isNaN(up[i]!));
@@ -100,6 +107,6 @@ export function cellSummary(
     seEast: e.standardError,
     seNorth: n.standardError,
     seUp: u.standardError,
-    tooFew: members.length < FEWEST_OCCUPATIONS || dayCount < FEWEST_DAYS,
+    tooFew: members.length < FEWEST_OCCUPATIONS || dayCount < fewestDays,
   };
 }

@@ -1,7 +1,7 @@
 import { type ErrorsInput, errorColumns } from '../errors/index.js';
-import { type CellSummary, cellSummary, errorValues } from './cellSummary.js';
+import { type CellSummary, cellSummary, errorValues, FEWEST_DAYS } from './cellSummary.js';
 import { withDerived } from './derivedColumns.js';
-import { type Group, groupComparison, groupsOf, type SplitBy } from './groups.js';
+import { columnOf, type Group, groupComparison, groupsOf, type SplitBy } from './groups.js';
 import { cellKey, countVisits, type VisitCounts, visitCounts } from './visitCounts.js';
 
 /** One cell by its groups, one for each column. */
@@ -9,6 +9,9 @@ export interface SplitCell {
   readonly groups: readonly Group[];
   readonly cell: CellSummary & VisitCounts;
 }
+
+/** Columns whose groups are single days, or may be. */
+const SINGLE_DAYS: readonly string[] = ['day', 'setup'];
 
 /**
  * Splits by all columns at once. Cells with neither occupations nor visits are left out.
@@ -34,12 +37,13 @@ export function splitCells(
   for (const [key, cell] of counted ?? []) {
     if (!cells.has(key)) cells.set(key, { groups: cell.groups, members: [] });
   }
+  const fewestDays = by.some((each) => SINGLE_DAYS.includes(columnOf(each))) ? 1 : FEWEST_DAYS;
   const comparisons = by.map(groupComparison);
   return [...cells]
     .map(([key, { groups: own, members }]) => ({
       groups: own,
       cell: {
-        ...cellSummary(values, members, confidence),
+        ...cellSummary(values, members, confidence, fewestDays),
         ...visitCounts(counted === null ? null : counted.get(key)),
       },
     }))

@@ -44,6 +44,7 @@ export function fullInput(rows: readonly object[], component: Component, limitMm
 interface Layer {
   readonly data: { readonly values: readonly Readonly<Record<string, unknown>>[] };
   readonly mark: { readonly type: string; readonly [key: string]: unknown };
+  readonly encoding: Readonly<Record<string, unknown>>;
 }
 
 /** The layers of a chart of one view. */

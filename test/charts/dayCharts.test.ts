@@ -1,5 +1,7 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { simulateErrors } from '../../src/campaign/index.js';
+import { placedLabels } from '../../src/charts/daysLabels.js';
 import {
   associationChart,
   type ChartSpec,
@@ -8,6 +10,7 @@ import {
   hourPpmChart,
   renderSvg,
 } from '../../src/charts/index.js';
+import { COLORS, FONT_SIZE, roughTextWidthPx } from '../../src/charts/theme.js';
 import {
   type DailyFactor,
   dailyFactors,
@@ -32,7 +35,6 @@ const panels = (chart: ChartSpec): Record<string, unknown>[] =>
   (chart.vegaLite.vconcat as Record<string, unknown>[] | undefined) ?? [chart.vegaLite];
 const allRows = (chart: ChartSpec, ...fields: string[]) =>
   panels(chart).flatMap((panel) => rowsWith(layersOf(panel), ...fields).flat());
-const words = (chart: ChartSpec): string => JSON.stringify(chart);
 
 const timeOf = (rest: Partial<TimeOfDay> = {}): TimeOfDay => ({
   component: 'horizontal',
@@ -126,6 +128,20 @@ describe('hourDayChart', () => {
   });
 });
 
+/** Degraded days as they are drawn, and what their shapes and fillings stand for. */
+const badLayers = (chart: ChartSpec) =>
+  panels(chart).flatMap((panel) => layersOf(panel).filter(({ encoding }) => 'shape' in encoding));
+const kindsDrawn = (chart: ChartSpec) =>
+  badLayers(chart).flatMap(({ data }) => data.values.map(({ day, kind }) => ({ day, kind })));
+const shapesOf = (chart: ChartSpec) => {
+  const { shape, fill } = badLayers(chart)[0]!.encoding as Record<
+    'shape' | 'fill',
+    { scale: { domain: string[]; range: string[] } }
+  >;
+  expect(fill.scale.domain).toEqual(shape.scale.domain);
+  return shape.scale.domain.map((kind, k) => [kind, shape.scale.range[k], fill.scale.range[k]]);
+};
+
 describe('daysChart', () => {
   const factors = dailyFactors(dayModel(rows, model));
   const degraded = factors.filter((one) => one.degraded === true);
@@ -155,34 +171,91 @@ describe('daysChart', () => {
       expect(
         drawn.some((one) => one.day === day && one.factor === factor && one.low === low && one.high === high),
       ).toBe(true);
-    const diamonds = panels(chart).flatMap((panel) =>
-      layersOf(panel).filter(({ mark }) => mark.shape === 'diamond'),
-    );
-    expect(diamonds.flatMap(({ data }) => data.values.map(({ day }) => day))).toEqual(
-      degraded.map(({ day }) => day),
-    );
-    expect(words(chart)).toContain('"degraded"');
+    expect(kindsDrawn(chart)).toEqual(degraded.map(({ day }) => ({ day, kind: 'degraded' })));
+    expect(shapesOf(chart)).toEqual([['degraded', 'diamond', COLORS.ink]]);
     for (const { day } of degraded) expect(chart.description).toContain(`${Number(day.slice(8))} Mar`);
   });
 
-  it('writes what degraded days are put down to, once for days in a row', () => {
-    const explanations = degraded.map(({ day, component }) => ({
-      day,
-      component,
-      verdict: 'one crew' as const,
-      subject: 'ridge',
+  it('tells what degraded days are put down to: by shape, and a cause on the ground by word', () => {
+    const bad = new Set([1, 2, 5, 9, 12].map((k) => factors[k]!.day));
+    const five = factors.map((one) => ({ ...one, degraded: bad.has(one.day) }));
+    const verdicts = [
+      ['one crew', 'ridge'],
+      ['one crew', 'ridge'],
+      ['grows with distance', null],
+      ['not explained', null],
+      ['bad setup', 'B1'],
+    ] as const;
+    const explanations = [...bad].map((day, k) => {
+      const [verdict, subject] = verdicts[k]!;
+      return { day, component: 'horizontal' as const, verdict, subject };
+    });
+    const chart = daysChart({ factors: five, explanations });
+    expect(kindsDrawn(chart).map(({ kind }) => kind)).toEqual([
+      'cause on the ground',
+      'cause on the ground',
+      'grows with distance',
+      'not explained',
+      'cause on the ground',
+    ]);
+    expect(shapesOf(chart)).toEqual([
+      ['grows with distance', 'diamond', COLORS.ink],
+      ['not explained', 'diamond', 'white'],
+      ['cause on the ground', 'square', COLORS.ink],
+    ]);
+    // once for days in a row with one cause; line, outline and text each
+    const labels = allRows(chart, 'word').map(({ day, word }) => `${day} ${word}`);
+    const crew = `${factors[1]!.day} one crew ridge`;
+    const setup = `${factors[12]!.day} bad setup B1`;
+    expect(labels.sort()).toEqual([crew, crew, crew, setup, setup, setup].sort());
+  });
+
+  it('hangs words so that no line to a day runs through those of another', () => {
+    const days = Array.from({ length: 40 }, (_, k) => `day ${k + 10}`);
+    fc.assert(
+      fc.property(
+        fc.uniqueArray(fc.record({ at: fc.nat(39), size: fc.integer({ min: 3, max: 25 }) }), {
+          selector: ({ at }) => at,
+          minLength: 1,
+        }),
+        fc.boolean(),
+        (picks, inLeftHalf) => {
+          const labels = picks
+            .filter(({ at }) => at < 20 === inLeftHalf)
+            .map(({ at, size }) => ({ day: days[at]!, word: 'x'.repeat(size), high: 2 }));
+          const placed = placedLabels(labels, days, 640);
+          expect(placed.map(({ day }) => day).sort()).toEqual(labels.map(({ day }) => day).sort());
+          const at = (day: string): number => ((days.indexOf(day) + 0.5) / 40) * 640;
+          for (const one of placed)
+            for (const other of placed) {
+              if (one === other || other.line <= one.line) continue;
+              // the line of the upper one goes down to its day past the words of the lower one
+              const widthPx = roughTextWidthPx(other.word, FONT_SIZE.small, true);
+              const [from, to] =
+                other.align === 'left'
+                  ? [at(other.day), at(other.day) + widthPx]
+                  : [at(other.day) - widthPx, at(other.day)];
+              expect(at(one.day) > from && at(one.day) < to).toBe(false);
+            }
+        },
+      ),
+      { seed: 5 },
+    );
+  });
+
+  it('names the days on the axis by weeks, Mondays, where there are some', () => {
+    const spring = factors.map((one, k) => ({
+      ...one,
+      day: `2025-03-${String(k + 5).padStart(2, '0')}`,
     }));
-    const chart = daysChart({ factors, explanations });
-    expect(allRows(chart, 'word').some(({ word }) => word === 'one crew ridge')).toBe(true);
-    const neighbours = [1, 2].map((k) => ({ ...factors[k]!, degraded: true }));
-    const run = factors.map(
-      (one) => neighbours.find(({ day }) => day === one.day) ?? { ...one, degraded: false },
-    );
-    // outline and text
-    const labels = allRows(daysChart({ factors: run }), 'word').filter(
-      ({ word, factor }) => word !== '' && factor === undefined,
-    );
-    expect(labels).toHaveLength(2);
+    const axisOf = (chart: ChartSpec): unknown =>
+      (layersOf(panels(chart).at(-1)!)[0]!.encoding as { x: { axis: { values: string[] } } }).x.axis.values;
+    const later = spring.map((one, k) => (k === 19 ? { ...one, day: '2025-03-30' } : one));
+    expect(axisOf(daysChart({ factors: later }))).toEqual(['2025-03-10', '2025-03-17', '2025-03-24']);
+    expect((axisOf(daysChart({ factors: spring })) as string[]).slice(0, 2)).toEqual([
+      '2025-03-05',
+      '2025-03-07',
+    ]);
   });
 
   it('has bars of the greatest Kp, of Ap where that is asked for or Kp is not known, none without', () => {

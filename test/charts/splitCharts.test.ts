@@ -37,7 +37,7 @@ describe('splitChart', () => {
       const row = (drawn as Record<string, unknown>[]).find(({ label }) => label === `${from} to ${to}`)!;
       expect(row).toMatchObject({ rms: estimate, low, high, tooFew });
       expect(row.fill === 'white').toBe(tooFew);
-      expect(row.text).toBe(`${occupations} shots, ${days} days`);
+      expect(row.text).toBe(`${occupations} shots, ${days} days${tooFew ? ': too few' : ''}`);
     }
     const sizes = table.filter(({ tooFew }) => !tooFew).map(({ verticalRms }) => verticalRms!.estimate);
     expect(chart.title).toContain(
@@ -57,9 +57,15 @@ describe('splitChart', () => {
       component: 'horizontal',
       by: 'mark',
     });
-    expect(drawnRows(chart, 'text')[0]!.text).toContain('50 % without a fix');
+    expect(drawnRows(chart, 'text')[0]!.text).toBe('5 shots, 1 day: too few; 50 % without a fix');
     expect(chart.title).toBe('Horizontal error by mark: too few to compare');
     expect(chart.subtitle[1]).toContain('Hollow: too few');
+  });
+
+  it('compares days by their occupations, without bars', () => {
+    const chart = splitChart({ rows: summarizeBy(rows, 'day'), component: 'horizontal', by: 'day' });
+    expect(chart.title).toMatch(/^Horizontal error by day: \d+\.\d\u00a0mm \(2025-/);
+    expect(chart.subtitle[0]).toContain('without intervals, for no class has two days');
   });
 
   it('draws the 40 fullest of very many, in their order, and says so', () => {

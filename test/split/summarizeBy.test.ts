@@ -74,6 +74,19 @@ describe('summarizeBy', () => {
     expect(oneDay!.horizontalRms).toEqual({ estimate: 5, low: null, high: null });
   });
 
+  // By days each cell is one day: 3 days would call all of them too few for ever.
+  it('counts occupations alone where cells are single days by their nature', () => {
+    const ten = Array.from({ length: 10 }, () => shot());
+    const few = Array.from({ length: 9 }, () => shot({ day: '2025-03-04', setup: 'B1 2' }));
+    for (const by of ['day', 'setup'])
+      expect(summarizeBy([...ten, ...few], by).map(({ tooFew }) => tooFew)).toEqual([false, true]);
+    expect(summarizeByTwo([...ten, ...few], 'crew', 'day').map(({ tooFew }) => tooFew)).toEqual([
+      false,
+      true,
+    ]);
+    expect(summarizeByTwo(ten, 'crew', 'mark')[0]!.tooFew).toBe(true);
+  });
+
   it('uses occupations for what is known of them', () => {
     const [row] = summarizeBy([shot({ up: Number.NaN }), shot({ east: Number.NaN, up: 2 })], 'mark');
     expect(row).toMatchObject({ occupations: 2, horizontal95: 5, vertical95: 2, meanEast: 3, meanUp: 2 });
