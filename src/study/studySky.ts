@@ -1,7 +1,7 @@
 import type { Control } from '../control/index.js';
 import type { DailyFactor } from '../days/index.js';
 import type { OccupationError, Visit } from '../errors/index.js';
-import { joinIndices } from '../ionosphere/index.js';
+import { joinIndices, outsideMapsNote } from '../ionosphere/index.js';
 import { type Message, message } from '../logs/index.js';
 import { readSkyFiles } from './skyFiles.js';
 import { skyOfDays } from './skyOfDays.js';
@@ -36,6 +36,10 @@ export async function studySky(
   const { timeZone, confidence, seed } = study;
   const found = skyOfDays({ days, timeZone, site, indices, maps, factors, visits, confidence, seed });
   const joined = indices === null ? [] : joinIndices(errors, indices).messages;
+  const starts = errors.map(({ startMs }) => startMs);
+  const unreached = maps === null ? null : outsideMapsNote(maps, starts, 'occupation');
+  // What occupations miss says it in numbers of the study; the hours of the days would say it again.
+  const rest = found.messages.filter(({ code }) => unreached === null || code !== unreached.code);
   return {
     sky: {
       site: { base, ...site },
@@ -44,7 +48,7 @@ export async function studySky(
       associations: found.associations,
       thresholds: found.thresholds,
     },
-    messages: [...told, ...joined, ...found.messages],
+    messages: [...told, ...joined, ...(unreached === null ? [] : [unreached]), ...rest],
   };
 }
 

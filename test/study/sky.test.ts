@@ -113,8 +113,14 @@ describe('a study with files of the sky', () => {
     expect(first!.gradientMean).toBeCloseTo(100 / ((6821 * Math.PI) / 180), 3);
     expect(first!.mapShare).toBe(1);
     expect(third).toMatchObject({ tecMean: null, mapShare: 0, kpMax: null, ap: null });
-    const [told] = results.messages.filter(({ code }) => code === 'map-other-day');
-    expect(told!.text).toContain('Give the map files of these days.');
+    const told = results.messages.filter(({ code }) => code === 'map-other-day');
+    expect(told).toHaveLength(1);
+    const used = campaign.occupations;
+    const without = used.filter(({ day }) => day > '2024-01-23').length;
+    expect(told[0]!.text).toMatch(
+      new RegExp(`^Expected maps for ${used.length} occupations, .*: ${without} of them lie outside`),
+    );
+    expect(told[0]!.text).toContain('Give the map files of these days.');
   });
 
   it('reads a packed file as the plain one, and a pattern', async () => {

@@ -80,8 +80,15 @@ function hasSameGrid(a: TecMaps, b: TecMaps): boolean {
 const gridWords = ({ latitudesDeg, longitudesDeg, shellHeightKm }: TecMaps): string =>
   `${latitudesDeg.length} x ${longitudesDeg.length} nodes at ${shellHeightKm} km`;
 
-/** Says which times of a study the maps do not reach; null when they reach all. */
-export function outsideMapsNote(maps: TecMaps, timesMs: ArrayLike<number>): Message | null {
+/**
+ * Says which times of a study the maps do not reach; null when they reach all.
+ * @param what has these times
+ */
+export function outsideMapsNote(
+  maps: TecMaps,
+  timesMs: ArrayLike<number>,
+  what: 'time' | 'occupation' = 'time',
+): Message | null {
   const [from, to] = [maps.epochsMs[0]!, maps.epochsMs.at(-1)!];
   const outside = Array.from(timesMs).filter((ms) => !mapsReach(maps, ms));
   if (outside.length === 0) return null;
@@ -94,6 +101,6 @@ export function outsideMapsNote(maps: TecMaps, timesMs: ArrayLike<number>): Mess
   return message(
     'warning',
     'map-other-day',
-    `Expected maps for ${counted(timesMs.length, 'time')}, came maps from ${instantWords(from)} to ${instantWords(to)}: ${share} lie outside or in a gap, ${when}, and have no TEC. Give the map files of these days.`,
+    `Expected maps for ${counted(timesMs.length, what)}, came maps from ${instantWords(from)} to ${instantWords(to)}: ${share} lie outside or in a gap, ${when}, and have no TEC. Give the map files of these days.`,
   );
 }
