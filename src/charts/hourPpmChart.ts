@@ -1,4 +1,4 @@
-import type { HourClass, TimeOfDay } from '../days/index.js';
+import type { HourClass, HourHarmonics, TimeOfDay } from '../days/index.js';
 import { inputError } from '../logs/index.js';
 import { type ChartSpec, chartSpec, type View } from './chartSpec.js';
 import { COLORS, FONT_SIZE, QUIET_INK } from './theme.js';
@@ -39,6 +39,7 @@ export function hourPpmChart({ timeOfDay }: HourPpmInput): ChartSpec {
   const title = titleOf(timeOfDay);
   const subtitle = [
     `Equal thirds of the working hours, adjusted for the days they fall on${pValue === null ? '' : `; ${pWords(pValue)} by days`}`,
+    ...(timeOfDay.harmonics === null ? [] : [waveWords(timeOfDay.harmonics)]),
     ...notes.filter(({ code }) => code !== 'hours-differ').map(({ text }) => text),
   ];
   return chartSpec(title, subtitle, describe(timeOfDay, title), {
@@ -47,6 +48,10 @@ export function hourPpmChart({ timeOfDay }: HourPpmInput): ChartSpec {
     layer: layers(rows),
   });
 }
+
+/** The smooth course in words: its curve has no level of its own. */
+const waveWords = ({ count, ratio, highestHour, pValue }: HourHarmonics): string =>
+  `A daily course of ${count === 1 ? 'one wave' : 'two waves'} is highest at ${highestHour.toFixed(0)}\u00a0h, ${ratio.toFixed(1)} times its lowest; ${pWords(pValue)} by days`;
 
 function hourRows(hours: readonly HourClass[]): HourRow[] {
   const first = hours[0]?.from ?? 0;

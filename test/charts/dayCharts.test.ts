@@ -80,6 +80,19 @@ describe('hourPpmChart', () => {
     );
   });
 
+  it('tells a smooth course where one was fitted', () => {
+    const harmonics = {
+      count: 1,
+      coefficients: [-0.3, -0.1],
+      ratio: 1.84,
+      highestHour: 13.25,
+      pValue: 0.0001,
+    } as const;
+    expect(hourPpmChart({ timeOfDay: timeOf({ harmonics }) }).subtitle[1]).toBe(
+      'A daily course of one wave is highest at 13\u00a0h, 1.8 times its lowest; p\u00a0<\u00a00.001 by days',
+    );
+  });
+
   it('puts night work behind each other over midnight', () => {
     const night = timeOf({
       hours: [22, 0, 2].map((from) => ({

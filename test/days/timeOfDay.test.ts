@@ -126,6 +126,23 @@ describe('timeOfDay', () => {
     expect(harmonics!.pValue).toBeLessThan(0.001);
   });
 
+  it('fits a single wave to 14 hours', () => {
+    const long = simulateErrors({
+      seed: 4,
+      days: 60,
+      middayRise: 0.6,
+      workHours: { from: 6, to: 20 },
+      dayFactorLogSd: 0.1,
+    }).rows;
+    const { harmonics } = timeOfDay(long, fitErrorModel(long, { component: 'horizontal' }), {
+      random: random(),
+    });
+    expect(harmonics!.count).toBe(1);
+    expect(harmonics!.coefficients).toHaveLength(2);
+    expect(Math.abs(harmonics!.highestHour - 14)).toBeLessThan(2);
+    expect(harmonics!.pValue).toBeLessThan(0.001);
+  });
+
   const short = simulateErrors({ seed: 2, days: 10 }).rows;
   it.each([
     ['10 days', short, /^10 days are too few days to tell/],
