@@ -115,8 +115,9 @@ function titleOf(
   const pair = `${outcome[0]!.toUpperCase()}${outcome.slice(1)} and ${measure}`;
   const chance = adjustedPValue ?? pValue;
   if (spearman === null || chance === null) return `${pair}: too few days to tell`;
-  if (chance > LEVEL) return `${pair}: not shown to go together on ${counted(days, 'day')}`;
-  return `${pair} ${spearman > 0 ? 'rise together' : 'go opposite ways'} on ${counted(days, 'day')}, cause not shown`;
+  if (chance > LEVEL)
+    return `${pair}: not shown to go together on ${counted(days, 'day').replace(' ', '\u00a0')}`;
+  return `${pair} ${spearman > 0 ? 'rise together' : 'go opposite ways'} on ${counted(days, 'day').replace(' ', '\u00a0')}, cause not shown`;
 }
 
 function sizeWords({ spearman, low, high, pValue, adjustedPValue }: AssociationInput['association']): string {

@@ -102,5 +102,5 @@ function titleOf(component: Component, cells: readonly HourDayCell[]): string {
   const name = `${componentTitle(component)} errors by hour and day`;
   if (full.length === 0) return `${name}: too few in every cell`;
   const { ratio, day, fromHour, toHour } = full.reduce((a, b) => (b.ratio > a.ratio ? b : a));
-  return `${name}: up to ${ratio.toFixed(1)} times the model, on ${dayWords(day)} from ${fromHour} to ${toHour} h`;
+  return `${name}: up to ${ratio.toFixed(1)} times the model, on ${dayWords(day).replace(' ', '\u00a0')} from ${fromHour} to ${toHour} h`;
 }

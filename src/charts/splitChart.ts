@@ -103,7 +103,19 @@ function layers(rows: readonly SplitRow[], component: Component, by: string): Vi
     field: 'label',
     sort: null,
     scale: { domain: rows.map(({ label }) => label) },
-    axis: { title: by, ticks: false, domain: false, labelPadding: 8, grid: true, gridColor: COLORS.mist },
+    axis: {
+      title: by,
+      // lying above the labels, for a standing one may be longer than a few rows are high
+      titleAngle: 0,
+      titleAlign: 'right',
+      titleX: -8,
+      titleY: -8,
+      ticks: false,
+      domain: false,
+      labelPadding: 8,
+      grid: true,
+      gridColor: COLORS.mist,
+    },
   };
   const x = {
     type: 'quantitative',
@@ -152,10 +164,12 @@ function extremes(rows: readonly SummaryRow[], component: Component): [SummaryRo
 function titleOf(rows: readonly SummaryRow[], component: Component, by: string): string {
   const found = extremes(rows, component);
   const head = `${componentTitle(component)} error by ${by.split(',')[0]}`;
+  // kept on one line
+  const size = (row: SummaryRow): string =>
+    `${rmsOf(row, component)!.estimate.toFixed(1)} mm (${nameOf(row)})`.replaceAll(' ', '\u00a0');
+  if (rows.length === 1 && !rows[0]!.tooFew) return `${head}: one class only, ${size(rows[0]!)}`;
   if (found === null) return `${head}: too few to compare`;
-  const [least, most] = found.map(
-    (row) => `${rmsOf(row, component)!.estimate.toFixed(1)}\u00a0mm (${nameOf(row)})`,
-  );
+  const [least, most] = found.map(size);
   return `${head}: ${least} to ${most}`;
 }
 

@@ -311,7 +311,7 @@ describe('associationChart', () => {
     const chart = associationChart(input);
     expect(allRows(chart, 'outcome', 'measure')).toHaveLength(2);
     expect(chart.title).toBe(
-      'Horizontal daily factor and greatest Kp rise together on 2 days, cause not shown',
+      'Horizontal daily factor and greatest Kp rise together on 2\u00a0days, cause not shown',
     );
     expect(chart.subtitle[0]).toContain('0.70 (0.40 to 0.90)');
     for (const told of [chart.subtitle.join(' '), chart.description])
@@ -320,7 +320,7 @@ describe('associationChart', () => {
 
   it('goes by the chance adjusted for all comparisons, where it is given', () => {
     const adjusted = associationChart({ ...input, association: { ...association, adjustedPValue: 0.08 } });
-    expect(adjusted.title).toContain('not shown to go together on 2 days');
+    expect(adjusted.title).toContain('not shown to go together on 2\u00a0days');
     expect(adjusted.subtitle[0]).toContain('with all comparisons counted p\u00a0=\u00a00.08');
     const opposite = associationChart({ ...input, association: { ...association, spearman: -0.7 } });
     expect(opposite.title).toContain('go opposite ways');

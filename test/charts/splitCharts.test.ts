@@ -62,9 +62,17 @@ describe('splitChart', () => {
     expect(chart.subtitle[1]).toContain('Hollow: too few');
   });
 
+  it('says so where there is one class alone', () => {
+    const [only] = summarizeBy(rows, { column: 'baselineKm', edges: [0, 100] });
+    const chart = splitChart({ rows: [only!], component: 'vertical', by: 'baseline length, km' });
+    expect(chart.title).toBe(
+      `Vertical error by baseline length: one class only, ${only!.verticalRms!.estimate.toFixed(1)}\u00a0mm\u00a0(0\u00a0to\u00a0100)`,
+    );
+  });
+
   it('compares days by their occupations, without bars', () => {
     const chart = splitChart({ rows: summarizeBy(rows, 'day'), component: 'horizontal', by: 'day' });
-    expect(chart.title).toMatch(/^Horizontal error by day: \d+\.\d\u00a0mm \(2025-/);
+    expect(chart.title).toMatch(/^Horizontal error by day: \d+\.\d\u00a0mm\u00a0\(2025-/);
     expect(chart.subtitle[0]).toContain('without intervals, for no class has two days');
   });
 
