@@ -1,5 +1,6 @@
 import { baselineBetween } from '../geodesy/index.js';
 import { type Message, message, quoted } from '../logs/index.js';
+import { assumedBase, holdsWords } from './assumedBase.js';
 import type { Base, Bases } from './bases.js';
 import { type FrameStatements, frameMessages } from './frames.js';
 import { markNames } from './markNames.js';
@@ -13,8 +14,6 @@ export interface ControlStatements extends FrameStatements {
 
 /** An error of the base's own coordinate over the distance of a satellite: 20 m make 1 ppm (common practice). */
 const METRES_PER_PPM = 20;
-/** Without a stated size an assumed coordinate is taken to be as good as a position without corrections. */
-const ASSUMED_M = 5;
 /** Slope of the geoid that is common, and one that is steep but not rare, mm per km. */
 const GEOID_SLOPE = [10, 50] as const;
 const SMALL_SITE_KM = 3;
@@ -33,7 +32,7 @@ export function comparabilityMessages(
   return [
     ...frameMessages(marks, bases, frames),
     ...circularMessages(marks, bases),
-    ...[...bases.values()].flatMap(assumedBase),
+    ...[...bases.values()].flatMap(assumedBaseMessages),
     ...farBases(marks, bases),
     ...(constantSeparation ? separationMessage(marks, bases) : []),
   ];
@@ -42,7 +41,7 @@ export function comparabilityMessages(
 function circularMessages(marks: Marks, bases: Bases): Message[] {
   return [...bases.keys()].flatMap((base) => {
     const from = [...marks.values()].filter(({ versions }) =>
-      versions.some(({ source }) => holdsName(source, base)),
+      versions.some(({ source }) => holdsWords(source, base)),
     );
     if (from.length === 0) return [];
     return [
@@ -55,33 +54,19 @@ function circularMessages(marks: Marks, bases: Bases): Message[] {
   });
 }
 
-/** Whether a text such as `static from B1, 2023` holds a name as words of its own, in any case. */
-function holdsName(text: string, name: string): boolean {
-  const [plain, wanted] = [text.toLowerCase(), name.toLowerCase()];
-  const isWord = (character: string | undefined): boolean =>
-    character !== undefined && /[\p{L}\p{N}_-]/u.test(character);
-  for (let at = plain.indexOf(wanted); at >= 0; at = plain.indexOf(wanted, at + 1)) {
-    if (!isWord(plain[at - 1]) && !isWord(plain[at + wanted.length])) return true;
-  }
-  return false;
-}
-
-function assumedBase({ name, source, horizontalSigmaMm, verticalSigmaMm }: Base): Message[] {
-  const stated = Math.hypot(horizontalSigmaMm || 0, horizontalSigmaMm || 0, verticalSigmaMm || 0) / 1000;
-  const assumed = ['assumed', 'autonomous'].some((word) => holdsName(source, word));
-  // Below 0.01 ppm nothing needs to be said.
-  if (!assumed && stated < METRES_PER_PPM / 100) return [];
-  const sizeM = stated > 0 ? stated : ASSUMED_M;
-  const size =
-    stated > 0
-      ? `its stated uncertainty of ${sizeM.toFixed(2)} m`
-      : `an uncertainty of ${ASSUMED_M} m, common for a position without corrections,`;
+function assumedBaseMessages(base: Base): Message[] {
+  const found = assumedBase(base);
+  if (found === null) return [];
+  const { sizeM, stated, assumed } = found;
+  const size = stated
+    ? `its stated uncertainty of ${sizeM.toFixed(2)} m`
+    : `an uncertainty of ${sizeM} m, common for a position without corrections,`;
   const stands = assumed ? 'stands on an assumed coordinate' : 'is known poorly';
   return [
     message(
       'warning',
       'assumed-base',
-      `Base ${quoted(name)} ${stands}: ${size} adds about ${(sizeM / METRES_PER_PPM).toFixed(2)} ppm to every baseline (common practice: metres / ${METRES_PER_PPM}), and shifts all positions. Determine the base, and give its coordinates here.`,
+      `Base ${quoted(base.name)} ${stands}: ${size} adds about ${(sizeM / METRES_PER_PPM).toFixed(2)} ppm to every baseline (common practice: metres / ${METRES_PER_PPM}), and shifts all positions. Determine the base, and give its coordinates here.`,
     ),
   ];
 }

@@ -47,9 +47,21 @@ export class ControlCells {
   ) {}
 
   /** @throws InputError when the header is not understood */
-  static async read(control: ControlFile, nameRole: 'mark' | 'base'): Promise<ControlCells> {
+  static async read(
+    control: ControlFile,
+    nameRole: 'mark' | 'base' | 'pointNumber',
+  ): Promise<ControlCells> {
     const { path, file, columns, coordinates, heightOf, changes } = control;
-    const { roles } = coordinateColumns(coordinates, changes);
+    const { roles, together } = coordinateColumns(coordinates, changes);
+    if (nameRole === 'pointNumber') {
+      // Points of a job are needed in plan alone.
+      const { header, rows, messages } = await readDelimitedTable(path, file, {
+        columns,
+        required: roles.slice(0, together),
+        requiredOneOf: [{ what: 'the name of the point', roles: ['pointNumber', 'mark'] }],
+      });
+      return new ControlCells(control, header, rows, messages);
+    }
     const required: ColumnRole[] = [nameRole, ...roles];
     if (heightOf === 'antenna') required.push('antennaHeight');
     if (changes?.rowSeparations === true) required.push('geoidSeparation');

@@ -46,6 +46,7 @@ export const COLUMN_ROLES = [
   'epoch',
   'sky',
   'mounting',
+  'limitMm',
 ] as const;
 export type ColumnRole = (typeof COLUMN_ROLES)[number];
 

@@ -11,13 +11,15 @@ export interface Surroundings {
   readonly f107?: ReadonlyMap<string, number> | undefined;
   /** Stated standard deviation of the base's coordinates in this component, mm per axis. */
   readonly baseSigmaMm?: number | undefined;
+  /** What the error of an assumed base coordinate adds to every baseline, mm per km, the same on all positions. */
+  readonly basePpm?: number | undefined;
 }
 
 /** Where, when and how the errors of a component were measured. */
 export function conditionsOf(
   errors: ErrorsInput,
   component: Component,
-  { visits = [], f107, baseSigmaMm }: Surroundings = {},
+  { visits = [], f107, baseSigmaMm, basePpm }: Surroundings = {},
   heightDifferenceM: number | null = null,
 ): RuleConditions {
   const columns = errorColumns(errors);
@@ -44,6 +46,7 @@ export function conditionsOf(
       visits.length === 0 ? null : visits.filter(({ fixedRows }) => fixedRows > 0).length / visits.length,
     f107: seenRange(days.map((day) => f107?.get(day) ?? Number.NaN)),
     baseSigmaMm: baseSigmaMm ?? null,
+    basePpm: basePpm ?? null,
     heightDifferenceM,
     reviewBy: reviewBy(days.at(-1) ?? ''),
   };

@@ -7,6 +7,7 @@ import {
   wrongFixGrowth,
 } from '../fit/index.js';
 import type { Surroundings } from './conditions.js';
+import type { FormDoubt } from './formDoubt.js';
 
 /** What a rule stands on beside the errors. */
 export interface RuleGround {
@@ -25,6 +26,8 @@ export interface RuleOptions extends Surroundings {
    * one counts.
    */
   readonly crowdedDaysKept?: RuleGround | null | undefined;
+  /** The form that cannot be told from that of the model: at each length the larger spread of both counts. */
+  readonly formDoubt?: FormDoubt | null | undefined;
   /** A site far above or below its base, vertical rules only. */
   readonly height?: HeightAllowance | undefined;
 }

@@ -2,6 +2,7 @@ export * from './backtest/index.js';
 export * from './checkshot/index.js';
 export { reviewBy, type Surroundings } from './conditions.js';
 export { type DayBound, daysNeeded, goodDayShareLimit } from './dayBound.js';
+export { type FormDoubt, findFormDoubt, formDoubt } from './formDoubt.js';
 export { type FrozenMark, frozenMarks } from './frozenMarks.js';
 export { crowdedDaysKept, type HeightAllowance, type RuleGround, type RuleOptions } from './ground.js';
 export { type GroupRule, type GroupRuleOptions, ruleByHour, ruleBySeason } from './groupedRules.js';

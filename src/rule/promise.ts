@@ -108,7 +108,7 @@ function whyNotAt(
 }
 
 function limitAt(
-  { model, days, limits, allDays, added }: PreparedGround,
+  { model, days, limits, allDays, added, left }: PreparedGround,
   { share, dayShare, confidence }: Tolerance,
   km: number,
   wrongFixShare: number,
@@ -118,12 +118,13 @@ function limitAt(
   const factor = toleranceFactorAt(model, demanded, km);
   if (days === null || allDays === null) {
     const sigma = plain ? sigmaAtMm(model, km) : sigmaUpperLimitMm(model, km, confidence)!;
-    return factor * Math.hypot(sigma, Math.sqrt(added));
+    return left.neededMm(factor * Math.hypot(sigma, Math.sqrt(added)), km);
   }
-  const ofDays = factor * Math.sqrt(limits(dayShare).variance(km, confidence) + added);
+  const ofDays = left.neededMm(factor * Math.sqrt(limits(dayShare).variance(km, confidence) + added), km);
   if (share <= LARGEST_RMS_SHARE) return ofDays;
   const holds = (limitMm: number): boolean =>
-    allDays.confidence(km, equalAxesLimit(model, limitMm, demanded, km), demanded) >= confidence;
+    allDays.confidence(km, equalAxesLimit(model, left.leftMm(limitMm, km), demanded, km), demanded) >=
+    confidence;
   if (holds(ofDays)) return ofDays;
   let [low, high] = [ofDays, 2 * ofDays];
   while (!holds(high)) [low, high] = [high, 2 * high];

@@ -6,7 +6,7 @@ import type { Tolerance } from './tolerance.js';
 export function remarksOf(
   { maximumBaselineKm, method, dayBound }: Judged,
   { component, share }: Tolerance,
-  { baseSigmaMm, wrongFixes, height, visits = [] }: RuleOptions,
+  { baseSigmaMm, basePpm, formDoubt, wrongFixes, height, visits = [] }: RuleOptions,
   crowded: boolean,
 ): string[] {
   if (maximumBaselineKm === null) return [];
@@ -28,9 +28,12 @@ export function remarksOf(
           'On some days several shots were suspected to be wrong fixes. The rule is the shorter of those with and without these suspicions.',
         ]
       : []),
-    baseSigmaMm === undefined
-      ? "The error of a base's coordinates, the same on all positions from it, is not in the rule because it was not stated."
-      : `The stated error of the base's coordinates, ${Number(baseSigmaMm.toFixed(1))} mm${component === 'horizontal' ? ' per axis' : ''}, is in the rule.`,
+    ...(formDoubt
+      ? [
+          'Days left out do not tell root-sum-square and linear sum apart: at each length the larger spread of both counts.',
+        ]
+      : []),
+    ...baseRemarks(component, baseSigmaMm, basePpm),
     ...(height === undefined
       ? []
       : [`The rule is for sites ${Math.abs(height.differenceM).toFixed(0)} m above or below their base.`]),
@@ -38,5 +41,29 @@ export function remarksOf(
     ...(withoutFix > 0
       ? [`${withoutFix} of ${visits.length} visits got no fix: the rule speaks of the others alone.`]
       : []),
+  ];
+}
+
+function baseRemarks(
+  component: Tolerance['component'],
+  baseSigmaMm: number | undefined,
+  basePpm: number | undefined,
+): string[] {
+  if (baseSigmaMm === undefined && basePpm === undefined) {
+    return [
+      "The error of a base's coordinates, the same on all positions from it, is not in the rule because it was not stated.",
+    ];
+  }
+  return [
+    ...(baseSigmaMm === undefined
+      ? []
+      : [
+          `The stated error of the base's coordinates, ${Number(baseSigmaMm.toFixed(1))} mm${component === 'horizontal' ? ' per axis' : ''}, is in the rule.`,
+        ]),
+    ...(basePpm === undefined
+      ? []
+      : [
+          `A base stands on an assumed coordinate: the ${Number(basePpm.toPrecision(2))} ppm that its error adds to every baseline (metres / 20, common practice) are taken off the limit; the shift that all positions from it share is not in the rule.`,
+        ]),
   ];
 }

@@ -60,6 +60,8 @@ export interface RuleConditions {
   readonly f107: SeenRange | null;
   /** Stated standard deviation of the base's coordinates that the rule contains, mm per axis. */
   readonly baseSigmaMm: number | null;
+  /** What an assumed base coordinate adds to every baseline, which the rule takes off its limit, ppm. */
+  readonly basePpm: number | null;
   /** Height difference between base and site that the rule contains, m. */
   readonly heightDifferenceM: number | null;
   /** The rule is to be looked at again by this day, a year after its last one. */

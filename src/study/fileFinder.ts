@@ -15,6 +15,13 @@ export interface NamedFile {
   readonly file: string;
 }
 
+/** How a file of points is named in the study file. */
+type PointsEntry =
+  | string
+  | (Exclude<StudySettings['bases'] | StudySettings['jobs'][number], string> & {
+      readonly heightOf?: ControlFile['heightOf'];
+    });
+
 /** Finds the files that a study names, and gathers what is wrong with them. */
 export class FileFinder {
   readonly mistakes: Message[] = [];
@@ -29,18 +36,28 @@ export class FileFinder {
 
   /** The marks or bases file; null when it is not there. */
   control(key: 'marks' | 'bases'): ControlFile | null {
-    const entry = this.settings[key];
+    return this.#points(this.settings[key], `the ${key} file`, [key]);
+  }
+
+  /** The files of job points that are there. */
+  jobs(): ControlFile[] {
+    return this.settings.jobs.flatMap(
+      (entry, k) => this.#points(entry, 'the file of job points', ['jobs', k]) ?? [],
+    );
+  }
+
+  #points(entry: PointsEntry, what: string, key: Path): ControlFile | null {
     const inline = typeof entry === 'string';
     const { file, coordinates, columns, units, heightOf, frame, epoch, transformation } = inline
       ? ({ file: entry } as Partial<Exclude<typeof entry, string>> & { file: string })
       : entry;
-    const system = this.#system(coordinates, [key, 'coordinates'], transformation !== undefined);
+    const system = this.#system(coordinates, [...key, 'coordinates'], transformation !== undefined);
     const path = resolve(this.folder, file);
     if (!isFile(path)) {
       this.mistake(
         'missing-file',
-        `Expected the ${key} file ${quoted(file)} in the folder of the study file, there is none. Create it or correct the name.`,
-        inline ? [key] : [key, 'file'],
+        `Expected ${what} ${quoted(file)} in the folder of the study file, there is none. Create it or correct the name.`,
+        inline ? key : [...key, 'file'],
       );
       return null;
     }

@@ -15,6 +15,7 @@ import {
   testMarks,
 } from '../fit/index.js';
 import { InputError, type Message, message } from '../logs/index.js';
+import { type FormDoubt, formDoubt } from '../rule/index.js';
 import { randomStream } from '../stats/index.js';
 import type { Study } from './study.js';
 
@@ -79,22 +80,6 @@ export function fitComponents(
   return { components, messages };
 }
 
-/** The fits behind the rules alone, of the components that can be fitted. */
-export function basisFits(
-  errors: readonly OccupationError[],
-  weights: Float64Array | null,
-  study: Study,
-): ErrorModel[] {
-  return COMPONENTS.flatMap((component) => {
-    try {
-      return [basisFit(errors, weights, component, study).basis];
-    } catch (error) {
-      if (error instanceof InputError) return [];
-      throw error;
-    }
-  });
-}
-
 /** The fit of a component behind the rules, and what its reference was chosen by. */
 function basisFit(
   errors: readonly OccupationError[],
@@ -155,6 +140,18 @@ function fitComponent(
       ...(marks?.test.notes ?? []),
     ],
   };
+}
+
+/** The other form with the reference and screening of the basis, where days left out do not tell the two apart. */
+export function formDoubtOf({ basis, fits, comparison }: ComponentFits): FormDoubt | null {
+  const other = fits.find(
+    ({ model, composed }) =>
+      !composed &&
+      model.form !== basis.form &&
+      model.reference === basis.reference &&
+      model.screened === basis.screened,
+  );
+  return formDoubt(basis, comparison, other?.model ?? null);
 }
 
 /** A fit beside the basis: what the data do not allow is left out, for the basis has told of it. */

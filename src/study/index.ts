@@ -30,13 +30,21 @@ export { readStudy } from './readStudy.js';
 export type { BlunderResult, FileResult, LengthClass, Results } from './results.js';
 export { resultsJsonSchema, resultsSchema } from './resultsSchema.js';
 export type { RuleMove, RuleMoveKind } from './ruleMoves.js';
-export type { BackTestResult, HourRule, PartRule, SeasonRule, WatchResult } from './ruleResultTypes.js';
+export type {
+  BackTestResult,
+  HourRule,
+  JobResult,
+  PartRule,
+  SeasonRule,
+  WatchResult,
+} from './ruleResultTypes.js';
 export { type RunOptions, readStudyErrors, runStudy, type StudyErrors, type StudyRun } from './run.js';
 export { type StudySettings, studyJsonSchema } from './settings.js';
 export { type SkyInput, skyOfDays } from './skyOfDays.js';
 export { type SkyPoint, skyPoints } from './skyPoints.js';
 export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold } from './skyResult.js';
 export { softwareVersion } from './softwareVersion.js';
-export type { Study } from './study.js';
+export type { JobFile, Study } from './study.js';
+export type { StudyJob } from './studyJobs.js';
 export { textInUnits } from './textInUnits.js';
 export { readResults, type WatchRun, watchStudy } from './watchStudy.js';

@@ -4,6 +4,7 @@ import type { Component, ErrorModel } from '../fit/index.js';
 import {
   checkShotLimits,
   crowdedDaysKept,
+  type FormDoubt,
   noRule,
   type Rule,
   type RuleOptions,
@@ -15,6 +16,7 @@ import {
   testSpecSheet,
   watchBasis,
 } from '../rule/index.js';
+import { usedBaseErrors } from './baseErrors.js';
 import type { JudgedDays } from './judgeDays.js';
 import type { Results } from './results.js';
 import type { PartRule } from './ruleResultTypes.js';
@@ -30,7 +32,11 @@ export interface RuleInput {
   readonly control: Control;
   readonly models: readonly ErrorModel[];
   readonly days: readonly Pick<JudgedDays, 'component' | 'model'>[];
+  /** The form that cannot be told from that of a model. */
+  readonly doubts: ReadonlyMap<Component, FormDoubt | null>;
   readonly wrongFixes: WrongFixes | null;
+  /** What the rules of each component stand on beside the errors. */
+  readonly options: ReadonlyMap<Component, RuleOptions>;
 }
 
 /**
@@ -44,11 +50,7 @@ export function makeRules(
   Results,
   'rules' | 'ruleTable' | 'rulesByHour' | 'rulesBySeason' | 'specSheetTest' | 'checkShotLimits' | 'watch'
 > {
-  const { used, models, wrongFixes } = input;
-  const options = new Map(models.map((model) => [model.component, ruleOptions(model, input)]));
-  const finders = new Map(
-    models.map((model) => [model.component, ruleFinder(used, model, options.get(model.component)!)]),
-  );
+  const { used, models, wrongFixes, options } = input;
   const dayModel = (component: Component) => options.get(component)!.dayModel ?? null;
   const usedWeights = wrongFixes?.weights?.filter((weight) => weight >= 0.5);
   const grouped = (make: typeof ruleByHour): (PartRule & { readonly group: string })[] =>
@@ -62,9 +64,7 @@ export function makeRules(
       }));
     });
   return {
-    rules: tolerances.map(
-      (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
-    ),
+    rules: toleranceRules(input, { tolerances }),
     ruleTable: models.flatMap((model) => ruleTable(used, model, options.get(model.component)!)),
     rulesByHour: grouped(ruleByHour).map(({ group, ...rule }) => ({ hours: group, ...rule })),
     rulesBySeason: grouped(ruleBySeason).map(({ group, ...rule }) => ({ month: group, ...rule })),
@@ -83,10 +83,12 @@ export function makeRules(
 }
 
 /** The rules of the study's tolerances, in their order, and nothing else. */
-export function toleranceRules(input: RuleInput, { tolerances }: Pick<Study, 'tolerances'>): Rule[] {
-  const { used, models } = input;
+export function toleranceRules(
+  { used, models, options }: RuleInput,
+  { tolerances }: Pick<Study, 'tolerances'>,
+): Rule[] {
   const finders = new Map(
-    models.map((model) => [model.component, ruleFinder(used, model, ruleOptions(model, input))]),
+    models.map((model) => [model.component, ruleFinder(used, model, options.get(model.component)!)]),
   );
   return tolerances.map(
     (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
@@ -106,7 +108,13 @@ const short = ({ component, limitMm, share, maximumBaselineKm, bestEstimateKm, r
 const withoutFit = (used: readonly OccupationError[], tolerance: Tolerance): Rule =>
   noRule(used, tolerance, `no fit of the ${tolerance.component} component was possible`);
 
-function ruleOptions(model: ErrorModel, input: RuleInput): RuleOptions {
+/** The input with what all rules of a component share, made once. */
+export const withRuleOptions = (input: Omit<RuleInput, 'options'>): RuleInput => ({
+  ...input,
+  options: new Map(input.models.map((model) => [model.component, ruleOptions(model, input)])),
+});
+
+function ruleOptions(model: ErrorModel, input: Omit<RuleInput, 'options'>): RuleOptions {
   const { errors, visits, wrongFixes, days } = input;
   const judged = days.find(({ component }) => component === model.component);
   const screening = wrongFixes?.weights ? wrongFixes.screening : null;
@@ -114,20 +122,8 @@ function ruleOptions(model: ErrorModel, input: RuleInput): RuleOptions {
     dayModel: judged?.model.posterior ? judged.model : null,
     wrongFixes: wrongFixes?.growth ?? null,
     crowdedDaysKept: screening === null ? null : crowdedDaysKept(errors, model, screening),
+    formDoubt: input.doubts.get(model.component),
     visits,
-    baseSigmaMm: baseSigma(model.component, input),
+    ...usedBaseErrors(model.component, input),
   };
-}
-
-/** The largest stated standard deviation among the bases that were used; undefined where none is stated. */
-export function baseSigma(
-  component: Component,
-  { used, control }: Pick<RuleInput, 'used' | 'control'>,
-): number | undefined {
-  const names = new Set(used.map(({ base }) => base));
-  const stated = [...names]
-    .map((name) => control.bases.get(name)!)
-    .map((base) => (component === 'horizontal' ? base.horizontalSigmaMm : base.verticalSigmaMm))
-    .filter((sigma) => !Number.isNaN(sigma));
-  return stated.length === 0 ? undefined : Math.max(...stated);
 }

@@ -8,8 +8,9 @@ import {
   ruleFinder,
   screeningOf,
 } from '../rule/index.js';
+import { usedBaseErrors } from './baseErrors.js';
 import type { ComponentFits } from './fitComponents.js';
-import { baseSigma, type RuleInput } from './makeRules.js';
+import type { RuleInput } from './makeRules.js';
 import { type RuleGroundwork, type RuleMove, ruleMoves } from './ruleMoves.js';
 
 /** How far the rules of a study move, each time with a day model and wrong fixes as in the rules themselves. */
@@ -42,7 +43,12 @@ function optionsOf({ errors, rows, weights, model }: RuleGroundwork, input: Rule
     dayModel: days?.posterior ? days : null,
     wrongFixes: screening === null ? null : input.wrongFixes!.growth,
     crowdedDaysKept: screening === null ? null : crowdedDaysKept(errors, model, screening),
+    // Which form it is does not turn on one mark, day or crew.
+    formDoubt: isOwnForm(model, input) ? input.doubts.get(model.component) : null,
     visits: input.visits,
-    baseSigmaMm: baseSigma(model.component, input),
+    ...usedBaseErrors(model.component, input),
   };
 }
+
+const isOwnForm = ({ component, form }: RuleGroundwork['model'], { models }: RuleInput): boolean =>
+  models.some((model) => model.component === component && model.form === form);

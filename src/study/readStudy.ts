@@ -29,6 +29,7 @@ export async function readStudy(path: string): Promise<Study> {
   const finder = new FileFinder(settings, dirname(file), placeOf);
   const [marks, bases, found] = [finder.control('marks'), finder.control('bases'), finder.logs()];
   const from = sources(settings, finder.grids(), finder.mistake);
+  const jobs = finder.jobs();
   const [namePattern, aliases, markTimes] = [finder.namePattern(), finder.aliases(), finder.markTimes(found)];
   const [indices, maps] = [finder.sky('indices'), finder.sky('maps')];
   if (finder.mistakes.length > 0 || marks === null || bases === null) throw new InputError(finder.mistakes);
@@ -71,6 +72,10 @@ export async function readStudy(path: string): Promise<Study> {
     ...settings.model,
     tolerances: settings.tolerances.map(tolerance),
     specSheet: settings.specSheet === undefined ? null : specSheet(settings.specSheet),
+    siteHeightDifferenceM: settings.site?.heightDifferenceM ?? null,
+    jobs: jobs.map((job, k) => ({ ...job, changes: from.jobs[k]!, limitMm: jobLimitMm(settings.jobs[k]!) })),
+    standards: [...new Set(settings.standards)],
+    fieldTests: settings.fieldTests,
     centringSigmaMm: settings.centringSigmaMm,
     terms: settings.terms,
     by: settings.by,
@@ -95,6 +100,12 @@ const isBroughtToOneFrame = ({ marks, bases, logs }: StudySettings): boolean =>
 function tolerance(written: StudySettings['tolerances'][number]): Tolerance {
   const { component, limitMm, limitFeet, share, dayShare, confidence } = written;
   return { component, limitMm: limitMm ?? limitFeet! * MM_PER_FOOT, share, dayShare, confidence };
+}
+
+function jobLimitMm(job: StudySettings['jobs'][number]): number | null {
+  if (typeof job === 'string') return null;
+  const { limitMm, limitFeet } = job;
+  return limitMm ?? (limitFeet === undefined ? null : limitFeet * MM_PER_FOOT);
 }
 
 function specSheet(written: NonNullable<StudySettings['specSheet']>): SpecSheet {

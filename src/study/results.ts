@@ -20,7 +20,7 @@ import type {
   WrongFixResult,
 } from './fitResultTypes.js';
 import type { RuleOutcomes } from './ruleOutcomes.js';
-import type { BackTestResult, HourRule, SeasonRule, WatchResult } from './ruleResultTypes.js';
+import type { BackTestResult, HourRule, JobResult, SeasonRule, WatchResult } from './ruleResultTypes.js';
 import type { Sky } from './skyResult.js';
 import type { StatedStudy } from './statedStudy.js';
 
@@ -126,6 +126,7 @@ export interface Results extends StatedStudy, RuleOutcomes {
   readonly watch: readonly WatchResult[];
   /** The days left out by the study file, and the results with them; null where none is. */
   readonly leftOut: LeftOutDays | null;
+  readonly jobs: readonly JobResult[];
   /** The spec sheet as stated. */
   readonly specSheet: SpecSheet | null;
 }

@@ -5,6 +5,7 @@ import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
 import { dailyFactor, dayModel, degradedDay, leftOut, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
+import { job } from './jobSchema.js';
 import type { Results } from './results.js';
 import { ruleOutcomes } from './ruleOutcomeSchemas.js';
 import { checkShotLimits, hourRule, rule, ruleTableRow, seasonRule, specSheetTest } from './ruleSchema.js';
@@ -97,6 +98,7 @@ export const resultsSchema = z.strictObject({
   checkShotLimits: z.array(checkShotLimits),
   watch: z.array(watch),
   leftOut: leftOut.nullable().describe('The days left out by the study file, and the results with them.'),
+  jobs: z.array(job).describe('Points of jobs: which base reaches which.'),
   specSheet: z
     .strictObject({
       horizontal: constantAndPpm,

@@ -1,5 +1,13 @@
 import type { Component } from '../fit/index.js';
-import type { BackTest, BackTestScore, ForwardTest, LeftOutGroup, Rule, WatchStart } from '../rule/index.js';
+import type {
+  BackTest,
+  BackTestScore,
+  ForwardTest,
+  JobPlan,
+  LeftOutGroup,
+  Rule,
+  WatchStart,
+} from '../rule/index.js';
 
 /** The rule of a part of the shots. */
 export interface PartRule
@@ -23,3 +31,8 @@ export interface BackTestResult extends Omit<BackTest, 'own' | 'notes'>, BackTes
 
 /** What new days can be watched by, or why they cannot. */
 export type WatchResult = WatchStart & { readonly component: Component };
+
+/** The points of a file under one tolerance. */
+export interface JobResult extends JobPlan {
+  readonly file: string;
+}

@@ -36,6 +36,7 @@ export const rule = z.strictObject({
     visitsWithFix: nullable,
     f107: seenRange.nullable(),
     baseSigmaMm: nullable,
+    basePpm: nullable.describe('Of a base on an assumed coordinate; taken off the limit.'),
     heightDifferenceM: nullable,
     reviewBy: day.nullable(),
   }),

@@ -14,18 +14,19 @@ import type { Rule } from '../rule/index.js';
 import { adjustmentWeights } from './adjustmentWeights.js';
 import { causeMessages } from './causeMessages.js';
 import { studyEvidence } from './evidence.js';
-import { fitComponents } from './fitComponents.js';
+import { fitComponents, formDoubtOf } from './fitComponents.js';
 import { fitResults, markResults } from './fitResults.js';
 import { dayResults, type JudgedDays, judgeDays } from './judgeDays.js';
 import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
 import { loadControl } from './loadControl.js';
-import { makeRules } from './makeRules.js';
+import { makeRules, withRuleOptions } from './makeRules.js';
 import { movedRules } from './movedRules.js';
 import { readAs } from './readAs.js';
 import type { Results } from './results.js';
 import { screenStudy, suspects, withSuspects, wrongFixResults } from './screenStudy.js';
 import type { Study } from './study.js';
+import { planJobs, readJobs, type StudyJob } from './studyJobs.js';
 import { studySky } from './studySky.js';
 import { summarizeRun } from './summarizeRun.js';
 import { testRules } from './testRules.js';
@@ -49,6 +50,7 @@ export interface StudyErrors {
     readonly errors: readonly OccupationError[];
     readonly visits: readonly Visit[];
   } | null;
+  readonly jobs: readonly StudyJob[];
   /** Results without fits and rules. */
   readonly results: Results;
 }
@@ -69,6 +71,7 @@ export interface StudyRun extends StudyErrors {
  */
 export async function readStudyErrors(study: Study, options: RunOptions = {}): Promise<StudyErrors> {
   const { control, messages: controlMessages } = await loadControl(study);
+  const asked = await readJobs(study);
   const formed = await formOccupations(readLogs(study.logs, study), control, { ...study, ...options });
   const computed = computeErrors(formed.occupations, control);
   // Causes that all errors share are looked for before anything is rejected for being far off.
@@ -92,6 +95,7 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
     messages: [
       ...study.messages,
       ...controlMessages,
+      ...asked.messages,
       ...formed.messages,
       ...computedMessages,
       ...causeMessages(causes),
@@ -102,7 +106,7 @@ export async function readStudyErrors(study: Study, options: RunOptions = {}): P
   const visits = formed.visits.filter(({ day }) => !study.leaveOutDays.includes(day));
   const withLeftOut =
     errors.length === checked.errors.length ? null : { errors: checked.errors, visits: formed.visits };
-  return { control, errors, setAside, visits, withLeftOut, results };
+  return { control, errors, setAside, visits, withLeftOut, jobs: asked.jobs, results };
 }
 
 /**
@@ -119,17 +123,19 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const judged = judgeDays(errors, weights, read.visits, components, study);
   const evidence = studyEvidence(errors, weights, components, study);
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
-  const ground = {
+  const ground = withRuleOptions({
     errors,
     used,
     visits: read.visits,
     control: read.control,
     models,
+    doubts: new Map(components.map((each) => [each.component, formDoubtOf(each)])),
     days: judged,
     wrongFixes,
-  };
+  });
   const made = makeRules(ground, study);
   const tested = testRules(ground, study);
+  const planned = planJobs(read.jobs, ground, study);
   const fitted = fitResults(components, errors, wrongFixes, judged);
   const { withLeftOut, control } = read;
   const leftOut = withLeftOut === null ? null : withLeftOutDays(withLeftOut, control, study);
@@ -144,6 +150,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...evidence.messages,
       ...sky.messages,
       ...tested.messages,
+      ...planned.messages,
       ...ruleMessages(made.rules),
       ...(leftOut === null ? [] : leftOutMessages(leftOut, { ...fitted, ...made })),
     ],
@@ -159,6 +166,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     ruleMoves: movedRules(ground, components, made.rules),
     adjustmentWeights: adjustmentWeights(fitted.fits, study.centringSigmaMm),
     backTest: tested.backTest,
+    jobs: planned.jobs,
     sky: sky.sky,
   };
   const setAside = [...read.setAside, ...suspects(errors, wrongFixes)];

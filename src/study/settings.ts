@@ -1,9 +1,10 @@
 import { z } from 'zod';
-import { COLUMN_ROLES, CORRECTION_KINDS } from '../logs/index.js';
+import { CORRECTION_KINDS } from '../logs/index.js';
 import { isTimeZone } from '../time/index.js';
 import { coordinateKeys, coordinates, heights } from './coordinateSettings.js';
 import { heightOf, layout, units } from './layoutSettings.js';
 import { day, reportKeys } from './reportSettings.js';
+import { columns, ruleKeys } from './ruleSettings.js';
 
 /*
  * The study file as a schema. Descriptions become the help that editors show and the reference page, so each key says
@@ -11,9 +12,6 @@ import { day, reportKeys } from './reportSettings.js';
  */
 
 const share = z.number().gt(0).lt(1);
-const columns = z
-  .partialRecord(z.enum(COLUMN_ROLES), z.string().min(1))
-  .describe('Role → header, where the file does not spell the role itself.');
 const controlFile = z.union([
   z.string().min(1),
   z.strictObject({
@@ -152,6 +150,7 @@ export const studySchema = z.strictObject({
     .default({ gapSeconds: 60 }),
   tolerances: z.array(tolerance).default([]).describe('What clients demand; each becomes a rule.'),
   specSheet: specSheet.optional().describe('The spec sheet to compare with.'),
+  ...ruleKeys,
   centringSigmaMm: z
     .number()
     .gte(0)

@@ -22,6 +22,8 @@ export interface Sources {
   readonly heightKind: HeightKind;
   readonly marks: CoordinateChanges;
   readonly bases: CoordinateChanges;
+  /** Of each file of job points. */
+  readonly jobs: readonly CoordinateChanges[];
   /** @param system coordinates of the log; null for NMEA sentences: ellipsoidal heights with a separation in each row */
   readonly ofLog: (entry: number, system: CoordinateSystem | null) => CoordinateChanges;
   /** One separation leads from one kind of height to the other, in some source that was asked for. */
@@ -87,6 +89,10 @@ export function sources(
     heightKind,
     marks: changesOf(marksHeights, marksOwn, ['marks'], 'the marks'),
     bases: changesOf(basesHeights, basesOwn, ['bases'], 'the bases'),
+    jobs: settings.jobs.map((entry, k) => {
+      const own = ownSettings(entry);
+      return changesOf(ownHeights(own, systemFor(own), ['jobs', k]), own, ['jobs', k], 'the job points');
+    }),
     ofLog(entry, system) {
       // One report for an entry, however many files it has.
       const key = `${entry} ${system}`;
@@ -127,8 +133,9 @@ function isGeocentric(system: CoordinateSystem): boolean {
   }
 }
 
-const ownSettings = (source: StudySettings['marks'] | StudySettings['bases']): SourceSettings =>
-  typeof source === 'string' ? {} : source;
+const ownSettings = (
+  source: StudySettings['marks'] | StudySettings['bases'] | StudySettings['jobs'][number],
+): SourceSettings => (typeof source === 'string' ? {} : source);
 
 const sentence = (text: string): string => {
   const plain = text.replace(/\.$/, '');
@@ -141,6 +148,10 @@ export function gridFiles(settings: StudySettings): Map<string, Path> {
     [settings.heights?.file, ['heights', 'file']],
     [ownSettings(settings.marks).heights?.file, ['marks', 'heights', 'file']],
     [ownSettings(settings.bases).heights?.file, ['bases', 'heights', 'file']],
+    ...settings.jobs.map((entry, k): [string | undefined, Path] => [
+      ownSettings(entry).heights?.file,
+      ['jobs', k, 'heights', 'file'],
+    ]),
     ...settings.logs.map(({ heights }, k): [string | undefined, Path] => [
       heights?.file,
       ['logs', k, 'heights', 'file'],

@@ -5,6 +5,13 @@ import type { SpecSheet, Tolerance } from '../rule/index.js';
 import type { HeightKind } from './coordinateChanges.js';
 import type { NamedFile } from './fileFinder.js';
 import type { ReportUnits } from './readerUnits.js';
+import type { FieldTestSettings, StandardName } from './ruleSettings.js';
+
+/** A file of job points. */
+export interface JobFile extends ControlFile {
+  /** Horizontal limit of the job, mm; null where the tolerances of the study hold. */
+  readonly limitMm: number | null;
+}
 
 /** A study ready to run: settings with every default filled in, files found. */
 export interface Study {
@@ -56,6 +63,11 @@ export interface Study {
   readonly screen: boolean;
   readonly tolerances: readonly Tolerance[];
   readonly specSheet: SpecSheet | null;
+  /** Site minus base, m, of the site that vertical rules are for; null without one. */
+  readonly siteHeightDifferenceM: number | null;
+  readonly jobs: readonly JobFile[];
+  readonly standards: readonly StandardName[];
+  readonly fieldTests: readonly FieldTestSettings[];
   /** Standard deviation of centring the rod, one axis, mm. */
   readonly centringSigmaMm: number;
   readonly terms: readonly Term[];

@@ -94,6 +94,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     specSheetTest: [],
     checkShotLimits: [],
     watch: [],
+    jobs: [],
     specSheet: study.specSheet,
   };
 }

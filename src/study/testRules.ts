@@ -1,6 +1,7 @@
 import { InputError, type Message } from '../logs/index.js';
 import { type BackTestOptions, backTest, forwardTest, leaveGroupOut } from '../rule/index.js';
-import { baseSigma, type RuleInput } from './makeRules.js';
+import { usedBaseErrors } from './baseErrors.js';
+import type { RuleInput } from './makeRules.js';
 import type { BackTestResult } from './ruleResultTypes.js';
 import type { Study } from './study.js';
 
@@ -27,7 +28,8 @@ export function testRules(
       screening,
       tolerances: tolerances.filter((tolerance) => tolerance.component === component),
       specSheet,
-      baseSigmaMm: baseSigma(component, input),
+      ...usedBaseErrors(component, input),
+      formDoubt: input.doubts.get(component),
     };
     try {
       const { own, notes, ...tested } = backTest(errors, model, options);

@@ -3,9 +3,9 @@ import type { EstimateWithLimits } from '../fit/index.js';
 import { type Message, message } from '../logs/index.js';
 import type { Rule } from '../rule/index.js';
 import type { LeftOutDays } from './dayResultTypes.js';
-import { basisFits } from './fitComponents.js';
+import { fitComponents, formDoubtOf } from './fitComponents.js';
 import { dayModelOfFit, ppmInterval } from './judgeDays.js';
-import { type RuleInput, toleranceRules } from './makeRules.js';
+import { type RuleInput, toleranceRules, withRuleOptions } from './makeRules.js';
 import type { Results } from './results.js';
 import { screenStudy } from './screenStudy.js';
 import type { Study } from './study.js';
@@ -24,10 +24,13 @@ export function withLeftOutDays(
   const left = errors.filter(({ day }) => named.has(day));
   const wrongFixes = screenStudy(errors, study);
   const weights = wrongFixes?.weights ?? null;
-  const models = basisFits(errors, weights, study);
+  const { components } = fitComponents(errors, weights, study);
+  const models = components.map(({ basis }) => basis);
   const days = models.flatMap((model) => dayModelOfFit(errors, weights, model));
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
-  const rules = toleranceRules({ errors, used, visits, control, models, days, wrongFixes }, study);
+  const doubts = new Map(components.map((each) => [each.component, formDoubtOf(each)]));
+  const ground = withRuleOptions({ errors, used, visits, control, models, doubts, days, wrongFixes });
+  const rules = toleranceRules(ground, study);
   return {
     days: [...new Set(left.map(({ day }) => day))].sort(),
     occupations: left.length,

@@ -10,6 +10,7 @@ import {
 import {
   checkShotLimits,
   crowdedDaysKept,
+  findFormDoubt,
   maximumBaseline,
   type Tolerance,
   testSpecSheet,
@@ -161,6 +162,7 @@ function study(rows: ReturnType<typeof campaign>['rows']) {
     dayModel: dayModel(rows, model, weights),
     wrongFixes: usable ? wrongFixGrowth(rows, screening) : null,
     crowdedDaysKept: usable ? crowdedDaysKept(rows, model, screening) : null,
+    formDoubt: findFormDoubt(rows, model, weights),
   };
 }
 

@@ -19,8 +19,7 @@ describe('points of a job', () => {
   const plan = reachPoints(
     [place('P1', 44.32, 160), place('P2', 44.4, Number.NaN), place('P3', 44.47), place('P4', 45.2)],
     bases,
-    rule,
-    promise,
+    { rule, promise },
   );
   it('are reached from bases within the rule, the nearest first', () => {
     const reached = plan.points.map(({ reachedFrom }) => reachedFrom);
@@ -30,7 +29,7 @@ describe('points of a job', () => {
     for (const { holds, baselineKm } of plan.reaches)
       expect(holds).toBe(baselineKm <= rule.maximumBaselineKm!);
     expect(plan.sentence).toMatch(
-      /points lie beyond the maximum baseline of every base: .*"P4"\. Put a base nearer/,
+      /points? lies? beyond the maximum baseline of every base: .*"P4"\. Put a base nearer/,
     );
   });
   it('have what can be promised there, or the reason', () => {
@@ -45,18 +44,31 @@ describe('points of a job', () => {
     const [first] = plan.reaches;
     expect(Math.abs(first!.heightDifferenceM! - 60)).toBeLessThan(1);
     expect(plan.reaches.find(({ point }) => point === 'P2')!.heightDifferenceM).toBeNull();
-    expect(plan.reaches.map(({ base, baseOfRule }) => (base === 'B1') === baseOfRule)).not.toContain(false);
+    expect(plan.bases.map(({ base, baseOfRule }) => (base === 'B1') === baseOfRule)).not.toContain(false);
+  });
+  it('are reached less far from a base that is known worse', () => {
+    const worse = maximumBaseline(rows, model, tolerance(25), { baseSigmaMm: 6 });
+    const weak = { rule: worse, promise: promiser(rows, model, { baseSigmaMm: 6 }) };
+    const between = [place('M', 44.4)];
+    const own = reachPoints(between, bases, { rule, promise }, (base) =>
+      base === 'B1' ? weak : { rule, promise },
+    );
+    // Both are as far from it, so the better known one is the one to use.
+    expect(own.points[0]!.bestBase).toBe('B2');
+    const [b1, b2] = own.bases;
+    expect(b1!.maximumBaselineKm!).toBeLessThan(b2!.maximumBaselineKm!);
+    expect(own.maximumBaselineKm).toBe(rule.maximumBaselineKm);
   });
   it('are refused without a place, and told without a rule', () => {
-    expect(() => reachPoints([], bases, rule, promise)).toThrow(
+    expect(() => reachPoints([], bases, { rule, promise })).toThrow(
       'Expected at least one point of a job, came none.',
     );
-    expect(() => reachPoints([bases[0]!, bases[0]!], bases, rule, promise)).toThrow('came "B1" twice');
-    expect(() => reachPoints([place('X', Number.NaN)], bases, rule, promise)).toThrow(
+    expect(() => reachPoints([bases[0]!, bases[0]!], bases, { rule, promise })).toThrow('came "B1" twice');
+    expect(() => reachPoints([place('X', Number.NaN)], bases, { rule, promise })).toThrow(
       'Expected a plan position of point "X"',
     );
     const none = { ...rule, maximumBaselineKm: null, reason: '3 days are too few: a rule needs 15 days' };
-    expect(reachPoints([place('P', 44.3)], bases, none, promise).sentence).toBe(
+    expect(reachPoints([place('P', 44.3)], bases, { rule: none, promise }).sentence).toBe(
       'No point can be promised 25 mm, because there is no rule: 3 days are too few: a rule needs 15 days.',
     );
   });

@@ -37,7 +37,7 @@ export interface BackTest {
 /**
  * Leaves out each day in turn, learns from the others and judges the day: constant, ppm, the marks' means, how days
  * differ, how wrong fixes grow, and the rules. Kept from the whole study are the weights of the screening, the ratio of
- * east to north and the constant's relative standard error; the day model drops the judged day from its weights and
+ * east to north, that of both forms where they are in doubt, and the constant's relative standard error; the day model drops the judged day from its weights and
  * keeps the slope to which days refer.
  * @param errors all that were fitted, suspects too
  * @throws InputError when a column is missing or the model is of reference `relative`

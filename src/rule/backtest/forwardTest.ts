@@ -2,6 +2,7 @@ import { dayModel } from '../../days/index.js';
 import { type ErrorsInput, errorColumns } from '../../errors/index.js';
 import { axesOf, type Component, type ErrorModel, fitErrorModel, sigmaAtMm } from '../../fit/index.js';
 import { InputError } from '../../logs/index.js';
+import { findFormDoubt } from '../formDoubt.js';
 import { frozenMarks, newErrors } from '../frozenMarks.js';
 import { maximumBaseline } from '../maximumBaseline.js';
 import { recordsOf } from '../records.js';
@@ -46,7 +47,7 @@ export function forwardTest(
   options: BackTestOptions = {},
 ): ForwardTest {
   refuseRelative(model);
-  const { share = 0.95, baseSigmaMm } = options;
+  const { share = 0.95, baseSigmaMm, basePpm, height } = options;
   const { component, form, reference, confidence } = model;
   const screening = usable(options.screening);
   const records = recordsOf(errors);
@@ -102,6 +103,9 @@ export function forwardTest(
     dayModel: form === 'root-sum-square' ? dayModel(own, fit, ownWeights) : null,
     wrongFixes: growthOf(records, screening, before),
     baseSigmaMm,
+    basePpm,
+    height,
+    formDoubt: options.formDoubt ? findFormDoubt(own, fit, ownWeights) : null,
   };
   const used = own.filter((_, i) => ownWeights === undefined || ownWeights[i]! >= 0.5);
   const tolerances = (options.tolerances ?? []).filter((each) => each.component === component);

@@ -15,14 +15,15 @@ import { growthOf } from './withoutRows.js';
 export function ruleJudges(
   data: BackTestData,
   tolerances: readonly Tolerance[],
-  { dayModel, baseSigmaMm }: BackTestOptions,
+  { dayModel, baseSigmaMm, basePpm, height, formDoubt }: BackTestOptions,
   screening: Screening | null,
 ) {
   const { records, model, weights, days } = data;
   const used = Array.from(records.keys()).filter((row) => weights === null || weights[row]! >= 0.5);
   const pick = (rows: readonly number[]): object[] => rows.map((row) => records[row]!);
   const growth = growthOf(records, screening, Array.from(records.keys()));
-  const prepared = prepareGround({ model, dayModel, wrongFixes: growth }, { baseSigmaMm });
+  const added = { baseSigmaMm, basePpm, height, formDoubt };
+  const prepared = prepareGround({ model, dayModel, wrongFixes: growth }, added);
   const supportedKm = longestSupportedKm(pick(used), model.component);
   const refused = tolerances.map((tolerance) => whyNoRule(pick(used), prepared, tolerance, supportedKm));
   const counters = tolerances.map((tolerance) => new RuleCounter(tolerance, data.columns, weights));
@@ -45,7 +46,7 @@ export function ruleJudges(
         nodes === null
           ? prepareGround(
               { model: pooledWithout(data, others), wrongFixes: growthOf(records, screening, others) },
-              { baseSigmaMm },
+              added,
             )
           : preparedDays({ ...prepared, shares }, nodes);
       tolerances.forEach((tolerance, t) => {

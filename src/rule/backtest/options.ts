@@ -1,5 +1,7 @@
 import type { DayModel } from '../../days/index.js';
 import type { Screening } from '../../fit/index.js';
+import type { HeightAllowance } from '../ground.js';
+import type { FormDoubt } from '../formDoubt.js';
 import type { SpecSheet } from '../specSheet.js';
 import type { Tolerance } from '../tolerance.js';
 
@@ -15,4 +17,7 @@ export interface BackTestOptions {
   /** To be judged beside the own model, as a rule like any other. */
   readonly specSheet?: SpecSheet | null | undefined;
   readonly baseSigmaMm?: number | undefined;
+  readonly basePpm?: number | undefined;
+  readonly height?: HeightAllowance | undefined;
+  readonly formDoubt?: FormDoubt | null | undefined;
 }

@@ -1,1 +1,10 @@
-export { type JobPlace, type JobPlan, type JobPoint, type JobReach, reachPoints } from './reachPoints.js';
+export type {
+  JobBase,
+  JobPlace,
+  JobPlan,
+  JobPoint,
+  JobReach,
+  PlannedPlace,
+  RuleFromBase,
+} from './jobPlan.js';
+export { reachPoints } from './reachPoints.js';

@@ -1,71 +1,36 @@
 import { baselineBetween, type Geodetic } from '../../geodesy/index.js';
 import { inputError } from '../../logs/index.js';
-import type { PositionPromise } from '../promise.js';
 import type { Rule } from '../rule.js';
-
-/** A point of a job, or a base; a height that is not known is NaN. */
-export interface JobPlace {
-  readonly name: string;
-  readonly position: Geodetic;
-}
-
-/** A point from one base. */
-export interface JobReach {
-  readonly point: string;
-  readonly base: string;
-  readonly baselineKm: number;
-  /** Point minus base, m; null where the height is not known. */
-  readonly heightDifferenceM: number | null;
-  /** The rule reaches it; null where there is no rule. */
-  readonly holds: boolean | null;
-  /** What can be promised there, mm; null with a reason. */
-  readonly promisedMm: number | null;
-  readonly reason: string | null;
-  /** The rule was found from this base. */
-  readonly baseOfRule: boolean;
-}
-
-/** A point with the base from which most can be promised: the nearest one. */
-export interface JobPoint {
-  readonly point: string;
-  readonly nearest: JobReach;
-  /** Bases from which the rule reaches it, the nearest first. */
-  readonly reachedFrom: readonly string[];
-  readonly needsAnotherBase: boolean;
-}
-
-export interface JobPlan {
-  readonly limitMm: number;
-  readonly share: number;
-  readonly maximumBaselineKm: number | null;
-  readonly points: readonly JobPoint[];
-  /** Every point from every base, in the order of points and lengths. */
-  readonly reaches: readonly JobReach[];
-  readonly sentence: string;
-}
+import type { JobPlace, JobPlan, JobPoint, JobReach, PlannedPlace, RuleFromBase } from './jobPlan.js';
 
 /**
  * Which base reaches which point of a job under a rule, what can be promised there, and which points need another base.
- * @param promise what may be promised at a length, as `promiser` gives it
+ * @param general the rule of the study
+ * @param fromBase the rule from a base whose own coordinates are known worse than those behind the rule; else the general one
  * @throws InputError without points or bases, or for a name that stands twice
  */
 export function reachPoints(
   points: readonly JobPlace[],
   bases: readonly JobPlace[],
-  rule: Rule,
-  promise: (baselineKm: number) => PositionPromise,
+  general: RuleFromBase,
+  fromBase: (base: string) => RuleFromBase = () => general,
 ): JobPlan {
   checkPlaces('point', points);
   checkPlaces('base', bases);
   const found = points.map((point): { point: JobPoint; reaches: JobReach[] } => {
     const reaches = bases
-      .map((base) => reachFrom(point, base, rule, promise))
+      .map((base) => reachFrom(point, base, fromBase(base.name)))
       .sort((a, b) => a.baselineKm - b.baselineKm || (a.base < b.base ? -1 : 1));
     const reachedFrom = reaches.filter(({ holds }) => holds === true).map(({ base }) => base);
+    const best = reaches.reduce((a, b) => (least(b) < least(a) ? b : a));
     return {
       point: {
         point: point.name,
-        nearest: reaches[0]!,
+        ...placeOf(point.position),
+        bestBase: best.base,
+        baselineKm: best.baselineKm,
+        promisedMm: best.promisedMm,
+        reason: best.reason,
         reachedFrom,
         needsAnotherBase: reachedFrom.length === 0,
       },
@@ -73,22 +38,44 @@ export function reachPoints(
     };
   });
   const jobPoints = found.map(({ point }) => point);
-  const { limitMm, share, maximumBaselineKm } = rule;
+  const { component, limitMm, share, dayShare, confidence, maximumBaselineKm, reason } = general.rule;
   return {
+    component,
     limitMm,
     share,
+    dayShare,
+    confidence,
     maximumBaselineKm,
+    reason,
+    bases: bases.map(({ name, position }) => {
+      const { rule } = fromBase(name);
+      return {
+        base: name,
+        ...placeOf(position),
+        maximumBaselineKm: rule.maximumBaselineKm,
+        reason: rule.reason,
+        baseOfRule: general.rule.conditions.bases.includes(name),
+      };
+    }),
     points: jobPoints,
     reaches: found.flatMap(({ reaches }) => reaches),
-    sentence: sentenceOf(jobPoints, rule),
+    sentence: sentenceOf(jobPoints, general.rule),
   };
 }
+
+/** What cannot be promised is worse than any promise. */
+const least = ({ promisedMm }: JobReach): number => promisedMm ?? Number.POSITIVE_INFINITY;
+
+const placeOf = ({ latitudeDeg, longitudeDeg, heightM }: Geodetic): PlannedPlace => ({
+  latitudeDeg,
+  longitudeDeg,
+  heightM: Number.isNaN(heightM) ? null : heightM,
+});
 
 function reachFrom(
   point: JobPlace,
   base: JobPlace,
-  { maximumBaselineKm, conditions }: Rule,
-  promise: (baselineKm: number) => PositionPromise,
+  { rule: { maximumBaselineKm }, promise }: RuleFromBase,
 ): JobReach {
   const { heightM } = point.position;
   const known = !Number.isNaN(heightM);
@@ -105,7 +92,6 @@ function reachFrom(
     holds: maximumBaselineKm === null ? null : lengthKm <= maximumBaselineKm,
     promisedMm: limitMm,
     reason,
-    baseOfRule: conditions.bases.includes(base.name),
   };
 }
 
@@ -135,11 +121,15 @@ function sentenceOf(points: readonly JobPoint[], { limitMm, maximumBaselineKm, r
   if (maximumBaselineKm === null)
     return `No point can be promised ${limitMm} mm, because there is no rule: ${reason}.`;
   const far = points.filter(({ needsAnotherBase }) => needsAnotherBase);
-  if (far.length === 0) return `All ${points.length} points lie within the maximum baseline of a base.`;
+  if (far.length === 0) {
+    return points.length === 1
+      ? 'The point lies within the maximum baseline of a base.'
+      : `All ${points.length} points lie within the maximum baseline of a base.`;
+  }
   const names = far
     .slice(0, 10)
     .map(({ point }) => JSON.stringify(point))
     .join(', ');
   const more = far.length > 10 ? ` and ${far.length - 10} more` : '';
-  return `${far.length} of ${points.length} points lie beyond the maximum baseline of every base: ${names}${more}. Put a base nearer to them, or agree on a wider tolerance.`;
+  return `${far.length} of ${points.length} points ${far.length === 1 ? 'lies' : 'lie'} beyond the maximum baseline of every base: ${names}${more}. Put a base nearer to ${far.length === 1 ? 'it' : 'them'}, or agree on a wider tolerance.`;
 }

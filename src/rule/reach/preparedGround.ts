@@ -4,6 +4,7 @@ import { type Tolerance, toleranceFactor, toleranceFactorAt } from '../tolerance
 import { type AllDays, allDays } from './allDays.js';
 import { type DayLimits, type DayNodes, dayLimits, dayNodes } from './dayLimits.js';
 import { demandedShare, type WrongFixShares, wrongFixShares } from './demandedShare.js';
+import { type LimitLeft, limitLeft } from './limitLeft.js';
 import { monotone } from './scan.js';
 
 /** Whether a tolerance holds at a length, in three senses. */
@@ -27,6 +28,8 @@ export interface PreparedGround {
   readonly ground: RuleGround;
   readonly shares: WrongFixShares;
   readonly added: number;
+  /** What comes off the limit at a length. */
+  readonly left: LimitLeft;
   readonly days: DayNodes | null;
   /** Limits of a share of days, remembered. */
   readonly limits: (dayShare: number) => DayLimits;
@@ -38,18 +41,22 @@ export const LARGEST_RMS_SHARE = 0.95;
 
 export function prepareGround(
   ground: RuleGround,
-  options: Pick<RuleOptions, 'baseSigmaMm' | 'height'>,
+  options: Pick<RuleOptions, 'baseSigmaMm' | 'basePpm' | 'formDoubt' | 'height'>,
 ): PreparedGround {
   const { model, dayModel, wrongFixes } = ground;
   const posterior = model.form === 'root-sum-square' ? (dayModel?.posterior ?? null) : null;
   const days = posterior && dayNodes(posterior);
   const added = addedVariance(model.component, options);
-  return preparedDays({ model, ground, shares: wrongFixShares(wrongFixes ?? null), added }, days);
+  const left = limitLeft(options);
+  return preparedDays({ model, ground, shares: wrongFixShares(wrongFixes ?? null), added, left }, days);
 }
 
 /** The same ground with other nodes of the days. */
 export function preparedDays(
-  { model, ground, shares, added }: Pick<PreparedGround, 'model' | 'ground' | 'shares' | 'added'>,
+  { model, ground, shares, added, left }: Pick<
+    PreparedGround,
+    'model' | 'ground' | 'shares' | 'added' | 'left'
+  >,
   days: DayNodes | null,
 ): PreparedGround {
   const remembered = new Map<number, DayLimits>();
@@ -58,6 +65,7 @@ export function preparedDays(
     ground,
     shares,
     added,
+    left,
     days,
     limits: (dayShare) => {
       let limits = remembered.get(dayShare);
@@ -82,14 +90,14 @@ export function reachOf(prepared: PreparedGround, tolerance: Tolerance): Reach {
 }
 
 function allowedVariance(
-  { model, added }: PreparedGround,
+  { model, added, left }: PreparedGround,
   { share, limitMm }: Tolerance,
   km: number,
   wrongFixShare: number,
 ): number {
   const demanded = demandedShare(share, wrongFixShare);
   if (demanded >= 1) return -1;
-  return Math.max(0, (limitMm / toleranceFactorAt(model, demanded, km)) ** 2 - added);
+  return Math.max(0, (left.leftMm(limitMm, km) / toleranceFactorAt(model, demanded, km)) ** 2 - added);
 }
 
 type Allowed = (km: number) => number;
@@ -112,7 +120,7 @@ function pooledReach(
 }
 
 function dayModelReach(
-  { model, shares, limits, allDays: all }: PreparedGround,
+  { model, shares, limits, left, allDays: all }: PreparedGround,
   { share, dayShare, confidence, limitMm }: Tolerance,
   allowed: Allowed,
   likelyAllowed: Allowed,
@@ -121,7 +129,7 @@ function dayModelReach(
   const overAllDays = (km: number, wrongFixShare: number): number => {
     const demanded = demandedShare(share, wrongFixShare);
     if (demanded >= 1) return 0;
-    return all!.confidence(km, equalAxesLimit(model, limitMm, demanded, km), demanded);
+    return all!.confidence(km, equalAxesLimit(model, left.leftMm(limitMm, km), demanded, km), demanded);
   };
   const holdsOverAllDays = monotone((km) => overAllDays(km, shares.reckoned(km)) >= confidence);
   const likelyOverAllDays = monotone((km) => overAllDays(km, shares.mean(km)) >= 0.5);
