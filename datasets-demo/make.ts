@@ -11,6 +11,7 @@ import {
   simulateLog,
 } from '../src/campaign/index.js';
 import { activityText } from './activity.js';
+import { coastRoadText } from './jobs.js';
 import { pointListText } from './pointList.js';
 import { readmeText, STUDY_TEXT } from './texts.js';
 
@@ -97,6 +98,7 @@ export function demoStudy(): ReadonlyMap<string, string> {
     ['bases.csv', basesText(bases)],
     ...[...rowsByMonth(rows)].map(([month, own]): [string, string] => [`logs/${month}.csv`, logText(own)]),
     ['another-layout/points-2025-03-14.txt', pointListText(rows, '2025-03-14')],
+    ['jobs/coast-road.csv', coastRoadText(bases[0]!)],
     ['indices/activity-invented.txt', activityText(truth.days, DEMO_OPTIONS.seed!)],
     ['truth.json', `${JSON.stringify(truth, rounded, 1)}\n`],
   ];

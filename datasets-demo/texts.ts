@@ -43,6 +43,14 @@ tolerances:
 # radial, and it is a root-mean-square.
 specSheet: {horizontal: {constantMm: 8, ppm: 1}, vertical: {constantMm: 15, ppm: 1}, form: linear-sum, axis: radial, level: rms}
 
+# Points that crews will be sent to. For each the results say which base reaches it under the tolerances above (or
+# under a limit of its own, column limitMm) and what can be promised there.
+jobs:
+  - jobs/coast-road.csv
+
+# Standards that clients ask for, each with its conditions checked against the shots.
+standards: [NSSDA, ASPRS, ISO 17123-8, GUM, land-title]
+
 # Public files of geomagnetic activity, as they were published, to see what days went with. The one here is
 # invented; of the maps of the electron content ("maps") the demo has none.
 indices:
@@ -156,6 +164,7 @@ const FILES: Readonly<Record<string, string>> & { readonly log: string } = {
   'bases.csv': 'the bases: the pillar and the ground mark',
   'another-layout/points-2025-03-14.txt':
     'one day as another controller would export it: a point list to try recognising on',
+  'jobs/coast-road.csv': 'points of an invented job, two of them with a limit of their own',
   'indices/activity-invented.txt':
     'geomagnetic activity of the season, invented, in the layout of the public daily file',
   'truth.json': 'what the positions were made from',

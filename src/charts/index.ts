@@ -7,6 +7,7 @@ export type { DayCause } from './daysFactors.js';
 export { type ErrorByBaselineInput, errorByBaselineChart } from './errorByBaselineChart.js';
 export { type HourDayInput, hourDayChart } from './hourDayChart.js';
 export { type HourPpmInput, hourPpmChart } from './hourPpmChart.js';
+export { type JobMapInput, jobMapChart } from './jobMapChart.js';
 export { type MarkMapInput, markMapChart } from './markMapChart.js';
 export { type MarkMeansInput, markMeansChart } from './markMeansChart.js';
 export { renderPng, renderSvg } from './renderChart.js';

@@ -7,8 +7,10 @@ import {
   arrowBytes,
   cardHtml,
   csvText,
+  jobsGeoJson,
   markdownOf,
   marksGeoJson,
+  outcomeTables,
   reportHtml,
   reportTables,
   weightsHtml,
@@ -64,7 +66,7 @@ export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: 
     await mkdir(join(folder, name), { recursive: true });
   }
   await copyFile(setAsideRows, join(folder, 'tables', 'set-aside.csv'));
-  for (const table of reportTables(run)) {
+  for (const table of [...reportTables(run), ...outcomeTables(run.results)]) {
     const { name, header, rows } = table;
     await writeFile(join(folder, 'tables', `${name}.csv`), csvText(header, rows));
     if (ARROW_TABLES.includes(name)) {
@@ -72,6 +74,9 @@ export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: 
     }
   }
   await writeFile(join(folder, 'exports', 'marks.geojson'), marksGeoJson(run));
+  if (run.results.jobs.length > 0) {
+    await writeFile(join(folder, 'exports', 'jobs.geojson'), jobsGeoJson(run.results));
+  }
   const { pictures, files } = await drawPictures(run);
   for (const [name, svg] of files) await writeFile(join(folder, 'charts', `${name}.svg`), svg);
   const pages = {

@@ -5,6 +5,7 @@ import {
   daysChart,
   errorByBaselineChart,
   hourPpmChart,
+  jobMapChart,
   markMapChart,
   markMeansChart,
   renderSvg,
@@ -50,6 +51,7 @@ export async function drawPictures(
     const told = hours.hours.length > 0 ? hourPpmChart({ timeOfDay: hours }) : null;
     await draw(`hours-${hours.component}`, told);
   }
+  for (const [k, job] of run.results.jobs.entries()) await draw(`job-${k + 1}`, jobMapChart({ job }));
   const moves = await draw('rule-moves', movesChart(run));
   const proof = await draw('back-test', proofChart(run));
   return { pictures: { proof, moves, horizontal, vertical, maps, markMeans }, files };

@@ -93,6 +93,8 @@ describe('demo study', () => {
       'occupations',
       'tolerances',
       'specSheet',
+      'jobs',
+      'standards',
       'indices',
       'seed',
     ]);

@@ -61,6 +61,7 @@ describe('demo and run', () => {
       'another-layout',
       'bases.csv',
       'indices',
+      'jobs',
       'logs',
       'marks.csv',
       'study.yaml',
@@ -94,6 +95,7 @@ describe('demo and run', () => {
     ]);
     expect(readdirSync(join(out, 'exports')).sort()).toEqual([
       'errors.arrow',
+      'jobs.geojson',
       'marks.geojson',
       'set-aside-occupations.arrow',
       'visits-without-fix.arrow',
@@ -104,6 +106,11 @@ describe('demo and run', () => {
       'horizontal-error.svg',
       'hours-horizontal.svg',
       'hours-vertical.svg',
+      'job-1.svg',
+      'job-2.svg',
+      'job-3.svg',
+      'job-4.svg',
+      'job-5.svg',
       'map-1.svg',
       'map-2.svg',
       'mark-means.svg',

@@ -128,6 +128,33 @@ describe('the demo study', () => {
     }
   });
 
+  it('says which base reaches which point of the job', () => {
+    const { jobs, rules, bases } = run.results;
+    // Four tolerances of the study, and the 20 mm of two points.
+    expect(jobs.map(({ limitMm, component }) => `${component} ${limitMm}`)).toEqual([
+      'horizontal 25',
+      'horizontal 40',
+      'vertical 40',
+      'vertical 60',
+      'horizontal 20',
+    ]);
+    jobs.slice(0, 4).forEach((job, k) => {
+      expect(job.maximumBaselineKm).toBe(rules[k]!.maximumBaselineKm);
+      expect(job.points).toHaveLength(10);
+      expect(job.bases.map(({ base }) => base)).toEqual(bases);
+    });
+    expect(jobs[4]!.points.map(({ point }) => point)).toEqual(['bridge north', 'bridge south']);
+    for (const { limitMm, maximumBaselineKm, points, reaches } of jobs) {
+      for (const { holds, baselineKm, promisedMm } of reaches) {
+        expect(holds).toBe(baselineKm <= maximumBaselineKm!);
+        // What can be promised within the rule meets the limit, and beyond it does not.
+        expect(promisedMm! <= limitMm + 0.5).toBe(baselineKm <= maximumBaselineKm! + 0.1);
+      }
+      for (const { point, needsAnotherBase } of points)
+        expect(needsAnotherBase).toBe(!reaches.some((one) => one.point === point && one.holds));
+    }
+  });
+
   it('finds the blunders, most wrong fixes, and hardly takes a right one for wrong', () => {
     const key = ({ mark, startMs }: Pick<Spoilt, 'mark' | 'startMs'>) => `${mark} ${startMs}`;
     const reasonOf = new Map(run.setAside.map(({ reason, error }) => [key(error), reason]));
