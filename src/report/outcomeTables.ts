@@ -1,9 +1,9 @@
 import type { Results } from '../study/index.js';
 import type { Cell, ReportTable } from './tables.js';
 
-/** What rules are used for, as tables: the points of jobs from every base. */
+/** What rules are used for, as tables: jobs from every base, standards, second visits, lengths of occupations. */
 export function outcomeTables(results: Results): ReportTable[] {
-  return [jobTable(results)];
+  return [jobTable(results), standardTable(results), visitTable(results), lengthTable(results)];
 }
 
 const jobTable = ({ jobs }: Results): ReportTable => ({
@@ -53,4 +53,87 @@ const jobTable = ({ jobs }: Results): ReportTable => ({
       ];
     });
   }),
+});
+
+const standardTable = ({ standards }: Results): ReportTable => ({
+  name: 'standards',
+  header: [
+    'name',
+    'standard',
+    'what',
+    'component',
+    'baselineKm',
+    'valueMm',
+    'lowMm',
+    'highMm',
+    'allowedMm',
+    'verdict',
+    'lacking',
+    'outcome',
+  ],
+  rows: standards.flatMap(({ name, standard, figures, lacking, outcome }) => {
+    const told = [lacking.join('; '), outcome];
+    // A standard without a number still has a line that says what is lacking.
+    if (figures.length === 0) return [[name, standard, ...Array<Cell>(8).fill(null), ...told]];
+    return figures.map((one): Cell[] => [
+      name,
+      standard,
+      one.what,
+      one.component,
+      one.baselineKm,
+      one.valueMm,
+      one.lowMm,
+      one.highMm,
+      one.allowedMm,
+      one.verdict,
+      ...told,
+    ]);
+  }),
+});
+
+const visitTable = ({ secondVisits }: Results): ReportTable => ({
+  name: 'second-visits',
+  header: [
+    'component',
+    'baselineKm',
+    'minutes',
+    'meanFactor',
+    'meanFactorLow',
+    'meanFactorHigh',
+    'differenceFactor',
+    'differenceFactorLow',
+    'differenceFactorHigh',
+    'differenceLimitMm',
+    'alarmShare',
+  ],
+  rows: secondVisits.flatMap(({ component, alarmShare, visits }) =>
+    visits.map(({ baselineKm, minutes, factor, differenceFactor, differenceLimitMm }): Cell[] => [
+      component,
+      baselineKm,
+      minutes,
+      factor.estimate,
+      factor.low,
+      factor.high,
+      differenceFactor.estimate,
+      differenceFactor.low,
+      differenceFactor.high,
+      differenceLimitMm,
+      alarmShare,
+    ]),
+  ),
+});
+
+const lengthTable = ({ errorByOccupationLength }: Results): ReportTable => ({
+  name: 'occupation-length',
+  header: ['component', 'fromEpochs', 'toEpochs', 'occupations', 'days', 'ratio', 'ratioLow', 'ratioHigh'],
+  rows: errorByOccupationLength.map(({ ratio, ...one }): Cell[] => [
+    one.component,
+    one.fromEpochs,
+    one.toEpochs,
+    one.occupations,
+    one.days,
+    ratio.estimate,
+    ratio.low,
+    ratio.high,
+  ]),
 });

@@ -38,6 +38,8 @@ export interface HeightAllowance {
   readonly differenceM: number;
   /** mm per 100 m of height difference: the upper limit of the fitted term, to be on the safe side. */
   readonly mmPer100M: number;
+  /** Largest height difference among the shots, m, up or down; a site beyond it has no rule. */
+  readonly seenM?: number | undefined;
 }
 
 /**

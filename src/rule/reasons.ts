@@ -16,7 +16,7 @@ const NARROWEST_SECTOR_DEG = 90;
 /** Why the data allow no rule, and what to collect next; null when they do. */
 export function whyNoRule(
   errors: ErrorsInput,
-  { model, days }: PreparedGround,
+  { model, days, height }: PreparedGround,
   { share }: Tolerance,
   supportedKm: number | null,
 ): string | null {
@@ -37,6 +37,9 @@ export function whyNoRule(
   }
   if (model.informationNumber < LEAST_INFORMATION) {
     return `the shots say too little of distance (information number ${model.informationNumber.toFixed(0)}, a rule needs ${LEAST_INFORMATION}): add days with far shots${farFrom(model)}`;
+  }
+  if (height?.seenM !== undefined && Math.abs(height.differenceM) > height.seenM) {
+    return `the site lies ${Math.abs(height.differenceM).toFixed(0)} m above or below its base and the shots at most ${height.seenM.toFixed(0)} m: add marks at such height differences`;
   }
   if (days === null && share > LARGEST_RMS_SHARE) {
     return `a share of ${percent(share)} cannot be derived from an RMS: errors of bad days are rarer and larger than a Gaussian factor allows for, and how days differ is not known. Add days with far shots, or ask for 95 %`;

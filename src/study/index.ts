@@ -36,6 +36,7 @@ export type {
   JobResult,
   PartRule,
   SeasonRule,
+  SecondVisitsResult,
   WatchResult,
 } from './ruleResultTypes.js';
 export { type RunOptions, readStudyErrors, runStudy, type StudyErrors, type StudyRun } from './run.js';

@@ -5,6 +5,7 @@ import {
   checkShotLimits,
   crowdedDaysKept,
   type FormDoubt,
+  type HeightAllowance,
   noRule,
   type Rule,
   type RuleOptions,
@@ -34,6 +35,8 @@ export interface RuleInput {
   readonly days: readonly Pick<JudgedDays, 'component' | 'model'>[];
   /** The form that cannot be told from that of a model. */
   readonly doubts: ReadonlyMap<Component, FormDoubt | null>;
+  /** The site that vertical rules are for, where one is stated. */
+  readonly height: HeightAllowance | undefined;
   readonly wrongFixes: WrongFixes | null;
   /** What the rules of each component stand on beside the errors. */
   readonly options: ReadonlyMap<Component, RuleOptions>;
@@ -124,6 +127,7 @@ function ruleOptions(model: ErrorModel, input: Omit<RuleInput, 'options'>): Rule
     crowdedDaysKept: screening === null ? null : crowdedDaysKept(errors, model, screening),
     formDoubt: input.doubts.get(model.component),
     visits,
+    height: model.component === 'vertical' ? input.height : undefined,
     ...usedBaseErrors(model.component, input),
   };
 }

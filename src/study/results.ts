@@ -1,7 +1,15 @@
 import type { CommonCauses, StaticShots } from '../errors/index.js';
 import type { GroupComparison, SetupOffsets } from '../fit/index.js';
 import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason } from '../logs/index.js';
-import type { CheckShotLimits, Rule, RuleTableRow, SpecSheet, SpecSheetTest } from '../rule/index.js';
+import type {
+  CheckShotLimits,
+  OccupationLengthRow,
+  Rule,
+  RuleTableRow,
+  SpecSheet,
+  SpecSheetTest,
+  StandardResult,
+} from '../rule/index.js';
 import type { Interval } from '../split/index.js';
 import type { ControlMark } from './controlMarks.js';
 import type {
@@ -20,7 +28,14 @@ import type {
   WrongFixResult,
 } from './fitResultTypes.js';
 import type { RuleOutcomes } from './ruleOutcomes.js';
-import type { BackTestResult, HourRule, JobResult, SeasonRule, WatchResult } from './ruleResultTypes.js';
+import type {
+  BackTestResult,
+  HourRule,
+  JobResult,
+  SeasonRule,
+  SecondVisitsResult,
+  WatchResult,
+} from './ruleResultTypes.js';
 import type { Sky } from './skyResult.js';
 import type { StatedStudy } from './statedStudy.js';
 
@@ -127,6 +142,9 @@ export interface Results extends StatedStudy, RuleOutcomes {
   /** The days left out by the study file, and the results with them; null where none is. */
   readonly leftOut: LeftOutDays | null;
   readonly jobs: readonly JobResult[];
+  readonly standards: readonly StandardResult[];
+  readonly secondVisits: readonly SecondVisitsResult[];
+  readonly errorByOccupationLength: readonly OccupationLengthRow[];
   /** The spec sheet as stated. */
   readonly specSheet: SpecSheet | null;
 }

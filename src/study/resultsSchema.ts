@@ -5,13 +5,13 @@ import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
 import { dailyFactor, dayModel, degradedDay, leftOut, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
-import { job } from './jobSchema.js';
 import type { Results } from './results.js';
 import { ruleOutcomes } from './ruleOutcomeSchemas.js';
 import { checkShotLimits, hourRule, rule, ruleTableRow, seasonRule, specSheetTest } from './ruleSchema.js';
 import { count, day, form, interval, nullable } from './schemaParts.js';
 import { skySchema } from './skySchema.js';
 import { statedStudy } from './statedStudySchema.js';
+import { job, occupationLength, secondVisit, standard } from './useSchemas.js';
 
 const message = z.strictObject({
   code: z.string().describe('Stable name of the kind of message.'),
@@ -99,6 +99,9 @@ export const resultsSchema = z.strictObject({
   watch: z.array(watch),
   leftOut: leftOut.nullable().describe('The days left out by the study file, and the results with them.'),
   jobs: z.array(job).describe('Points of jobs: which base reaches which.'),
+  standards: z.array(standard).describe('From memory: the printed standards decide.'),
+  secondVisits: z.array(secondVisit),
+  errorByOccupationLength: z.array(occupationLength),
   specSheet: z
     .strictObject({
       horizontal: constantAndPpm,

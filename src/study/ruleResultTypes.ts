@@ -6,6 +6,8 @@ import type {
   JobPlan,
   LeftOutGroup,
   Rule,
+  SecondVisit,
+  SecondVisits,
   WatchStart,
 } from '../rule/index.js';
 
@@ -35,4 +37,12 @@ export type WatchResult = WatchStart & { readonly component: Component };
 /** The points of a file under one tolerance. */
 export interface JobResult extends JobPlan {
   readonly file: string;
+}
+
+/** What a second visit on the same day gains, with how far both may lie apart before something is wrong. */
+export interface SecondVisitsResult extends Omit<SecondVisits, 'visits'> {
+  /** Share of good pairs beyond the limit of their difference. */
+  readonly alarmShare: number;
+  /** `differenceLimitMm` is null where the data allow no limit. */
+  readonly visits: readonly (SecondVisit & { readonly differenceLimitMm: number | null })[];
 }

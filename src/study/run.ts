@@ -25,11 +25,14 @@ import { movedRules } from './movedRules.js';
 import { readAs } from './readAs.js';
 import type { Results } from './results.js';
 import { screenStudy, suspects, withSuspects, wrongFixResults } from './screenStudy.js';
+import { siteHeight } from './siteHeight.js';
+import { studyStandards } from './standards/index.js';
 import type { Study } from './study.js';
 import { planJobs, readJobs, type StudyJob } from './studyJobs.js';
 import { studySky } from './studySky.js';
 import { summarizeRun } from './summarizeRun.js';
 import { testRules } from './testRules.js';
+import { visitsAndLengths } from './visitsAndLengths.js';
 import { leftOutMessages, withLeftOutDays } from './withLeftOutDays.js';
 
 export interface RunOptions {
@@ -123,6 +126,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const judged = judgeDays(errors, weights, read.visits, components, study);
   const evidence = studyEvidence(errors, weights, components, study);
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
+  const site = siteHeight(used, evidence.results.terms, study);
   const ground = withRuleOptions({
     errors,
     used,
@@ -131,6 +135,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     models,
     doubts: new Map(components.map((each) => [each.component, formDoubtOf(each)])),
     days: judged,
+    height: site.height,
     wrongFixes,
   });
   const made = makeRules(ground, study);
@@ -138,7 +143,8 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const planned = planJobs(read.jobs, ground, study);
   const fitted = fitResults(components, errors, wrongFixes, judged);
   const { withLeftOut, control } = read;
-  const leftOut = withLeftOut === null ? null : withLeftOutDays(withLeftOut, control, study);
+  const leftOut =
+    withLeftOut === null ? null : withLeftOutDays({ ...withLeftOut, control, height: site.height }, study);
   const sky = await studySky(study, read, dayResults(judged).dailyFactors);
   const results: Results = {
     ...read.results,
@@ -148,6 +154,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...messages,
       ...judged.flatMap((each) => each.messages),
       ...evidence.messages,
+      ...site.messages,
       ...sky.messages,
       ...tested.messages,
       ...planned.messages,
@@ -167,6 +174,8 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     adjustmentWeights: adjustmentWeights(fitted.fits, study.centringSigmaMm),
     backTest: tested.backTest,
     jobs: planned.jobs,
+    standards: studyStandards({ ...ground, weights, files: read.results.files }, study),
+    ...visitsAndLengths(ground, weights, study.seed),
     sky: sky.sky,
   };
   const setAside = [...read.setAside, ...suspects(errors, wrongFixes)];

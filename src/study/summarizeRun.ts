@@ -95,6 +95,9 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     checkShotLimits: [],
     watch: [],
     jobs: [],
+    standards: [],
+    secondVisits: [],
+    errorByOccupationLength: [],
     specSheet: study.specSheet,
   };
 }

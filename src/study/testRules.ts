@@ -30,6 +30,7 @@ export function testRules(
       specSheet,
       ...usedBaseErrors(component, input),
       formDoubt: input.doubts.get(component),
+      height: component === 'vertical' ? input.height : undefined,
     };
     try {
       const { own, notes, ...tested } = backTest(errors, model, options);

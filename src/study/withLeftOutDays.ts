@@ -1,4 +1,3 @@
-import type { Control } from '../control/index.js';
 import type { EstimateWithLimits } from '../fit/index.js';
 import { type Message, message } from '../logs/index.js';
 import type { Rule } from '../rule/index.js';
@@ -13,11 +12,10 @@ import type { Study } from './study.js';
 /**
  * Screens, fits and makes the rules a second time with the days that the study file leaves out, so that both results can
  * be shown.
- * @param whole errors and visits before days were left out
+ * @param whole errors and visits before days were left out; the height allowance is that of the rules beside them
  */
 export function withLeftOutDays(
-  { errors, visits }: Pick<RuleInput, 'errors' | 'visits'>,
-  control: Control,
+  { errors, visits, control, height }: Pick<RuleInput, 'errors' | 'visits' | 'control' | 'height'>,
   study: Study,
 ): LeftOutDays {
   const named = new Set(study.leaveOutDays);
@@ -29,7 +27,7 @@ export function withLeftOutDays(
   const days = models.flatMap((model) => dayModelOfFit(errors, weights, model));
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
   const doubts = new Map(components.map((each) => [each.component, formDoubtOf(each)]));
-  const ground = withRuleOptions({ errors, used, visits, control, models, doubts, days, wrongFixes });
+  const ground = withRuleOptions({ errors, used, visits, control, models, doubts, days, height, wrongFixes });
   const rules = toleranceRules(ground, study);
   return {
     days: [...new Set(left.map(({ day }) => day))].sort(),

@@ -23,6 +23,8 @@ export interface SecondVisit {
   readonly minutes: number;
   /** Error of the mean of both visits over that of one: 0.71 if they were independent, 1 if the second gained nothing. */
   readonly factor: EstimateWithLimits;
+  /** Error of the difference of both over that of one: 1.41 if they were independent, 0 if they were the same. */
+  readonly differenceFactor: EstimateWithLimits;
 }
 
 export interface SecondVisits {
@@ -96,15 +98,19 @@ export function secondVisits(
     .filter((km) => farPairs >= FEWEST_FAR || farShareAt(found, km) < FAR_SHARE)
     .flatMap((baselineKm) =>
       minutes.map((gap): SecondVisit => {
-        const factors = drawn.map((each) => meanFactor(each, baselineKm, gap));
+        const limits = (of: typeof meanFactor): EstimateWithLimits => {
+          const values = drawn.map((each) => of(each, baselineKm, gap));
+          return {
+            estimate: of(found, baselineKm, gap),
+            low: quantile(values, 0.025),
+            high: quantile(values, 0.975),
+          };
+        };
         return {
           baselineKm,
           minutes: gap,
-          factor: {
-            estimate: meanFactor(found, baselineKm, gap),
-            low: quantile(factors, 0.025),
-            high: quantile(factors, 0.975),
-          },
+          factor: limits(meanFactor),
+          differenceFactor: limits(differenceFactor),
         };
       }),
     );
@@ -126,6 +132,10 @@ export function visitCorrelation(correlation: VisitCorrelation, km: number, minu
 /** Error of the mean of two over that of one: √((1 + ρ)/2). */
 const meanFactor = (correlation: VisitCorrelation, km: number, minutes: number): number =>
   Math.sqrt((1 + visitCorrelation(correlation, km, minutes)) / 2);
+
+/** Error of the difference of two over that of one: √(2(1 - ρ)). */
+const differenceFactor = (correlation: VisitCorrelation, km: number, minutes: number): number =>
+  Math.sqrt(2 * (1 - visitCorrelation(correlation, km, minutes)));
 
 /** Of each pair of time constants Σ aa, ab, bb, az, bz, and Σ zz, with a and b the two decays and z the product. */
 function daySums(pairs: readonly VisitPair[]): Float64Array {

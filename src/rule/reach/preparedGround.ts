@@ -1,5 +1,5 @@
 import { type Component, type ErrorModel, sigmaAtMm, sigmaUpperLimitMm } from '../../fit/index.js';
-import { addedVariance, type RuleGround, type RuleOptions } from '../ground.js';
+import { addedVariance, type HeightAllowance, type RuleGround, type RuleOptions } from '../ground.js';
 import { type Tolerance, toleranceFactor, toleranceFactorAt } from '../tolerance.js';
 import { type AllDays, allDays } from './allDays.js';
 import { type DayLimits, type DayNodes, dayLimits, dayNodes } from './dayLimits.js';
@@ -30,6 +30,8 @@ export interface PreparedGround {
   readonly added: number;
   /** What comes off the limit at a length. */
   readonly left: LimitLeft;
+  /** The site that the rule is for, where it is stated. */
+  readonly height: HeightAllowance | null;
   readonly days: DayNodes | null;
   /** Limits of a share of days, remembered. */
   readonly limits: (dayShare: number) => DayLimits;
@@ -48,14 +50,16 @@ export function prepareGround(
   const days = posterior && dayNodes(posterior);
   const added = addedVariance(model.component, options);
   const left = limitLeft(options);
-  return preparedDays({ model, ground, shares: wrongFixShares(wrongFixes ?? null), added, left }, days);
+  const height = options.height ?? null;
+  const shares = wrongFixShares(wrongFixes ?? null);
+  return preparedDays({ model, ground, shares, added, left, height }, days);
 }
 
 /** The same ground with other nodes of the days. */
 export function preparedDays(
-  { model, ground, shares, added, left }: Pick<
+  { model, ground, shares, added, left, height }: Pick<
     PreparedGround,
-    'model' | 'ground' | 'shares' | 'added' | 'left'
+    'model' | 'ground' | 'shares' | 'added' | 'left' | 'height'
   >,
   days: DayNodes | null,
 ): PreparedGround {
@@ -66,6 +70,7 @@ export function preparedDays(
     shares,
     added,
     left,
+    height,
     days,
     limits: (dayShare) => {
       let limits = remembered.get(dayShare);

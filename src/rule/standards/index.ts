@@ -3,6 +3,13 @@ export { type CheckPoints, checkPoints } from './checkPoints.js';
 export { circularUncertainty95 } from './circularUncertainty.js';
 export type { StandardCondition, StandardHead } from './condition.js';
 export {
+  type FieldSeries,
+  type FieldTestShot,
+  type FoundFieldTest,
+  type FoundFieldTests,
+  findFieldTests,
+} from './findFieldTests.js';
+export {
   type FieldPoint,
   type FieldTestOptions,
   type FieldTestResult,
@@ -23,6 +30,7 @@ export {
   relativeAllowance,
   relativePrecision,
 } from './relativePrecision.js';
+export { figure, lackingOf, type StandardFigure, type StandardResult } from './standardResult.js';
 export {
   type BudgetEntry,
   type BudgetOptions,

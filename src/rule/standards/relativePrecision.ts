@@ -140,7 +140,10 @@ function pairsOf(
 function classOf(pairs: readonly Pair[], fromM: number, toM: number, limit: RelativeLimit): RelativeClass {
   const days = groupIndices(pairs.map(({ day }) => day));
   const semiMajorMm = semiMajor(pairs);
-  const allowedMm = relativeAllowance(limit, Math.min(...pairs.map(({ distanceM }) => distanceM)));
+  const distances = pairs.map(({ distanceM }) => distanceM);
+  const allowedMm = relativeAllowance(limit, Math.min(...distances));
+  // What holds must hold at the shortest distance; what is exceeded must be so even at the longest.
+  const mostAllowedMm = relativeAllowance(limit, Math.max(...distances));
   const common = { fromM, toM, pairs: pairs.length, days: days.size, semiMajorMm, allowedMm };
   if (pairs.length < FEWEST_PAIRS || days.size < FEWEST_DAYS) {
     return { ...common, lowMm: null, highMm: null, verdict: 'cannot be told' };
@@ -152,7 +155,7 @@ function classOf(pairs: readonly Pair[], fromM: number, toM: number, limit: Rela
   const error = Math.sqrt(((logs.length - 1) / logs.length) * squares);
   const factor = Math.exp(studentTQuantile(0.95, logs.length - 1) * error);
   const [lowMm, highMm] = [semiMajorMm / factor, semiMajorMm * factor];
-  const verdict = highMm <= allowedMm ? 'holds' : lowMm > allowedMm ? 'exceeded' : 'cannot be told';
+  const verdict = highMm <= allowedMm ? 'holds' : lowMm > mostAllowedMm ? 'exceeded' : 'cannot be told';
   return { ...common, lowMm, highMm, verdict };
 }
 

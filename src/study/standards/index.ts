@@ -1,0 +1,1 @@
+export { type StandardsInput, studyStandards } from './studyStandards.js';

@@ -1,0 +1,72 @@
+import { InputError } from '../logs/index.js';
+import {
+  errorByOccupationLength,
+  type SecondVisits,
+  secondVisits,
+  twoVisitLimitMm,
+  visitCorrelation,
+} from '../rule/index.js';
+import { randomStream } from '../stats/index.js';
+import type { RuleInput } from './makeRules.js';
+import type { Results } from './results.js';
+import type { SecondVisitsResult } from './ruleResultTypes.js';
+
+/** Good pairs that lie beyond the limit of their difference: one in a thousand. */
+const ALARM_SHARE = 1 / 1000;
+
+/**
+ * What a second visit on the same day gains, and how errors depend on the number of epochs behind an occupation.
+ * @param weights of a screening, one for each error; null without one
+ */
+export function visitsAndLengths(
+  { errors, models, options }: RuleInput,
+  weights: Float64Array | null,
+  seed: number,
+): Pick<Results, 'secondVisits' | 'errorByOccupationLength'> {
+  const own = weights ?? undefined;
+  return {
+    secondVisits: models.flatMap((model): SecondVisitsResult[] => {
+      // The correlation is that of the parts of root-sum-square.
+      if (model.variance === null) return [];
+      const random = randomStream(seed, `second visits ${model.component}`);
+      const found = possible(() => secondVisits(errors, model, { random, weights: own }));
+      if (found === null) return [];
+      const { dayModel = null } = options.get(model.component)!;
+      return [
+        {
+          ...found,
+          alarmShare: ALARM_SHARE,
+          visits: found.visits.map((visit) => ({
+            ...visit,
+            differenceLimitMm: twoVisitLimitMm(model, dayModel, {
+              firstKm: visit.baselineKm,
+              secondKm: visit.baselineKm,
+              when: 'same-day',
+              bases: 'same',
+              correlation: correlationOf(found, visit),
+              alarmShare: ALARM_SHARE,
+            }),
+          })),
+        },
+      ];
+    }),
+    errorByOccupationLength: models.flatMap(
+      (model) => possible(() => errorByOccupationLength(errors, model, own)) ?? [],
+    ),
+  };
+}
+
+const correlationOf = (
+  { correlation }: SecondVisits,
+  { baselineKm, minutes }: { readonly baselineKm: number; readonly minutes: number },
+): number => (correlation === null ? 0 : visitCorrelation(correlation, baselineKm, minutes));
+
+/** What needs a column that the logs do not have is left out. */
+function possible<T>(make: () => T): T | null {
+  try {
+    return make();
+  } catch (error) {
+    if (!(error instanceof InputError)) throw error;
+    return null;
+  }
+}
