@@ -1,10 +1,51 @@
 import type { Results } from '../study/index.js';
 import type { Cell, ReportTable } from './tables.js';
 
-/** What rules are used for, as tables: jobs from every base, standards, second visits, lengths of occupations. */
+/** What rules are used for, as tables: promises, limits of two bases, jobs from every base, standards, second visits, lengths of occupations. */
 export function outcomeTables(results: Results): ReportTable[] {
-  return [jobTable(results), standardTable(results), visitTable(results), lengthTable(results)];
+  return [
+    promiseTable(results),
+    twoBasesTable(results),
+    jobTable(results),
+    standardTable(results),
+    visitTable(results),
+    lengthTable(results),
+  ];
 }
+
+const promiseTable = ({ promises }: Results): ReportTable => ({
+  name: 'promises',
+  header: [
+    'component',
+    'baselineKm',
+    'share',
+    'dayShare',
+    'confidence',
+    'method',
+    'limitMm',
+    'bestEstimateMm',
+    'reason',
+  ],
+  rows: promises.map((one): Cell[] => [
+    one.component,
+    one.baselineKm,
+    one.share,
+    one.dayShare,
+    one.confidence,
+    one.method,
+    one.limitMm,
+    one.bestEstimateMm,
+    one.reason,
+  ]),
+});
+
+const twoBasesTable = ({ checkShotLimits }: Results): ReportTable => ({
+  name: 'check-shot-two-bases',
+  header: ['component', 'firstKm', 'secondKm', 'limitMm', 'alarmShare'],
+  rows: checkShotLimits.flatMap(({ component, twoBases, alarmShare }) =>
+    twoBases.map((one): Cell[] => [component, one.firstKm, one.secondKm, one.limitMm, alarmShare]),
+  ),
+});
 
 const jobTable = ({ jobs }: Results): ReportTable => ({
   name: 'jobs',

@@ -154,6 +154,10 @@ export function formDoubtOf({ basis, fits, comparison }: ComponentFits): FormDou
   return formDoubt(basis, comparison, other?.model ?? null);
 }
 
+/** Spread of the marks' own errors per axis, mm, that a fit of repeatability does not hold; undefined where it is not known. */
+export const markSigmaOf = ({ basis, markComponent }: ComponentFits): number | undefined =>
+  basis.reference === 'absolute' ? undefined : (markComponent?.sigmaMm.estimate ?? undefined);
+
 /** A fit beside the basis: what the data do not allow is left out, for the basis has told of it. */
 function possibleFits(
   errors: readonly OccupationError[],

@@ -7,6 +7,8 @@ import {
   type FormDoubt,
   type HeightAllowance,
   noRule,
+  type PositionPromise,
+  promiser,
   type Rule,
   type RuleOptions,
   ruleByHour,
@@ -38,6 +40,10 @@ export interface RuleInput {
   /** The site that vertical rules are for, where one is stated. */
   readonly height: HeightAllowance | undefined;
   readonly wrongFixes: WrongFixes | null;
+  /** Spread of the marks' own errors per axis, mm, where the fit does not hold it. */
+  readonly markSigmaMm: ReadonlyMap<Component, number | undefined>;
+  /** F10.7 by day, where the sky is known. */
+  readonly f107: ReadonlyMap<string, number>;
   /** What the rules of each component stand on beside the errors. */
   readonly options: ReadonlyMap<Component, RuleOptions>;
 }
@@ -48,10 +54,17 @@ export interface RuleInput {
  */
 export function makeRules(
   input: RuleInput,
-  { tolerances, specSheet }: Study,
+  { tolerances, specSheet, checkShots }: Study,
 ): Pick<
   Results,
-  'rules' | 'ruleTable' | 'rulesByHour' | 'rulesBySeason' | 'specSheetTest' | 'checkShotLimits' | 'watch'
+  | 'rules'
+  | 'ruleTable'
+  | 'promises'
+  | 'rulesByHour'
+  | 'rulesBySeason'
+  | 'specSheetTest'
+  | 'checkShotLimits'
+  | 'watch'
 > {
   const { used, models, wrongFixes, options } = input;
   const dayModel = (component: Component) => options.get(component)!.dayModel ?? null;
@@ -77,7 +90,14 @@ export function makeRules(
         : models.map((model) =>
             testSpecSheet(used, model, specSheet, { dayModel: dayModel(model.component) }),
           ),
-    checkShotLimits: models.map((model) => checkShotLimits(model, dayModel(model.component))),
+    promises: models.flatMap((model) => promisesOf(used, model, options.get(model.component)!)),
+    checkShotLimits: models.map((model) =>
+      checkShotLimits(model, dayModel(model.component), {
+        ...checkShots,
+        markSigmaMm: input.markSigmaMm.get(model.component),
+        baseSigmaMm: options.get(model.component)!.baseSigmaMm,
+      }),
+    ),
     watch: models.map((model) => ({
       component: model.component,
       ...watchBasis(model, dayModel(model.component)),
@@ -97,6 +117,17 @@ export function toleranceRules(
     (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
   );
 }
+
+const PROMISED_KM = [0.5, 1, 2, 5, 10, 15, 20];
+const PROMISED_SHARES = [0.68, 0.95, 0.99];
+
+/** The question of a rule turned round: what can be promised at some lengths. */
+const promisesOf = (
+  used: readonly OccupationError[],
+  model: ErrorModel,
+  options: RuleOptions,
+): PositionPromise[] =>
+  PROMISED_SHARES.flatMap((share) => PROMISED_KM.map(promiser(used, model, { ...options, share })));
 
 /** What a rule of some hours or months keeps. */
 const short = ({ component, limitMm, share, maximumBaselineKm, bestEstimateKm, reason }: Rule): PartRule => ({
@@ -127,6 +158,7 @@ function ruleOptions(model: ErrorModel, input: Omit<RuleInput, 'options'>): Rule
     crowdedDaysKept: screening === null ? null : crowdedDaysKept(errors, model, screening),
     formDoubt: input.doubts.get(model.component),
     visits,
+    f107: input.f107,
     height: model.component === 'vertical' ? input.height : undefined,
     ...usedBaseErrors(model.component, input),
   };

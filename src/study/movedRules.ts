@@ -46,6 +46,7 @@ function optionsOf({ errors, rows, weights, model }: RuleGroundwork, input: Rule
     // Which form it is does not turn on one mark, day or crew.
     formDoubt: isOwnForm(model, input) ? input.doubts.get(model.component) : null,
     visits: input.visits,
+    f107: input.f107,
     height: model.component === 'vertical' ? input.height : undefined,
     ...usedBaseErrors(model.component, input),
   };

@@ -74,6 +74,7 @@ export async function readStudy(path: string): Promise<Study> {
     specSheet: settings.specSheet === undefined ? null : specSheet(settings.specSheet),
     siteHeightDifferenceM: settings.site?.heightDifferenceM ?? null,
     jobs: jobs.map((job, k) => ({ ...job, changes: from.jobs[k]!, limitMm: jobLimitMm(settings.jobs[k]!) })),
+    checkShots: settings.checkShots,
     standards: [...new Set(settings.standards)],
     fieldTests: settings.fieldTests,
     centringSigmaMm: settings.centringSigmaMm,

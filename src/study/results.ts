@@ -4,6 +4,7 @@ import type { LogResolution, Message, OccupationReason, ReasonCount, RowReason }
 import type {
   CheckShotLimits,
   OccupationLengthRow,
+  PositionPromise,
   Rule,
   RuleTableRow,
   SpecSheet,
@@ -133,6 +134,8 @@ export interface Results extends StatedStudy, RuleOutcomes {
   readonly sky: Sky | null;
   readonly rules: readonly Rule[];
   readonly ruleTable: readonly RuleTableRow[];
+  /** What can be promised at some lengths, on 90 % of the days. */
+  readonly promises: readonly PositionPromise[];
   readonly rulesByHour: readonly HourRule[];
   readonly rulesBySeason: readonly SeasonRule[];
   readonly backTest: readonly BackTestResult[];

@@ -7,7 +7,15 @@ import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
 import type { Results } from './results.js';
 import { ruleOutcomes } from './ruleOutcomeSchemas.js';
-import { checkShotLimits, hourRule, rule, ruleTableRow, seasonRule, specSheetTest } from './ruleSchema.js';
+import {
+  checkShotLimits,
+  hourRule,
+  promise,
+  rule,
+  ruleTableRow,
+  seasonRule,
+  specSheetTest,
+} from './ruleSchema.js';
 import { count, day, form, interval, nullable } from './schemaParts.js';
 import { skySchema } from './skySchema.js';
 import { statedStudy } from './statedStudySchema.js';
@@ -91,6 +99,7 @@ export const resultsSchema = z.strictObject({
   rules: z.array(rule),
   ...ruleOutcomes,
   ruleTable: z.array(ruleTableRow),
+  promises: z.array(promise).describe('What can be promised at some lengths.'),
   rulesByHour: z.array(hourRule),
   rulesBySeason: z.array(seasonRule),
   backTest: z.array(backTest),

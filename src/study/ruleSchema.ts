@@ -59,6 +59,18 @@ export const ruleTableRow = z.strictObject({
   allDaysKm: nullable,
 });
 
+export const promise = z.strictObject({
+  component,
+  baselineKm: z.number(),
+  share: z.number(),
+  dayShare: z.number(),
+  confidence: z.number(),
+  method: z.enum(['day-model', 'pooled']),
+  limitMm: nullable.describe('Upper confidence limit; null with a reason.'),
+  bestEstimateMm: nullable,
+  reason: z.string().nullable(),
+});
+
 export const hourRule = z.strictObject({ ...tableKeys, hours: z.string().describe('Solar time.') });
 export const seasonRule = z.strictObject({ ...tableKeys, month: z.string() });
 
@@ -102,6 +114,7 @@ export const checkShotLimits = z.strictObject({
       twoBasesMm: z.number(),
     }),
   ),
+  twoBases: z.array(z.strictObject({ firstKm: z.number(), secondKm: z.number(), limitMm: z.number() })),
   reason: z.string().nullable(),
   sentence: z.string(),
 });

@@ -70,6 +70,24 @@ export const ruleKeys = {
     .array(job)
     .default([])
     .describe('Files of job points (point, coordinates, limitMm where wanted): which base reaches which.'),
+  checkShots: z
+    .strictObject({
+      falseAlarmsPerYear: z
+        .number()
+        .positive()
+        .default(1)
+        .describe('False alarms that a crew accepts in a year; default 1.'),
+      checksPerYear: z
+        .number()
+        .positive()
+        .default(1000)
+        .describe('Check shots of a crew in a year; default 1000.'),
+    })
+    .refine(({ falseAlarmsPerYear, checksPerYear }) => falseAlarmsPerYear < checksPerYear, {
+      message: 'fewer false alarms than check shots',
+    })
+    .default({ falseAlarmsPerYear: 1, checksPerYear: 1000 })
+    .describe('How often limits of check shots may alarm for nothing.'),
   standards: z
     .array(z.enum(STANDARDS))
     .default([])

@@ -14,7 +14,7 @@ import type { Rule } from '../rule/index.js';
 import { adjustmentWeights } from './adjustmentWeights.js';
 import { causeMessages } from './causeMessages.js';
 import { studyEvidence } from './evidence.js';
-import { fitComponents, formDoubtOf } from './fitComponents.js';
+import { fitComponents, formDoubtOf, markSigmaOf } from './fitComponents.js';
 import { fitResults, markResults } from './fitResults.js';
 import { dayResults, type JudgedDays, judgeDays } from './judgeDays.js';
 import { leaveOutDays } from './leaveOutDays.js';
@@ -29,7 +29,7 @@ import { siteHeight } from './siteHeight.js';
 import { studyStandards } from './standards/index.js';
 import type { Study } from './study.js';
 import { planJobs, readJobs, type StudyJob } from './studyJobs.js';
-import { studySky } from './studySky.js';
+import { f107OfDays, studySky } from './studySky.js';
 import { summarizeRun } from './summarizeRun.js';
 import { testRules } from './testRules.js';
 import { visitsAndLengths } from './visitsAndLengths.js';
@@ -126,6 +126,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const judged = judgeDays(errors, weights, read.visits, components, study);
   const evidence = studyEvidence(errors, weights, components, study);
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
+  const sky = await studySky(study, read, dayResults(judged).dailyFactors);
   const site = siteHeight(used, evidence.results.terms, study);
   const ground = withRuleOptions({
     errors,
@@ -136,16 +137,15 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     doubts: new Map(components.map((each) => [each.component, formDoubtOf(each)])),
     days: judged,
     height: site.height,
+    markSigmaMm: new Map(components.map((each) => [each.component, markSigmaOf(each)])),
+    f107: f107OfDays(sky.sky),
     wrongFixes,
   });
   const made = makeRules(ground, study);
   const tested = testRules(ground, study);
   const planned = planJobs(read.jobs, ground, study);
   const fitted = fitResults(components, errors, wrongFixes, judged);
-  const { withLeftOut, control } = read;
-  const leftOut =
-    withLeftOut === null ? null : withLeftOutDays({ ...withLeftOut, control, height: site.height }, study);
-  const sky = await studySky(study, read, dayResults(judged).dailyFactors);
+  const leftOut = read.withLeftOut === null ? null : withLeftOutDays(read.withLeftOut, ground, study);
   const results: Results = {
     ...read.results,
     messages: [

@@ -65,6 +65,8 @@ export interface Study {
   readonly specSheet: SpecSheet | null;
   /** Site minus base, m, of the site that vertical rules are for; null without one. */
   readonly siteHeightDifferenceM: number | null;
+  /** How often limits of check shots may alarm for nothing. */
+  readonly checkShots: { readonly falseAlarmsPerYear: number; readonly checksPerYear: number };
   readonly jobs: readonly JobFile[];
   readonly standards: readonly StandardName[];
   readonly fieldTests: readonly FieldTestSettings[];

@@ -17,7 +17,7 @@ export interface ReadStudy {
 
 /**
  * The sky over a study out of its index and map files; null, with the reason in a message, where there are none or none
- * can be read. Nothing else of a run depends on it.
+ * can be read. Of the other results only the conditions of rules name something of it.
  * @param factors of both components; empty where days cannot be judged
  */
 export async function studySky(
@@ -51,6 +51,10 @@ export async function studySky(
     messages: [...told, ...joined, ...(unreached === null ? [] : [unreached]), ...rest],
   };
 }
+
+/** Solar radio flux of the days of which it is known. */
+export const f107OfDays = (sky: Sky | null): Map<string, number> =>
+  new Map(sky?.days.flatMap(({ day, f107 }) => (f107 === null ? [] : [[day, f107]])));
 
 /** The base with the most occupations, of several the first by name; null without occupations. */
 function usualBase(errors: readonly OccupationError[]): string | null {

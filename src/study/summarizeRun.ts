@@ -88,6 +88,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     ruleMoves: [],
     adjustmentWeights: [],
     ruleTable: [],
+    promises: [],
     rulesByHour: [],
     rulesBySeason: [],
     backTest: [],

@@ -2,7 +2,7 @@ import type { EstimateWithLimits } from '../fit/index.js';
 import { type Message, message } from '../logs/index.js';
 import type { Rule } from '../rule/index.js';
 import type { LeftOutDays } from './dayResultTypes.js';
-import { fitComponents, formDoubtOf } from './fitComponents.js';
+import { fitComponents, formDoubtOf, markSigmaOf } from './fitComponents.js';
 import { dayModelOfFit, ppmInterval } from './judgeDays.js';
 import { type RuleInput, toleranceRules, withRuleOptions } from './makeRules.js';
 import type { Results } from './results.js';
@@ -12,10 +12,12 @@ import type { Study } from './study.js';
 /**
  * Screens, fits and makes the rules a second time with the days that the study file leaves out, so that both results can
  * be shown.
- * @param whole errors and visits before days were left out; the height allowance is that of the rules beside them
+ * @param whole errors and visits before days were left out
+ * @param ground the rules beside these: what has nothing to do with days is taken from there
  */
 export function withLeftOutDays(
-  { errors, visits, control, height }: Pick<RuleInput, 'errors' | 'visits' | 'control' | 'height'>,
+  { errors, visits }: Pick<RuleInput, 'errors' | 'visits'>,
+  ground: RuleInput,
   study: Study,
 ): LeftOutDays {
   const named = new Set(study.leaveOutDays);
@@ -26,9 +28,18 @@ export function withLeftOutDays(
   const models = components.map(({ basis }) => basis);
   const days = models.flatMap((model) => dayModelOfFit(errors, weights, model));
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
-  const doubts = new Map(components.map((each) => [each.component, formDoubtOf(each)]));
-  const ground = withRuleOptions({ errors, used, visits, control, models, doubts, days, height, wrongFixes });
-  const rules = toleranceRules(ground, study);
+  const again = withRuleOptions({
+    ...ground,
+    errors,
+    used,
+    visits,
+    models,
+    doubts: new Map(components.map((each) => [each.component, formDoubtOf(each)])),
+    days,
+    markSigmaMm: new Map(components.map((each) => [each.component, markSigmaOf(each)])),
+    wrongFixes,
+  });
+  const rules = toleranceRules(again, study);
   return {
     days: [...new Set(left.map(({ day }) => day))].sort(),
     occupations: left.length,

@@ -1,10 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { type CampaignOptions, simulateErrors } from '../../src/campaign/index.js';
 import { dayModel, dayModelOf, dayQuantilePpm } from '../../src/days/index.js';
-import { estimateVariance, fitErrorModel, fitTerms, type WrongFixGrowth } from '../../src/fit/index.js';
+import { estimateVariance, fitErrorModel, fitTerms, sigmaAtMm, type WrongFixGrowth } from '../../src/fit/index.js';
 import {
   crowdedDaysKept,
   daysNeeded,
+  findFormDoubt,
+  formDoubt,
   goodDayShareLimit,
   heightAllowance,
   lengthWithin,
@@ -89,6 +91,52 @@ describe('a rule of days', () => {
       maximumBaselineKm: 0,
       reason: expect.stringContaining("come from the base's coordinates"),
     });
+  });
+  it('takes the ppm of an assumed base coordinate off the limit in full', () => {
+    // Common practice: metres / 20. 5 m are 0.25 ppm, 2.5 mm at 10 km, the same on all positions.
+    const stated = rule(25, {}, { basePpm: 0.25 });
+    const plain = rule(25);
+    expect(stated.maximumBaselineKm!).toBeLessThan(plain.maximumBaselineKm!);
+    const at = stated.maximumBaselineKm!;
+    expect(rule(25 - 0.25 * at).maximumBaselineKm!).toBeCloseTo(at, 6);
+    expect(stated.conditions.basePpm).toBe(0.25);
+    expect(plain.conditions.basePpm).toBeNull();
+    expect(stated.remarks.join(' ')).toContain('the 0.25 ppm that its error adds to every baseline');
+    expect(stated.remarks.join(' ')).not.toContain('was not stated');
+    // What can be promised grows by just that much, and a rare share too.
+    for (const share of [0.95, 0.99]) {
+      const options = { dayModel: days, share };
+      const [without, withIt] = [{}, { basePpm: 0.25 }].map(
+        (more) => promiseAtKm(rows, model, 8, { ...options, ...more }).limitMm!,
+      );
+      expect(withIt! - without!).toBeCloseTo(0.25 * 8, 3);
+    }
+    const cell = ruleTable(rows, model, { dayModel: days, basePpm: 0.25, limitsMm: [25], shares: [0.95] })[0]!;
+    expect(cell.maximumBaselineKm).toBe(at);
+  });
+  it('counts the larger spread of both forms where they cannot be told apart', () => {
+    const linear = fitErrorModel(rows, { component: 'horizontal', form: 'linear-sum' });
+    expect(formDoubt(model, { verdict: 'root-sum-square' }, linear)).toBeNull();
+    expect(formDoubt(model, { verdict: 'linear-sum' }, null)).toBeNull();
+    const doubt = formDoubt(model, { verdict: 'cannot be told apart' }, linear)!;
+    for (const km of [0.5, 2, 8, 15, 40]) {
+      const [own, other] = [sigmaAtMm(model, km), sigmaAtMm(linear, km)];
+      expect(doubt.ratioAt(km)).toBeCloseTo(own / Math.max(own, other), 12);
+    }
+    const doubted = rule(30, {}, { formDoubt: doubt });
+    expect(doubted.maximumBaselineKm!).toBeLessThan(rule(30).maximumBaselineKm!);
+    expect(doubted.remarks.join(' ')).toContain('at each length the larger spread of both counts');
+    const promised = (more: RuleOptions) => promiseAtKm(rows, model, 8, { dayModel: days, ...more }).limitMm!;
+    expect(promised({ formDoubt: doubt }) / promised({})).toBeCloseTo(1 / doubt.ratioAt(8), 9);
+    // Errors made to follow the linear sum are never preferred as root-sum-square here, and so in doubt.
+    const grown = rows.map((row) => {
+      const along = 0.778 * row.dayFactor * row.baselineKm;
+      const factor = (7.78 + along) / Math.hypot(7.78, along);
+      return { ...row, east: factor * row.east, north: factor * row.north };
+    });
+    const found = findFormDoubt(grown, fitErrorModel(grown, { component: 'horizontal' }));
+    expect(found).toMatchObject({ other: 'linear-sum' });
+    expect(found!.ratioAt(8)).toBeLessThan(1);
   });
   it('states its conditions, and is to be looked at again after a year', () => {
     const { conditions } = rule(

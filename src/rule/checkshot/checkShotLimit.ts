@@ -29,6 +29,13 @@ export interface CheckShotLimit {
   readonly twoBasesMm: number;
 }
 
+/** How far two shots of one point on one day, from two bases, may lie apart. */
+export interface TwoBasesLimit {
+  readonly firstKm: number;
+  readonly secondKm: number;
+  readonly limitMm: number;
+}
+
 export interface CheckShotLimits {
   readonly component: Component;
   /** Share of good shots that lie beyond the limit. */
@@ -36,6 +43,8 @@ export interface CheckShotLimits {
   readonly falseAlarmsPerYear: number;
   readonly checksPerYear: number;
   readonly limits: readonly CheckShotLimit[];
+  /** From two bases at different distances: every two lengths of the table. */
+  readonly twoBases: readonly TwoBasesLimit[];
   /** Why there are no limits; null otherwise. */
   readonly reason: string | null;
   readonly sentence: string;
@@ -73,7 +82,7 @@ export function checkShotLimits(
   const common = { component, alarmShare, falseAlarmsPerYear, checksPerYear };
   const reason = whyNoLimit(model, dayModel);
   if (reason !== null) {
-    return { ...common, limits: [], reason, sentence: `There is no check-shot limit: ${reason}.` };
+    return { ...common, limits: [], twoBases: [], reason, sentence: `There is no check-shot limit: ${reason}.` };
   }
   const days = predictedDays(component, dayModel!.posterior!);
   const axes = axesOf(component);
@@ -90,9 +99,21 @@ export function checkShotLimits(
       twoBasesMm: limitOf(component, plus(2 * baseSigmaMm ** 2, 2), alarmShare),
     };
   });
+  const twoBases = lengthsKm.flatMap((firstKm, k) =>
+    lengthsKm.slice(k + 1).map((secondKm): TwoBasesLimit => {
+      const [first, second] = [varianceAt(days, firstKm), varianceAt(days, secondKm)];
+      const variances = first.map((variance, j) => variance + second[j]! + 2 * axes * baseSigmaMm ** 2);
+      return {
+        firstKm,
+        secondKm,
+        limitMm: limitOf(component, { variances, weights: days.weights }, alarmShare),
+      };
+    }),
+  );
   return {
     ...common,
     limits,
+    twoBases,
     reason: null,
     sentence: `With ${checksPerYear} check shots a year a good crew is alarmed about ${perYear(falseAlarmsPerYear)} in the ${component} component${bothComponents ? ' or the other one' : ''}, at most four times as often where disturbed days occur.`,
   };

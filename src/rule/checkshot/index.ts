@@ -3,6 +3,7 @@ export {
   type CheckShotLimits,
   type CheckShotOptions,
   checkShotLimits,
+  type TwoBasesLimit,
   type TwoVisitOptions,
   twoVisitLimitMm,
 } from './checkShotLimit.js';
