@@ -18,18 +18,22 @@ export function jobPlan({ bases, points }: Pick<JobResult, 'bases' | 'points'>):
     return { eastKm: eastM / 1000, northKm: northM / 1000 };
   };
   return [
-    ...bases.map((base): JobPlacePoint => ({
-      name: base.base,
-      kind: 'base',
-      ...plan(base),
-      reachKm: base.maximumBaselineKm,
-    })),
-    ...points.map((point): JobPlacePoint => ({
-      name: point.point,
-      kind: point.needsAnotherBase ? 'not reached' : 'reached',
-      ...plan(point),
-      reachKm: null,
-    })),
+    ...bases.map(
+      (base): JobPlacePoint => ({
+        name: base.base,
+        kind: 'base',
+        ...plan(base),
+        reachKm: base.maximumBaselineKm,
+      }),
+    ),
+    ...points.map(
+      (point): JobPlacePoint => ({
+        name: point.point,
+        kind: point.needsAnotherBase ? 'not reached' : 'reached',
+        ...plan(point),
+        reachKm: null,
+      }),
+    ),
   ];
 }
 

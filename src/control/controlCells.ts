@@ -47,10 +47,7 @@ export class ControlCells {
   ) {}
 
   /** @throws InputError when the header is not understood */
-  static async read(
-    control: ControlFile,
-    nameRole: 'mark' | 'base' | 'pointNumber',
-  ): Promise<ControlCells> {
+  static async read(control: ControlFile, nameRole: 'mark' | 'base' | 'pointNumber'): Promise<ControlCells> {
     const { path, file, columns, coordinates, heightOf, changes } = control;
     const { roles, together } = coordinateColumns(coordinates, changes);
     if (nameRole === 'pointNumber') {

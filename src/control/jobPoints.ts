@@ -33,7 +33,11 @@ export async function readJobPoints(
     }
     const limitMm = row.number('limitMm');
     if (limitMm <= 0) {
-      row.report('out-of-range', `Expected a limit above 0 mm, came ${limitMm}. Correct the cell.`, 'limitMm');
+      row.report(
+        'out-of-range',
+        `Expected a limit above 0 mm, came ${limitMm}. Correct the cell.`,
+        'limitMm',
+      );
     }
     const place = row.place()?.place;
     if (place === undefined || row.faulty()) continue;
@@ -54,7 +58,9 @@ export async function readJobPoints(
   const all = [...cells.errors, ...errors];
   if (all.length > 0) throw new InputError(all.sort((a, b) => a.row! - b.row!));
   if (points.length === 0) {
-    throw inputError('no-points', 'Expected at least one point of a job, came none. Add a row for each.', { file });
+    throw inputError('no-points', 'Expected at least one point of a job, came none. Add a row for each.', {
+      file,
+    });
   }
   return { points, messages: [...cells.messages] };
 }

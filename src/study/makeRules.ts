@@ -34,9 +34,9 @@ export interface RuleInput {
   readonly visits: readonly Visit[];
   readonly control: Control;
   readonly models: readonly ErrorModel[];
-  readonly days: readonly Pick<JudgedDays, 'component' | 'model'>[];
   /** The form that cannot be told from that of a model. */
   readonly doubts: ReadonlyMap<Component, FormDoubt | null>;
+  readonly days: readonly Pick<JudgedDays, 'component' | 'model'>[];
   /** The site that vertical rules are for, where one is stated. */
   readonly height: HeightAllowance | undefined;
   readonly wrongFixes: WrongFixes | null;
@@ -67,6 +67,9 @@ export function makeRules(
   | 'watch'
 > {
   const { used, models, wrongFixes, options } = input;
+  const finders = new Map(
+    models.map((model) => [model.component, ruleFinder(used, model, options.get(model.component)!)]),
+  );
   const dayModel = (component: Component) => options.get(component)!.dayModel ?? null;
   const usedWeights = wrongFixes?.weights?.filter((weight) => weight >= 0.5);
   const grouped = (make: typeof ruleByHour): (PartRule & { readonly group: string })[] =>
@@ -80,7 +83,9 @@ export function makeRules(
       }));
     });
   return {
-    rules: toleranceRules(input, { tolerances }),
+    rules: tolerances.map(
+      (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
+    ),
     ruleTable: models.flatMap((model) => ruleTable(used, model, options.get(model.component)!)),
     rulesByHour: grouped(ruleByHour).map(({ group, ...rule }) => ({ hours: group, ...rule })),
     rulesBySeason: grouped(ruleBySeason).map(({ group, ...rule }) => ({ month: group, ...rule })),
@@ -105,19 +110,6 @@ export function makeRules(
   };
 }
 
-/** The rules of the study's tolerances, in their order, and nothing else. */
-export function toleranceRules(
-  { used, models, options }: RuleInput,
-  { tolerances }: Pick<Study, 'tolerances'>,
-): Rule[] {
-  const finders = new Map(
-    models.map((model) => [model.component, ruleFinder(used, model, options.get(model.component)!)]),
-  );
-  return tolerances.map(
-    (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
-  );
-}
-
 const PROMISED_KM = [0.5, 1, 2, 5, 10, 15, 20];
 const PROMISED_SHARES = [0.68, 0.95, 0.99];
 
@@ -128,6 +120,20 @@ const promisesOf = (
   options: RuleOptions,
 ): PositionPromise[] =>
   PROMISED_SHARES.flatMap((share) => PROMISED_KM.map(promiser(used, model, { ...options, share })));
+
+/** The rules of the study's tolerances, in their order, and nothing else. */
+export function toleranceRules(
+  input: Omit<RuleInput, 'options'>,
+  { tolerances }: Pick<Study, 'tolerances'>,
+): Rule[] {
+  const { used, models } = input;
+  const finders = new Map(
+    models.map((model) => [model.component, ruleFinder(used, model, ruleOptions(model, input))]),
+  );
+  return tolerances.map(
+    (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
+  );
+}
 
 /** What a rule of some hours or months keeps. */
 const short = ({ component, limitMm, share, maximumBaselineKm, bestEstimateKm, reason }: Rule): PartRule => ({

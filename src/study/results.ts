@@ -142,12 +142,12 @@ export interface Results extends StatedStudy, RuleOutcomes {
   readonly specSheetTest: readonly SpecSheetTest[];
   readonly checkShotLimits: readonly CheckShotLimits[];
   readonly watch: readonly WatchResult[];
-  /** The days left out by the study file, and the results with them; null where none is. */
-  readonly leftOut: LeftOutDays | null;
   readonly jobs: readonly JobResult[];
   readonly standards: readonly StandardResult[];
   readonly secondVisits: readonly SecondVisitsResult[];
   readonly errorByOccupationLength: readonly OccupationLengthRow[];
+  /** The days left out by the study file, and the results with them; null where none is. */
+  readonly leftOut: LeftOutDays | null;
   /** The spec sheet as stated. */
   readonly specSheet: SpecSheet | null;
 }

@@ -106,11 +106,11 @@ export const resultsSchema = z.strictObject({
   specSheetTest: z.array(specSheetTest),
   checkShotLimits: z.array(checkShotLimits),
   watch: z.array(watch),
-  leftOut: leftOut.nullable().describe('The days left out by the study file, and the results with them.'),
   jobs: z.array(job).describe('Points of jobs: which base reaches which.'),
   standards: z.array(standard).describe('From memory: the printed standards decide.'),
   secondVisits: z.array(secondVisit),
   errorByOccupationLength: z.array(occupationLength),
+  leftOut: leftOut.nullable().describe('The days left out by the study file, and the results with them.'),
   specSheet: z
     .strictObject({
       horizontal: constantAndPpm,

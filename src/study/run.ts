@@ -48,12 +48,12 @@ export interface StudyErrors {
   readonly errors: readonly OccupationError[];
   readonly setAside: readonly SetAsideOccupation[];
   readonly visits: readonly Visit[];
+  readonly jobs: readonly StudyJob[];
   /** The same errors and visits with the days that the study file leaves out; null when it leaves out none of them. */
   readonly withLeftOut: {
     readonly errors: readonly OccupationError[];
     readonly visits: readonly Visit[];
   } | null;
-  readonly jobs: readonly StudyJob[];
   /** Results without fits and rules. */
   readonly results: Results;
 }
@@ -145,7 +145,8 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const tested = testRules(ground, study);
   const planned = planJobs(read.jobs, ground, study);
   const fitted = fitResults(components, errors, wrongFixes, judged);
-  const leftOut = read.withLeftOut === null ? null : withLeftOutDays(read.withLeftOut, ground, study);
+  const { withLeftOut } = read;
+  const leftOut = withLeftOut === null ? null : withLeftOutDays(withLeftOut, ground, study);
   const results: Results = {
     ...read.results,
     messages: [

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { type ControlFile, readJobPoints } from '../../src/control/index.js';
-import { InputError } from '../../src/logs/index.js';
+import type { InputError } from '../../src/logs/index.js';
 import { testFolder } from '../files.js';
 
 const folder = testFolder();
@@ -43,7 +43,9 @@ describe('points of a job', () => {
   });
   it('are refused with every fault at its row', async () => {
     expect(
-      await faults('point,latitude,longitude,limitMm\nA,44,-18,-3\n,44,-18,\nB,,,\nC,x,-18,\nD,44,-18,\nD,44,-18,\n'),
+      await faults(
+        'point,latitude,longitude,limitMm\nA,44,-18,-3\n,44,-18,\nB,,,\nC,x,-18,\nD,44,-18,\nD,44,-18,\n',
+      ),
     ).toEqual([
       '2: Expected a limit above 0 mm, came -3. Correct the cell.',
       '3: Expected the name of a point, came a blank cell. Fill it in.',

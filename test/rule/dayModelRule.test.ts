@@ -1,7 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { type CampaignOptions, simulateErrors } from '../../src/campaign/index.js';
 import { dayModel, dayModelOf, dayQuantilePpm } from '../../src/days/index.js';
-import { estimateVariance, fitErrorModel, fitTerms, sigmaAtMm, type WrongFixGrowth } from '../../src/fit/index.js';
+import {
+  estimateVariance,
+  fitErrorModel,
+  fitTerms,
+  sigmaAtMm,
+  type WrongFixGrowth,
+} from '../../src/fit/index.js';
 import {
   crowdedDaysKept,
   daysNeeded,
@@ -111,7 +117,12 @@ describe('a rule of days', () => {
       );
       expect(withIt! - without!).toBeCloseTo(0.25 * 8, 3);
     }
-    const cell = ruleTable(rows, model, { dayModel: days, basePpm: 0.25, limitsMm: [25], shares: [0.95] })[0]!;
+    const cell = ruleTable(rows, model, {
+      dayModel: days,
+      basePpm: 0.25,
+      limitsMm: [25],
+      shares: [0.95],
+    })[0]!;
     expect(cell.maximumBaselineKm).toBe(at);
   });
   it('counts the larger spread of both forms where they cannot be told apart', () => {
@@ -297,6 +308,12 @@ it('a site far above its base has a shorter vertical rule', () => {
   const steep = maximumBaseline(high, fit, asked, { ...ground, height: heightAllowance(terms, 150) });
   expect(steep.maximumBaselineKm!).toBeLessThan(level.maximumBaselineKm!);
   expect(steep.conditions.heightDifferenceM).toBe(150);
+  const beyond = { ...ground, height: heightAllowance(terms, -950, 400) };
+  expect(maximumBaseline(high, fit, asked, beyond)).toMatchObject({
+    maximumBaselineKm: null,
+    reason:
+      'the site lies 950 m above or below its base and the shots at most 400 m: add marks at such height differences',
+  });
   expect(() => heightAllowance({ ...terms, terms: [] }, 100)).toThrow(
     'upper limit of the height-difference term',
   );

@@ -58,11 +58,17 @@ describe('a field test among check shots', () => {
     expect(sets[0]!.distanceErrorMm).toBeCloseTo(0, 1);
   });
   it('is full with three series 90 minutes apart, and else simplified ones', () => {
-    const full = findFieldTests([0, 120, 240].flatMap((at) => series(at)), placeOf).tests;
+    const full = findFieldTests(
+      [0, 120, 240].flatMap((at) => series(at)),
+      placeOf,
+    ).tests;
     expect(full.map(({ sets }) => sets.map(({ series: k }) => k))).toEqual([
       [1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 3, 3, 3, 3, 3],
     ]);
-    const near = findFieldTests([0, 60, 120].flatMap((at) => series(at)), placeOf).tests;
+    const near = findFieldTests(
+      [0, 60, 120].flatMap((at) => series(at)),
+      placeOf,
+    ).tests;
     expect(near.map(({ sets }) => sets.length)).toEqual([5, 5, 5]);
     const rovers = [0, 120, 240].flatMap((at, k) => series(at, 5, { rover: `R${k}` }));
     expect(findFieldTests(rovers, placeOf).tests).toHaveLength(3);
@@ -76,13 +82,21 @@ describe('a field test among check shots', () => {
     expect(findFieldTests(ordinary, placeOf)).toEqual({ tests: [], incomplete: [] });
     const far = series(0).map((each) => ({ ...each, mark: each.mark === 'B' ? 'FAR' : each.mark }));
     expect(findFieldTests(far, placeOf).tests).toEqual([]);
-    expect(findFieldTests(series(0).map((each) => ({ ...each, up: Number.NaN })), placeOf).tests).toEqual([]);
+    expect(
+      findFieldTests(
+        series(0).map((each) => ({ ...each, up: Number.NaN })),
+        placeOf,
+      ).tests,
+    ).toEqual([]);
   });
   it('that misses sets is told, and one that is named may be in any order and at any distance', () => {
     const { tests, incomplete } = findFieldTests(series(0, 4), placeOf);
     expect(tests).toEqual([]);
     expect(incomplete.map(({ sets }) => sets.length)).toEqual([4]);
-    const shots = [shot('A', -3), ...series(0).map((each) => ({ ...each, mark: each.mark === 'A' ? 'FAR' : 'A' }))];
+    const shots = [
+      shot('A', -3),
+      ...series(0).map((each) => ({ ...each, mark: each.mark === 'A' ? 'FAR' : 'A' })),
+    ];
     const named = { marks: ['FAR', 'A'] as const, day: '2025-03-14' };
     const [found] = findFieldTests(shots, placeOf, named).tests;
     expect(found!.series[0]).toMatchObject({ marks: ['FAR', 'A'] });

@@ -1,7 +1,7 @@
 import type { DayModel } from '../../days/index.js';
 import type { Screening } from '../../fit/index.js';
-import type { HeightAllowance } from '../ground.js';
 import type { FormDoubt } from '../formDoubt.js';
+import type { HeightAllowance } from '../ground.js';
 import type { SpecSheet } from '../specSheet.js';
 import type { Tolerance } from '../tolerance.js';
 

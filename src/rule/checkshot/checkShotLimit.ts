@@ -82,7 +82,13 @@ export function checkShotLimits(
   const common = { component, alarmShare, falseAlarmsPerYear, checksPerYear };
   const reason = whyNoLimit(model, dayModel);
   if (reason !== null) {
-    return { ...common, limits: [], twoBases: [], reason, sentence: `There is no check-shot limit: ${reason}.` };
+    return {
+      ...common,
+      limits: [],
+      twoBases: [],
+      reason,
+      sentence: `There is no check-shot limit: ${reason}.`,
+    };
   }
   const days = predictedDays(component, dayModel!.posterior!);
   const axes = axesOf(component);

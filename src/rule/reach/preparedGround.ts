@@ -57,10 +57,14 @@ export function prepareGround(
 
 /** The same ground with other nodes of the days. */
 export function preparedDays(
-  { model, ground, shares, added, left, height }: Pick<
-    PreparedGround,
-    'model' | 'ground' | 'shares' | 'added' | 'left' | 'height'
-  >,
+  {
+    model,
+    ground,
+    shares,
+    added,
+    left,
+    height,
+  }: Pick<PreparedGround, 'model' | 'ground' | 'shares' | 'added' | 'left' | 'height'>,
   days: DayNodes | null,
 ): PreparedGround {
   const remembered = new Map<number, DayLimits>();
