@@ -377,6 +377,7 @@ export {
   type AdjustmentWeight,
   type ConstantAndPpm,
   type ControlMark,
+  type InputFile,
   type JobFile,
   type JobResult,
   type ReaderUnit,
@@ -399,6 +400,7 @@ export {
   type SkyOutcome,
   type SkyPoint,
   type SkyThreshold,
+  type StatedSetting,
   type Study,
   type StudyErrors,
   type StudyJob,
@@ -406,5 +408,6 @@ export {
   skyOfDays,
   skyPoints,
   studyJsonSchema,
+  type WrongFixes,
 } from './study/index.js';
 export { equationOfTimeMinutes, LEAP_SECONDS_KNOWN_UNTIL, solarHour } from './time/index.js';

@@ -1,5 +1,5 @@
 import type { ErrorsInput } from '../errors/index.js';
-import type { ErrorModel } from '../fit/index.js';
+import type { ErrorModel, EstimateWithLimits } from '../fit/index.js';
 import { inputError } from '../logs/index.js';
 import type { Rule, SpecSheet, Tolerance } from '../rule/index.js';
 import type { SummaryRow } from '../split/index.js';
@@ -29,6 +29,8 @@ export interface ErrorByBaselineInput {
   /** The errors to which the model was fitted; mm, km. */
   readonly errors: ErrorsInput;
   readonly model: ErrorModel;
+  /** The ppm to be stated with its limits, such as those widened for days to come; default that of the model. */
+  readonly ppm?: EstimateWithLimits | undefined;
   /** Measured RMS by length class, from `summarizeBy`; shown beside the curve, never fitted. */
   readonly bins?: readonly SummaryRow[] | undefined;
   readonly specSheet?: SpecSheet | undefined;
@@ -47,7 +49,8 @@ const MOST_POINTS = 800;
  * @throws InputError when tolerance or rule are of the other component, or a column is missing
  */
 export function errorByBaselineChart(input: ErrorByBaselineInput): ChartSpec {
-  const { errors, model, specSheet, tolerance, rule } = input;
+  const { errors, model, specSheet, tolerance, rule, ppm = model.ppm } = input;
+  const stated = { ...model, ppm };
   refuseOtherComponent(model, 'tolerance', tolerance);
   refuseOtherComponent(model, 'rule', rule);
   const points = errorPoints(errors, model.component);
@@ -79,7 +82,7 @@ export function errorByBaselineChart(input: ErrorByBaselineInput): ChartSpec {
   const heat = shown.length > MOST_POINTS ? heatLayer(shown, frame, channels) : null;
   const layer: View[] = [
     heat?.layer ?? pointLayer(shown, channels),
-    bandLayer(errorBand(model, model.longestKm), channels),
+    bandLayer(errorBand(model, model.longestKm, ppm), channels),
     ...(tolerance === undefined ? [] : [toleranceLayer(tolerance, frame, channels)]),
     ...(ruleDrawn === null ? [] : [ruleDrawn.line]),
     ...[...lines].reverse().flatMap((line) => lineLayers(line, channels)),
@@ -89,9 +92,9 @@ export function errorByBaselineChart(input: ErrorByBaselineInput): ChartSpec {
     ...keyLayers(keyEntries(heat?.fullest ?? null, shownClasses, model), frame, channels),
   ];
   return chartSpec(
-    errorTitle(model),
-    errorSubtitle(model, rule, hidden, input.heights),
-    errorDescription(model, {
+    errorTitle(stated),
+    errorSubtitle(stated, rule, hidden, input.heights),
+    errorDescription(stated, {
       classes: shownClasses.length,
       specSheet,
       tolerance,

@@ -1,4 +1,4 @@
-import { type ErrorModel, errorCurve } from '../fit/index.js';
+import { type ErrorModel, type EstimateWithLimits, errorCurve } from '../fit/index.js';
 import { type SpecSheet, specSheetSigmaMm, toleranceFactorAt } from '../rule/index.js';
 import { COLORS } from './theme.js';
 import { percentWords } from './words.js';
@@ -81,8 +81,20 @@ export function errorLines(
 }
 
 /** The band of the fitted curve; empty where the model has no interval. */
-export function errorBand(model: ErrorModel, longestKm: number): BandPoint[] {
-  return errorCurve(model, curveLengthsKm(longestKm)).flatMap(({ baselineKm, lowMm, highMm }) =>
-    lowMm === null || highMm === null ? [] : [{ baselineKm, lowMm, highMm }],
-  );
+export function errorBand(model: ErrorModel, longestKm: number, ppm: EstimateWithLimits): BandPoint[] {
+  const { ppm: own, constantMm, form } = model;
+  const at = (slope: number | null, baselineKm: number): number | null =>
+    slope === null || constantMm.estimate === null
+      ? null
+      : spreadMm(form, constantMm.estimate, slope, baselineKm);
+  return errorCurve(model, curveLengthsKm(longestKm)).flatMap(({ baselineKm, lowMm, highMm }) => {
+    if (lowMm === null || highMm === null) return [];
+    // Limits that are stated wider than the model's move the ends of the band with them.
+    const low = ppm.low === own.low ? null : at(ppm.low, baselineKm);
+    const high = ppm.high === own.high ? null : at(ppm.high, baselineKm);
+    return [{ baselineKm, lowMm: Math.min(lowMm, low ?? lowMm), highMm: Math.max(highMm, high ?? highMm) }];
+  });
 }
+
+const spreadMm = (form: ErrorModel['form'], constantMm: number, ppm: number, baselineKm: number): number =>
+  form === 'root-sum-square' ? Math.hypot(constantMm, ppm * baselineKm) : constantMm + ppm * baselineKm;

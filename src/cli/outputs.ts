@@ -66,7 +66,8 @@ export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: 
     await mkdir(join(folder, name), { recursive: true });
   }
   await copyFile(setAsideRows, join(folder, 'tables', 'set-aside.csv'));
-  for (const table of [...reportTables(run), ...outcomeTables(run.results)]) {
+  const tables = [...reportTables(run), ...outcomeTables(run.results)];
+  for (const table of tables) {
     const { name, header, rows } = table;
     await writeFile(join(folder, 'tables', `${name}.csv`), csvText(header, rows));
     if (ARROW_TABLES.includes(name)) {
@@ -81,7 +82,7 @@ export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: 
   for (const [name, svg] of files) await writeFile(join(folder, 'charts', `${name}.svg`), svg);
   const pages = {
     report: reportHtml(run.results, pictures),
-    annex: annexHtml(run, pictures),
+    annex: annexHtml(run, pictures, tables),
     card: cardHtml(run.results),
     weights: weightsHtml(run.results),
   };

@@ -2,9 +2,7 @@ import {
   backTestChart,
   type ChartSpec,
   chartInUnits,
-  daysChart,
   errorByBaselineChart,
-  hourPpmChart,
   jobMapChart,
   markMapChart,
   markMeansChart,
@@ -16,6 +14,15 @@ import { type Component, type ErrorModel, referenceData } from '../fit/index.js'
 import { changeWords, Page, type ReportPicture, type ReportPictures } from '../report/index.js';
 import { LENGTH_EDGES_KM, summarizeBy } from '../split/index.js';
 import { readerUnits, type StudyRun } from '../study/index.js';
+import {
+  dayCharts,
+  hourCharts,
+  hourDayCharts,
+  type NamedChart,
+  skyCharts,
+  splitCharts,
+  wrongFixCharts,
+} from './annexPictures.js';
 
 /** The charts of a run, drawn: for the report, and as files by name. */
 export async function drawPictures(
@@ -46,21 +53,22 @@ export async function drawPictures(
     'mark-means',
     marks.length === 0 ? null : markMeansChart({ marks, heights: run.results.heights }),
   );
-  await draw('days', daysPicture(run));
-  for (const hours of run.results.timeOfDay) {
-    const told = hours.hours.length > 0 ? hourPpmChart({ timeOfDay: hours }) : null;
-    await draw(`hours-${hours.component}`, told);
-  }
-  for (const [k, job] of run.results.jobs.entries()) await draw(`job-${k + 1}`, jobMapChart({ job }));
+  const drawAll = async (charts: readonly NamedChart[]): Promise<ReportPicture[]> => {
+    const drawn: ReportPicture[] = [];
+    for (const [name, chart] of charts) drawn.push((await draw(name, chart))!);
+    return drawn;
+  };
+  const [days, hours] = [await drawAll(dayCharts(run)), await drawAll(hourCharts(run))];
+  const hourDays = await drawAll(hourDayCharts(run));
+  const [splits, sky] = [await drawAll(splitCharts(run)), await drawAll(skyCharts(run))];
+  const wrongFixes = await drawAll(wrongFixCharts(run));
+  const jobs = await drawAll(
+    run.results.jobs.map((job, k): NamedChart => [`job-${k + 1}`, jobMapChart({ job })]),
+  );
   const moves = await draw('rule-moves', movesChart(run));
   const proof = await draw('back-test', proofChart(run));
-  return { pictures: { proof, moves, horizontal, vertical, maps, markMeans }, files };
-}
-
-/** The days with what the sky did on them, as far as index files tell. */
-function daysPicture({ results: { dailyFactors, degradedDays, sky } }: StudyRun): ChartSpec | null {
-  if (dailyFactors.length === 0) return null;
-  return daysChart({ factors: dailyFactors, explanations: degradedDays, sky: sky?.days });
+  const pictures = { proof, moves, horizontal, vertical, maps, markMeans };
+  return { pictures: { ...pictures, days, hours, hourDays, splits, sky, wrongFixes, jobs }, files };
 }
 
 function proofChart({ results: { backTest, study } }: StudyRun): ChartSpec | null {
@@ -84,10 +92,12 @@ function errorChart(run: StudyRun, component: Component): ChartSpec | null {
   const model = models.find((candidate) => candidate.component === component);
   if (model === undefined) return null;
   const errors = errorsAsFitted(run, model);
+  const fit = results.fits.find((one) => one.basisOfRule && one.component === component);
   const rule = results.rules.find((candidate) => candidate.component === component);
   return errorByBaselineChart({
     errors,
     model,
+    ppm: fit?.ppm,
     bins: summarizeBy(
       errors,
       { column: 'baselineKm', edges: LENGTH_EDGES_KM },

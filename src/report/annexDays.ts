@@ -2,19 +2,20 @@ import type { DailyFactorResult, Results, TimeOfDayResult, WrongFixResult } from
 import { who } from './blundersSection.js';
 import { date, type Html, html } from './html.js';
 import type { Page } from './page.js';
+import { figure, type ReportPicture, type ReportPictures } from './pictures.js';
 import { table } from './table.js';
 
 /** Days, hours, setups and suspected wrong fixes. */
-export function annexDays(page: Page): Html {
+export function annexDays(page: Page, pictures: Pick<ReportPictures, 'days' | 'hours' | 'wrongFixes'>): Html {
   const { dayModels, timeOfDay, setups, fits } = page.results;
   if (fits.length === 0) return html``;
   return html`<section id="days"><h2>Days, hours and setups</h2>
 ${dayModels.length === 0 ? html`<p>Single days could not be judged: that takes more days with near and far marks.</p>` : dayModelTable(page)}
-${dailyTable(page)}
-${degradedWords(page)}${timeOfDay.map((one) => hourTable(page, one))}
+${pictures.days.map(figure)}${dailyTable(page)}
+${degradedWords(page)}${eventWords(page)}${pictures.hours.map(figure)}${timeOfDay.map((one) => hourTable(page, one))}
 ${setups.length === 0 ? null : setupTable(page)}
 </section>
-${wrongFixes(page)}
+${wrongFixes(page, pictures.wrongFixes)}
 `;
 }
 
@@ -40,6 +41,18 @@ function degradedWords(page: Page): Html {
 <ul>${degradedDays.map(({ text }) => html`<li>${page.text(text)}</li>\n`)}</ul>\n`;
 }
 
+/** Degraded days in a row, which likely have one cause. */
+function eventWords(page: Page): Html[] {
+  return page.results.dayModels.flatMap(({ component, events }) =>
+    events
+      .filter(({ days }) => days.length > 1)
+      .map(
+        ({ from, to, days }) =>
+          html`<p>Degraded in a row, ${component}: ${page.lengthOf(days, 'day')} of work from ${date(from)} to ${date(to)}. Look for one cause.</p>\n`,
+      ),
+  );
+}
+
 const dailyTable = (page: Page): Html =>
   table<DailyFactorResult>('Every day: its ppm over that of the median day', page.results.dailyFactors, [
     { head: 'Day', cell: ({ day }) => date(day), text: true },
@@ -56,10 +69,17 @@ const dailyTable = (page: Page): Html =>
     },
     {
       head: 'Degraded',
-      cell: ({ degraded }) => (degraded === null ? 'not judged' : degraded ? 'yes' : 'no'),
+      cell: ({ degraded }) => yesOrNo(degraded),
+      text: true,
+    },
+    {
+      head: 'A second test agrees',
+      cell: ({ degraded, secondOpinion }) => (degraded === true ? yesOrNo(secondOpinion) : '—'),
       text: true,
     },
   ]);
+
+const yesOrNo = (answer: boolean | null): string => (answer === null ? 'not judged' : answer ? 'yes' : 'no');
 
 function hourTable(page: Page, one: TimeOfDayResult): Html {
   const { component, pValue, hours } = one;
@@ -105,7 +125,7 @@ function setupTable(page: Page): Html {
   );
 }
 
-function wrongFixes(page: Page): Html {
+function wrongFixes(page: Page, pictures: readonly ReportPicture[]): Html {
   const { wrongFixes: found } = page.results;
   if (found.length === 0) return html``;
   const { error, distance } = page.units;
@@ -113,7 +133,7 @@ function wrongFixes(page: Page): Html {
     page.number(row, key, 'signed error');
   return html`<section id="wrong-fixes"><h2>Suspected wrong fixes</h2>
 <p>${page.lengthOf(found, 'occupation looks', 'occupations look')} like a wrong fix. Look each of them up in the field book.</p>
-${table<WrongFixResult>(`Suspected wrong fixes, errors in ${error.name}`, found, [
+${pictures.map(figure)}${table<WrongFixResult>(`Suspected wrong fixes, errors in ${error.name}`, found, [
   { head: 'Day', cell: ({ day }) => date(day), text: true },
   { head: 'Mark', cell: ({ mark }) => page.name(mark), text: true },
   { head: 'Crew, rover', cell: ({ crew, rover }) => who(page.crew(crew), rover), text: true },

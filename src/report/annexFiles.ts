@@ -1,5 +1,5 @@
 import { REASON_WORDS } from '../logs/index.js';
-import type { FileResult } from '../study/index.js';
+import type { FileResult, InputFile, StatedSetting } from '../study/index.js';
 import { date, type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { table } from './table.js';
@@ -40,13 +40,17 @@ ${table('Settings', lines, [
   { head: 'What', cell: ([what]) => what, text: true },
   { head: 'Value', cell: ([, value]) => value, text: true },
 ])}
+${table<StatedSetting>('Every setting of the study file, defaults filled in', settings.stated, [
+  { head: 'Setting', cell: ({ key }) => html`<code>${key}</code>`, text: true },
+  { head: 'Value', cell: ({ value }) => html`<bdi>${page.crew(value)}</bdi>`, text: true },
+])}
 </section>
 `;
 }
 
 /** The account of each file, with the hash of its bytes. */
 export function filesSection(page: Page): Html {
-  const { files, roundingMm } = page.results;
+  const { files, inputs, roundingMm } = page.results;
   const { error } = page.units;
   return html`<section id="files"><h2>Files</h2>
 ${table<FileResult>('Account of each file', files, [
@@ -55,6 +59,11 @@ ${table<FileResult>('Account of each file', files, [
   { head: 'Used', cell: (file) => page.number(file, 'used', 'count') },
   { head: 'Set aside', cell: (file) => setAside(page, file), text: true },
   { head: `Steps, ${error.name}`, cell: (file) => steps(page, file) },
+  { head: 'SHA-256', cell: ({ sha256 }) => html`<code>${sha256}</code>`, text: true },
+])}
+${table<InputFile>('What was read beside the logs', inputs, [
+  { head: 'File', cell: ({ file }) => page.name(file), text: true },
+  { head: 'What it is', cell: ({ role }) => role, text: true },
   { head: 'SHA-256', cell: ({ sha256 }) => html`<code>${sha256}</code>`, text: true },
 ])}
 ${

@@ -1,3 +1,4 @@
+import type { SpecSheetRatio, SpecSheetTest } from '../rule/index.js';
 import type { ComparisonResult, FitResult } from '../study/index.js';
 import { lengthTable } from './fitSection.js';
 import { COUNTED_FROM, fitTable } from './fitTable.js';
@@ -25,6 +26,7 @@ ${comparisons(page)}
 ${basis.map((fit) => remarks(page, fit))}
 ${wrongFixShares(page, basis)}
 ${lengthTable(page)}
+${page.results.specSheetTest.map((test) => sheetTable(page, test))}
 </section>
 `;
 }
@@ -60,6 +62,23 @@ information number ${page.number(fit, 'informationNumber', 'count')}, about the 
 `;
 }
 
+/** The own spread over that of the spec sheet at some distances. */
+function sheetTable(page: Page, { component, ratios, sentence }: SpecSheetTest): Html {
+  if (ratios.length === 0)
+    return html`<p>${componentTitle(component, page.results.heights)}: ${page.text(sentence)}</p>\n`;
+  return table<SpecSheetRatio>(`Own spread over that of the spec sheet, ${component}`, ratios, [
+    {
+      head: `Distance, ${page.units.distance.name}`,
+      cell: (row) => page.number(row, 'baselineKm', 'distance'),
+      text: true,
+    },
+    { head: 'Own over spec sheet', cell: (row) => page.number(row, 'ratio', 'ratio') },
+    { head: 'From', cell: (row) => page.number(row, 'low', 'ratio') },
+    { head: 'To', cell: (row) => page.number(row, 'high', 'ratio') },
+    { head: 'Verdict', cell: ({ verdict }) => verdict, text: true },
+  ]);
+}
+
 const marksWords = (page: Page, fit: FitResult): Html =>
   fit.marks === null
     ? html`marks`
@@ -77,6 +96,7 @@ ${
         {
           head: `Distance, ${page.units.distance.name}`,
           cell: (row) => page.number(row, 'baselineKm', 'distance'),
+          text: true,
         },
         { head: 'Estimate', cell: (row) => page.number(row, 'estimate', 'share') },
         { head: 'Upper limit', cell: (row) => page.number(row, 'high', 'share') },

@@ -1,7 +1,7 @@
-import type { FailedShot, RuleCount } from '../rule/index.js';
 import type { BackTestResult, HourRule, SeasonRule } from '../study/index.js';
-import { who } from './blundersSection.js';
-import { date, type Html, html } from './html.js';
+import { forwardWords } from './annexForward.js';
+import { failureTable } from './failureTable.js';
+import { type Html, html } from './html.js';
 import { movesTables } from './movesSection.js';
 import type { Page } from './page.js';
 import { ruleTableReasons } from './ruleTableSection.js';
@@ -16,7 +16,7 @@ ${movesTables(page)}
 ${rulesByHour.length === 0 ? null : partTable(page, 'Rules of single hours, solar time', 'Hours', rulesByHour, ({ hours }) => hours)}
 ${rulesBySeason.length === 0 ? null : partTable(page, 'Rules of single months', 'Month', rulesBySeason, ({ month }) => month)}
 ${ruleTableReasons(page)}
-${backTest.map((test) => backTestTables(page, test))}
+${backTest.map((test) => html`${backTestTables(page, test)}${forwardWords(page, test)}`)}
 </section>
 `;
 }
@@ -48,9 +48,6 @@ function partTable<Part extends HourRule | SeasonRule>(
 function backTestTables(page: Page, test: BackTestResult): Html {
   const { component, lengthClasses, specSheet, groups, rules } = test;
   const { distance } = page.units;
-  const failures = rules.flatMap((count) =>
-    count.failures.map((shot): [RuleCount, FailedShot] => [count, shot]),
-  );
   const classRows = [
     ...lengthClasses.map((one) => ['own model', one] as const),
     ...(specSheet?.lengthClasses ?? []).map((one) => ['spec sheet', one] as const),
@@ -89,27 +86,6 @@ ${
         },
       ])
 }
-${
-  failures.length === 0
-    ? html`<p>No occupation within a ${component} rule missed its limit.</p>`
-    : table(`Occupations within a ${component} rule that missed its limit`, failures, [
-        { head: 'Day', cell: ([, shot]) => date(shot.day), text: true },
-        {
-          head: `Limit, ${page.units.error.name}`,
-          cell: ([count]) => page.number(count, 'limitMm', 'limit'),
-        },
-        {
-          head: `Error, ${page.units.error.name}`,
-          cell: ([, shot]) => page.number(shot, 'errorMm', 'error'),
-        },
-        {
-          head: `Distance, ${distance.name}`,
-          cell: ([, shot]) => page.number(shot, 'baselineKm', 'distance'),
-        },
-        { head: 'Mark', cell: ([, shot]) => page.name(shot.mark), text: true },
-        { head: 'Crew, rover', cell: ([, { crew, rover }]) => who(page.crew(crew), rover), text: true },
-        { head: 'Suspected wrong fix', cell: ([, { suspected }]) => (suspected ? 'yes' : 'no'), text: true },
-      ])
-}
+${failureTable(page, `Occupations within a ${component} rule that missed its limit`, rules) ?? html`<p>No occupation within a ${component} rule missed its limit.</p>`}
 `;
 }

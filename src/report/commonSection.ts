@@ -63,7 +63,8 @@ function parameterTable(page: Page, rows: readonly Row[]): Html {
       { head: 'Estimate', cell: ({ parameter }) => page.number(parameter, 'estimate', kind(parameter)) },
       {
         head: 'Standard error',
-        cell: ({ parameter }) => page.number(parameter, 'standardError', kind(parameter)),
+        cell: ({ parameter }) =>
+          page.number(parameter, 'standardError', parameter.unit === 'mm' ? 'error' : 'ppm'),
       },
       { head: 'Unit', cell: ({ parameter }) => unitOf(page, parameter), text: true },
       {

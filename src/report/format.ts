@@ -107,7 +107,9 @@ export const kmDown = (value: number): string => formatNumber(value, 'distance, 
 /** `95 %`, which does not part at the end of a line. */
 export const percent = (share: number): string => `${Number((100 * share).toFixed(1))}\u00a0%`;
 
-export const count = (value: number): string => value.toLocaleString('en-US').replaceAll(',', '\u202f');
+/** A whole number, or one of which no more should be read. */
+export const count = (value: number): string =>
+  value.toLocaleString('en-US', { maximumFractionDigits: 0 }).replaceAll(',', '\u202f');
 
 export const plural = (value: number, one: string, many = `${one}s`): string =>
   `${count(value)} ${value === 1 ? one : many}`;

@@ -14,6 +14,7 @@ export { outcomeTables } from './outcomeTables.js';
 export { Page } from './page.js';
 export type { ReportPicture, ReportPictures } from './pictures.js';
 export { reportHtml } from './reportHtml.js';
+export { splitsOf } from './splitTable.js';
 export { accountLines, messageLines, summaryText } from './summaryText.js';
 export { type Cell, type ReportTable, reportTables } from './tables.js';
 export { watchText } from './watchText.js';

@@ -75,7 +75,9 @@ export class Page {
   crew(name: string): string {
     const { study, crews } = this.results;
     if (name === '' || study.showCrews) return name;
-    return `crew ${crews.indexOf(name) + 1}`;
+    const at = crews.indexOf(name);
+    // Classes of occupations of which no crew is known have a name of their own.
+    return at < 0 ? name : `crew ${at + 1}`;
   }
 
   /** A name from a log or study file, whose letters may run from right to left. */

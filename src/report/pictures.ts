@@ -17,6 +17,17 @@ export interface ReportPictures {
   /** One for each base. */
   readonly maps: readonly ReportPicture[];
   readonly markMeans: ReportPicture | null;
+  /** Days and the sky; hours of the day; both at once. */
+  readonly days: readonly ReportPicture[];
+  readonly hours: readonly ReportPicture[];
+  readonly hourDays: readonly ReportPicture[];
+  readonly splits: readonly ReportPicture[];
+  /** What went with the sky. */
+  readonly sky: readonly ReportPicture[];
+  /** How the share of wrong fixes grows with distance. */
+  readonly wrongFixes: readonly ReportPicture[];
+  /** Points of jobs and which base reaches them. */
+  readonly jobs: readonly ReportPicture[];
 }
 
 /** A picture inside the page, with its words for those who do not see it. */

@@ -39,7 +39,7 @@ const sheetWords = (page: Page, { specSheet, share }: BackTestResult): Html | nu
     : html`; inside that of the spec sheet ${page.number(specSheet, 'observedShare', 'share')}${specSheet.observedShare < share ? ', fewer than it was to hold' : ''}`;
 
 /** The plain count of a rule. */
-function countWords(page: Page, count: RuleCount): Html {
+export function countWords(page: Page, count: RuleCount, listed = 'in the annex'): Html {
   const { distance, error } = page.units;
   const limit = html`${page.number(count, 'limitMm', 'limit')} ${error.name}`;
   if (count.lengthKm === null || count.shots === 0)
@@ -50,7 +50,7 @@ function countWords(page: Page, count: RuleCount): Html {
   const others =
     failures.length === 0
       ? 'none missed it'
-      : html`${page.length(failures)} missed it and ${failures.length === 1 ? 'is' : 'are'} listed in the annex`;
+      : html`${page.length(failures)} missed it and ${failures.length === 1 ? 'is' : 'are'} listed ${listed}`;
   return html`${limit}: of ${page.counted(count, 'shots', 'occupation')} within ${same ? km('from') : html`${km('from')} to ${km('to')}`} ${distance.name} of the base,
 ${page.number(count, 'held', 'count')} held it; ${others}. On ${page.number(count, 'goodDays', 'count')} of ${page.counted(count, 'days', 'day')} at least
 ${page.number(count, 'share', 'share')} held it${count.goodDayShareLow === null ? null : html`, which shows at least ${page.number(count, 'goodDayShareLow', 'share')} of such days without any model`}.`;

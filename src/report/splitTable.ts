@@ -1,5 +1,5 @@
 import { placeVisits } from '../errors/index.js';
-import { type SummaryRow, standardSplits } from '../split/index.js';
+import { type SplitTable, type SummaryRow, standardSplits } from '../split/index.js';
 import type { StudyRun } from '../study/index.js';
 import type { Cell, ReportTable } from './tables.js';
 
@@ -25,17 +25,29 @@ const COLUMNS: readonly [head: string, cell: (row: SummaryRow) => number | boole
   ['tooFew', (row) => row.tooFew],
 ];
 
-/** The errors split by everything that is known of them, one row a group; suspected wrong fixes are left out. */
-export function splitTable({ errors, weights, visits, control, results }: StudyRun): ReportTable {
+/** Splits take long for long studies, and table, annex and charts show the same ones. */
+const known = new WeakMap<StudyRun, readonly SplitTable[]>();
+
+/** The errors of a run split by everything that is known of them; suspected wrong fixes are left out. */
+export function splitsOf(run: StudyRun): readonly SplitTable[] {
+  const found = known.get(run);
+  if (found !== undefined) return found;
+  const { errors, weights, visits, control, results } = run;
   const used = errors.filter((_, i) => weights[i]! >= 0.5);
   const { confidence } = results.fits[0] ?? { confidence: 0.95 };
-  const tables = standardSplits(used, placeVisits(visits, control), { confidence });
+  const splits = standardSplits(used, placeVisits(visits, control), { confidence });
+  known.set(run, splits);
+  return splits;
+}
+
+/** All splits in one table, one row a group. */
+export function splitTable(run: StudyRun): ReportTable {
   const value = (cell: number | boolean | null): Cell =>
     typeof cell === 'number' ? (Number.isFinite(cell) ? Number(cell.toPrecision(6)) : null) : cell;
   return {
     name: 'splits',
     header: ['by', 'group', ...COLUMNS.map(([head]) => head)],
-    rows: tables.flatMap(({ title, rows }) =>
+    rows: splitsOf(run).flatMap(({ title, rows }) =>
       rows.map((row): Cell[] => [title, row.group, ...COLUMNS.map(([, cell]) => value(cell(row)))]),
     ),
   };

@@ -25,6 +25,8 @@ type PointsEntry =
 /** Finds the files that a study names, and gathers what is wrong with them. */
 export class FileFinder {
   readonly mistakes: Message[] = [];
+  /** Files of geoid separations that were read. */
+  readonly geoidGrids: NamedFile[] = [];
   /** What must be known of the coordinate systems, one message each. */
   readonly notes = new Map<CoordinateSystem, Message>();
 
@@ -74,6 +76,7 @@ export class FileFinder {
       if (found === null) continue;
       try {
         grids.set(name, geoidGrid(readFileSync(found.path, 'utf8')));
+        this.geoidGrids.push(found);
       } catch (error) {
         if (!(error instanceof RangeError)) throw error;
         const fault = error.message.replace(/\.$/, '');

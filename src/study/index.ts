@@ -19,6 +19,8 @@ export type {
   WrongFixResult,
   WrongFixShareResult,
 } from './fitResultTypes.js';
+export type { StatedSetting } from './flatSettings.js';
+export type { InputFile } from './inputFiles.js';
 export {
   REPORT_UNITS,
   type ReaderUnit,
@@ -40,10 +42,19 @@ export type {
   WatchResult,
 } from './ruleResultTypes.js';
 export { type RunOptions, readStudyErrors, runStudy, type StudyErrors, type StudyRun } from './run.js';
+export type { WrongFixes } from './screenStudy.js';
 export { type StudySettings, studyJsonSchema } from './settings.js';
 export { type SkyInput, skyOfDays } from './skyOfDays.js';
 export { type SkyPoint, skyPoints } from './skyPoints.js';
-export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold } from './skyResult.js';
+export {
+  SKY_OUTCOMES,
+  type Sky,
+  type SkyAssociation,
+  type SkyDay,
+  type SkyMeasure,
+  type SkyOutcome,
+  type SkyThreshold,
+} from './skyResult.js';
 export { softwareVersion } from './softwareVersion.js';
 export type { JobFile, Study } from './study.js';
 export type { StudyJob } from './studyJobs.js';

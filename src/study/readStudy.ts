@@ -4,6 +4,7 @@ import { dirname, resolve } from 'node:path';
 import { InputError, inputError } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 import { FileFinder } from './fileFinder.js';
+import { flatSettings } from './flatSettings.js';
 import { logLayouts } from './logLayouts.js';
 import { parseStudyText } from './parseStudyText.js';
 import type { StudySettings } from './settings.js';
@@ -82,8 +83,10 @@ export async function readStudy(path: string): Promise<Study> {
     by: settings.by,
     indices,
     maps,
+    geoidGrids: finder.geoidGrids,
     leaveOutDays: settings.leaveOutDays,
     seed: settings.seed,
+    stated: flatSettings(settings),
   };
 }
 

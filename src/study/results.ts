@@ -28,6 +28,7 @@ import type {
   MarkResult,
   WrongFixResult,
 } from './fitResultTypes.js';
+import type { InputFile } from './inputFiles.js';
 import type { RuleOutcomes } from './ruleOutcomes.js';
 import type {
   BackTestResult,
@@ -88,6 +89,8 @@ export interface Results extends StatedStudy, RuleOutcomes {
     readonly setAside: Readonly<Partial<Record<RowReason, number>>>;
   };
   readonly files: readonly FileResult[];
+  /** What was read beside the logs. */
+  readonly inputs: readonly InputFile[];
   /** What rounding of the coarsest log adds to the constant, mm: radial, and vertical; null without positions. */
   readonly roundingMm: { readonly horizontal: number; readonly vertical: number } | null;
   /** Static occupations cut into shots, and about how many of these are independent; null without windowSeconds. */

@@ -5,6 +5,7 @@ import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
 import { dailyFactor, dayModel, degradedDay, leftOut, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
+import { INPUT_ROLES } from './inputFiles.js';
 import type { Results } from './results.js';
 import { ruleOutcomes } from './ruleOutcomeSchemas.js';
 import {
@@ -61,6 +62,9 @@ export const resultsSchema = z.strictObject({
       setAside: z.partialRecord(z.enum(ROW_REASONS), z.strictObject({ count, firstRows: z.array(count) })),
     }),
   ),
+  inputs: z
+    .array(z.strictObject({ file: z.string(), role: z.enum(INPUT_ROLES), sha256: z.string() }))
+    .describe('Files read beside the logs.'),
   roundingMm: z.strictObject({ horizontal: z.number(), vertical: z.number() }).nullable(),
   staticShots: z
     .strictObject({ occupations: count, shots: count, windowSeconds: z.number(), independent: nullable })

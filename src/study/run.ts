@@ -24,7 +24,7 @@ import { makeRules, withRuleOptions } from './makeRules.js';
 import { movedRules } from './movedRules.js';
 import { readAs } from './readAs.js';
 import type { Results } from './results.js';
-import { screenStudy, suspects, withSuspects, wrongFixResults } from './screenStudy.js';
+import { screenStudy, suspects, type WrongFixes, withSuspects, wrongFixResults } from './screenStudy.js';
 import { siteHeight } from './siteHeight.js';
 import { studyStandards } from './standards/index.js';
 import type { Study } from './study.js';
@@ -62,6 +62,8 @@ export interface StudyErrors {
 export interface StudyRun extends StudyErrors {
   /** What each of the errors counts in the fits; all 1 without screening. Below one half it is a suspected wrong fix. */
   readonly weights: Float64Array;
+  /** What the screening found; null where nothing was screened. */
+  readonly wrongFixes: WrongFixes | null;
   /** The fits on which the rules rest, one a component. */
   readonly models: readonly ErrorModel[];
   /** Days and hours under these fits. */
@@ -184,6 +186,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     ...read,
     setAside,
     weights: weights ?? new Float64Array(errors.length).fill(1),
+    wrongFixes,
     models,
     days: judged,
     results,

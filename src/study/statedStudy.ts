@@ -1,4 +1,5 @@
 import type { Form, Reference } from '../fit/index.js';
+import type { StatedSetting } from './flatSettings.js';
 import type { ReportUnits } from './readerUnits.js';
 import { softwareVersion } from './softwareVersion.js';
 import type { Study } from './study.js';
@@ -28,6 +29,8 @@ export interface StatedStudy {
     readonly leaveOutDays: readonly string[];
     /** 0 is not stated. */
     readonly centringSigmaMm: number;
+    /** Every setting by its path in the study file, defaults filled in. */
+    readonly stated: readonly StatedSetting[];
   };
 }
 
@@ -35,7 +38,7 @@ export interface StatedStudy {
 export function statedStudy(study: Study): StatedStudy {
   const { title, timeZone, seed, surveyor, reportDate, reportUnits, showCrews } = study;
   const { form, reference, confidence, screen, gapSeconds, windowSeconds } = study;
-  const { period, leaveOutDays, centringSigmaMm } = study;
+  const { period, leaveOutDays, centringSigmaMm, stated } = study;
   return {
     software: softwareVersion(),
     study: { title, timeZone, seed, surveyor, reportDate, reportUnits, showCrews },
@@ -49,6 +52,7 @@ export function statedStudy(study: Study): StatedStudy {
       period,
       leaveOutDays,
       centringSigmaMm,
+      stated,
     },
   };
 }

@@ -24,5 +24,8 @@ export const statedStudy = {
     period: z.strictObject({ from: day, to: day }).nullable(),
     leaveOutDays: z.array(day),
     centringSigmaMm: z.number(),
+    stated: z
+      .array(z.strictObject({ key: z.string(), value: z.string() }))
+      .describe('Every setting, defaults filled in.'),
   }),
 };

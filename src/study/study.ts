@@ -4,6 +4,7 @@ import type { LogFile, Message } from '../logs/index.js';
 import type { SpecSheet, Tolerance } from '../rule/index.js';
 import type { HeightKind } from './coordinateChanges.js';
 import type { NamedFile } from './fileFinder.js';
+import type { StatedSetting } from './flatSettings.js';
 import type { ReportUnits } from './readerUnits.js';
 import type { FieldTestSettings, StandardName } from './ruleSettings.js';
 
@@ -77,6 +78,10 @@ export interface Study {
   /** Files of geomagnetic indices, and of ionosphere maps. */
   readonly indices: readonly NamedFile[];
   readonly maps: readonly NamedFile[];
+  /** Grids of geoid separations. */
+  readonly geoidGrids: readonly NamedFile[];
   readonly leaveOutDays: readonly string[];
   readonly seed: number;
+  /** Every setting by its path in the study file, defaults filled in. */
+  readonly stated: readonly StatedSetting[];
 }

@@ -1,5 +1,3 @@
-import { createHash } from 'node:crypto';
-import { createReadStream } from 'node:fs';
 import type { Control } from '../control/index.js';
 import {
   type CommonCauses,
@@ -17,6 +15,7 @@ import {
   totalAccount,
 } from '../logs/index.js';
 import { controlMarks } from './controlMarks.js';
+import { inputFiles, sha256 } from './inputFiles.js';
 import type { FileResult, Results } from './results.js';
 import { statedStudy } from './statedStudy.js';
 import type { Study } from './study.js';
@@ -54,6 +53,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     messages: [...messages, ...(shots === null ? [] : staticMessage(shots))],
     rows: totalAccount(formed.files),
     files,
+    inputs: await inputFiles(study),
     roundingMm: rounding([...formed.resolutions.values()]),
     staticShots: shots,
     visits: { withFix: formed.visits.length - withoutFix, withoutFix },
@@ -134,10 +134,4 @@ function rounding(resolutions: readonly LogResolution[]): Results['roundingMm'] 
     horizontal: Math.SQRT2 * roundingSigmaMm(coarsest('horizontalStepMm')),
     vertical: roundingSigmaMm(coarsest('verticalStepMm')),
   };
-}
-
-async function sha256(path: string): Promise<string> {
-  const hash = createHash('sha256');
-  for await (const chunk of createReadStream(path)) hash.update(chunk as Buffer);
-  return hash.digest('hex');
 }

@@ -3,16 +3,9 @@ import { annexHtml, reportHtml, reportTables, summaryText } from '../../src/repo
 import { type Results, readStudy, runStudy, type StudyRun } from '../../src/study/index.js';
 import { testFolder } from '../files.js';
 import { BASE, MARK_PLACES, planeRows, ZONE_32 } from '../study/spoiledStudy.js';
+import { NO_PICTURES } from './pictures.js';
 
 const folder = testFolder();
-const NO_PICTURES = {
-  proof: null,
-  moves: null,
-  horizontal: null,
-  vertical: null,
-  maps: [],
-  markMeans: null,
-};
 let run: StudyRun;
 let page: string;
 let annex: string;

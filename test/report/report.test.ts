@@ -2,7 +2,9 @@ import { existsSync, readFileSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import { fromArrow } from 'arquero';
 import { beforeAll, describe, expect, it } from 'vitest';
+import { dayCharts, type NamedChart } from '../../src/cli/annexPictures.js';
 import { writeOutputs } from '../../src/cli/outputs.js';
+import { drawPictures } from '../../src/cli/pictures.js';
 import type { Message } from '../../src/logs/index.js';
 import { csvText } from '../../src/report/csv.js';
 import { formatNumber, kmDown, mm, percent } from '../../src/report/format.js';
@@ -13,7 +15,6 @@ import {
   cardHtml,
   markdownOf,
   Page,
-  type ReportPictures,
   reportHtml,
   reportTables,
   ruleSentence,
@@ -33,15 +34,8 @@ import { REPOSITORY } from '../cli/ppmwise.js';
 import { testFolder } from '../files.js';
 import { printed, shownBlock } from './exports.js';
 import { atPointer, otherWords, pageNumbers, readNumber } from './numbers.js';
+import { NO_PICTURES } from './pictures.js';
 
-const NO_PICTURES: ReportPictures = {
-  proof: null,
-  moves: null,
-  horizontal: null,
-  vertical: null,
-  maps: [],
-  markMeans: null,
-};
 let run: StudyRun;
 let page: string;
 
@@ -192,6 +186,51 @@ describe('numbers on pages', () => {
       expect(text).not.toMatch(/<[a-z/]|undefined|NaN|\[object/);
     }
   });
+
+  it('leave no part of the results without a place in the annex or the report', () => {
+    const { annex, report, card, weights } = pagesOf(run);
+    const cited = new Set(
+      [annex, report, card, weights].flatMap((each) =>
+        pageNumbers(each!).flatMap(({ attributes }) =>
+          ['data-at', 'data-sum', 'data-length'].map((name) => attributes.get(name)?.split('/')[1]),
+        ),
+      ),
+    );
+    const withNumbers = Object.entries(run.results).filter(
+      ([, part]) => typeof part === 'object' && /\d/.test(JSON.stringify(part ?? '')),
+    );
+    const words = ['messages', 'period', 'bases', 'rovers', 'inputs'];
+    for (const [key] of withNumbers) expect(cited.has(key) || words.includes(key), key).toBe(true);
+    for (const { sha256 } of [...run.results.inputs, ...run.results.files]) expect(annex).toContain(sha256);
+    for (const { key } of run.results.settings.stated) expect(annex).toContain(`<code>${key}</code>`);
+    expect(run.results.settings.stated).toContainEqual({ key: 'occupations.gapSeconds', value: '60' });
+    expect(run.results.inputs.map(({ role }) => role)).toEqual([
+      'study file',
+      'marks',
+      'bases',
+      'geomagnetic indices',
+    ]);
+  });
+
+  it('are the same on charts as in the tables, and no chart names a crew', async () => {
+    const { files } = await drawPictures(run);
+    const charts = new Map(files);
+    for (const fit of run.results.fits.filter(({ basisOfRule }) => basisOfRule)) {
+      const { low, high } = fit.ppm;
+      // Was once the interval of the model, where the results state one that is widened for days to come.
+      expect(charts.get(`${fit.component}-error`)).toContain(`${low!.toFixed(2)} to ${high!.toFixed(2)} ppm`);
+    }
+    for (const [name, svg] of files)
+      for (const crew of run.results.crews) expect(svg, name).not.toContain(crew);
+    const blamed = run.results.degradedDays.map((one) => ({
+      ...one,
+      verdict: 'one crew' as const,
+      subject: run.results.crews[0]!,
+    }));
+    const [[, chart]] = dayCharts(withResults({ degradedDays: blamed })) as [NamedChart];
+    expect(JSON.stringify(chart)).toContain('one crew 1');
+    expect(JSON.stringify(chart)).not.toContain(run.results.crews[0]);
+  }, 60_000);
 
   it('have no place on a page when they come from elsewhere', () => {
     expect(() => new Page(run.results).number({ made: 1 }, 'made', 'count')).toThrow(
