@@ -17,6 +17,7 @@ export type NumberKind =
   | 'ppm'
   | 'signed ppm'
   | 'share'
+  | 'small share'
   | 'count'
   | 'ratio'
   | 'chance'
@@ -53,6 +54,8 @@ export function formatNumber(value: number | null, kind: NumberKind, units: Read
       return signed(value, 2);
     case 'share':
       return percent(value);
+    case 'small share':
+      return `${Number((100 * value).toFixed(2))}\u00a0%`;
     case 'count':
       return count(value);
     case 'ratio':

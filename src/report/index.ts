@@ -9,6 +9,8 @@ export { escapeHtml } from './html.js';
 export { jobsGeoJson } from './jobsGeoJson.js';
 export { markdownOf } from './markdown.js';
 export { marksGeoJson } from './marksGeoJson.js';
+export { monthHtml, type WatchFound, watchFound } from './monthHtml.js';
+export { monthTables } from './monthTables.js';
 export { changeWords } from './movesSection.js';
 export { outcomeTables } from './outcomeTables.js';
 export { Page } from './page.js';

@@ -76,6 +76,7 @@ function inline(words: string): string {
     .replace(/<[^>]*>/g, '')
     .replace(/&(?:amp|lt|gt|quot|nbsp|#39);/g, (entity) => ENTITIES[entity]!)
     .replace(SPECIAL, (character) => `\\${character}`)
+    .replace(/\ue002 (?=[,.;:])/g, '\ue002')
     .replaceAll('\ue002', '**')
     .replaceAll('\ue003', '\\_\\_\\_\\_\\_\\_\\_\\_')
     .replace(/[^\S\u00a0\u202f]+/g, ' ')

@@ -12,9 +12,13 @@ export class Page {
   readonly units: ReaderUnits;
   readonly #places = new Map<object, string>();
 
-  constructor(readonly results: Results) {
+  /** @param written what is written beside the page, in which every number has its place; default the results */
+  constructor(
+    readonly results: Results,
+    written: object = results,
+  ) {
     this.units = readerUnits(results.study.reportUnits);
-    this.#place(results, '');
+    this.#place(written, '');
   }
 
   /**

@@ -1,18 +1,35 @@
+import { quoted } from '../logs/index.js';
 import type { Watch } from '../rule/index.js';
-import type { WatchRun } from '../study/index.js';
-import { plural } from './format.js';
+import type { WatchMonth, WatchRun } from '../study/index.js';
+import { count, plural, signed } from './format.js';
 import { messageLines } from './summaryText.js';
 import { capital } from './words.js';
 
 /** What watching found, in a few lines for a terminal. */
-export function watchText({ results, watches, unwatched, messages }: WatchRun): string {
+export function watchText({ results, watches, unwatched, month, messages }: WatchRun): string {
   return [
     results.study.title,
     '',
     ...watches.flatMap(watchLines),
     ...unwatched.map(({ component, reason }) => `${capital(component)}: not watched, since ${reason}.`),
+    ...monthLines(month),
     ...messageLines(messages),
   ].join('\n');
+}
+
+/** Marks to look after, and what the crews did. */
+function monthLines({ visits, markShifts, nextMarks }: WatchMonth): string[] {
+  const moved = markShifts.filter(({ verdict }) => verdict === 'moved');
+  return [
+    `New visits: ${count(visits.withFix)} with a fix, ${count(visits.withoutFix)} without.`,
+    ...moved.map(
+      ({ mark, component, shiftMm }) =>
+        `Mark ${quoted(mark)} may have moved in ${component === 'horizontal' ? 'plan' : 'height'}: ${shiftMm.map((value) => `${signed(value, 1)} mm`).join(', ')}.`,
+    ),
+    ...(nextMarks.length === 0
+      ? []
+      : [`Visit next: ${nextMarks.map(({ mark, reason }) => `${quoted(mark)} (${reason})`).join(', ')}.`]),
+  ];
 }
 
 /** So many of the latest days outside are named. */

@@ -59,4 +59,5 @@ export { softwareVersion } from './softwareVersion.js';
 export type { JobFile, Study } from './study.js';
 export type { StudyJob } from './studyJobs.js';
 export { textInUnits } from './textInUnits.js';
+export type { CrewShots, EarlierRun, NewlySetAside, RowsSetAside, WatchMonth } from './watchMonth.js';
 export { readResults, type WatchRun, watchStudy } from './watchStudy.js';

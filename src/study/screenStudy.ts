@@ -37,8 +37,13 @@ export function suspects(
   errors: readonly OccupationError[],
   wrongFixes: WrongFixes | null,
 ): SetAsideOccupation[] {
-  if (wrongFixes?.weights == null) return [];
-  const { suspected, responsibilities } = wrongFixes.screening;
+  return wrongFixes?.weights == null ? [] : suspectsOf(errors, wrongFixes.screening);
+}
+
+export function suspectsOf(
+  errors: readonly OccupationError[],
+  { suspected, responsibilities }: Pick<Screening, 'suspected' | 'responsibilities'>,
+): SetAsideOccupation[] {
   return suspected.map((i) => ({
     reason: 'suspected-wrong-fix',
     detail: `probability ${responsibilities[i]!.toFixed(3)}`,

@@ -4,9 +4,10 @@ import { inputError, type Message, quoted } from '../logs/index.js';
 import { type Watch, watchDays } from '../rule/index.js';
 import type { Results } from './results.js';
 import { resultsSchema } from './resultsSchema.js';
-import type { WatchResult } from './ruleResultTypes.js';
 import { type RunOptions, readStudyErrors } from './run.js';
+import { suspectsOf } from './screenStudy.js';
 import type { Study } from './study.js';
+import { type EarlierRun, type WatchMonth, watchMonth } from './watchMonth.js';
 
 /** New days of a study held against the models of an earlier run. */
 export interface WatchRun {
@@ -16,6 +17,9 @@ export interface WatchRun {
   readonly watches: readonly Watch[];
   /** Components that cannot be, with the reason. */
   readonly unwatched: readonly { readonly component: Watch['component']; readonly reason: string }[];
+  /** What happened on the new days. */
+  readonly month: WatchMonth;
+  /** Those that the earlier run did not tell. */
   readonly messages: readonly Message[];
 }
 
@@ -65,20 +69,37 @@ const FEWEST_SCREENED = 20;
  * @throws InputError when marks or bases cannot be read
  */
 export async function watchStudy(
-  earlier: readonly WatchResult[],
+  earlier: EarlierRun,
   study: Study,
   options: RunOptions = {},
 ): Promise<WatchRun> {
-  const { errors, results } = await readStudyErrors(study, options);
+  const { errors, results, visits, setAside } = await readStudyErrors(study, options);
   const screening =
     study.screen && errors.length >= FEWEST_SCREENED
       ? screenWrongFixes(errors, { confidence: study.confidence })
       : null;
   const weights = screening === null || screening.refused ? undefined : screening.weights;
+  const before = new Set(earlier.messages.map(sameMessage));
+  const told = [...results.messages, ...(screening?.notes ?? [])];
+  const fresh = told.filter((message) => !before.has(sameMessage(message)));
   return {
     results,
-    watches: earlier.flatMap(({ basis }) => (basis === null ? [] : [watchDays(basis, errors, { weights })])),
-    unwatched: earlier.flatMap(({ component, reason }) => (reason === null ? [] : [{ component, reason }])),
-    messages: [...results.messages, ...(screening?.notes ?? [])],
+    watches: earlier.watch.flatMap(({ basis }) =>
+      basis === null ? [] : [watchDays(basis, errors, { weights })],
+    ),
+    unwatched: earlier.watch.flatMap(({ component, reason }) =>
+      reason === null ? [] : [{ component, reason }],
+    ),
+    month: watchMonth(earlier, {
+      results,
+      errors,
+      weights,
+      setAside: [...setAside, ...(weights === undefined ? [] : suspectsOf(errors, screening!))],
+      visits,
+      messagesToldBefore: told.length - fresh.length,
+    }),
+    messages: fresh,
   };
 }
+
+const sameMessage = ({ code, text, file, row }: Message): string => JSON.stringify([code, text, file, row]);

@@ -1,6 +1,7 @@
 import { cpSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
+import { atPointer, otherWords, pageNumbers } from '../report/numbers.js';
 import { emptyFolder, ppmwise, REPOSITORY } from './ppmwise.js';
 
 /*
@@ -38,6 +39,39 @@ describe('ppmwise watch', () => {
       expect(days.length).toBeGreaterThan(5);
       expect(days.every(({ day }) => day > '2025-04-18')).toBe(true);
     }
+  });
+
+  it('writes a page of the month, every number of which stands in watch.json', () => {
+    const month = join(folder, 'month');
+    const call = ['watch', join(results, 'results.json'), join(study, 'study.yaml'), '--out', month];
+    const { code, out } = ppmwise(call);
+    expect(code).toBe(0);
+    expect(out).toContain('month.html');
+    const page = readFileSync(join(month, 'month.html'), 'utf8');
+    const json = JSON.parse(readFileSync(join(month, 'watch.json'), 'utf8'));
+    const numbers = pageNumbers(page);
+    expect(numbers.length).toBeGreaterThan(100);
+    for (const { attributes } of numbers) {
+      const place = attributes.get('data-at')!;
+      expect(Number(attributes.get('value')), place).toBe(atPointer(json, place));
+    }
+    const sections = ['verdict', 'crews', 'set-aside', 'moved', 'next', 'new-days'];
+    const places = sections.map((id) => page.indexOf(`<section id="${id}">`));
+    expect(places).toEqual([...places].sort((a, b) => a - b));
+    expect(places[0]).toBeGreaterThan(0);
+    expect(page).toContain('the model may stay');
+    expect(otherWords(page)).not.toMatch(/undefined|NaN|null|\[object|harbour|ridge/);
+    // The earlier run knew these days as outside of its period: what lies in them is new.
+    const { rowsSetAside, nextMarks, messagesToldBefore } = json.month;
+    expect(rowsSetAside.map(({ reason }: { reason: string }) => reason)).toContain('not-fixed');
+    expect(nextMarks).toHaveLength(3);
+    expect(messagesToldBefore).toBeGreaterThan(3);
+    const next = readFileSync(join(month, 'tables', 'next-marks.csv'), 'utf8');
+    expect(next.split('\n')).toHaveLength(5);
+    expect(readFileSync(join(month, 'month.md'), 'utf8')).toMatch(/^# New days: Check shots, spring 2025\n/);
+    // The page is written anew over its own kind, and into nothing else.
+    expect(ppmwise(call).code).toBe(0);
+    expect(ppmwise([...call.slice(0, 4), study]).err).toContain('Name another folder with --out.');
   });
 
   it('says that it is time to fit again when heights got worse', () => {
