@@ -377,6 +377,7 @@ export {
   type AdjustmentWeight,
   type ConstantAndPpm,
   type ControlMark,
+  type HoursOfCaution,
   type InputFile,
   type JobFile,
   type JobResult,

@@ -16,29 +16,35 @@ export function checkShots(page: Page): Html {
     return html`<section id="checks"><h2>Check-in on a known mark</h2>
 ${why.length === 0 ? html`<p>No limits can be given: no fit was possible. Use the limits of the office.</p>` : why}</section>`;
   }
-  return html`<section id="checks"><h2>Check-in: something is wrong beyond</h2>
-${limitTable(page, given)}
-${why}<p class="small">Two visits: to one mark on different days, from one base. Two bases: on one day from two bases, both about as far away. About ${page.number(given[0]!, 'falseAlarmsPerYear', 'plain')} false alarm in ${page.number(given[0]!, 'checksPerYear', 'plain')} checks.</p></section>`;
+  return html`<section id="checks"><h2>Something is wrong beyond</h2>
+<div class="pair">${given.map((one) => limitTable(page, one))}</div>
+${why}<p class="small">Known mark: the check-in, measured minus known. Another day: two visits to one point on different days, from one base. Another base: on one day from two bases, both about as far away. About ${page.number(given[0]!, 'falseAlarmsPerYear', 'plain')} false alarm in ${page.number(given[0]!, 'checksPerYear', 'plain')} checks.</p></section>`;
 }
 
-/** One row a distance; plan and height side by side. */
-function limitTable(page: Page, given: readonly CheckShotLimits[]): Html {
+const KINDS = [
+  ['knownMarkMm', 'Known mark'],
+  ['otherDayMm', 'Another day'],
+  ['twoBasesMm', 'Another base'],
+] as const;
+
+/** One row a distance. */
+function limitTable(page: Page, { component, limits }: CheckShotLimits): Html {
   const { error, distance } = page.units;
-  const kinds = [
-    ['knownMarkMm', 'known mark'],
-    ['otherDayMm', 'two visits'],
-    ['twoBasesMm', 'two bases'],
-  ] as const;
-  const columns = given.flatMap(({ component, limits }) =>
-    kinds.map(
-      ([key, words]): Column<CheckShotLimit> => ({
-        head: `${component === 'horizontal' ? 'Plan' : 'Height'}, ${words}`,
-        cell: (_, k) => page.number(limits[k]!, key, 'error on a card'),
-      }),
-    ),
+  return table<CheckShotLimit>(
+    `${component === 'horizontal' ? 'Plan' : 'Height'}: differences, ${error.name}`,
+    limits,
+    [
+      {
+        head: `At, ${distance.name}`,
+        cell: (row) => page.number(row, 'baselineKm', 'distance'),
+        text: true,
+      },
+      ...KINDS.map(
+        ([key, head]): Column<CheckShotLimit> => ({
+          head,
+          cell: (row) => page.number(row, key, 'error on a card'),
+        }),
+      ),
+    ],
   );
-  return table<CheckShotLimit>(`Differences in ${error.name}`, given[0]!.limits, [
-    { head: `Distance, ${distance.name}`, cell: (row) => page.number(row, 'baselineKm', 'distance') },
-    ...columns,
-  ]);
 }

@@ -1,23 +1,28 @@
 import { reviewBy } from '../rule/index.js';
-import { HOURS_LEVEL, worstHours } from './daysSection.js';
+import type { HoursOfCaution } from '../study/index.js';
 import { date, type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { list } from './ruleConditions.js';
 
 /** Hours at which errors are larger. */
 export function cautionHours(page: Page): Html {
-  const judged = page.results.timeOfDay.filter(({ pValue }) => pValue !== null);
-  const differing = judged.filter(({ pValue }) => pValue! < HOURS_LEVEL);
+  const { timeOfDay, hoursOfCaution } = page.results;
   const words =
-    judged.length === 0
-      ? html`Whether some hours are worse could not be judged.`
-      : differing.length === 0
-        ? html`No hours are shown to be worse than others.`
-        : html`${differing.map((one) => {
-            const worst = worstHours(one.hours);
-            return html`${one.component === 'horizontal' ? 'Plan' : 'Height'}: take care from ${page.number(worst, 'from', 'hour')} to ${page.number(worst, 'to', 'hour')} solar time (sun highest at 12:00). `;
-          })}`;
-  return html`<section id="hours"><h2>Hours of caution</h2><p>${words}</p></section>`;
+    hoursOfCaution.length > 0
+      ? hoursOfCaution.map((one) => html`<p>${hourWords(page, one)}</p>`)
+      : timeOfDay.some(({ pValue }) => pValue !== null)
+        ? html`<p>No hours are shown to be worse than others.</p>`
+        : html`<p>Whether some hours are worse could not be judged.</p>`;
+  return html`<section id="hours"><h2>Hours of caution</h2>${words}</section>`;
+}
+
+function hourWords(page: Page, one: HoursOfCaution): Html {
+  const { component, clock } = one;
+  const place = component === 'horizontal' ? 'Plan' : 'Height';
+  const sun = html`${page.number(one, 'fromHour', 'hour')} to ${page.number(one, 'toHour', 'hour')} sun time (sun highest at about 12:00)`;
+  return clock === null
+    ? html`${place}: take care from ${sun}.`
+    : html`${place}: take care from <strong>${page.number(clock, 'fromHour', 'hour')} to ${page.number(clock, 'toHour', 'hour')}</strong> on the clock of ${date(clock.day)}, ${sun}.`;
 }
 
 /** The equipment and bases of the data: with others the distances are not known. */

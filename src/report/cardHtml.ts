@@ -20,7 +20,7 @@ ${cautionHours(page)}
 <section id="fails"><h2>When a check fails</h2>
 <ol>
 <li>Do not move on. Look at the mark, the rod height, the bubble and the antenna first.</li>
-<li>Break the fix and take a new one; then shoot the mark again.</li>
+<li>Let the receiver fix anew (new initialisation); then shoot the mark again.</li>
 <li>Keep both shots. Delete nothing.</li>
 <li>Fails again: stop, call the office, and say which points were shot since the last good check.</li>
 </ol></section>

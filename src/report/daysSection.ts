@@ -42,7 +42,7 @@ function putDownTo(page: Page, { verdict, subject }: DegradedDayResult): string 
 const title = (component: Component): string => (component === 'horizontal' ? 'In plan' : 'In height');
 
 /** Below this chance hours are told apart. */
-export const HOURS_LEVEL = 0.05;
+const HOURS_LEVEL = 0.05;
 
 function hourWords(page: Page, one: TimeOfDayResult): Html {
   const { component, pValue, hours } = one;
@@ -59,5 +59,5 @@ ${page.number(worst, 'to', 'hour')} solar time, with ${page.limits(worst.ppm, 'p
 }
 
 /** The hours with the largest ppm. */
-export const worstHours = (hours: Results['timeOfDay'][number]['hours']): (typeof hours)[number] =>
+const worstHours = (hours: Results['timeOfDay'][number]['hours']): (typeof hours)[number] =>
   hours.reduce((a, b) => ((b.ppm.estimate ?? 0) > (a.ppm.estimate ?? 0) ? b : a));

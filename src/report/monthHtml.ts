@@ -2,7 +2,7 @@ import type { WatchRun } from '../study/index.js';
 import { date, type Html, html } from './html.js';
 import { htmlPage } from './htmlPage.js';
 import { messagesSection } from './messagesSection.js';
-import { markShiftSection, nextMarkSection } from './monthMarks.js';
+import { markShiftSection, markShiftTable, nextMarkSection } from './monthMarks.js';
 import { newlySetAside } from './monthSetAside.js';
 import { Page } from './page.js';
 import { table } from './table.js';
@@ -35,6 +35,7 @@ ${crewSection(page, found)}
 ${newlySetAside(page, found.month)}
 ${markShiftSection(page, found.month)}
 ${nextMarkSection(page, found.month)}
+${markShiftTable(page, found.month)}
 ${dayTables(page, found)}
 ${messagesSection(page)}
 ${

@@ -4,7 +4,7 @@ import { type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { table } from './table.js';
 
-/** Marks that may have moved, and how far every mark lies from its earlier mean. */
+/** Marks that may have moved. */
 export function markShiftSection(page: Page, { markShifts }: WatchMonth): Html {
   if (markShifts.length === 0) {
     return html`<section id="moved"><h2>Marks that may have moved</h2>
@@ -12,15 +12,23 @@ export function markShiftSection(page: Page, { markShifts }: WatchMonth): Html {
   }
   const moved = markShifts.filter(({ verdict }) => verdict === 'moved');
   const { error } = page.units;
+  const judged = markShifts.filter(({ verdict }) => verdict !== 'too few days').length;
   const words =
     moved.length === 0
-      ? html`<p>No mark is shown to have moved.</p>`
+      ? html`<p>${judged === 0 ? 'No mark has three new days, the least from which a move is told.' : 'No mark is shown to have moved.'}</p>`
       : html`<ul>${moved.map(
           (one) =>
             html`<li><strong>${page.name(one.mark)}</strong>, from base ${page.name(one.base)}, lies ${shift(page, one)} ${error.name} off in ${one.component === 'horizontal' ? 'plan (east, north)' : 'height'} on ${page.counted(one, 'days', 'new day')}. Look for damage, have it measured again, and check nothing on it until then.</li>\n`,
         )}</ul>`;
   return html`<section id="moved"><h2>Marks that may have moved</h2>
-${words}
+${words}</section>`;
+}
+
+/** How far every mark lies from its earlier mean. */
+export function markShiftTable(page: Page, { markShifts }: WatchMonth): Html {
+  if (markShifts.length === 0) return html``;
+  const { error } = page.units;
+  return html`<section id="marks"><h2>Mark by mark</h2>
 ${table<MarkShift>(`Mean error of the new days less that of the earlier ones, ${error.name}`, markShifts, [
   { head: 'Mark', cell: ({ mark }) => page.name(mark), text: true },
   { head: 'Base', cell: ({ base }) => page.name(base), text: true },
@@ -33,11 +41,17 @@ ${table<MarkShift>(`Mean error of the new days less that of the earlier ones, ${
   { head: 'East, north or up', cell: (row) => shift(page, row) },
   { head: 'Standard error', cell: (row) => page.number(row, 'seMm', 'error') },
   { head: 'Chance without a move', cell: (row) => page.number(row, 'pValue', 'chance') },
-  { head: 'Verdict', cell: ({ verdict }) => verdict, text: true },
+  { head: 'Moved', cell: ({ verdict }) => MOVED[verdict], text: true },
 ])}
 <p class="small">What four marks or more of one base have in common is taken out: that is the base’s. Chances are for as many marks as were compared; below 0.01 a mark counts as moved.</p>
 </section>`;
 }
+
+const MOVED = {
+  moved: 'yes',
+  'not shown to have moved': 'not shown',
+  'too few days': 'too few days',
+} as const;
 
 const shift = (page: Page, { shiftMm }: MarkShift): Html =>
   html`${shiftMm.map((_, axis) => html`${axis === 0 ? '' : ', '}${page.number(shiftMm as unknown as number[], axis, 'signed error')}`)}`;

@@ -49,6 +49,9 @@ section#signature { break-inside: avoid; }
 .card .small, .card .lead { color: #000; }
 .card th, .card td { border-color: #000; } .card td.number { font-size: 1.05em; }
 .card .big td.number { font-size: 1.35em; font-weight: bold; }
+/* Narrow tables side by side where there is room. */
+.pair { display: grid; grid-template-columns: repeat(auto-fit, minmax(17rem, 1fr)); gap: 0 1.6rem; }
+.card dl { margin: .2rem 0; }
 .card ol { margin: .3rem 0; padding-left: 1.4rem; } .card li { margin: .15rem 0; }
 @media (max-width: 34rem) {
   body { font-size: 15px; } main { padding: 1.4rem .9rem 3rem; } h1 { font-size: 1.5rem; }
@@ -64,5 +67,7 @@ section#signature { break-inside: avoid; }
   h2 { margin-top: 1.6rem; }
   .card { font-size: 9.6pt; } .card main { max-width: 178mm; } .card h2 { margin: .55rem 0 .15rem; padding-top: .25rem; }
   .card table { font-size: 9pt; } .card th, .card td { padding: .12rem .3rem; } .card .scroll { margin: .3rem 0; }
+  .card .small { font-size: 8.4pt; margin: .25rem 0; } .card h1 { font-size: 15pt; } .card p { margin: .25rem 0; }
+  .card dl { font-size: 9pt; gap: .05rem 1rem; } .card .lead { margin: 0; }
 }
 `;

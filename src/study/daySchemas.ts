@@ -82,3 +82,15 @@ export const leftOut = z.strictObject({
     )
     .describe('One for each of the rules, in their order.'),
 });
+
+const hour = z.number();
+
+export const hoursOfCaution = z.strictObject({
+  component,
+  fromHour: hour,
+  toHour: hour,
+  clock: z
+    .strictObject({ day, fromHour: hour, toHour: hour })
+    .nullable()
+    .describe("On the clock of the study's zone on its last day."),
+});

@@ -20,6 +20,7 @@ export type {
   WrongFixShareResult,
 } from './fitResultTypes.js';
 export type { StatedSetting } from './flatSettings.js';
+export type { HoursOfCaution } from './hoursOfCaution.js';
 export type { InputFile } from './inputFiles.js';
 export {
   REPORT_UNITS,

@@ -28,6 +28,7 @@ import type {
   MarkResult,
   WrongFixResult,
 } from './fitResultTypes.js';
+import type { HoursOfCaution } from './hoursOfCaution.js';
 import type { InputFile } from './inputFiles.js';
 import type { RuleOutcomes } from './ruleOutcomes.js';
 import type {
@@ -131,6 +132,8 @@ export interface Results extends StatedStudy, RuleOutcomes {
   readonly dailyFactors: readonly DailyFactorResult[];
   readonly degradedDays: readonly DegradedDayResult[];
   readonly timeOfDay: readonly TimeOfDayResult[];
+  /** Hours at which errors are shown to be larger. */
+  readonly hoursOfCaution: readonly HoursOfCaution[];
   readonly lengthClasses: readonly LengthClass[];
   readonly marks: readonly MarkResult[];
   /** The sky of the days and what goes with it; null without files that tell of it. */

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { OCCUPATION_REASONS, ROW_REASONS } from '../logs/index.js';
 import { backTest, watch } from './backTestSchemas.js';
 import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
-import { dailyFactor, dayModel, degradedDay, leftOut, timeOfDay } from './daySchemas.js';
+import { dailyFactor, dayModel, degradedDay, hoursOfCaution, leftOut, timeOfDay } from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
 import { INPUT_ROLES } from './inputFiles.js';
@@ -97,6 +97,7 @@ export const resultsSchema = z.strictObject({
   dailyFactors: z.array(dailyFactor),
   degradedDays: z.array(degradedDay),
   timeOfDay: z.array(timeOfDay),
+  hoursOfCaution: z.array(hoursOfCaution),
   lengthClasses: z.array(lengthClass),
   marks: z.array(mark),
   sky: skySchema.nullable().describe('The sky of the days and what goes with it.'),

@@ -80,6 +80,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     dailyFactors: [],
     degradedDays: [],
     timeOfDay: [],
+    hoursOfCaution: [],
     lengthClasses: [],
     marks: [],
     sky: null,

@@ -55,7 +55,7 @@ describe('ppmwise watch', () => {
       const place = attributes.get('data-at')!;
       expect(Number(attributes.get('value')), place).toBe(atPointer(json, place));
     }
-    const sections = ['verdict', 'crews', 'set-aside', 'moved', 'next', 'new-days'];
+    const sections = ['verdict', 'crews', 'set-aside', 'moved', 'next', 'marks', 'new-days'];
     const places = sections.map((id) => page.indexOf(`<section id="${id}">`));
     expect(places).toEqual([...places].sort((a, b) => a - b));
     expect(places[0]).toBeGreaterThan(0);

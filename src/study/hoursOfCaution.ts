@@ -1,0 +1,58 @@
+import type { Control } from '../control/index.js';
+import type { OccupationError } from '../errors/index.js';
+import type { Component } from '../fit/index.js';
+import { zoneOffsetMs } from '../time/index.js';
+import type { TimeOfDayResult } from './dayResultTypes.js';
+import type { Study } from './study.js';
+
+/** The hours at which errors are shown to be larger. */
+export interface HoursOfCaution {
+  readonly component: Component;
+  /** Local mean solar time at the marks. */
+  readonly fromHour: number;
+  readonly toHour: number;
+  /** The same on the clock of the study's zone on its last day, at the base of most shots; null without a zone. */
+  readonly clock: { readonly day: string; readonly fromHour: number; readonly toHour: number } | null;
+}
+
+/** Hours are called different below this chance. */
+const LEVEL = 0.05;
+const MS_AN_HOUR = 3_600_000;
+
+/** Of each component whose hours differ those with the largest ppm. */
+export function hoursOfCaution(
+  timeOfDay: readonly TimeOfDayResult[],
+  errors: readonly OccupationError[],
+  control: Control,
+  { timeZone }: Pick<Study, 'timeZone'>,
+): HoursOfCaution[] {
+  return timeOfDay.flatMap(({ component, pValue, hours }): HoursOfCaution[] => {
+    if (pValue === null || pValue >= LEVEL || hours.length === 0) return [];
+    const { from, to } = hours.reduce((a, b) => ((b.ppm.estimate ?? 0) > (a.ppm.estimate ?? 0) ? b : a));
+    const ahead = clockAhead(errors, control, timeZone);
+    const clock = ahead && {
+      day: ahead.day,
+      fromHour: onClock(from + ahead.hours),
+      toHour: onClock(to + ahead.hours),
+    };
+    return [{ component, fromHour: from, toHour: to, clock }];
+  });
+}
+
+const onClock = (hour: number): number => hour - 24 * Math.floor(hour / 24);
+
+/** By how many hours the clock is ahead of the sun on the last day. */
+function clockAhead(
+  errors: readonly OccupationError[],
+  control: Control,
+  timeZone: string | null,
+): { readonly day: string; readonly hours: number } | null {
+  const counts = new Map<string, number>();
+  for (const { base } of errors) counts.set(base, (counts.get(base) ?? 0) + 1);
+  const [usual] = [...counts].sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
+  const day = [...new Set(errors.map((error) => error.day))].sort().at(-1) ?? '';
+  const noon = Date.parse(`${day}T12:00:00Z`);
+  if (timeZone === null || usual === undefined || Number.isNaN(noon)) return null;
+  const { longitudeDeg } = control.bases.get(usual[0])!.position;
+  return { day, hours: zoneOffsetMs(timeZone, noon) / MS_AN_HOUR - longitudeDeg / 15 };
+}
