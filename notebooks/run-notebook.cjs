@@ -7,6 +7,7 @@ const fs = require('node:fs');
 const path = require('node:path');
 const { createRequire } = require('node:module');
 const { spawnSync } = require('node:child_process');
+const { cannotImport, nodeTooOld, withPlainAnswers } = require('../.jupyter/kernels/tslab/kernel.cjs');
 
 const args = process.argv.slice(2);
 const inPlace = args.includes('--in-place');
@@ -34,14 +35,15 @@ async function runNotebook(file) {
   if (!fs.existsSync(file)) fail(`Expected a notebook, there is no file ${file}. Correct the name.`);
   const notebook = JSON.parse(fs.readFileSync(file, 'utf8'));
   process.chdir(path.dirname(file)); // as Jupyter does
+  const told = nodeTooOld(process.versions.node) ?? cannotImport(process.cwd());
+  if (told !== null) fail(told);
   const fromNotebook = createRequire(file);
-  checkBuilt(fromNotebook);
   const kernel = path.join(path.dirname(fromNotebook.resolve('tslab/package.json')), 'dist');
   const { createConverter } = require(path.join(kernel, 'converter.js'));
   const { createExecutor } = require(path.join(kernel, 'executor.js'));
   const jupyter = require(path.join(kernel, 'jupyter.js'));
   const converter = createConverter({ isJS: false, isBrowser: false });
-  const executor = createExecutor(
+  const executor = withPlainAnswers(createExecutor)(
     process.cwd(),
     { node: converter, close: () => converter.close() },
     console,
@@ -87,16 +89,4 @@ async function runNotebook(file) {
   executor.close();
   if (inPlace && process.exitCode !== 1) fs.writeFileSync(file, `${JSON.stringify(notebook, null, 1)}\n`);
   if (process.exitCode !== 1) process.stdout.write(`${path.basename(file)}: ${count} cells ran\n`);
-}
-
-function checkBuilt(fromNotebook) {
-  let entry;
-  try {
-    entry = fromNotebook.resolve('ppmwise');
-  } catch {
-    fail(
-      'The package ppmwise is not built or not installed beside the notebook. Run "npm ci && npm run build" first.',
-    );
-  }
-  if (!fs.existsSync(entry)) fail('The package ppmwise is not built. Run "npm run build" first.');
 }

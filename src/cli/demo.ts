@@ -11,14 +11,18 @@ export function demoCommand(done: (code: number) => void): Command {
     .action(async (dir: string) => {
       const folder = resolve(dir);
       requireEmptyFolder(folder);
-      await mkdir(folder, { recursive: true });
-      const source = join(packageFolder(), 'datasets-demo');
-      for (const name of await readdir(source)) {
-        // The program that makes the data belongs to the project, not to a study.
-        if (!name.endsWith('.ts')) await cp(join(source, name), join(folder, name), { recursive: true });
-      }
+      await copyDemo(folder);
       const study = relative(process.cwd(), join(folder, 'study.yaml'));
       process.stdout.write(`The demo study is in ${folder}. Run it with:\n\n  npx ppmwise run ${study}\n`);
       done(0);
     });
+}
+
+/** Copies the demo study, without the program that makes its data: that belongs to the project, not to a study. */
+export async function copyDemo(folder: string): Promise<void> {
+  await mkdir(folder, { recursive: true });
+  const source = join(packageFolder(), 'datasets-demo');
+  for (const name of await readdir(source)) {
+    if (!name.endsWith('.ts')) await cp(join(source, name), join(folder, name), { recursive: true });
+  }
 }

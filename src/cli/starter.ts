@@ -51,16 +51,15 @@ EXAMPLE,44.310886625,-18.400700010,133.7214,4,8,rms,static session,,,open
 base,latitude,longitude,height,mounting
 EXAMPLE-BASE,44.312640518,-18.405217364,148.2163,tripod
 `,
-  'README.md': `# A check-shot study
+  'README.md': `# Check shots
 
-1. Put your marks and bases into \`marks.csv\` and \`bases.csv\`.
-2. Put your exported logs into \`logs/\` and let \`npx ppmwise layout logs/*\` say what it makes of them; paste its
-   answer into \`study.yaml\` where it asks for something.
-3. Look at \`study.yaml\`: tolerances, spec sheet, zone.
-4. \`npx ppmwise check study.yaml\` reads and accounts for every row.
-5. \`npx ppmwise run study.yaml\` fits, derives the rules and writes \`results/report.html\`.
+Needs Node.js 20.19 or newer. Run \`npm install\` in this folder once.
 
-Fifteen days with near and far marks are the least for a rule, thirty are sensible. A rule reaches as far as two marks
-with 20 occupations on 5 days lie: one far mark alone cannot be told from its own error.
+1. \`npm run notebook\` opens the notebooks, which show the invented study in \`demo/\`: begin with \`01-own-ppm\`.
+2. Put your marks and bases into \`marks.csv\` and \`bases.csv\` in place of the examples, your exported logs into \`logs/\`.
+3. \`npx ppmwise layout logs/*\` says what it makes of the logs; paste its answer into \`study.yaml\` where it asks for something.
+4. \`npx ppmwise check study.yaml\` reads and accounts for every row; \`npx ppmwise run study.yaml\` writes \`results/report.html\`.
+5. In the first cell of a notebook put \`../study.yaml\` in place of \`../demo/study.yaml\`, to look at your own shots.
+6. A rule needs 15 days, better 30, with near and far marks; it reaches as far as two marks with 20 occupations on 5 days lie.
 `,
 };

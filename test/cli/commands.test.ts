@@ -31,6 +31,8 @@ describe('ppmwise', () => {
     [['check', '--help']],
     [['demo', '--help']],
     [['new', '--help']],
+    [['notebook', '--help']],
+    [['watch', '--help']],
   ])('explains itself with %j', (args) => {
     const { code, out } = ppmwise(args);
     expect(code).toBe(0);
@@ -213,11 +215,17 @@ describe('new', () => {
     const { code, out } = ppmwise(['new', study]);
     expect(code).toBe(0);
     expect(out).toContain('npx ppmwise check');
+    const { version } = JSON.parse(readFileSync(join(REPOSITORY, 'package.json'), 'utf8'));
     expect(readdirSync(study).sort()).toEqual([
+      '.jupyter',
       'README.md',
       'bases.csv',
+      'demo',
       'logs',
       'marks.csv',
+      'notebooks',
+      'package.json',
+      `ppmwise-${version}.tgz`,
       'study.schema.json',
       'study.yaml',
     ]);
