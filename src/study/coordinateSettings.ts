@@ -13,7 +13,9 @@ export const coordinates = z
 
 export const heights = z
   .strictObject({
-    kind: z.enum(['ellipsoidal', 'orthometric']),
+    kind: z
+      .enum(['ellipsoidal', 'orthometric'])
+      .describe('Above the ellipsoid, or above the geoid (sea level).'),
     geoid: z
       .enum(['column', 'constant', 'grid'])
       .optional()
@@ -31,16 +33,17 @@ export const heights = z
   })
   .refine(({ geoid, file }) => (geoid === 'grid') === (file !== undefined), {
     message: 'file together with geoid: grid',
-  });
+  })
+  .describe('Kind of the heights, and the way to the other kind.');
 
 const triple = z.tuple([z.number(), z.number(), z.number()]);
 const helmert = {
   shiftM: triple.optional().describe('Along the geocentric axes x, y, z, m.'),
-  shiftMm: triple.optional(),
+  shiftMm: triple.optional().describe('The same in mm.'),
   rotationArcSeconds: triple.optional().describe('About the geocentric axes; needs `convention`.'),
-  rotationMas: triple.optional(),
+  rotationMas: triple.optional().describe('The same in thousandths of an arc second.'),
   scalePpm: z.number().optional().describe('Positive makes lengths longer.'),
-  scalePpb: z.number().optional(),
+  scalePpb: z.number().optional().describe('The same in parts per billion.'),
 };
 
 export const transformation = z
@@ -71,26 +74,26 @@ export const groundGrid = z
       .number()
       .optional()
       .describe('The point that scaling leaves where it is; default the origin.'),
-    aboutNorthingM: z.number().optional(),
+    aboutNorthingM: z.number().optional().describe('The same for northings.'),
     shiftEastingM: z
       .number()
       .optional()
       .describe('Added after scaling, such as -400000 to cut coordinates short.'),
-    shiftNorthingM: z.number().optional(),
+    shiftNorthingM: z.number().optional().describe('The same for northings.'),
   })
   .describe('Ground coordinates of a job, to be turned back to those of the projection.');
 
 export const sitePlane = z
   .strictObject({
     aboutEastingM: z.number().optional().describe('Pivot of rotation, scale and tilts; default the origin.'),
-    aboutNorthingM: z.number().optional(),
-    shiftEastingM: z.number().optional(),
-    shiftNorthingM: z.number().optional(),
+    aboutNorthingM: z.number().optional().describe('The same for northings.'),
+    shiftEastingM: z.number().optional().describe('Added to eastings, m.'),
+    shiftNorthingM: z.number().optional().describe('Added to northings, m.'),
     rotationArcSeconds: z.number().optional().describe('Clockwise.'),
-    scalePpm: z.number().optional(),
-    heightShiftM: z.number().optional(),
-    tiltEastMmPerKm: z.number().optional(),
-    tiltNorthMmPerKm: z.number().optional(),
+    scalePpm: z.number().optional().describe('Positive makes lengths longer.'),
+    heightShiftM: z.number().optional().describe('Added to heights, m.'),
+    tiltEastMmPerKm: z.number().optional().describe('Rise of the plane toward east.'),
+    tiltNorthMmPerKm: z.number().optional().describe('Rise of the plane toward north.'),
     marks: z
       .array(z.string().min(1))
       .optional()

@@ -11,9 +11,12 @@ export const units = z
   .union([
     lengthUnit,
     z.strictObject({
-      length: lengthUnit.optional(),
-      height: lengthUnit.optional(),
-      angle: z.enum(['degrees', 'dms']).optional(),
+      length: lengthUnit.optional().describe('Of plane coordinates.'),
+      height: lengthUnit.optional().describe('Of heights; default that of plane coordinates.'),
+      angle: z
+        .enum(['degrees', 'dms'])
+        .optional()
+        .describe('Degrees, or degrees, minutes and seconds; default degrees.'),
     }),
   ])
   .describe(
@@ -34,7 +37,7 @@ const valuesOutsideColumns = {
 };
 
 const delimitedLayout = z.strictObject({
-  kind: z.literal('delimited'),
+  kind: z.literal('delimited').describe('Delimited text.'),
   delimiter: z
     .string()
     .min(1)
@@ -66,7 +69,8 @@ const delimitedLayout = z.strictObject({
         .describe('IANA zone, `UTC` or an offset like "+02:00"; default the timeZone of the study.'),
       scale: z.enum(['utc', 'gps']).optional().describe('`gps` takes off the leap seconds.'),
     })
-    .optional(),
+    .optional()
+    .describe('How times are written.'),
   fixValues: z
     .record(z.string(), z.enum(['fixed', 'float', 'other']))
     .optional()
@@ -78,6 +82,11 @@ const delimitedLayout = z.strictObject({
   ...valuesOutsideColumns,
 });
 
-const nmeaLayout = z.strictObject({ kind: z.literal('nmea'), ...valuesOutsideColumns });
+const nmeaLayout = z.strictObject({
+  kind: z.literal('nmea').describe('NMEA 0183 sentences.'),
+  ...valuesOutsideColumns,
+});
 
-export const layout = z.discriminatedUnion('kind', [delimitedLayout, nmeaLayout]);
+export const layout = z
+  .discriminatedUnion('kind', [delimitedLayout, nmeaLayout])
+  .describe('How the log is written; without it its first lines are looked at.');

@@ -15,7 +15,7 @@ const share = z.number().gt(0).lt(1);
 const controlFile = z.union([
   z.string().min(1),
   z.strictObject({
-    file: z.string().min(1),
+    file: z.string().min(1).describe('Name of the file, relative to the study file.'),
     ...coordinateKeys,
     units: units.optional(),
     heightOf: heightOf.optional(),
@@ -26,7 +26,7 @@ const controlFile = z.union([
 const marksFile = z.union([
   z.string().min(1),
   z.strictObject({
-    file: z.string().min(1),
+    file: z.string().min(1).describe('Name of the file, relative to the study file.'),
     ...coordinateKeys,
     units: units.optional(),
     heightOf: heightOf.optional(),
@@ -40,7 +40,8 @@ const marksFile = z.union([
           .describe('Regular expression whose first group is the mark, for point numbers and descriptions.'),
         aliases: z.string().min(1).optional().describe('File with the columns alias and mark.'),
       })
-      .optional(),
+      .optional()
+      .describe('How logs name the marks, where they do not use the names of the marks file.'),
   }),
 ]);
 
@@ -75,7 +76,7 @@ const log = z.strictObject({
 const tolerance = z
   .strictObject({
     component: z.enum(['horizontal', 'vertical']).describe('Horizontal limits are radial.'),
-    limitMm: z.number().positive().optional(),
+    limitMm: z.number().positive().optional().describe('The tolerance, mm.'),
     limitFeet: z.number().positive().optional().describe('Instead of limitMm; one foot is 304.8 mm.'),
     share: share.default(0.95).describe("Share of a day's positions within the limit."),
     dayShare: share.default(0.9).describe('Share of days on which that must hold.'),
@@ -85,12 +86,17 @@ const tolerance = z
     message: 'one of limitMm and limitFeet',
   });
 
-const constantAndPpm = z.strictObject({ constantMm: z.number().gte(0), ppm: z.number().gte(0) });
+const constantAndPpm = z.strictObject({
+  constantMm: z.number().gte(0).describe('As stated, mm.'),
+  ppm: z.number().gte(0).describe('As stated, mm per km.'),
+});
 
 const specSheet = z.strictObject({
-  horizontal: constantAndPpm,
-  vertical: constantAndPpm,
-  form: z.enum(['root-sum-square', 'linear-sum']),
+  horizontal: constantAndPpm.describe('What it states for the plan.'),
+  vertical: constantAndPpm.describe('What it states for heights.'),
+  form: z
+    .enum(['root-sum-square', 'linear-sum'])
+    .describe('Whether the two terms are added in quadrature or as they are.'),
   axis: z.enum(['radial', 'per-axis']).describe('Whether the horizontal figure is radial or of one axis.'),
   level: z
     .enum(['rms', '68', '95'])
@@ -119,15 +125,21 @@ export const studySchema = z.strictObject({
     ),
   marks: marksFile.describe('File of the marks: mark and coordinates.'),
   bases: controlFile.describe('File of the bases: base, coordinates and mounting.'),
-  logs: z.array(log).min(1),
+  logs: z.array(log).min(1).describe('The logs, one entry for files that are written alike.'),
   period: z
-    .strictObject({ from: day, to: day })
+    .strictObject({
+      from: day.describe('First day, such as 2025-03-01.'),
+      to: day.describe('Last day, itself included.'),
+    })
     .refine(({ from, to }) => from <= to, { message: 'a first day not after the last' })
     .optional()
     .describe('Days that belong to the study; without it all do.'),
   model: z
     .strictObject({
-      form: z.enum(['root-sum-square', 'linear-sum']).default('root-sum-square'),
+      form: z
+        .enum(['root-sum-square', 'linear-sum'])
+        .default('root-sum-square')
+        .describe('σ² = a² + b² L², or σ = a + b L.'),
       reference: z
         .enum(['auto', 'absolute', 'repeatability', 'relative'])
         .default('auto')
@@ -137,7 +149,8 @@ export const studySchema = z.strictObject({
       confidence: z.number().gt(0.5).lt(1).default(0.95).describe('Level of the two-sided intervals.'),
       screen: z.boolean().default(true).describe('Look for wrong fixes and let them count less.'),
     })
-    .default({ form: 'root-sum-square', reference: 'auto', confidence: 0.95, screen: true }),
+    .default({ form: 'root-sum-square', reference: 'auto', confidence: 0.95, screen: true })
+    .describe('How the model is fitted.'),
   occupations: z
     .strictObject({
       gapSeconds: z.number().positive().default(60).describe('A longer gap begins a new visit.'),
@@ -147,7 +160,8 @@ export const studySchema = z.strictObject({
         .optional()
         .describe('Cuts long static occupations into shots of this length; default no cutting.'),
     })
-    .default({ gapSeconds: 60 }),
+    .default({ gapSeconds: 60 })
+    .describe('How positions become occupations.'),
   tolerances: z.array(tolerance).default([]).describe('What clients demand; each becomes a rule.'),
   specSheet: specSheet.optional().describe('The spec sheet to compare with.'),
   ...ruleKeys,
