@@ -5,6 +5,7 @@ export type { ChartSpec } from './chartSpec.js';
 export { type DaysInput, daysChart } from './daysChart.js';
 export type { DayCause } from './daysFactors.js';
 export { type ErrorByBaselineInput, errorByBaselineChart } from './errorByBaselineChart.js';
+export type { HeightKind } from './errorWords.js';
 export { type HourDayInput, hourDayChart } from './hourDayChart.js';
 export { type HourPpmInput, hourPpmChart } from './hourPpmChart.js';
 export { type JobMapInput, jobMapChart } from './jobMapChart.js';

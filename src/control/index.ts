@@ -13,9 +13,9 @@ export { SIGMA_LEVELS, type SigmaLevel, sigmaLevel, sigmasIn } from './sigmaLeve
 export {
   coordinatesOn,
   holdsOn,
+  type MarkSky,
   type PointCoordinates,
   SKIES,
-  type Sky,
   type Versioned,
   validityWords,
 } from './versions.js';

@@ -2,12 +2,12 @@ import { InputError, inputError, type Message, message, quoted } from '../logs/i
 import type { ControlFile } from './controlFile.js';
 import { pointVersions } from './pointVersions.js';
 import { type ControlRow, readControlRows } from './readControl.js';
-import { type PointCoordinates, SKIES, type Sky, type Versioned } from './versions.js';
+import { type MarkSky, type PointCoordinates, SKIES, type Versioned } from './versions.js';
 
 /** A point with known coordinates; its own fields are those of its latest version. */
 export interface Mark extends PointCoordinates, Versioned {
   readonly name: string;
-  readonly sky: Sky;
+  readonly sky: MarkSky;
 }
 
 /** Marks by name, in the order of the file. */

@@ -2,7 +2,7 @@ import type { Geodetic } from '../geodesy/index.js';
 
 /** What a point's sky is like, as the marks file states it; empty when it does not. */
 export const SKIES = ['open', 'partly', 'obstructed'] as const;
-export type Sky = (typeof SKIES)[number] | '';
+export type MarkSky = (typeof SKIES)[number] | '';
 
 /** Coordinates of a mark or base with where they come from and when they hold. */
 export interface PointCoordinates {

@@ -40,7 +40,7 @@ export interface ModeratedDay {
 }
 
 /**
- * The days by moderated variances, see {@link moderatedDaysOf}.
+ * The days by moderated variances, see `moderatedDaysOf`.
  * @returns no rows where the fit has no ppm above 0
  * @throws InputError when a column is missing (`startMs` gives the order of shots)
  */

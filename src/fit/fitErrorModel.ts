@@ -26,7 +26,7 @@ const SCREENED_ON = { absolute: 'errors', repeatability: 'mark-medians', relativ
  * Fits σ² = a² + b² L² (or σ = a + b L, form `linear-sum`) to the errors of occupations and gives a and b with intervals
  * that count days, not shots.
  *
- * Point estimate: gamma quasi-likelihood ({@link solveForm}). Intervals: cluster-robust covariance CR3 by day with
+ * Point estimate: gamma quasi-likelihood (`solveForm`). Intervals: cluster-robust covariance CR3 by day with
  * Satterthwaite degrees of freedom, on the log scale beyond two standard errors; for data with little information on
  * distance the inverted day score. The horizontal component is radial: σ is the root-mean-square of √(E² + N²).
  * With `screen` suspected wrong fixes count less ({@link screenWrongFixes}); their weights are then taken as known.

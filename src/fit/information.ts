@@ -4,7 +4,8 @@ import type { SquaredErrors } from './scoring.js';
 /**
  * How much the data say of the distance term apart from the constant, about the number of shots that speak of distance:
  * Σ w B² (l - l̄)²/μ² for root-sum-square, and the same information on log b² for linear-sum.
- * @param p,q displayed parameters of the form
+ * @param p first displayed parameter of the form
+ * @param q second displayed parameter of the form
  */
 export function informationNumber(
   { y, l, w }: SquaredErrors,

@@ -6,7 +6,8 @@ import type { SquaredErrors } from './scoring.js';
  * Interval of q (b², or b in linear-sum) by inverting the self-normalised day score, for data that hold little
  * information on distance: for a trial q the constant is fitted, the day scores of q are freed of the constant, and q
  * is kept while their sum over its day-clustered error stays within Student t with G - 1. Cut at 0.
- * @param p,q the solution
+ * @param p first parameter of the solution
+ * @param q second parameter of the solution
  * @returns limits in the unit of q; an upper limit of Infinity when no q is rejected
  */
 export function scoreLimits(

@@ -14,6 +14,7 @@ export { type CoordinateSystem, type KnownSystem, systemOf } from './coordinateS
 export { parseDms } from './dms.js';
 export { type EpochBag, EpochStore } from './epochStore.js';
 export type { DelimitedHeader, DelimitedOptions } from './header.js';
+export type { LogLengthUnit } from './layout.js';
 export {
   type DelimitedLayout,
   type LogLayout,

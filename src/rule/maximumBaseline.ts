@@ -130,7 +130,8 @@ export function noRule(
 
 /**
  * Length at which σ of a form reaches the allowed one; null when the constant alone exceeds it, Infinity without growth.
- * @param p,q displayed parameters: a² and b² for root-sum-square, a and b for linear-sum
+ * @param p displayed parameter: a² for root-sum-square, a for linear-sum
+ * @param q displayed parameter: b² for root-sum-square, b for linear-sum
  */
 export function lengthWithin(
   p: number,

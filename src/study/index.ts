@@ -10,6 +10,7 @@ export type {
   TimeOfDayResult,
 } from './dayResultTypes.js';
 export type { EvidenceResult, TermsResult } from './evidenceResultTypes.js';
+export type { NamedFile } from './fileFinder.js';
 export type {
   ComparisonResult,
   FitResult,
@@ -22,6 +23,7 @@ export type {
 export type { StatedSetting } from './flatSettings.js';
 export type { HoursOfCaution } from './hoursOfCaution.js';
 export type { InputFile } from './inputFiles.js';
+export type { JudgedDays } from './judgeDays.js';
 export {
   REPORT_UNITS,
   type ReaderUnit,
@@ -47,15 +49,8 @@ export type { WrongFixes } from './screenStudy.js';
 export { type StudySettings, studyJsonSchema } from './settings.js';
 export { type SkyInput, skyOfDays } from './skyOfDays.js';
 export { type SkyPoint, skyPoints } from './skyPoints.js';
-export {
-  SKY_OUTCOMES,
-  type Sky,
-  type SkyAssociation,
-  type SkyDay,
-  type SkyMeasure,
-  type SkyOutcome,
-  type SkyThreshold,
-} from './skyResult.js';
+export type { Sky, SkyAssociation, SkyDay, SkyMeasure, SkyOutcome, SkyThreshold } from './skyResult.js';
+export { SKY_MEASURES, SKY_OUTCOMES } from './skyResult.js';
 export { softwareVersion } from './softwareVersion.js';
 export type { JobFile, Study } from './study.js';
 export type { StudyJob } from './studyJobs.js';

@@ -52,7 +52,7 @@ const DAYS_OF_MARK = 3;
 
 /**
  * Finds suspected wrong fixes: gross errors that stand apart from what the length and the day explain, as vectors of all
- * known components ({@link fitMixture}). Nothing is deleted: each row gets a weight.
+ * known components (`fitMixture`). Nothing is deleted: each row gets a weight.
  * @param errors with `day`, `baselineKm` and any of `east`, `north`, `up` (mm); `mark` for `mark-medians`; `startMs` and
  *   `rover` tell runs of wrong fixes from single ones
  * @throws InputError when an option is wrong or a column is missing

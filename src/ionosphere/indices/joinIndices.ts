@@ -9,16 +9,17 @@ import {
   indexAt,
 } from './indexSeries.js';
 
-/** Columns that are joined, and the index in each. */
-const JOINED = {
+/** A column that is joined to occupations. */
+export type JoinedIndexName = 'kp' | 'ap' | 'hp30' | 'dst' | 'f107' | 'apDaily';
+/** The index in each. */
+const JOINED: Readonly<Record<JoinedIndexName, IndexName>> = {
   kp: 'kp',
   ap: 'ap',
   hp30: 'hp30',
   dst: 'dst',
   f107: 'f107Observed',
   apDaily: 'apDaily',
-} as const satisfies Record<string, IndexName>;
-export type JoinedIndexName = keyof typeof JOINED;
+};
 export const JOINED_INDEX_NAMES = Object.keys(JOINED) as readonly JoinedIndexName[];
 
 /** Indices at the start of each occupation, in the order of the rows. */

@@ -2,7 +2,8 @@
  * Radius that holds 95 % of the errors of an ellipse with these standard deviations, by the cubic in use for circular
  * positional uncertainty (Leenhouts 1985, from memory; coefficients as published by Australian government geodesists):
  * within 0.18 % of the exact radius.
- * @param majorMm,minorMm standard deviations along the axes, in any order and unit
+ * @param majorMm standard deviation along one axis, in any unit
+ * @param minorMm standard deviation along the other axis, in the same unit
  */
 export function circularUncertainty95(majorMm: number, minorMm: number): number {
   const major = Math.max(majorMm, minorMm);
