@@ -42,6 +42,22 @@ export interface HeightAllowance {
   readonly seenM?: number | undefined;
 }
 
+/** A screening whose suspects on crowded days are taken as good; null when no day was crowded. */
+export function crowdedScreeningKept(
+  errors: readonly { readonly day: string }[],
+  screening: Screening,
+): Screening | null {
+  const crowded = new Set(screening.crowdedDays);
+  if (crowded.size === 0) return null;
+  const kept = (row: number): boolean => crowded.has(errors[row]!.day);
+  return {
+    ...screening,
+    weights: screening.weights.map((weight, row) => (kept(row) ? 1 : weight)),
+    responsibilities: screening.responsibilities.map((pi, row) => (kept(row) && !Number.isNaN(pi) ? 0 : pi)),
+    suspected: screening.suspected.filter((row) => !kept(row)),
+  };
+}
+
 /**
  * Fits the errors again with the suspects of crowded days taken as good: three suspects on a day may be a burst of
  * wrong fixes or a degraded day, and a rule must hold for either.
@@ -54,23 +70,15 @@ export function crowdedDaysKept(
   model: ErrorModel,
   screening: Screening,
 ): RuleGround | null {
-  const crowded = new Set(screening.crowdedDays);
-  if (crowded.size === 0) return null;
-  const kept = (row: number): boolean => crowded.has(errors[row]!.day);
-  const weights = screening.weights.map((weight, row) => (kept(row) ? 1 : weight));
+  const kept = crowdedScreeningKept(errors, screening);
+  if (kept === null) return null;
+  const { weights } = kept;
   const { component, form, reference, confidence } = model;
   const again = fitErrorModel(errors, { component, form, reference, confidence, weights });
   return {
     model: again,
     dayModel: form === 'root-sum-square' ? dayModel(errors, again, weights) : null,
-    wrongFixes: wrongFixGrowth(errors, {
-      ...screening,
-      weights,
-      responsibilities: screening.responsibilities.map((pi, row) =>
-        kept(row) && !Number.isNaN(pi) ? 0 : pi,
-      ),
-      suspected: screening.suspected.filter((row) => !kept(row)),
-    }),
+    wrongFixes: wrongFixGrowth(errors, kept),
   };
 }
 

@@ -30,6 +30,7 @@ export function testRules(
       specSheet,
       ...usedBaseErrors(component, input),
       formDoubt: input.doubts.get(component),
+      crowdedDaysKept: input.options.get(component)!.crowdedDaysKept,
       height: component === 'vertical' ? input.height : undefined,
     };
     try {

@@ -60,6 +60,8 @@ export function backTest(errors: ErrorsInput, model: ErrorModel, options: BackTe
   const tolerances = (options.tolerances ?? []).filter((each) => each.component === component);
   const posterior = model.form === 'root-sum-square' ? (dayModel?.posterior ?? null) : null;
   const withoutDay = posterior && nodesWithoutDay(posterior);
+  const keptPosterior = posterior && (options.crowdedDaysKept?.dayModel?.posterior ?? null);
+  const keptWithoutDay = keptPosterior && nodesWithoutDay(keptPosterior);
   const rules = ruleJudges(data, tolerances, options, screening);
   const sheet = specSheet && tolerances.map((tolerance) => new RuleCounter(tolerance, columns, data.weights));
   const allowed =
@@ -84,6 +86,16 @@ export function backTest(errors: ErrorsInput, model: ErrorModel, options: BackTe
             nodes: withoutDay(day).map((node) => ({ ...node, A: (node.A * fitted.displayP) / posterior.A })),
           }
         : null;
+    const keptNodes: DayNodes | null =
+      nodes && keptWithoutDay && keptPosterior
+        ? {
+            B: keptPosterior.B,
+            nodes: keptWithoutDay(day).map((node) => ({
+              ...node,
+              A: (node.A * fitted.displayP) / posterior!.A,
+            })),
+          }
+        : null;
     const mixture = nodes && mixtureLimit(component, nodes, fitted.displayP);
     shots.rows.forEach((row, k) => {
       const km = Math.sqrt(shots.l[k]!);
@@ -104,7 +116,7 @@ export function backTest(errors: ErrorsInput, model: ErrorModel, options: BackTe
         );
       }
     });
-    rules.judge(day, others, shots, nodes);
+    rules.judge(day, others, shots, [nodes, keptNodes]);
     for (const [t, counter] of sheet?.entries() ?? []) counter.addDay(day, shots, allowed[t]!);
   }
   return {

@@ -4,6 +4,7 @@ import { axesOf, type Component, type ErrorModel, fitErrorModel, sigmaAtMm } fro
 import { InputError } from '../../logs/index.js';
 import { findFormDoubt } from '../formDoubt.js';
 import { frozenMarks, newErrors } from '../frozenMarks.js';
+import { crowdedDaysKept } from '../ground.js';
 import { maximumBaseline } from '../maximumBaseline.js';
 import { recordsOf } from '../records.js';
 import { toleranceFactorAt } from '../tolerance.js';
@@ -13,7 +14,7 @@ import { logDensity } from './limits.js';
 import type { BackTestOptions } from './options.js';
 import { type BackTestScore, scoreShots } from './score.js';
 import { refuseRelative } from './train.js';
-import { growthOf, usable } from './withoutRows.js';
+import { growthOf, screeningOf, usable } from './withoutRows.js';
 
 /** The first days fitted, the later ones judged, as it will be in use. */
 export interface ForwardTest {
@@ -102,6 +103,10 @@ export function forwardTest(
   const ground = {
     dayModel: form === 'root-sum-square' ? dayModel(own, fit, ownWeights) : null,
     wrongFixes: growthOf(records, screening, before),
+    crowdedDaysKept:
+      screening === null || ownWeights === undefined
+        ? null
+        : crowdedDaysKept(own as readonly { readonly day: string }[], fit, screeningOf(screening, before)),
     baseSigmaMm,
     basePpm,
     height,

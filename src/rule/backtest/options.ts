@@ -1,7 +1,7 @@
 import type { DayModel } from '../../days/index.js';
 import type { Screening } from '../../fit/index.js';
 import type { FormDoubt } from '../formDoubt.js';
-import type { HeightAllowance } from '../ground.js';
+import type { HeightAllowance, RuleGround } from '../ground.js';
 import type { SpecSheet } from '../specSheet.js';
 import type { Tolerance } from '../tolerance.js';
 
@@ -16,6 +16,8 @@ export interface BackTestOptions {
   readonly tolerances?: readonly Tolerance[] | undefined;
   /** To be judged beside the own model, as a rule like any other. */
   readonly specSheet?: SpecSheet | null | undefined;
+  /** The ground with the suspects of crowded days taken as good: of both rules the shorter one is judged. */
+  readonly crowdedDaysKept?: RuleGround | null | undefined;
   readonly baseSigmaMm?: number | undefined;
   readonly basePpm?: number | undefined;
   readonly height?: HeightAllowance | undefined;
