@@ -13,6 +13,7 @@ import { blundersSection } from './blundersSection.js';
 import { commonSection } from './commonSection.js';
 import { type Html, html } from './html.js';
 import { htmlPage } from './htmlPage.js';
+import { annexJobs } from './jobsSection.js';
 import { marksSection } from './marksSection.js';
 import { messagesSection } from './messagesSection.js';
 import { Page } from './page.js';
@@ -26,6 +27,7 @@ const CONTENTS: readonly (readonly [id: string, words: string])[] = [
   ['evidence', 'What the ppm rests on'],
   ['groups', 'Further terms; crews, receivers and bases apart'],
   ['rules', 'Rules and back-test'],
+  ['jobs', 'The points of jobs from every base'],
   ['common', 'What all positions have in common'],
   ['marks', 'Marks'],
   ['days', 'Days, hours and setups'],
@@ -55,6 +57,7 @@ ${annexFits(page, [figure(pictures.horizontal), figure(pictures.vertical)])}
 ${annexEvidence(page)}
 ${annexGroups(page)}
 ${annexRules(page)}
+${annexJobs(page, pictures.jobs)}
 ${commonSection(page)}
 ${marksSection(page, { map: pictures.maps.map((map) => figure(map)!), means: figure(pictures.markMeans) })}
 ${annexDays(page, pictures)}

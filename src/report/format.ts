@@ -9,6 +9,7 @@ export type NumberKind =
   | 'error to a hundredth'
   | 'signed error'
   | 'error on a card'
+  | 'error rounded up'
   | 'limit'
   | 'distance'
   | 'distance, rounded down'
@@ -36,6 +37,8 @@ export function formatNumber(value: number | null, kind: NumberKind, units: Read
       return inUnit(value, { ...error, decimals: error.decimals + 1 });
     case 'error on a card':
       return inUnit(value, { ...error, decimals: error.decimals - 1 });
+    case 'error rounded up':
+      return roundedUp(value * error.perOurs, error.decimals - 1);
     case 'signed error':
       return signed(value * error.perOurs, error.decimals);
     case 'limit':
@@ -95,6 +98,12 @@ export function signed(value: number, digits: number): string {
 function clock(hours: number): string {
   const minutes = Math.round(hours * 60);
   return `${Math.floor(minutes / 60)}:${String(minutes % 60).padStart(2, '0')}`;
+}
+
+/** A limit that is promised, rounded up: rounding down would promise what was not shown. */
+function roundedUp(value: number, decimals: number): string {
+  const step = 10 ** decimals;
+  return (Math.ceil(value * step - 1e-9) / step).toFixed(decimals);
 }
 
 /** A distance that is promised, rounded down: rounding up would promise what was not shown. */

@@ -6,6 +6,8 @@ import { fitSection } from './fitSection.js';
 import { GLOSSARY } from './glossary.js';
 import { type Html, html } from './html.js';
 import { htmlPage } from './htmlPage.js';
+import { jobsSection } from './jobsSection.js';
+import { leftOutSection } from './leftOutSection.js';
 import { letterHead, signature } from './letterHead.js';
 import { messagesSection } from './messagesSection.js';
 import { METHOD } from './method.js';
@@ -26,8 +28,10 @@ export function reportHtml(results: Results, pictures: ReportPictures): string {
 ${ruleSection(page)}
 ${proofSection(page, pictures.proof)}
 ${movesSection(page, figure(pictures.moves))}
+${jobsSection(page, pictures.jobs)}
 ${fitSection(page)}
 ${daysSection(page)}
+${leftOutSection(page)}
 ${ruleTableSection(page)}
 ${accountSection(page)}
 ${messagesSection(page)}
