@@ -7,19 +7,27 @@ const HEIGHT_PX = 90;
 /** Kp 5-, where the storm scale of NOAA begins: G1, a minor storm. */
 const STORM_KP = 14 / 3;
 
+/** Which activity of `SkyDay` is drawn. */
+export type Activity = 'kpMax' | 'hpMax' | 'ap';
+
+export const activityWords = (measure: Activity): string =>
+  ({ kpMax: 'greatest Kp', hpMax: 'greatest Hp', ap: 'Ap' })[measure];
+
 /** Bars of geomagnetic activity, one a day. */
 export function activityPanel(
-  measure: 'kpMax' | 'ap',
+  measure: Activity,
   bars: readonly { readonly day: string; readonly value: number }[],
   x: View,
   degraded: readonly string[],
 ): View {
-  const isKp = measure === 'kpMax';
-  const most = isKp ? 9 : roundUp(Math.max(...bars.map(({ value }) => value), 10));
+  const isAp = measure === 'ap';
+  const most = isAp
+    ? roundUp(Math.max(...bars.map(({ value }) => value), 10))
+    : Math.max(9, ...bars.map(({ value }) => Math.ceil(value)));
   const y = {
     type: 'quantitative',
     scale: { domain: [0, most], nice: false },
-    axis: { title: isKp ? 'greatest Kp' : 'Ap', ...(isKp ? { values: [0, 3, 5, 7, 9] } : { tickCount: 4 }) },
+    axis: { title: activityWords(measure), ...(isAp ? { tickCount: 4 } : { values: [0, 3, 5, 7, 9, 12] }) },
   };
   return {
     width: DAYS_WIDTH_PX,
@@ -31,7 +39,7 @@ export function activityPanel(
         mark: { type: 'bar', color: COLORS.water },
         encoding: { x: { ...x, field: 'day' }, y: { ...y, field: 'value' } },
       },
-      ...(isKp ? stormLine(y) : []),
+      ...(measure === 'kpMax' ? stormLine(y) : []),
     ],
   };
 }

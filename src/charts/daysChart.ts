@@ -3,7 +3,7 @@ import { inputError } from '../logs/index.js';
 import type { SkyDay } from '../study/index.js';
 import { type ChartSpec, chartSpec, type View } from './chartSpec.js';
 import { calendarDays, dayChannel } from './dayAxis.js';
-import { activityPanel } from './daysActivity.js';
+import { type Activity, activityPanel } from './daysActivity.js';
 import { type DayCause, factorPanel, kindsOf } from './daysFactors.js';
 import { daysDescription, daysSubtitle, daysTitle } from './daysWords.js';
 
@@ -15,8 +15,8 @@ export interface DaysInput {
   readonly explanations?: readonly DayCause[] | undefined;
   /** Days of `results.sky`: their activity is drawn as bars beneath. */
   readonly sky?: readonly SkyDay[] | undefined;
-  /** Which activity; default the greatest Kp where it is known, else Ap. */
-  readonly activity?: 'kpMax' | 'ap' | undefined;
+  /** Which activity; default the greatest Kp where it is known, else Ap, else the greatest Hp. */
+  readonly activity?: 'kpMax' | 'hpMax' | 'ap' | undefined;
 }
 
 /**
@@ -33,7 +33,8 @@ export function daysChart({ factors, explanations = [], sky = [], activity }: Da
   const days = calendarDays(factors.map(({ day }) => day));
   const shown = new Set(days);
   const inRange = sky.filter(({ day }) => shown.has(day));
-  const measure = activity ?? (inRange.some(({ kpMax }) => kpMax !== null) ? 'kpMax' : 'ap');
+  const isKnown = (name: Activity): boolean => inRange.some((one) => one[name] !== null);
+  const measure = activity ?? (['kpMax', 'ap', 'hpMax'] as const).find(isKnown) ?? 'kpMax';
   const bars = inRange.flatMap((one) =>
     one[measure] === null ? [] : [{ day: one.day, value: one[measure] }],
   );

@@ -1,6 +1,7 @@
 import type { DailyFactor } from '../days/index.js';
 import type { Component } from '../fit/index.js';
 import { dayWords, yearWords } from './dayAxis.js';
+import { type Activity, activityWords } from './daysActivity.js';
 import { counted } from './words.js';
 
 /** What title and description of the days are made from. */
@@ -8,7 +9,7 @@ export interface DaysWords {
   readonly factors: readonly DailyFactor[];
   readonly components: readonly Component[];
   readonly hasBars: boolean;
-  readonly measure: 'kpMax' | 'ap';
+  readonly measure: Activity;
 }
 
 interface Count {
@@ -42,7 +43,7 @@ export function daysSubtitle(words: DaysWords): string[] {
   const columns = countsOf(words).some(({ degraded }) => degraded !== null && degraded.length > 0)
     ? ['grey columns: degraded days']
     : [];
-  const bars = hasBars ? [`bars: ${measure === 'kpMax' ? 'greatest Kp' : 'Ap'} of the day`] : [];
+  const bars = hasBars ? [`bars: ${activityWords(measure)} of the day`] : [];
   const second = [...columns, ...bars].join('; ');
   return [
     'A day’s ppm over that of the median day, with 95 % bands; dashed: 1.5 times',

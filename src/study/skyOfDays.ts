@@ -43,11 +43,12 @@ export function skyOfDays(
   const tec = maps === null ? null : dayTec(maps, site, withDaysBefore(spans, maps, timeZone, site));
   const tecOf = new Map(tec?.days.map((one) => [one.day, one]));
   const missing = sharesWithoutFix(visits);
-  const sky = activity.map(({ day, apMean, kpMax, f107, dstMin, knownShare }): SkyDay => {
+  const sky = activity.map(({ day, apMean, kpMax, hp30Max, hp60Max, f107, dstMin, knownShare }): SkyDay => {
     return {
       day,
       ap: known(apMean),
       kpMax: known(kpMax),
+      hpMax: known(hp30Max) ?? known(hp60Max),
       f107: known(f107),
       dstMin: known(dstMin),
       indexShare: knownShare,

@@ -14,6 +14,7 @@ export interface SkyPoint {
 const MEASURES: Readonly<Record<SkyMeasure, (day: SkyDay) => number | null>> = {
   Ap: ({ ap }) => ap,
   'greatest Kp': ({ kpMax }) => kpMax,
+  'greatest Hp': ({ hpMax }) => hpMax,
   'F10.7': ({ f107 }) => f107,
   'least Dst': ({ dstMin }) => dstMin,
   TEC: ({ tecMean }) => tecMean,

@@ -7,11 +7,13 @@ export interface SkyDay {
   /** Mean of ap over the day; for a UTC day this is Ap before rounding. */
   readonly ap: number | null;
   readonly kpMax: number | null;
+  /** Greatest Hp30 of the day, of Hp60 where no file has Hp30; unlike Kp it goes on above 9. */
+  readonly hpMax: number | null;
   /** Observed F10.7, solar flux units. */
   readonly f107: number | null;
   /** nT. */
   readonly dstMin: number | null;
-  /** Share of the day for which Kp or ap is known: below 1 a disturbance may have been missed. */
+  /** Share of the day for which Kp is known (without it ap or Hp): below 1 a disturbance may have been missed. */
   readonly indexShare: number;
   /** Vertical TEC of the daytime over the site, TECU. */
   readonly tecMean: number | null;
@@ -37,6 +39,7 @@ export type SkyOutcome = (typeof SKY_OUTCOMES)[number];
 export const SKY_MEASURES = [
   'Ap',
   'greatest Kp',
+  'greatest Hp',
   'F10.7',
   'least Dst',
   'TEC',

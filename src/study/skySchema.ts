@@ -8,6 +8,7 @@ const skyDay = z.strictObject({
   day: z.string(),
   ap: nullable.describe('Mean of ap over the day.'),
   kpMax: nullable,
+  hpMax: nullable.describe('Of Hp30, without it of Hp60.'),
   f107: nullable.describe('Observed, solar flux units.'),
   dstMin: nullable.describe('nT.'),
   indexShare: z.number(),

@@ -163,6 +163,7 @@ describe('daysChart', () => {
       day,
       ap: k,
       kpMax: k % 9,
+      hpMax: k / 2 + 0.5,
       f107: null,
       dstMin: null,
       indexShare: 1,
@@ -280,7 +281,10 @@ describe('daysChart', () => {
     expect(values(daysChart({ factors, sky, activity: 'ap' }))).toEqual(sky.map(({ ap }) => ap));
     const withoutKp = sky.map((one) => ({ ...one, kpMax: null }));
     expect(values(daysChart({ factors, sky: withoutKp }))).toEqual(sky.map(({ ap }) => ap));
-    const nothing = daysChart({ factors, sky: withoutKp.map((one) => ({ ...one, ap: null })) });
+    const withHp = withoutKp.map((one) => ({ ...one, ap: null }));
+    expect(values(daysChart({ factors, sky: withHp }))).toEqual(sky.map(({ hpMax }) => hpMax));
+    expect(daysChart({ factors, sky: withHp }).subtitle[1]).toContain('bars: greatest Hp of the day');
+    const nothing = daysChart({ factors, sky: withHp.map((one) => ({ ...one, hpMax: null })) });
     expect(bars(nothing)).toEqual([]);
     expect(panels(nothing)).toHaveLength(1);
     expect(panels(daysChart({ factors, sky }))).toHaveLength(2);

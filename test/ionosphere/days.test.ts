@@ -62,6 +62,7 @@ describe('dayIndices', () => {
       apMean: 7.5,
       kpMax: 3.333,
       hp30Max: Number.NaN,
+      hp60Max: Number.NaN,
       dstMin: Number.NaN,
       f107: 196.1,
       knownShare: 1,
@@ -90,6 +91,7 @@ describe('dayIndices', () => {
       apMean: Number.NaN,
       kpMax: Number.NaN,
       hp30Max: Number.NaN,
+      hp60Max: Number.NaN,
       dstMin: Number.NaN,
       f107: Number.NaN,
       knownShare: 0,
@@ -111,7 +113,7 @@ describe('joinIndices', () => {
       expect([...columns.apDaily]).toEqual([8, 8, 6]);
       expect([...columns.f107]).toEqual([196.1, 196.1, 180.3]);
       expect([...columns.dst]).toEqual([Number.NaN, Number.NaN, Number.NaN]);
-      expect(withoutValue).toEqual({ kp: 0, ap: 0, hp30: 3, dst: 3, f107: 0, apDaily: 0 });
+      expect(withoutValue).toEqual({ kp: 0, ap: 0, hp30: 3, hp60: 3, dst: 3, f107: 0, apDaily: 0 });
       // an index that no file held is nothing to complain of
       expect(messages).toEqual([]);
     }

@@ -227,6 +227,25 @@ describe('skyOfDays', () => {
     expect(messages[0]!.text).toContain('Going together names no cause');
   });
 
+  it('takes the greatest Hp of a day where that is what the files have', () => {
+    const hp = skyOfDays(
+      input({ days: ['2025-06-19', '2025-06-20'], indices: readIndices(HP_FILE, 'hp').indices }),
+    );
+    // the greatest of the column Hp30 of each day
+    const greatest = ['2025 06 19', '2025 06 20'].map((day) =>
+      Math.max(
+        ...HP_FILE.split('\n')
+          .filter((line) => line.startsWith(day))
+          .map((line) => Number(line.trim().split(/\s+/)[7])),
+      ),
+    );
+    expect(greatest.every((value) => value > 0)).toBe(true);
+    expect(hp.days.map(({ hpMax, kpMax, indexShare }) => [hpMax, kpMax, indexShare])).toEqual(
+      greatest.map((value) => [value, null, 1]),
+    );
+    expect(skyOfDays(input()).days.every(({ hpMax }) => hpMax === null)).toBe(true);
+  });
+
   it('judges thresholds of Kp only where days could be named', () => {
     const named = skyOfDays(input()).thresholds;
     expect(named.map(({ component, days: count }) => [component, count])).toEqual([['horizontal', 18]]);

@@ -10,17 +10,19 @@ export interface DayIndices {
   readonly kpMax: number;
   /** Greatest Hp30 of the intervals that overlap the day. */
   readonly hp30Max: number;
+  /** The same of Hp60. */
+  readonly hp60Max: number;
   /** Smallest Dst of the hours that overlap the day, nT. */
   readonly dstMin: number;
   /** Observed F10.7 of the UTC day in which the middle of the day lies, solar flux units. */
   readonly f107: number;
-  /** Share of the day for which Kp (or, without it, ap) is known, 0 to 1: below 1, extremes may have been missed. */
+  /** Share of the day for which Kp is known (without it ap, Hp30 or Hp60), 0 to 1: below 1, extremes may have been missed. */
   readonly knownShare: number;
 }
 
 /** Summaries of days, in their order. A local day need not be a UTC day: intervals are taken as they overlap it. */
 export function dayIndices(days: readonly DaySpan[], indices: GeomagneticIndices): DayIndices[] {
-  const { kp, ap, hp30, dst } = indices.series;
+  const { kp, ap, hp30, hp60, dst } = indices.series;
   return days.map((span) => {
     const f107 = indexAt(indices, 'f107Observed', (span.startMs + span.endMs) / 2);
     return {
@@ -28,9 +30,10 @@ export function dayIndices(days: readonly DaySpan[], indices: GeomagneticIndices
       apMean: overlap(ap, span).mean,
       kpMax: overlap(kp, span).max,
       hp30Max: overlap(hp30, span).max,
+      hp60Max: overlap(hp60, span).max,
       dstMin: overlap(dst, span).min,
       f107,
-      knownShare: overlap(kp ?? ap, span).knownShare,
+      knownShare: overlap(kp ?? ap ?? hp30 ?? hp60, span).knownShare,
     };
   });
 }

@@ -16,6 +16,7 @@ const JOINED: Readonly<Record<JoinedIndexName, IndexName>> = {
   kp: 'kp',
   ap: 'ap',
   hp30: 'hp30',
+  hp60: 'hp60',
   dst: 'dst',
   f107: 'f107Observed',
   apDaily: 'apDaily',
