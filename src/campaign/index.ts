@@ -1,9 +1,9 @@
 export type { Blunder } from './blunders.js';
 export type { ComponentTruth } from './componentTruth.js';
 export { basesText, marksText } from './controlText.js';
-export { CAMPAIGN_DEFAULTS, MARK_GENERATOR_DEFAULTS, SWITCHED_ON_DEFAULTS } from './defaults.js';
+export { CAMPAIGN_DEFAULTS } from './defaults.js';
 export type { LogRow } from './epochs.js';
-export { LOG_COLUMNS, logText, rowsByMonth } from './logText.js';
+export { logText, rowsByMonth } from './logText.js';
 export type { CampaignMark, MarkGenerator, MarkPlan } from './marks.js';
 export type {
   Axes,

@@ -9,10 +9,9 @@ export { type Mark, type Marks, readMarks } from './marks.js';
 export { type MarkInterval, type MarkTimes, markAt, readMarkTimes } from './markTimes.js';
 export { matchRowNames, type NameRules, type RowNames } from './names.js';
 export { NearestMark } from './nearestMark.js';
-export { SIGMA_LEVELS, type SigmaLevel, sigmaLevel, sigmasIn } from './sigmaLevel.js';
+export { type SigmaLevel, sigmaLevel, sigmasIn } from './sigmaLevel.js';
 export {
   coordinatesOn,
-  holdsOn,
   type MarkSky,
   type PointCoordinates,
   SKIES,

@@ -32,15 +32,14 @@ export {
   type DayCovariates,
   type ExplainOptions,
   explainDay,
-  explainDaysOf,
   judgeDegradedDays,
 } from './explainDay.js';
-export { falseDiscoveryAdjusted, familyAdjusted } from './falseDiscovery.js';
+export { familyAdjusted } from './falseDiscovery.js';
 export { type FittedSpread, fittedData, fittedSpread } from './fittedSpread.js';
 export { type HourClasses, hourClasses } from './hourClasses.js';
 export { type HourDayCell, type HourDayOptions, hourDayRatios } from './hourDayRatios.js';
 export type { HourHarmonics } from './hourHarmonics.js';
-export { type ModeratedDay, moderatedDays, moderatedDaysOf } from './moderatedVariance.js';
+export { type ModeratedDay, moderatedDays } from './moderatedVariance.js';
 export { nodesWithoutDay } from './nodesWithoutDay.js';
 export type { OffsetTest } from './setupOffsets.js';
 export {
@@ -48,6 +47,5 @@ export {
   type TimeOfDay,
   type TimeOfDayOptions,
   timeOfDay,
-  timeOfDayOf,
 } from './timeOfDay.js';
-export { type DayDependence, dayDependence, dayDependenceOf } from './weekClusters.js';
+export { type DayDependence, dayDependence } from './weekClusters.js';

@@ -2,12 +2,8 @@ export {
   type ClusterTerms,
   type CovarianceKind,
   clusterTerms,
-  contrastVariance,
   covariance,
-  degreesOfFreedom,
-  dominantDay,
   naiveCovariance,
-  sharedMeansFactor,
 } from './clusterCovariance.js';
 export { type CompareOptions, type Comparison, compareForms, type DayScore } from './compareForms.js';
 export { type CurvePoint, errorCurve, sigmaAtMm, sigmaLimitsMm, sigmaUpperLimitMm } from './errorCurve.js';
@@ -46,11 +42,9 @@ export { fitErrorModel } from './fitErrorModel.js';
 export {
   type Axis,
   axesOf,
-  BASIS,
   COMPONENT_COLUMNS,
   type Component,
   type FitComponent,
-  FORM_CURVES,
   type Form,
   type FormCurve,
   spreadMm,
@@ -65,7 +59,7 @@ export {
   type GroupVerdict,
 } from './groups/fitByGroup.js';
 export { informationNumber } from './information.js';
-export { type ContrastEstimate, contrastEstimate, varianceLimits, varianceUpperLimit } from './intervals.js';
+export { type ContrastEstimate, contrastEstimate, varianceLimits } from './intervals.js';
 export { type DayInfluence, type Jackknife, jackknifeByDay } from './jackknife.js';
 export type { FitOptions } from './options.js';
 export { type FitData, prepareErrors } from './prepareErrors.js';
@@ -82,7 +76,7 @@ export type { ScaleTrend } from './reference/scaleTrend.js';
 export { type SetupOffsets, setupOffsets } from './reference/setupOffsets.js';
 export { type MarkTest, type TestMarksOptions, testMarks } from './reference/testMarks.js';
 export { azimuthSpread } from './reference/visits.js';
-export { scoreLimits } from './scoreInterval.js';
+
 export type { FormSolution, SquaredErrors } from './scoring.js';
 export {
   type Screening,

@@ -1,19 +1,13 @@
-export { arcOfChordM, chordOfArcM } from './arcs.js';
+
 export { type Baseline, baselineBetween } from './baseline.js';
 export {
   type CombinedFactor,
   combinedFactor,
-  gaussianRadiusM,
-  heightFactor,
 } from './combinedFactor.js';
 export type { Geocentric, Geodetic, LocalVector } from './coordinates.js';
-export { type CrsDefinition, type CrsKind, crsDefinition, crsOfKind } from './crs/index.js';
+export { type CrsDefinition, type CrsKind, crsDefinition } from './crs/index.js';
 export {
   type Ellipsoid,
-  ellipsoid,
-  GRS80,
-  meridianRadiusM,
-  primeVerticalRadiusM,
   WGS84,
 } from './ellipsoid.js';
 export { type FrameDifference, frameDifference } from './frameDifference.js';
@@ -35,10 +29,10 @@ export {
 export { type GroundGridParameters, groundGrid, type PlaneMapping } from './groundGrid.js';
 export { type FrameTransformation, frameTransformation } from './helmert.js';
 export type { HelmertParameters, HelmertSet, RotationConvention, Triple } from './helmertParameters.js';
-export { distanceErrorMm, type LengthUnit, metresPer } from './lengthUnits.js';
-export { type LineLengths, lineLengths, lineScale } from './lineLengths.js';
+export { type LengthUnit, metresPer } from './lengthUnits.js';
+export { type LineLengths, lineLengths } from './lineLengths.js';
 export { type LocalFrame, localFrame } from './localFrame.js';
-export { wrappedLongitude } from './longitude.js';
+
 export {
   type GeocentricVelocity,
   geocentricVelocity,

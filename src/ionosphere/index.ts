@@ -32,7 +32,7 @@ export {
 export { type MergedIndices, mergeIndices } from './indices/mergeIndices.js';
 export { type IndexReading, readIndices } from './indices/readIndices.js';
 export { type JoinedMaps, joinMaps, outsideMapsNote } from './ionex/joinMaps.js';
-export { valueAt } from './ionex/mapGrid.js';
+
 export { readTecMaps, type TecMapsReading } from './ionex/readTecMaps.js';
 export { TIME_SCHEMES, type TimeScheme, tecAt, tecRmsAt } from './ionex/tecAt.js';
 export { gradientAlong, steepestGradient, type TecGradient, tecGradientAt } from './ionex/tecGradient.js';

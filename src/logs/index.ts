@@ -6,7 +6,7 @@ export {
   totalAccount,
 } from './account.js';
 export { ENCODINGS, type Encoding, readHead } from './byteChunks.js';
-export { DELIMITERS } from './cells.js';
+
 export type { CoordinateChanges } from './coordinateChanges.js';
 export { type CoordinateColumns, coordinateColumns } from './coordinateColumns.js';
 export { CoordinateFault } from './coordinateFault.js';

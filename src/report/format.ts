@@ -111,8 +111,6 @@ const roundedDown = (value: number): string => (Math.floor(value * 10 + 1e-9) / 
 
 export const mm = (value: number | null): string => formatNumber(value, 'error', METRIC);
 
-export const ppm = (value: number | null): string => formatNumber(value, 'ppm', METRIC);
-
 /** A maximum baseline in km. */
 export const kmDown = (value: number): string => formatNumber(value, 'distance, rounded down', METRIC);
 

@@ -1,10 +1,10 @@
 export { annexHtml } from './annexHtml.js';
 export { arrowBytes } from './arrow.js';
 export { cardHtml } from './cardHtml.js';
-export { CAUTIONS } from './cautions.js';
+
 export { csvLine, csvText } from './csv.js';
 export { count } from './format.js';
-export { GLOSSARY } from './glossary.js';
+
 export { escapeHtml } from './html.js';
 export { jobsGeoJson } from './jobsGeoJson.js';
 export { markdownOf } from './markdown.js';
@@ -21,4 +21,4 @@ export { accountLines, messageLines, summaryText } from './summaryText.js';
 export { type Cell, type ReportTable, reportTables } from './tables.js';
 export { watchText } from './watchText.js';
 export { weightsHtml } from './weightsHtml.js';
-export { fitSentence, ruleSentence } from './words.js';
+export { ruleSentence } from './words.js';

@@ -14,7 +14,6 @@ export {
 export {
   type LeastSquaresSolution,
   leastSquares,
-  RANK_TOLERANCE,
   RankDeficientError,
 } from './leastSquares.js';
 export { digamma, inverseTrigamma, tetragamma, trigamma } from './polygamma.js';

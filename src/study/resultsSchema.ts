@@ -129,7 +129,10 @@ export const resultsSchema = z.strictObject({
 
 type DeepReadonly<T> = T extends object ? { readonly [K in keyof T]: DeepReadonly<T[K]> } : T;
 type Same<A, B> = [A, B] extends [B, A] ? true : never;
-/** Schema and type say the same: this line does not compile when they part. */
+/**
+ * Schema and type say the same: this line does not compile when they part.
+ * @public
+ */
 export const SCHEMA_IS_TYPE: Same<DeepReadonly<z.output<typeof resultsSchema>>, DeepReadonly<Results>> = true;
 
 /** The JSON Schema of `results.json`. */

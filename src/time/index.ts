@@ -1,7 +1,6 @@
 export { equationOfTimeMinutes } from './equationOfTime.js';
 export type { TimeKind } from './formatFields.js';
 export {
-  GPS_WEEKS_PER_ERA,
   type GpsWeekOutcome,
   gpsMinusUtcSeconds,
   gpsToUtcMs,

@@ -6,5 +6,5 @@ export {
   type LikelyCause,
   type ReadAs,
 } from './commonCauses.js';
-export { type MarkVector, markVectors } from './markVectors.js';
-export { type CommonParameter, commonParameters, isTold } from './similarity.js';
+export type { MarkVector } from './markVectors.js';
+export { type CommonParameter, isTold } from './similarity.js';
