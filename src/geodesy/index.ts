@@ -1,4 +1,3 @@
-
 export { type Baseline, baselineBetween } from './baseline.js';
 export {
   type CombinedFactor,

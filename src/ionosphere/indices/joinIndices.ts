@@ -10,7 +10,7 @@ import {
 } from './indexSeries.js';
 
 /** A column that is joined to occupations. */
-export type JoinedIndexName = 'kp' | 'ap' | 'hp30' | 'dst' | 'f107' | 'apDaily';
+export type JoinedIndexName = 'kp' | 'ap' | 'hp30' | 'hp60' | 'dst' | 'f107' | 'apDaily';
 /** The index in each. */
 const JOINED: Readonly<Record<JoinedIndexName, IndexName>> = {
   kp: 'kp',
