@@ -10,7 +10,6 @@ import {
   jobsGeoJson,
   markdownOf,
   marksGeoJson,
-  outcomeTables,
   reportHtml,
   reportTables,
   weightsHtml,
@@ -66,7 +65,7 @@ export async function writeOutputs(run: StudyRun, folder: string, setAsideRows: 
     await mkdir(join(folder, name), { recursive: true });
   }
   await copyFile(setAsideRows, join(folder, 'tables', 'set-aside.csv'));
-  const tables = [...reportTables(run), ...outcomeTables(run.results)];
+  const tables = reportTables(run);
   for (const table of tables) {
     const { name, header, rows } = table;
     await writeFile(join(folder, 'tables', `${name}.csv`), csvText(header, rows));

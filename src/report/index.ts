@@ -12,7 +12,6 @@ export { marksGeoJson } from './marksGeoJson.js';
 export { monthHtml, type WatchFound, watchFound } from './monthHtml.js';
 export { monthTables } from './monthTables.js';
 export { changeWords } from './movesSection.js';
-export { outcomeTables } from './outcomeTables.js';
 export { Page } from './page.js';
 export type { ReportPicture, ReportPictures } from './pictures.js';
 export { reportHtml } from './reportHtml.js';

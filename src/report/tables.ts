@@ -2,6 +2,8 @@ import type { OccupationError } from '../errors/index.js';
 import type { StudyRun } from '../study/index.js';
 import { controlTables } from './controlTables.js';
 import { findingTables } from './findingTables.js';
+import { withHeightsColumn } from './heightsColumn.js';
+import { outcomeTables } from './outcomeTables.js';
 import { splitTable } from './splitTable.js';
 
 export type Cell = string | number | boolean | null;
@@ -52,7 +54,7 @@ export function reportTables(run: StudyRun): ReportTable[] {
   const { fits, rules, marks, lengthClasses, messages } = results;
   const errorHeads = ERROR_COLUMNS.map(([head]) => head);
   const errorCells = (error: OccupationError): Cell[] => ERROR_COLUMNS.map(([, cell]) => cell(error));
-  return [
+  const tables: ReportTable[] = [
     {
       name: 'errors',
       header: [...errorHeads, 'weight'],
@@ -215,5 +217,7 @@ export function reportTables(run: StudyRun): ReportTable[] {
       header: ['severity', 'code', 'file', 'row', 'column', 'text'],
       rows: messages.map((m) => [m.severity, m.code, m.file, m.row, m.column, m.text]),
     },
+    ...outcomeTables(results),
   ];
+  return tables.map((table) => withHeightsColumn(table, results.heights));
 }
