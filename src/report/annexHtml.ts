@@ -18,7 +18,9 @@ import { marksSection } from './marksSection.js';
 import { messagesSection } from './messagesSection.js';
 import { Page } from './page.js';
 import { figure, type ReportPictures } from './pictures.js';
+import { annexStandards } from './standardsSection.js';
 import { type ReportTable, reportTables } from './tables.js';
+import { annexVisits } from './visitsSection.js';
 
 const CONTENTS: readonly (readonly [id: string, words: string])[] = [
   ['settings', 'Settings and version'],
@@ -27,6 +29,8 @@ const CONTENTS: readonly (readonly [id: string, words: string])[] = [
   ['evidence', 'What the ppm rests on'],
   ['groups', 'Further terms; crews, receivers and bases apart'],
   ['rules', 'Rules and back-test'],
+  ['visits', 'Checks, second visits and long occupations'],
+  ['standards', 'Standards'],
   ['jobs', 'The points of jobs from every base'],
   ['common', 'What all positions have in common'],
   ['marks', 'Marks'],
@@ -57,6 +61,8 @@ ${annexFits(page, [figure(pictures.horizontal), figure(pictures.vertical)])}
 ${annexEvidence(page)}
 ${annexGroups(page)}
 ${annexRules(page)}
+${annexVisits(page)}
+${annexStandards(page)}
 ${annexJobs(page, pictures.jobs)}
 ${commonSection(page)}
 ${marksSection(page, { map: pictures.maps.map((map) => figure(map)!), means: figure(pictures.markMeans) })}

@@ -1,6 +1,7 @@
 import type { Results } from '../study/index.js';
 import { checkShots } from './cardChecks.js';
 import { cautionHours, rig, validUntil } from './cardConditions.js';
+import { secondVisit } from './cardVisits.js';
 import { type Html, html } from './html.js';
 import { htmlPage } from './htmlPage.js';
 import { Page } from './page.js';
@@ -16,15 +17,16 @@ export function cardHtml(results: Results): string {
 <section id="distances"><h2>Greatest distance from the base</h2>
 ${distances(page)}</section>
 ${checkShots(page)}
-${cautionHours(page)}
+<div class="pair">${secondVisit(page)}
 <section id="fails"><h2>When a check fails</h2>
 <ol>
 <li>Do not move on. Look at the mark, the rod height, the bubble and the antenna first.</li>
 <li>Let the receiver fix anew (new initialisation); then shoot the mark again.</li>
 <li>Keep both shots. Delete nothing.</li>
 <li>Fails again: stop, call the office, and say which points were shot since the last good check.</li>
-</ol></section>
-${rig(page)}
+</ol></section></div>
+<div class="pair">${cautionHours(page)}
+${rig(page)}</div>
 <p class="small">Only for positions that the receiver calls fixed. No substitute for redundant checks or the surveyor’s judgement.
 ${page.units.words}</p>`;
   return htmlPage({ title: `${study.title} — crew card`, kind: 'card', body });

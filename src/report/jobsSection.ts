@@ -15,8 +15,8 @@ export function jobsSection(page: Page, pictures: readonly ReportPicture[]): Htm
   const { jobs } = page.results;
   if (jobs.length === 0) return html``;
   return html`<section id="jobs"><h2>The points of your jobs</h2>
-${figure(pictures[0] ?? null)}
 <ul>${jobs.map((job) => html`<li>${demand(page, job)}: ${page.text(job.sentence)}</li>\n`)}</ul>
+${figure(pictures[0] ?? null)}
 ${groups(jobs).map((same) => pointTable(page, same))}
 </section>
 `;

@@ -6,6 +6,7 @@ import { fitSection } from './fitSection.js';
 import { GLOSSARY } from './glossary.js';
 import { type Html, html } from './html.js';
 import { htmlPage } from './htmlPage.js';
+import { inShort } from './inShort.js';
 import { jobsSection } from './jobsSection.js';
 import { leftOutSection } from './leftOutSection.js';
 import { letterHead, signature } from './letterHead.js';
@@ -17,6 +18,7 @@ import { figure, type ReportPictures } from './pictures.js';
 import { proofSection } from './proofSection.js';
 import { ruleSection } from './ruleSection.js';
 import { ruleTableSection } from './ruleTableSection.js';
+import { standardsSection } from './standardsSection.js';
 
 /**
  * The report as one self-contained page that reads like a letter: the rule first, then why to believe it, then the data,
@@ -25,6 +27,7 @@ import { ruleTableSection } from './ruleTableSection.js';
 export function reportHtml(results: Results, pictures: ReportPictures): string {
   const page = new Page(results);
   const body = html`${letterHead(page)}
+${inShort(page)}
 ${ruleSection(page)}
 ${proofSection(page, pictures.proof)}
 ${movesSection(page, figure(pictures.moves))}
@@ -33,6 +36,7 @@ ${fitSection(page)}
 ${daysSection(page)}
 ${leftOutSection(page)}
 ${ruleTableSection(page)}
+${standardsSection(page)}
 ${accountSection(page)}
 ${messagesSection(page)}
 ${METHOD}

@@ -1,6 +1,7 @@
 import type { RuleTableRow } from '../rule/index.js';
 import { type Html, html } from './html.js';
 import type { Page } from './page.js';
+import { promisesTables } from './promisesSection.js';
 import { table } from './table.js';
 import { componentTitle } from './words.js';
 
@@ -11,6 +12,7 @@ export function ruleTableSection(page: Page): Html {
   return html`<section id="other-limits"><h2>Other limits</h2>
 <p>Should a client ask for another limit: up to which distance it holds, in ${page.units.distance.name}. Where there is no rule, the annex says why.</p>
 ${(['horizontal', 'vertical'] as const).map((component) => oneTable(page, component))}
+${promisesTables(page)}
 </section>
 `;
 }

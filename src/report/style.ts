@@ -51,7 +51,7 @@ section#signature { break-inside: avoid; }
 .card .big td.number { font-size: 1.35em; font-weight: bold; }
 /* Narrow tables side by side where there is room. */
 .pair { display: grid; grid-template-columns: repeat(auto-fit, minmax(17rem, 1fr)); gap: 0 1.6rem; }
-.card dl { margin: .2rem 0; }
+.card .pair { break-inside: avoid; } .card dl { margin: .2rem 0; }
 .card ol { margin: .3rem 0; padding-left: 1.4rem; } .card li { margin: .15rem 0; }
 @media (max-width: 34rem) {
   body { font-size: 15px; } main { padding: 1.4rem .9rem 3rem; } h1 { font-size: 1.5rem; }

@@ -41,6 +41,9 @@ let page: string;
 
 const withResults = (more: Partial<Results>): StudyRun => ({ ...run, results: { ...run.results, ...more } });
 
+/** The demo has a crew "harbour", and a point "harbour wall" of a job. */
+const namesCrew = (words: string, crew: string): boolean => new RegExp(`\\b${crew}\\b(?! wall)`).test(words);
+
 /** All pages of a run, by name. */
 const pagesOf = (of: StudyRun, pictures = NO_PICTURES): Record<string, string> => ({
   report: reportHtml(of.results, pictures),
@@ -96,7 +99,7 @@ describe('the report', () => {
     expect(crews.length).toBeGreaterThan(1);
     const named = withResults({ study: { ...study, showCrews: true } });
     for (const [name, each] of Object.entries(pagesOf(run))) {
-      for (const crew of crews) expect(otherWords(each), `${name} ${crew}`).not.toContain(crew);
+      for (const crew of crews) expect(namesCrew(otherWords(each), crew), `${name} ${crew}`).toBe(false);
     }
     expect(pagesOf(named).annex).toContain(`without crew ${crews[0]}`);
     expect(pagesOf(run).annex).toContain('without crew 1');
@@ -224,7 +227,7 @@ describe('numbers on pages', () => {
       expect(charts.get(`${fit.component}-error`)).toContain(`${low!.toFixed(2)} to ${high!.toFixed(2)} ppm`);
     }
     for (const [name, svg] of files)
-      for (const crew of run.results.crews) expect(svg, name).not.toContain(crew);
+      for (const crew of run.results.crews) expect(namesCrew(svg, crew), name).toBe(false);
     const blamed = run.results.degradedDays.map((one) => ({
       ...one,
       verdict: 'one crew' as const,
@@ -280,6 +283,10 @@ function emptied(): Partial<Results> {
     crews: [],
     rovers: [],
     jobs: [],
+    standards: [],
+    secondVisits: [],
+    errorByOccupationLength: [],
+    promises: [],
     leftOut: null,
     hoursOfCaution: [],
     specSheet: null,
