@@ -4,20 +4,21 @@ import type { ChartSpec, View } from './chartSpec.js';
 /**
  * A chart in the units of a reader: axes get round ticks in his units, and lengths in titles and labels are turned into
  * them. The data stay as they are.
+ * @param names that look like lengths and stay
  */
-export function chartInUnits(chart: ChartSpec, units: ReaderUnits): ChartSpec {
+export function chartInUnits(chart: ChartSpec, units: ReaderUnits, names: readonly string[] = []): ChartSpec {
   if (units.kind === 'metric') return chart;
-  const text = (words: string): string => inWords(words, units);
+  const text = (words: string): string => inWords(words, units, names);
   return {
     title: text(chart.title),
     subtitle: chart.subtitle.map(text),
     description: text(chart.description),
-    vegaLite: turned(chart.vegaLite, units) as View,
+    vegaLite: turned(chart.vegaLite, units, names) as View,
   };
 }
 
-const inWords = (words: string, units: ReaderUnits): string =>
-  textInUnits(words, units).replaceAll('millimetres', 'feet').replaceAll('kilometres', 'miles');
+const inWords = (words: string, units: ReaderUnits, names: readonly string[]): string =>
+  textInUnits(words, units, names).replaceAll('millimetres', 'feet').replaceAll('kilometres', 'miles');
 
 /** Parts of a specification that are no words of a chart. */
 const NO_WORDS = new Set([
@@ -34,13 +35,13 @@ const NO_WORDS = new Set([
   'font',
 ]);
 
-function turned(part: unknown, units: ReaderUnits): unknown {
-  if (typeof part === 'string') return inWords(part, units);
-  if (Array.isArray(part)) return part.map((each) => turned(each, units));
+function turned(part: unknown, units: ReaderUnits, names: readonly string[]): unknown {
+  if (typeof part === 'string') return inWords(part, units, names);
+  if (Array.isArray(part)) return part.map((each) => turned(each, units, names));
   if (part === null || typeof part !== 'object') return part;
   const result: Record<string, unknown> = {};
   for (const [key, value] of Object.entries(part)) {
-    result[key] = NO_WORDS.has(key) ? value : turned(value, units);
+    result[key] = NO_WORDS.has(key) ? value : turned(value, units, names);
   }
   return withAxis(result, units);
 }

@@ -13,7 +13,7 @@ import type { OccupationError } from '../errors/index.js';
 import { type Component, type ErrorModel, referenceData } from '../fit/index.js';
 import { changeWords, Page, type ReportPicture, type ReportPictures } from '../report/index.js';
 import { LENGTH_EDGES_KM, summarizeBy } from '../split/index.js';
-import { readerUnits, type StudyRun } from '../study/index.js';
+import { lengthLikeNames, readerUnits, type StudyRun } from '../study/index.js';
 import {
   dayCharts,
   hourCharts,
@@ -29,9 +29,10 @@ export async function drawPictures(
   run: StudyRun,
 ): Promise<{ pictures: ReportPictures; files: readonly (readonly [name: string, svg: string])[] }> {
   const files: [string, string][] = [];
+  const names = lengthLikeNames(run.results);
   const draw = async (name: string, chart: ChartSpec | null): Promise<ReportPicture | null> => {
     if (chart === null) return null;
-    const shown = chartInUnits(chart, readerUnits(run.results.study.reportUnits));
+    const shown = chartInUnits(chart, readerUnits(run.results.study.reportUnits), names);
     const svg = await renderSvg(shown);
     files.push([name, svg]);
     return { svg, description: shown.description };

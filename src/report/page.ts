@@ -1,5 +1,5 @@
 import type { EstimateWithLimits } from '../fit/index.js';
-import { type ReaderUnits, type Results, readerUnits, textInUnits } from '../study/index.js';
+import { lengthLikeNames, type ReaderUnits, type Results, readerUnits, textInUnits } from '../study/index.js';
 import { maskedText } from './crewNames.js';
 import { formatNumber, NOT_GIVEN, type NumberKind } from './format.js';
 import { type Html, html } from './html.js';
@@ -10,6 +10,8 @@ import { type Html, html } from './html.js';
  */
 export class Page {
   readonly units: ReaderUnits;
+  /** Names that look like lengths and are none. */
+  readonly names: readonly string[];
   readonly #places = new Map<object, string>();
 
   /** @param written what is written beside the page, in which every number has its place; default the results */
@@ -18,6 +20,7 @@ export class Page {
     written: object = results,
   ) {
     this.units = readerUnits(results.study.reportUnits);
+    this.names = lengthLikeNames(results);
     this.#place(written, '');
   }
 
@@ -72,7 +75,8 @@ export class Page {
   /** A sentence of the results in the units of the reader, without the names of crews. */
   text(sentence: string): string {
     const { showCrews } = this.results.study;
-    return textInUnits(showCrews ? sentence : maskedText(sentence, this.results.crews), this.units);
+    const masked = showCrews ? sentence : maskedText(sentence, this.results.crews);
+    return textInUnits(masked, this.units, this.names);
   }
 
   /** The name of a crew, or its number. */

@@ -1,5 +1,5 @@
 import { formatMessage, type Message } from '../logs/index.js';
-import { type FileResult, type Results, readerUnits, textInUnits } from '../study/index.js';
+import { type FileResult, lengthLikeNames, type Results, readerUnits, textInUnits } from '../study/index.js';
 import { count, plural } from './format.js';
 import { groupedMessages, otherFilesWords, spoiling } from './groupedMessages.js';
 import { fitSentence, ruleSentence, setAsideWords, shownFits, whyNoRule } from './words.js';
@@ -7,10 +7,11 @@ import { fitSentence, ruleSentence, setAsideWords, shownFits, whyNoRule } from '
 /** What a run found, in a few lines for a terminal. */
 export function summaryText(results: Results): string {
   const units = readerUnits(results.study.reportUnits);
+  const names = lengthLikeNames(results);
   return [
     results.study.title,
     '',
-    ...spoiling(results.messages).map(({ text }) => `First: ${textInUnits(text, units)}`),
+    ...spoiling(results.messages).map(({ text }) => `First: ${textInUnits(text, units, names)}`),
     ...results.rules.map((rule) => ruleSentence(rule, results.heights, units)),
     ...(results.rules.length === 0 ? [`There is no rule: ${whyNoRule(results)}.`] : []),
     '',

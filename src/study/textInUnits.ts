@@ -1,4 +1,5 @@
 import type { ReaderUnit, ReaderUnits } from './readerUnits.js';
+import type { Results } from './results.js';
 
 const NUMBER = '[−+-]?\\d+(?:[\\u00a0\\u202f]\\d{3})*(?:\\.\\d+)?';
 /** One or several numbers with one of our units of length; `mm per km` is a ratio and stays. */
@@ -7,18 +8,53 @@ const LENGTHS = new RegExp(
   'g',
 );
 
+/** What stands in quotes is somebody's own words, whatever is in it. */
+const QUOTED = '"(?:[^"\\\\]|\\\\.)*"';
+
 /**
  * A sentence whose lengths are turned into the units of a reader: `7.6 to 8.3 mm`, `8.9 km`. Distances are rounded down,
- * since they may be promises.
+ * since they may be promises. Texts in quotes stay as they are.
+ * @param names that look like lengths, such as a mark "12 km", and stay wherever they stand; see {@link lengthLikeNames}
  */
-export function textInUnits(sentence: string, units: ReaderUnits): string {
+export function textInUnits(sentence: string, units: ReaderUnits, names: readonly string[] = []): string {
   if (units.kind === 'metric') return sentence;
-  return sentence.replace(LENGTHS, (_, numbers: string, blank: string, unit: OurUnit) => {
-    const { name } = unitOf(unit, units);
-    const turned = numbers.replace(new RegExp(NUMBER, 'g'), (written) => inUnit(written, unit, units));
-    return `${turned}${blank}${name}`;
-  });
+  // Longer names first: one may hold another.
+  const literal = [...names]
+    .sort((a, b) => b.length - a.length)
+    .map((name) => `(?<![\\w.])${name.replace(/[.*+?^${}()|[\]\\]/g, '\\$&')}(?!\\w)`);
+  const kept = [QUOTED, ...literal];
+  // Of a split by a group every second part is what was kept.
+  return sentence
+    .split(new RegExp(`(${kept.join('|')})`, 'g'))
+    .map((part, k) => (k % 2 === 1 ? part : turned(part, units)))
+    .join('');
 }
+
+/** The names of a study in which a length could be read. */
+export function lengthLikeNames(results: Results): string[] {
+  const { study, marks, controlMarks, siteMarks, bases, crews, rovers, setups, jobs, files, inputs } =
+    results;
+  const names = [
+    study.title,
+    study.surveyor ?? '',
+    ...marks.map(({ mark }) => mark),
+    ...controlMarks.map(({ mark }) => mark),
+    ...siteMarks,
+    ...bases,
+    ...crews,
+    ...rovers,
+    ...setups.map(({ setup }) => setup),
+    ...jobs.flatMap((job) => [job.file, ...job.points.map(({ point }) => point)]),
+    ...[...files, ...inputs].map(({ file }) => file),
+  ];
+  return [...new Set(names)].filter((name) => new RegExp(LENGTHS.source).test(name));
+}
+
+const turned = (text: string, units: ReaderUnits): string =>
+  text.replace(LENGTHS, (_, numbers: string, blank: string, unit: OurUnit) => {
+    const written = numbers.replace(new RegExp(NUMBER, 'g'), (one) => inUnit(one, unit, units));
+    return `${written}${blank}${unitOf(unit, units).name}`;
+  });
 
 type OurUnit = 'mm' | 'km' | 'm';
 
