@@ -4,11 +4,17 @@ import { comboFit } from '../../src/days/comboFit.js';
 import { dayCells, dayLogLikelihood, relativeLikelihood } from '../../src/days/dayLikelihood.js';
 import { dayModel, fittedData, nodesWithoutDay } from '../../src/days/index.js';
 import { errorColumns } from '../../src/errors/index.js';
-import { fitErrorModel } from '../../src/fit/index.js';
+import { fitErrorModel, wrongFixGrowth } from '../../src/fit/index.js';
 import { pickEntries } from '../../src/fit/prepareErrors.js';
 import { scoreShots } from '../../src/rule/backtest/score.js';
 import { train } from '../../src/rule/backtest/train.js';
-import { backTest, forwardTest, leaveGroupOut } from '../../src/rule/index.js';
+import {
+  backTest,
+  crowdedDaysKept,
+  forwardTest,
+  leaveGroupOut,
+  maximumBaseline,
+} from '../../src/rule/index.js';
 import { studentTQuantile } from '../../src/stats/index.js';
 import { marksGround, suspecting, tolerance } from './reference.js';
 
@@ -150,6 +156,36 @@ describe('suspected wrong fixes', () => {
     const near = screening.suspected.filter((row) => errors[row]!.baselineKm < rules[0]!.lengthKm!.from);
     expect(suspected.length).toBeGreaterThanOrEqual(near.length);
     expect(near.length).toBeGreaterThan(0);
+  });
+  it('that crowd on a day are judged by the shorter rule, as it is made', () => {
+    const shots = simulateErrors({ seed: 5, days: 24, occupationsPerDay: { from: 12, to: 16 } }).rows;
+    const { day } = shots[100]!;
+    const crowd = shots
+      .flatMap((row, i) => (row.day === day ? [i] : []))
+      .sort((i, j) => shots[j]!.baselineKm - shots[i]!.baselineKm)
+      .slice(0, 4);
+    // A bad day, or a burst of wrong fixes: the rule must hold for either.
+    const bad = shots.map((row, i) => (crowd.includes(i) ? { ...row, up: 8 * row.up } : row));
+    const crowded = { ...suspecting(crowd, bad.length), crowdedDays: [day] };
+    const { weights } = crowded;
+    const fit = fitErrorModel(bad, { component: 'vertical', weights });
+    const options = {
+      screening: crowded,
+      dayModel: dayModel(bad, fit, weights),
+      tolerances: [tolerance(40, { component: 'vertical' as const, share: 0.9 })],
+    };
+    const [plain, both] = [null, crowdedDaysKept(bad, fit, crowded)].map(
+      (kept) => backTest(bad, fit, { ...options, crowdedDaysKept: kept }).rules[0]!.lengthKm!,
+    );
+    expect(both!.to).toBeLessThan(plain!.to);
+    const used = bad.filter((_, i) => weights[i]! >= 0.5);
+    const rule = maximumBaseline(used, fit, options.tolerances[0]!, {
+      ...options,
+      wrongFixes: wrongFixGrowth(bad, crowded),
+      crowdedDaysKept: crowdedDaysKept(bad, fit, crowded),
+    });
+    expect(rule.maximumBaselineKm!).toBeLessThanOrEqual(both!.to);
+    expect(rule.maximumBaselineKm!).toBeGreaterThan(0.7 * both!.from);
   });
   it('that stand alone on their mark and day are judged all the same', () => {
     const days40 = [...new Set(errors.map(({ day }) => day))].slice(0, 40);
