@@ -21,7 +21,7 @@ export function whyNoRule(
   supportedKm: number | null,
 ): string | null {
   if (model.days < FEWEST_DAYS) {
-    return `${model.days} ${model.days === 1 ? 'day is' : 'days are'} too few: a rule needs ${FEWEST_DAYS} days`;
+    return `${model.days} ${model.days === 1 ? 'day is' : 'days are'} too few: a rule needs ${FEWEST_DAYS} days; add ${FEWEST_DAYS - model.days} with near and far shots`;
   }
   if (!model.fitted.converged)
     return 'the fit did not converge: look at the chart for errors of another kind';

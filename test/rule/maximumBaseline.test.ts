@@ -107,7 +107,9 @@ describe('a rule', () => {
     const some = (count: number) => rows.filter(({ day }) => day < days[count]!);
     const of = (part: typeof rows) =>
       maximumBaseline(part, fitErrorModel(part, { component: 'horizontal' }), tolerance(30));
-    expect(of(some(14)).reason).toBe('14 days are too few: a rule needs 15 days');
+    expect(of(some(14)).reason).toBe(
+      '14 days are too few: a rule needs 15 days; add 1 with near and far shots',
+    );
     expect(of(some(15)).maximumBaselineKm).toBeGreaterThan(0);
     expect(of(rows.filter(({ baselineKm }) => baselineKm < 1.5)).maximumBaselineKm).toBeNull();
   });
