@@ -6,6 +6,7 @@ import {
   type DayTec,
   dayIndices,
   dayTec,
+  expectedShorteningPpm,
   type GeomagneticIndices,
   localDaySpan,
   solarDaySpan,
@@ -52,7 +53,7 @@ export function skyOfDays(
       f107: known(f107),
       dstMin: known(dstMin),
       indexShare: knownShare,
-      ...tecColumns(tecOf.get(day)),
+      ...tecColumns(tecOf.get(day), maps),
       shareWithoutFix: missing.get(day) ?? null,
     };
   });
@@ -69,9 +70,13 @@ const known = (value: number): number | null => (Number.isNaN(value) ? null : va
 
 function tecColumns(
   tec: DayTec | undefined,
-): Pick<SkyDay, 'tecMean' | 'tecMax' | 'gradientMean' | 'tecChange' | 'mapShare'> {
+  maps: TecMaps | null,
+): Pick<SkyDay, 'tecMean' | 'tecMax' | 'gradientMean' | 'tecChange' | 'shorteningPpm' | 'mapShare'> {
+  const tecMean = known(tec?.tecMean ?? Number.NaN);
+  const shell = maps === null ? {} : { shellHeightKm: maps.shellHeightKm };
   return {
-    tecMean: known(tec?.tecMean ?? Number.NaN),
+    tecMean,
+    shorteningPpm: tecMean === null ? null : expectedShorteningPpm(tecMean, shell),
     tecMax: known(tec?.tecMax ?? Number.NaN),
     gradientMean: known(tec?.gradientMean ?? Number.NaN),
     tecChange: known(tec?.changeFromDayBefore ?? Number.NaN),

@@ -22,6 +22,11 @@ export interface SkyDay {
   readonly gradientMean: number | null;
   /** `tecMean` minus that of the day before, TECU. */
   readonly tecChange: number | null;
+  /**
+   * What `tecMean` does to the length of a baseline measured on L1 alone, or fixed on it, ppm: negative is shorter.
+   * Mask 15°, the shell of the maps.
+   */
+  readonly shorteningPpm: number | null;
   /** Share of the daytime for which the maps give TEC. */
   readonly mapShare: number;
   readonly shareWithoutFix: number | null;

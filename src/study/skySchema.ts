@@ -16,6 +16,7 @@ const skyDay = z.strictObject({
   tecMax: nullable,
   gradientMean: nullable.describe('TECU per 100 km.'),
   tecChange: nullable.describe('Mean TEC minus that of the day before, TECU.'),
+  shorteningPpm: nullable.describe('Of a baseline on L1 alone, in such TEC, ppm.'),
   mapShare: z.number(),
   shareWithoutFix: nullable,
 });

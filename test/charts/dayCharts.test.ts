@@ -171,6 +171,7 @@ describe('daysChart', () => {
       tecMax: null,
       gradientMean: null,
       tecChange: null,
+      shorteningPpm: null,
       mapShare: 0,
       shareWithoutFix: null,
     }),

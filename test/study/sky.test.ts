@@ -111,8 +111,10 @@ describe('a study with files of the sky', () => {
     expect(first!.tecChange).toBe(null);
     // one degree on a shell 450 km above 6371 km
     expect(first!.gradientMean).toBeCloseTo(100 / ((6821 * Math.PI) / 180), 3);
+    // a layer at 450 km, mask 15 degrees: −0.0601 ppm per TECU (least squares over a sky full of satellites)
+    expect(first!.shorteningPpm! / first!.tecMean!).toBeCloseTo(-0.0601, 4);
     expect(first!.mapShare).toBe(1);
-    expect(third).toMatchObject({ tecMean: null, mapShare: 0, kpMax: null, ap: null });
+    expect(third).toMatchObject({ tecMean: null, shorteningPpm: null, mapShare: 0, kpMax: null, ap: null });
     const told = results.messages.filter(({ code }) => code === 'map-other-day');
     expect(told).toHaveLength(1);
     const used = campaign.occupations;
