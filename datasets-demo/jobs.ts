@@ -10,7 +10,7 @@ const COAST_ROAD: readonly (readonly [string, number, number, number | null, num
   ['km 10', -8.8, 6.2, 19.3],
   ['km 12', -10.4, 7.3, 24.6],
   ['km 14', -12.1, 8.4, 31],
-  ['harbour wall', -13.6, 9.3, 3.1],
+  ['breakwater', -13.6, 9.3, 3.1],
   ['lighthouse', -16.9, 11.8, null],
 ];
 

@@ -110,7 +110,15 @@ describe('the report on what is compared with what', () => {
     const shiftUp = tables.get('common')!.rows.find((row) => row.includes('shift-up'))!;
     expect(shiftUp.at(-2)).toBe(true);
     expect(shiftUp.at(-1)).toBe('orthometric');
-    for (const name of ['fits', 'rules', 'marks', 'length-classes', 'errors', 'weights', 'check-shot-limits']) {
+    for (const name of [
+      'fits',
+      'rules',
+      'marks',
+      'length-classes',
+      'errors',
+      'weights',
+      'check-shot-limits',
+    ]) {
       const { header, rows } = tables.get(name)!;
       const component = header.indexOf('component');
       expect(header.filter((head) => head === 'heights')).toHaveLength(1);
