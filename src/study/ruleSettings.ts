@@ -20,7 +20,7 @@ const job = z.union([
   z.string().min(1),
   z
     .strictObject({
-      file: z.string().min(1),
+      file: z.string().min(1).describe('Name of the file, relative to the study file.'),
       ...coordinateKeys,
       units: units.optional(),
       columns: columns.optional(),
