@@ -10,6 +10,7 @@ import {
 } from '../../src/days/index.js';
 import { fitErrorModel } from '../../src/fit/index.js';
 import { median, normalDeviates, randomStream } from '../../src/stats/index.js';
+import { benchDayPromises } from './dayPromises.js';
 import { benchDayVerdicts } from './dayVerdicts.js';
 import { medianSeconds } from './timing.js';
 
@@ -30,6 +31,7 @@ export async function benchDays(): Promise<void> {
   await speed();
   console.log(`${REPLICATES} campaigns each, seeds 1000 c + r for campaign c = 1 … ${DAY_CASES.length}:\n`);
   degraded();
+  benchDayPromises();
   hours();
   benchDayVerdicts();
 }
