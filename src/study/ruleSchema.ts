@@ -65,9 +65,9 @@ export const promise = z.strictObject({
   share: z.number(),
   dayShare: z.number(),
   confidence: z.number(),
-  method: z.enum(['day-model', 'pooled']),
+  method: z.enum(['day-model', 'pooled']).describe('As of rules.'),
   limitMm: nullable.describe('Upper confidence limit; null with a reason.'),
-  bestEstimateMm: nullable,
+  bestEstimateMm: nullable.describe('The same at one half instead of the confidence.'),
   reason: z.string().nullable(),
 });
 
@@ -114,7 +114,13 @@ export const checkShotLimits = z.strictObject({
       twoBasesMm: z.number(),
     }),
   ),
-  twoBases: z.array(z.strictObject({ firstKm: z.number(), secondKm: z.number(), limitMm: z.number() })),
+  twoBases: z.array(
+    z.strictObject({
+      firstKm: z.number().describe('Distance from the first base.'),
+      secondKm: z.number().describe('Distance from the second base.'),
+      limitMm: z.number().describe('How far both shots may lie apart.'),
+    }),
+  ),
   reason: z.string().nullable(),
   sentence: z.string(),
 });

@@ -1,7 +1,11 @@
 import { z } from 'zod';
 import { component, count, interval, limits, nullable } from './schemaParts.js';
 
-const place = { latitudeDeg: z.number(), longitudeDeg: z.number(), heightM: nullable };
+const place = {
+  latitudeDeg: z.number().describe('As the study compares coordinates.'),
+  longitudeDeg: z.number().describe('The same.'),
+  heightM: nullable.describe('null where it is not known.'),
+};
 
 /** The points of a job under one tolerance, as the results hold them. */
 export const job = z.strictObject({
@@ -24,19 +28,19 @@ export const job = z.strictObject({
   ),
   points: z.array(
     z.strictObject({
-      point: z.string(),
+      point: z.string().describe('Name of the point.'),
       ...place,
-      bestBase: z.string(),
+      bestBase: z.string().describe('The base from which most can be promised.'),
       baselineKm: z.number(),
       promisedMm: nullable.describe('What can be promised there, from the best base.'),
       reason: z.string().nullable(),
       reachedFrom: z.array(z.string()),
-      needsAnotherBase: z.boolean(),
+      needsAnotherBase: z.boolean().describe('The rule reaches it from no base.'),
     }),
   ),
   reaches: z.array(
     z.strictObject({
-      point: z.string(),
+      point: z.string().describe('Name of the point.'),
       base: z.string(),
       baselineKm: z.number(),
       heightDifferenceM: nullable,
@@ -51,20 +55,20 @@ export const job = z.strictObject({
 /** A standard with its conditions checked. */
 export const standard = z.strictObject({
   name: z.string(),
-  standard: z.string(),
-  definition: z.string(),
+  standard: z.string().describe('Its published name.'),
+  definition: z.string().describe('What it defines, in words.'),
   conditions: z.array(
     z.strictObject({ text: z.string(), met: z.boolean().nullable().describe('null: the data do not tell.') }),
   ),
   caution: z.string(),
   figures: z.array(
     z.strictObject({
-      what: z.string(),
+      what: z.string().describe('What the figure is of.'),
       component: component.nullable(),
       baselineKm: nullable,
-      valueMm: nullable,
-      lowMm: nullable,
-      highMm: nullable,
+      valueMm: nullable.describe('null where the data give none.'),
+      lowMm: nullable.describe('One-sided 95 % limit of the value; null where it is not known.'),
+      highMm: nullable.describe('The same, above.'),
       allowedMm: nullable.describe('What the standard allows; null where it only defines.'),
       verdict: z.enum(['holds', 'exceeded', 'cannot be told']).nullable(),
     }),
@@ -76,17 +80,17 @@ export const standard = z.strictObject({
 /** What a second visit on the same day gains. */
 export const secondVisit = z.strictObject({
   component,
-  pairs: count,
+  pairs: count.describe('Pairs of visits of one mark on one day.'),
   farPairs: count,
   days: count,
   correlation: z
     .strictObject({
-      A: z.number(),
-      B: z.number(),
-      nearStrength: z.number(),
-      nearMinutes: z.number(),
-      farStrength: z.number(),
-      farMinutes: z.number(),
+      A: z.number().describe('Square of the constant, mm².'),
+      B: z.number().describe('Square of the ppm.'),
+      nearStrength: z.number().describe('Correlation of the constant parts of two visits at once.'),
+      nearMinutes: z.number().describe('Time in which it falls to 37 %.'),
+      farStrength: z.number().describe('Correlation of the distance parts of two visits at once.'),
+      farMinutes: z.number().describe('Time in which it falls to 37 %.'),
     })
     .nullable(),
   sentence: z.string(),
@@ -94,7 +98,7 @@ export const secondVisit = z.strictObject({
   visits: z.array(
     z.strictObject({
       baselineKm: z.number(),
-      minutes: z.number(),
+      minutes: z.number().describe('Time between the two visits.'),
       factor: limits.describe('Error of the mean of both over that of one.'),
       differenceFactor: limits.describe('Error of their difference over that of one.'),
       differenceLimitMm: nullable.describe('How far both may lie apart.'),
@@ -105,8 +109,8 @@ export const secondVisit = z.strictObject({
 /** Errors by the number of epochs behind an occupation. */
 export const occupationLength = z.strictObject({
   component,
-  fromEpochs: count,
-  toEpochs: count.nullable(),
+  fromEpochs: count.describe('Fixed positions averaged to an occupation.'),
+  toEpochs: count.nullable().describe('Itself included; null: and more.'),
   occupations: count,
   days: count,
   ratio: interval.describe('RMS of error over the fitted spread.'),
