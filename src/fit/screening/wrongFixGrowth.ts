@@ -36,6 +36,7 @@ const spaced = (from: number, to: number, points: number): Float64Array =>
 
 /** Log share at the mean length, and power of L. */
 const LEVELS = spaced(Math.log(2e-5), Math.log(0.3), 121);
+const LEVEL_SHARES = LEVELS.map(Math.exp);
 const EXPONENTS = spaced(0, 2.5, 51);
 const NEAREST_KM = 0.5;
 const LARGEST_SHARE = 0.5;
@@ -88,18 +89,35 @@ export function wrongFixGrowth(errors: ErrorsInput, screening: Screening): Wrong
 /** The share at a length by the posterior. */
 export function wrongFixShareAtKm(growth: WrongFixGrowth, baselineKm: number): WrongFixShareAtKm {
   const away = logKm(baselineKm) - growth.meanLogKm;
-  const mean = growth.posterior.reduce((sum, weight, k) => sum + weight * Math.exp(logShare(k, away)), 0);
-  const upToLevel = runningSums(growth.posterior);
+  const upToLevel = sumsUpToLevel(growth.posterior);
   const [low5, high80, high95] = [0.05, 0.8, 0.95].map((level) =>
     Math.exp(logQuantile(upToLevel, away, level)),
   ) as [number, number, number];
-  return { baselineKm, mean, low5, high80, high95 };
+  return { baselineKm, mean: meanShare(growth.posterior, away), low5, high80, high95 };
 }
 
+function meanShare(posterior: Float64Array, away: number): number {
+  const levels = LEVEL_SHARES.length;
+  let mean = 0;
+  for (let e = 0; e < EXPONENTS.length; e++) {
+    const growth = Math.exp(EXPONENTS[e]! * away);
+    for (let k = 0; k < levels; k++) {
+      mean += posterior[e * levels + k]! * Math.min(LEVEL_SHARES[k]! * growth, LARGEST_SHARE);
+    }
+  }
+  return mean;
+}
+
+/** A rule asks for the share at many lengths: sums are kept for as long as their posterior is in use. */
+const knownSums = new WeakMap<Float64Array, Float64Array>();
+
 /** Sums of the posterior up to each level, of every exponent by itself. */
-function runningSums(posterior: Float64Array): Float64Array {
+function sumsUpToLevel(posterior: Float64Array): Float64Array {
+  const known = knownSums.get(posterior);
+  if (known !== undefined) return known;
   const sums = posterior.slice();
   for (let k = 0; k < sums.length; k++) if (k % LEVELS.length > 0) sums[k]! += sums[k - 1]!;
+  knownSums.set(posterior, sums);
   return sums;
 }
 
