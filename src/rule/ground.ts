@@ -26,7 +26,10 @@ export interface RuleOptions extends Surroundings {
    * one counts.
    */
   readonly crowdedDaysKept?: RuleGround | null | undefined;
-  /** The form that cannot be told from that of the model: at each length the larger spread of both counts. */
+  /**
+   * The form that cannot be told from that of the model ({@link findFormDoubt}): at each length the larger spread of both
+   * counts.
+   */
   readonly formDoubt?: FormDoubt | null | undefined;
   /** A site far above or below its base, vertical rules only. */
   readonly height?: HeightAllowance | undefined;

@@ -61,7 +61,10 @@ export function planJobs(
     }),
   );
   const missing = tolerances.length === 0 && withoutLimit.length > 0;
-  return { jobs: results, messages: missing ? [noTolerance(withoutLimit)] : [] };
+  return {
+    jobs: results,
+    messages: [...(missing ? [noTolerance(withoutLimit)] : []), ...results.flatMap(steepPoints(input))],
+  };
 }
 
 /** The tolerances under which points are asked for, each with its points. */
@@ -142,6 +145,34 @@ function remembered<Key extends object, Value>(compute: (key: Key) => Value): (k
     const text = JSON.stringify(key);
     if (!known.has(text)) known.set(text, compute(key));
     return known.get(text)!;
+  };
+}
+
+/** Points of a vertical plan that lie higher above a base than the rule knows of; said once for each file. */
+function steepPoints({ used, height }: RuleInput): (job: JobResult) => Message[] {
+  const told = new Set<string>();
+  const seenM = used
+    .filter(({ up, heightDifferenceM }) => !Number.isNaN(up + heightDifferenceM))
+    .reduce((most, { heightDifferenceM }) => Math.max(most, Math.abs(heightDifferenceM)), 0);
+  const knownM = height === undefined ? seenM : Math.abs(height.differenceM);
+  return ({ file, component, reaches }) => {
+    const heights = reaches
+      .filter(({ holds }) => holds === true)
+      .map(({ heightDifferenceM }) => Math.abs(heightDifferenceM ?? 0));
+    const most = Math.max(0, ...heights);
+    if (component !== 'vertical' || most <= knownM || told.has(file)) return [];
+    told.add(file);
+    const rule =
+      height === undefined
+        ? `the check shots at most ${knownM.toFixed(0)} m`
+        : `the vertical rules are for ${knownM.toFixed(0)} m`;
+    return [
+      message(
+        'warning',
+        'job-points-steep',
+        `Points of ${JSON.stringify(file)} lie up to ${most.toFixed(0)} m above or below a base that reaches them, and ${rule}: what is said of their heights does not hold there. State the larger height difference under site, or shoot checks at such heights.`,
+      ),
+    ];
   };
 }
 

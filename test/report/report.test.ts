@@ -213,6 +213,7 @@ describe('numbers on pages', () => {
       'study file',
       'marks',
       'bases',
+      'job points',
       'geomagnetic indices',
     ]);
   });

@@ -2,8 +2,10 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import { logText, marksText, simulateLog } from '../../src/campaign/index.js';
 import type { InputError } from '../../src/logs/index.js';
 import { readStudy, runStudy, type StudyRun } from '../../src/study/index.js';
+import type { RuleInput } from '../../src/study/makeRules.js';
 import { resultsSchema } from '../../src/study/resultsSchema.js';
 import { siteHeight } from '../../src/study/siteHeight.js';
+import { planJobs } from '../../src/study/studyJobs.js';
 import { testFolder } from '../files.js';
 
 /*
@@ -68,6 +70,22 @@ async function run(
   return runStudy(await readStudy(folder.write('study.yaml', study)));
 }
 
+/** What rules of a run stand on, with nothing known beside the errors. */
+const input = ({ errors, control, models, visits }: StudyRun): RuleInput => ({
+  errors,
+  used: errors,
+  visits,
+  control,
+  models,
+  doubts: new Map(),
+  days: [],
+  height: undefined,
+  wrongFixes: null,
+  markSigmaMm: new Map(),
+  f107: new Map(),
+  options: new Map(models.map(({ component }) => [component, {}])),
+});
+
 describe('a study with all that rules are used for', () => {
   let found: StudyRun;
   beforeAll(async () => {
@@ -92,6 +110,24 @@ describe('a study with all that rules are used for', () => {
     expect(other!.maximumBaselineKm!).toBeLessThan(own!.maximumBaselineKm!);
     expect(job!.points).toMatchObject([{ point: 'near', bestBase: base.name, needsAnotherBase: false }]);
     expect(job).toMatchObject({ component: 'horizontal', limitMm: 25, share: 0.95 });
+  });
+  it('warns of points higher above their base than the vertical rule is for', async () => {
+    const jobs = [
+      {
+        file: 'job.csv',
+        limitMm: null,
+        points: [{ name: 'top', position: { ...FT1, heightM: base.heightM + 350 }, limitMm: null }],
+      },
+    ];
+    const study = await readStudy(folder.write('study.yaml', STUDY));
+    const told = (more: object) =>
+      planJobs(jobs, { ...input(found), ...more }, study).messages.map(({ code }) => code);
+    expect(told({ height: { differenceM: 200, mmPer100M: 1 } })).toEqual(['job-points-steep']);
+    expect(told({ height: { differenceM: -400, mmPer100M: 1 } })).toEqual([]);
+    const { messages } = planJobs(jobs, input(found), { ...study, tolerances: [] });
+    expect(messages.map(({ text }) => text).join(' ')).toContain(
+      'State tolerances in the study file, limitMm of the job',
+    );
   });
   it('has vertical rules for the site', () => {
     expect(vertical().conditions.heightDifferenceM).toBe(200);
