@@ -117,15 +117,16 @@ function errorChart(run: StudyRun, component: Component): ChartSpec | null {
 function errorsAsFitted(
   { errors, weights }: StudyRun,
   { component, reference }: ErrorModel,
-): OccupationError[] {
+): Pick<OccupationError, 'day' | 'baselineKm' | 'east' | 'north' | 'up'>[] {
   const { data } = referenceData(errors, { component, reference, weights });
   return Array.from(data.rows.keys())
     .filter((i) => data.w[i]! >= 0.5)
     .map((i) => {
       const error = errors[data.rows[i]!]!;
       const [first, second] = data.components;
+      const { day, baselineKm, east, north, up } = error;
       return component === 'horizontal'
-        ? { ...error, east: first![i]!, north: second![i]! }
-        : { ...error, up: first![i]! };
+        ? { day, baselineKm, east: first![i]!, north: second![i]!, up }
+        : { day, baselineKm, east, north, up: first![i]! };
     });
 }

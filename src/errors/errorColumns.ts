@@ -14,7 +14,9 @@ export interface ErrorColumns {
   readonly texts: (name: string, neededFor: string) => string[];
 }
 
-export function errorColumns(input: ErrorsInput): ErrorColumns {
+/** @param input columns that were taken out before are given back */
+export function errorColumns(input: ErrorsInput | ErrorColumns): ErrorColumns {
+  if (isColumns(input)) return input;
   const source = isTable(input) ? tableSource(input) : recordSource(input);
   const column = (name: string, neededFor: string): ArrayLike<unknown> => {
     if (source.length === 0) return [];
@@ -52,6 +54,28 @@ interface Source {
   readonly names: () => string[];
   readonly column: (name: string) => ArrayLike<unknown> | null;
 }
+
+/** The same columns, each of them read once only: for many looks at a long table. What they give is not to be changed. */
+export function heldColumns(columns: ErrorColumns): ErrorColumns {
+  const numbers = new Map<string, Float64Array>();
+  const texts = new Map<string, string[]>();
+  return {
+    ...columns,
+    numbers: (name, neededFor) => {
+      const held = numbers.get(name) ?? columns.numbers(name, neededFor);
+      numbers.set(name, held);
+      return held;
+    },
+    texts: (name, neededFor) => {
+      const held = texts.get(name) ?? columns.texts(name, neededFor);
+      texts.set(name, held);
+      return held;
+    },
+  };
+}
+
+const isColumns = (input: ErrorsInput | ErrorColumns): input is ErrorColumns =>
+  typeof (input as Partial<ErrorColumns>).texts === 'function';
 
 const isTable = (input: ErrorsInput): input is ColumnTable =>
   typeof (input as { numRows?: unknown }).numRows === 'function';

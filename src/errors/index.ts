@@ -16,7 +16,7 @@ export {
   type OccupationError,
   type SetAsideOccupation,
 } from './computeErrors.js';
-export { type ErrorColumns, type ErrorsInput, errorColumns } from './errorColumns.js';
+export { type ErrorColumns, type ErrorsInput, errorColumns, heldColumns } from './errorColumns.js';
 export { errorTable } from './errorTable.js';
 export type { FarOffPlace } from './farOffPlaces.js';
 export { type FormedOccupations, type FormOccupationsOptions, formOccupations } from './formOccupations.js';

@@ -23,9 +23,17 @@ ${dayTable(page, sky)}
 `;
 }
 
+/** Below this chance, with all comparisons counted, two things are said to go together. */
+const LEVEL = 0.05;
+
 function associationTable(page: Page, associations: Sky['associations']): Html {
   if (associations.length === 0) return html`<p>Too few days are known to compare them with the sky.</p>`;
-  return table<SkyAssociation>(
+  const told = associations.filter(({ adjustedPValue }) => adjustedPValue !== null && adjustedPValue < LEVEL);
+  const words =
+    told.length === 0
+      ? html`<p>With all comparisons counted none can be told from chance. That does not show that there is none: the limits say what the days leave open.</p>\n`
+      : html`<ul>${told.map((one) => html`<li>${one.outcome} and ${one.measure}: ${page.text(one.statement)}</li>\n`)}</ul>\n`;
+  return html`${words}${table<SkyAssociation>(
     'What goes with what over the days (Spearman’s rank correlation)',
     associations,
     [
@@ -41,14 +49,13 @@ function associationTable(page: Page, associations: Sky['associations']): Html {
       },
       { head: 'Chance', cell: (row) => page.number(row, 'pValue', 'chance') },
       { head: 'Chance, for all comparisons', cell: (row) => page.number(row, 'adjustedPValue', 'chance') },
-      { head: 'In words', cell: ({ statement }) => page.text(statement), text: true },
     ],
-  );
+  )}`;
 }
 
 function thresholdTable(page: Page, one: SkyThreshold): Html {
   const { component, thresholds, statement, best } = one;
-  const words = html`<p>Stay in from a certain Kp on, ${component}: ${page.text(statement)}</p>\n`;
+  const words = html`<p>No work from a certain Kp on, ${component}: ${page.text(statement)}</p>\n`;
   if (thresholds.length === 0) return words;
   return html`${words}${table(`No work from this Kp on: what it would have done, ${component}`, thresholds, [
     {

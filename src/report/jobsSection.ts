@@ -64,7 +64,7 @@ function pointTable(page: Page, jobs: readonly JobResult[]): Html {
 
 function holdsWords(job: JobResult, { reachedFrom, needsAnotherBase }: Point): string {
   if (job.maximumBaselineKm === null && reachedFrom.length === 0) return 'no rule';
-  return needsAnotherBase ? 'too far' : 'held';
+  return needsAnotherBase ? 'beyond' : 'holds';
 }
 
 /** Every point from every base, with a map of each job. */

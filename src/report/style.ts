@@ -61,7 +61,7 @@ section#signature { break-inside: avoid; }
   @page { margin: 16mm 15mm; }
   body { font-size: 10.5pt; } main, .annex main, .card main { max-width: none; padding: 0; }
   a { color: inherit; text-decoration: none; }
-  figure, .scroll { overflow: visible; } figure img { min-width: 0; width: auto; max-width: 100%; max-height: 92mm; margin: 0 auto; }
+  figure, .scroll { overflow: visible; } figure img { min-width: 0; width: auto; max-width: 100%; max-height: 118mm; margin: 0 auto; }
   table { break-inside: avoid; font-size: 8.6pt; } table.long { break-inside: auto; } caption { break-after: avoid; }
   .annex table { font-size: 7.6pt; } .annex th, .annex td { padding: .2rem .3rem; }
   h2 { margin-top: 1.6rem; }

@@ -1,4 +1,4 @@
-import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import { type ErrorColumns, type ErrorsInput, errorColumns } from '../errors/index.js';
 import { type CellSummary, cellSummary, errorValues, FEWEST_DAYS } from './cellSummary.js';
 import { withDerived } from './derivedColumns.js';
 import { columnOf, type Group, groupComparison, groupsOf, type SplitBy } from './groups.js';
@@ -18,9 +18,12 @@ const SINGLE_DAYS: readonly string[] = ['day', 'setup'];
  * @throws InputError when a column is missing
  */
 export function splitCells(
-  errors: ErrorsInput,
+  errors: ErrorsInput | ErrorColumns,
   by: readonly SplitBy[],
-  { confidence = 0.95, visits }: { confidence?: number | undefined; visits?: ErrorsInput | undefined },
+  {
+    confidence = 0.95,
+    visits,
+  }: { confidence?: number | undefined; visits?: ErrorsInput | ErrorColumns | undefined },
 ): SplitCell[] {
   const columns = withDerived(errorColumns(errors));
   const values = errorValues(columns, 'summary tables');

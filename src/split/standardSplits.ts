@@ -1,7 +1,8 @@
-import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import { type ErrorsInput, errorColumns, heldColumns } from '../errors/index.js';
 import { withDerived } from './derivedColumns.js';
 import { columnOf, type SplitBy } from './groups.js';
-import { LENGTH_EDGES_KM, type SummaryRow, summarizeBy } from './summarizeBy.js';
+import { splitCells } from './splitCells.js';
+import { LENGTH_EDGES_KM, type SummaryRow } from './summarizeBy.js';
 
 /** One way of splitting a study, with its name on a page. */
 export interface StandardSplit {
@@ -56,12 +57,16 @@ export function standardSplits(
   visits?: ErrorsInput,
   options: { readonly confidence?: number | undefined } = {},
 ): SplitTable[] {
-  const columns = withDerived(errorColumns(errors));
+  const held = heldColumns(errorColumns(errors));
+  const columns = withDerived(held);
+  const own = { ...options, visits: visits === undefined ? undefined : heldColumns(errorColumns(visits)) };
   return STANDARD_SPLITS.map(({ title, by }): SplitTable => {
     const none = (reason: string): SplitTable => ({ title, by, rows: [], reason });
     if (columns.length === 0) return none('there are no occupations');
     if (!columns.has(columnOf(by))) return none('the errors have no such column');
-    const rows = summarizeBy(errors, by, { ...options, visits });
+    const rows = splitCells(held, [by], own).map(
+      ({ groups, cell }): SummaryRow => ({ ...groups[0]!, ...cell }),
+    );
     return rows.every(({ group }) => group === 'not known')
       ? none('it is known of no occupation')
       : { title, by, rows, reason: null };

@@ -1,4 +1,4 @@
-import { type ErrorsInput, errorColumns } from '../errors/index.js';
+import { type ErrorColumns, type ErrorsInput, errorColumns } from '../errors/index.js';
 import { withDerived } from './derivedColumns.js';
 import { columnOf, type Group, groupsOf, type SplitBy } from './groups.js';
 
@@ -26,7 +26,7 @@ export const cellKey = (groups: readonly Group[]): string => groups.map(({ group
  * @returns cells by their key; null when the visits lack one of the columns
  */
 export function countVisits(
-  visits: ErrorsInput,
+  visits: ErrorsInput | ErrorColumns,
   by: readonly SplitBy[],
 ): ReadonlyMap<string, CountedVisits> | null {
   const columns = withDerived(errorColumns(visits), true);
