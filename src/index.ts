@@ -68,6 +68,7 @@ export {
   timeOfDay,
 } from './days/index.js';
 export {
+  assumedBasePpm,
   type BaseParameters,
   type CommonCauses,
   type CommonParameter,
