@@ -76,7 +76,10 @@ export async function readStudy(path: string): Promise<Study> {
     siteHeightDifferenceM: settings.site?.heightDifferenceM ?? null,
     jobs: jobs.map((job, k) => ({ ...job, changes: from.jobs[k]!, limitMm: jobLimitMm(settings.jobs[k]!) })),
     checkShots: settings.checkShots,
-    standards: [...new Set(settings.standards)],
+    // Who names a field test asks for its standard.
+    standards: [
+      ...new Set([...settings.standards, ...settings.fieldTests.map(() => 'ISO 17123-8' as const)]),
+    ],
     fieldTests: settings.fieldTests,
     centringSigmaMm: settings.centringSigmaMm,
     terms: settings.terms,

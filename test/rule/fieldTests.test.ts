@@ -103,8 +103,22 @@ describe('a field test among check shots', () => {
     expect(found!.series[0]!.distanceM).toBeCloseTo(300, 3);
     expect(findFieldTests(shots, placeOf, { ...named, day: '2025-03-15' }).tests).toEqual([]);
   });
+  it('rebuilds the points from the coordinates of their own day', () => {
+    // B was set anew on the 15th, 2 m farther: each day is judged by its own place.
+    const moved = (mark: string, day: string) =>
+      mark === 'B' && day > '2025-03-14' ? away(7.2, 9.6, 0.5) : placeOf(mark);
+    const later = series(24 * 60, 5, { day: '2025-03-15' });
+    const { tests } = findFieldTests([...series(0), ...later], moved);
+    expect(tests.map(({ series: [only] }) => Number(only!.distanceM.toFixed(3)))).toEqual([10, 12]);
+    for (const { sets } of tests) {
+      expect(sets[0]!.second.x ** 2 + sets[0]!.second.y ** 2).toBeCloseTo(
+        sets === tests[0]!.sets ? 100 : 144,
+        3,
+      );
+    }
+  });
   it('does not depend on the order of the shots', () => {
-    const shots = [0, 120, 240].flatMap((at) => series(at));
+    const shots = ['R1', 'R2'].flatMap((rover) => [0, 120, 240].flatMap((at) => series(at, 5, { rover })));
     const expected = JSON.stringify(findFieldTests(shots, placeOf));
     fc.assert(
       fc.property(fc.shuffledSubarray(shots, { minLength: shots.length }), (shuffled) => {

@@ -165,16 +165,27 @@ describe('a study with all that rules are used for', () => {
       /^No field test is among the shots: it needs sets on "M01" and "FT1"/,
     );
   });
+  it('looks for named field tests without being asked for the standard, and for no day but theirs', async () => {
+    const named = 'fieldTests: [{marks: [FT1, FT2], day: 2000-01-01}]\n';
+    const { standards } = (await run(`${STUDY.replace(/standards:.*/, '')}${named}`)).results;
+    expect(standards.map(({ name }) => name)).toEqual(['ISO 17123-8']);
+    expect(standards[0]!.outcome).toMatch(
+      /^No field test is among the shots: it needs a first series on 2000-01-01, as fieldTests states: the next one on "FT1" and "FT2" begins on/,
+    );
+  });
   it('says what each standard lacks', () => {
     const [nssda, , gum, title] = found.results.standards;
     expect(nssda!.lacking).toContain('not met: at least 20 check points in plan');
     expect(nssda!.outcome).toContain('not to be stated as tested');
     expect(gum!.lacking).toContain("not met: the error of the base's coordinates is stated");
-    expect(title!.outcome).toMatch(/^(The limit|Nothing can be said)/);
+    // The visits of the simulator are hours apart: no two marks of one setup within 30 minutes, but for the field test.
+    expect(title!.outcome).toContain(title!.figures.length === 0 ? 'Nothing can be said' : 'The limit');
     for (const { caution } of found.results.standards) expect(caution).toContain('from memory');
   });
   it('has limits at the stated number of false alarms, also from two bases at different distances', () => {
+    expect(found.results.checkShotLimits).toHaveLength(2);
     for (const { alarmShare, twoBases, limits } of found.results.checkShotLimits) {
+      expect(twoBases.length).toBeGreaterThan(5);
       expect(alarmShare).toBe(2 / 800);
       for (const { firstKm, secondKm, limitMm } of twoBases) {
         const at = (km: number) => limits.find(({ baselineKm }) => baselineKm === km)!.twoBasesMm;

@@ -52,60 +52,91 @@ const SERIES_APART_MS = 90 * MINUTE;
 /** Series farther apart than this belong to two tests. */
 const LONGEST_TEST_MS = 7 * 24 * 60 * MINUTE;
 
+/** Coordinates of a mark on a day; null where they are not known in full. */
+export type PlaceOfMark = (mark: string, day: string) => Geodetic | null;
+
 /**
  * Looks among check shots for field tests after ISO 17123-8 (procedure from memory): two marks 2 to 20 m apart, measured
  * one after the other five times in a row. Fewer than two sets in a row are no series.
- * @param placeOf coordinates of a mark; null where they are not known in full
  * @param wanted only this pair, in this order, from this day on
+ * @returns tests and series in the order of time
  */
 export function findFieldTests(
   shots: readonly FieldTestShot[],
-  placeOf: (mark: string) => Geodetic | null,
+  placeOf: PlaceOfMark,
   wanted?: { readonly marks: readonly [string, string]; readonly day: string } | undefined,
 ): FoundFieldTests {
-  const known = shots.filter(({ startMs, east, north, up }) => !Number.isNaN(startMs + east + north + up));
-  const marks = [...new Set(known.map(({ mark }) => mark))].sort();
-  const series = pairsOf(marks, placeOf, wanted?.marks).flatMap((pair) =>
-    groups(known.filter(({ mark, day }) => pair.marks.includes(mark) && day >= (wanted?.day ?? ''))).flatMap(
-      (own) => seriesOf(own, pair, wanted !== undefined),
-    ),
+  const known = shots.filter(
+    ({ startMs, east, north, up, day }) =>
+      !Number.isNaN(startMs + east + north + up) && day >= (wanted?.day ?? ''),
   );
+  const series = pairsOf(known, placeOf, wanted?.marks)
+    .flatMap((pair) =>
+      groups(known.filter(({ mark }) => pair.marks.includes(mark))).flatMap((own) =>
+        seriesOf(own, pair, wanted !== undefined),
+      ),
+    )
+    .sort(inTime);
   return {
     tests: testsOf(series.filter(({ sets }) => sets.length === SETS_OF_SERIES)),
     incomplete: series.filter(({ sets }) => sets.length < SETS_OF_SERIES),
   };
 }
 
+/** Two rovers may begin at once: then by their names. */
+function inTime(a: FieldSeries, b: FieldSeries): number {
+  const names = ({ marks, rover, base }: FieldSeries): string => JSON.stringify([marks, rover, base]);
+  return a.startMs - b.startMs || (names(a) < names(b) ? -1 : 1);
+}
+
 interface Pair {
   readonly marks: readonly [string, string];
-  readonly places: ReadonlyMap<string, FieldPoint>;
+  /** Both points on a day, the first at the origin; null where they are unknown or no rover points. */
+  readonly placesOn: (day: string) => ReadonlyMap<string, FieldPoint> | null;
 }
 
 /** Pairs of marks as near to each other as rover points are; a pair that is named may be at any distance. */
 function pairsOf(
-  marks: readonly string[],
-  placeOf: (mark: string) => Geodetic | null,
+  shots: readonly FieldTestShot[],
+  placeOf: PlaceOfMark,
   wanted: readonly [string, string] | undefined,
 ): Pair[] {
-  const named = wanted === undefined ? null : [wanted];
+  const days = new Map<string, Set<string>>();
+  for (const { mark, day } of shots) days.set(mark, (days.get(mark) ?? new Set()).add(day));
+  const marks = [...days.keys()].sort();
   const candidates =
-    named ?? marks.flatMap((first, k) => marks.slice(k + 1).map((second) => [first, second] as const));
-  return candidates.flatMap((pair): Pair[] => {
-    const [first, second] = pair.map(placeOf);
-    if (!first || !second) return [];
-    const { eastM, northM } = localFrame(first).toLocal(geodeticToGeocentric(second));
-    const apartM = Math.hypot(eastM, northM);
-    if (named === null && (apartM < NEAREST_M || apartM > FARTHEST_M)) return [];
-    return [
-      {
+    wanted === undefined
+      ? marks.flatMap((first, k) => marks.slice(k + 1).map((second) => [first, second] as const))
+      : [wanted];
+  return candidates
+    .map(
+      (pair): Pair => ({
         marks: [pair[0], pair[1]],
-        places: new Map([
-          [pair[0], { x: 0, y: 0, h: 0 }],
-          [pair[1], { x: eastM, y: northM, h: second.heightM - first.heightM }],
-        ]),
-      },
-    ];
-  });
+        placesOn: placesOf(pair, placeOf, wanted !== undefined),
+      }),
+    )
+    .filter(({ marks: [first, second], placesOn }) =>
+      [...(days.get(first) ?? [])].some((day) => days.get(second)?.has(day) && placesOn(day) !== null),
+    );
+}
+
+/** Marks have other coordinates on some days; most days have the same. */
+function placesOf(
+  [first, second]: readonly [string, string],
+  placeOf: PlaceOfMark,
+  anyDistance: boolean,
+): Pair['placesOn'] {
+  return (day) => {
+    const [from, to] = [placeOf(first, day), placeOf(second, day)];
+    if (from === null || to === null) return null;
+    const { eastM, northM } = localFrame(from).toLocal(geodeticToGeocentric(to));
+    const apartM = Math.hypot(eastM, northM);
+    if (!anyDistance && (apartM < NEAREST_M || apartM > FARTHEST_M)) return null;
+    return new Map([
+      [first, { x: 0, y: 0, h: 0 }],
+      [second, { x: eastM, y: northM, h: to.heightM - from.heightM }],
+    ]);
+  };
 }
 
 /** The shots of each rover and base in the order of time. */
@@ -120,14 +151,19 @@ function groups(shots: readonly FieldTestShot[]): FieldTestShot[][] {
   );
 }
 
-function seriesOf(shots: readonly FieldTestShot[], { marks, places }: Pair, ordered: boolean): FieldSeries[] {
+function seriesOf(
+  shots: readonly FieldTestShot[],
+  { marks, placesOn }: Pair,
+  ordered: boolean,
+): FieldSeries[] {
   const found: FieldSeries[] = [];
   let sets: [FieldTestShot, FieldTestShot][] = [];
   const close = (): void => {
     // Further sets of a row are a series of their own.
     for (let k = 0; k < sets.length; k += SETS_OF_SERIES) {
       const part = sets.slice(k, k + SETS_OF_SERIES);
-      if (part.length > 1) found.push(seriesFrom(part, places));
+      const places = placesOn(part[0]![0].day);
+      if (part.length > 1 && places !== null) found.push(seriesFrom(part, places));
     }
     sets = [];
   };

@@ -8,6 +8,7 @@ export {
   type FoundFieldTest,
   type FoundFieldTests,
   findFieldTests,
+  type PlaceOfMark,
 } from './findFieldTests.js';
 export {
   type FieldPoint,

@@ -8,6 +8,7 @@ import {
   findFieldTests,
   isoFieldTest,
   lackingOf,
+  type PlaceOfMark,
   type StandardCondition,
   type StandardResult,
   sameDeviation,
@@ -33,23 +34,42 @@ export function fieldTests(input: StandardsInput, study: Study): StandardResult[
     const position = coordinatesOn(input.control.marks.get(mark)!, day)?.position;
     return position === undefined || Number.isNaN(position.latitudeDeg + position.heightM) ? null : position;
   };
-  const lastDay = (mark: string): string =>
-    input.errors.reduce((last, error) => (error.mark === mark && error.day > last ? error.day : last), '');
-  const knownPlace = (mark: string) => (input.control.marks.has(mark) ? placeOf(mark, lastDay(mark)) : null);
+  const knownPlace: PlaceOfMark = (mark, day) => (input.control.marks.has(mark) ? placeOf(mark, day) : null);
   const wanted: (FieldTestSettings | null)[] = study.fieldTests.length > 0 ? [...study.fieldTests] : [null];
   const tests: Named[] = [];
-  const missing: string[] = [];
+  const besides: StandardResult[] = [];
   for (const settings of wanted) {
-    const found = findFieldTests(input.errors, knownPlace, settings ?? undefined);
-    const own = settings === null ? found.tests : found.tests.slice(0, 1);
+    const { tests: all, incomplete } = findFieldTests(input.errors, knownPlace, settings ?? undefined);
+    const own = settings === null ? all : all.filter(({ series }) => series[0]!.day === settings.day);
     tests.push(...own.map((test) => ({ test, settings: settings ?? {} })));
-    if (own.length === 0) missing.push(whyNone(settings, found.incomplete));
+    if (own.length === 0) besides.push(nothingFound(whyNone(settings, incomplete, all)));
+    else if (settings === null && incomplete.length > 0) besides.push(brokenOff(incomplete));
   }
   const results = tests.map(({ test, settings }) => ({ test, found: judged(test, settings, input, study) }));
-  return [
-    ...results.map(({ test, found }, k) => entry(test, found, k === 0 ? null : results[k - 1]!)),
-    ...missing.map(nothingFound),
-  ];
+  return [...results.map((result) => entry(result, fullBefore(result, results))), ...besides];
+}
+
+interface Result {
+  readonly test: FoundFieldTest;
+  readonly found: Judged;
+}
+
+/** The full test before a full one of the same pair and rover: the standard compares two. */
+function fullBefore({ test, found }: Result, results: readonly Result[]): Result | null {
+  const own = test.series[0]!;
+  const alike = (other: Result): boolean => {
+    const { marks, rover, startMs } = other.test.series[0]!;
+    const same = JSON.stringify([marks, rover]) === JSON.stringify([own.marks, own.rover]);
+    return same && other.found.iso.kind === 'full' && startMs < own.startMs;
+  };
+  if (found.iso.kind !== 'full') return null;
+  return results
+    .filter(alike)
+    .reduce<Result | null>(
+      (last, each) =>
+        last === null || each.test.series[0]!.startMs > last.test.series[0]!.startMs ? each : last,
+      null,
+    );
 }
 
 interface Judged {
@@ -93,11 +113,7 @@ function judged(
   };
 }
 
-function entry(
-  { series }: FoundFieldTest,
-  { iso, source }: Judged,
-  before: { readonly test: FoundFieldTest; readonly found: Judged } | null,
-): StandardResult {
+function entry({ test: { series }, found: { iso, source } }: Result, before: Result | null): StandardResult {
   const [first] = series as [FieldSeries];
   const { kind, plan, height, planLimitMm, heightLimitMm, planWithin, heightWithin, sets } = iso;
   const outside = sets.filter(({ withinLimits }) => !withinLimits).length;
@@ -107,10 +123,7 @@ function entry(
     { text: `deviations known beforehand, ${source}`, met: null },
   ];
   const same =
-    before !== null &&
-    kind === 'full' &&
-    before.found.iso.kind === 'full' &&
-    JSON.stringify(before.test.series[0]!.marks) === JSON.stringify(first.marks)
+    before !== null
       ? `; against the test of ${before.test.series[0]!.day} the plan is ${likeness(plan, before.found.iso.plan)} and the height ${likeness(height, before.found.iso.height)}`
       : '';
   const named = `${kind} test on ${first.marks.map((mark) => JSON.stringify(mark)).join(' and ')}, ${first.day}, rover ${first.rover || 'not named'}, base ${first.base}`;
@@ -155,14 +168,38 @@ const tested = (within: boolean | null): string => (within ? 'is within' : 'exce
 const likeness = (a: Parameters<typeof sameDeviation>[0], b: Parameters<typeof sameDeviation>[1]): string =>
   sameDeviation(a, b) ? 'not shown to differ' : 'another one';
 
-function whyNone(settings: FieldTestSettings | null, incomplete: readonly FieldSeries[]): string {
+function whyNone(
+  settings: FieldTestSettings | null,
+  incomplete: readonly FieldSeries[],
+  others: readonly FoundFieldTest[],
+): string {
+  if (settings !== null && others.length > 0) {
+    return `a first series on ${settings.day}, as fieldTests states: the next one on ${settings.marks.map((mark) => JSON.stringify(mark)).join(' and ')} begins on ${others[0]!.series[0]!.day}`;
+  }
   const [some] = [...incomplete].sort((a, b) => b.sets.length - a.sets.length);
   if (some !== undefined) {
-    return `a series of 5 sets in a row: on ${some.marks.map((mark) => JSON.stringify(mark)).join(' and ')} there are ${some.sets.length} on ${some.day}`;
+    return `a series of 5 sets in a row: ${setsOf(some)}`;
   }
   return settings === null
     ? 'two marks 2 to 20 m apart, known in plan and height, that one rover measured in turn five times in a row'
     : `sets on ${settings.marks.map((mark) => JSON.stringify(mark)).join(' and ')} from ${settings.day} on: both must be known marks, measured in turn by one rover five times in a row`;
+}
+
+const setsOf = ({ marks, sets, day }: FieldSeries): string =>
+  `on ${marks.map((mark) => JSON.stringify(mark)).join(' and ')} there are ${sets.length} on ${day}`;
+
+/** More than these are only counted. */
+const MOST_NAMED = 5;
+
+/** Series beside a test that took no part in any. */
+function brokenOff(incomplete: readonly FieldSeries[]): StandardResult {
+  const more = incomplete.length - MOST_NAMED;
+  const named = incomplete.slice(0, MOST_NAMED).map(setsOf).join('; ');
+  const text = `series of 5 sets in a row: ${named}${more > 0 ? `; ${more} more` : ''}`;
+  return {
+    ...nothingFound(text),
+    outcome: `Series that broke off before the fifth set took no part in a test: ${named}${more > 0 ? `; ${more} more` : ''}.`,
+  };
 }
 
 const nothingFound = (lacking: string): StandardResult => ({
