@@ -43,7 +43,7 @@ export function benchDayPromises(): void {
   console.log(`|---|${heads.map(() => '---|').join('')}`);
   const columns = CASES.flatMap((each) => COMPONENTS.map((component) => sharesOf(each, component)));
   PROMISES.forEach((promise, k) => {
-    console.log(`| ${100 * promise} % | ${columns.map((shares) => shares[k]).join(' | ')} |`);
+    console.log(`| ${(100 * promise).toFixed(0)} % | ${columns.map((shares) => shares[k]).join(' | ')} |`);
   });
 }
 
