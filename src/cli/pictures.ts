@@ -35,7 +35,7 @@ export async function drawPictures(
     const shown = chartInUnits(chart, readerUnits(run.results.study.reportUnits), names);
     const svg = await renderSvg(shown);
     files.push([name, svg]);
-    return { svg, description: shown.description };
+    return { svg, description: shown.description, file: `charts/${name}.svg` };
   };
   const { marks } = run.results;
   const horizontal = await draw('horizontal-error', errorChart(run, 'horizontal'));

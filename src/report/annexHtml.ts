@@ -17,10 +17,14 @@ import { annexJobs } from './jobsSection.js';
 import { marksSection } from './marksSection.js';
 import { messagesSection } from './messagesSection.js';
 import { Page } from './page.js';
+import { withinBudget } from './pictureBudget.js';
 import { figure, type ReportPictures } from './pictures.js';
 import { annexStandards } from './standardsSection.js';
 import { type ReportTable, reportTables } from './tables.js';
 import { annexVisits } from './visitsSection.js';
+
+/** With the tables of a long study beside them a page stays under 3 MB. */
+const MOST_PICTURE_BYTES = 1_100_000;
 
 const CONTENTS: readonly (readonly [id: string, words: string])[] = [
   ['settings', 'Settings and version'],
@@ -50,10 +54,11 @@ const CONTENTS: readonly (readonly [id: string, words: string])[] = [
  */
 export function annexHtml(
   run: StudyRun,
-  pictures: ReportPictures,
+  drawn: ReportPictures,
   tables: readonly ReportTable[] = reportTables(run),
 ): string {
   const page = new Page(run.results);
+  const pictures = withinBudget(drawn, MOST_PICTURE_BYTES);
   const { study } = run.results;
   const sections = html`${settingsSection(page)}
 ${filesSection(page)}

@@ -36,7 +36,12 @@ function distances(page: Page): Html {
   const { rules } = page.results;
   if (rules.length === 0) return html`<p>No distance can be given: ${whyNoRule(page.results)}.</p>`;
   const { error, distance } = page.units;
-  const none = rules.filter(({ maximumBaselineKm }) => !maximumBaselineKm);
+  // The same reason often holds for several limits.
+  const why = new Set(
+    rules
+      .filter(({ maximumBaselineKm }) => !maximumBaselineKm)
+      .map(({ component, reason }) => `${component === 'horizontal' ? 'Plan' : 'Height'}: ${reason}`),
+  );
   return html`<div class="big">${table('To keep within the limit, stay within', rules, [
     {
       head: 'Limit for',
@@ -58,5 +63,5 @@ function distances(page: Page): Html {
       text: true,
     },
   ])}</div>
-${none.map((rule) => html`<p class="small">${rule.component === 'horizontal' ? 'Plan' : 'Height'}, ${page.number(rule, 'limitMm', 'limit')} ${error.name}: ${page.text(rule.reason ?? '')}.</p>`)}`;
+${[...why].map((reason) => html`<p class="small">${page.text(reason)}.</p>`)}`;
 }

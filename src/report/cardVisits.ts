@@ -16,7 +16,7 @@ export function secondVisit(page: Page): Html {
   );
   if (given.length === 0) {
     return html`<section id="twice"><h2>A new point, twice</h2>
-<p>What a second visit on the same day gains could not be found. Visit again on another day, or from another base; limits above.</p></section>`;
+<p>What a second visit on the same day gains could not be found. Visit again on another day, or from another base.</p></section>`;
   }
   const minutes = gapOf(given);
   const { distance, error } = page.units;

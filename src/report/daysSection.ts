@@ -7,14 +7,18 @@ type Component = TimeOfDayResult['component'];
 
 /** On which days and at which hours the rule is not to be trusted. */
 export function daysSection(page: Page): Html {
-  const { dayModels, timeOfDay, fits } = page.results;
+  const { timeOfDay, fits } = page.results;
   if (fits.length === 0) return html``;
   return html`<section id="days"><h2>On which days and at which hours not</h2>
-${dayModels.length === 0 ? html`<p>Single days could not be judged: that takes more days with near and far marks.</p>` : degraded(page)}
+${!daysJudged(page.results) ? html`<p>Single days could not be judged: that takes more days with near and far marks.</p>` : degraded(page)}
 ${timeOfDay.map((one) => html`<p>${hourWords(page, one)}</p>\n`)}
 </section>
 `;
 }
+
+/** Whether days could be told apart. */
+export const daysJudged = ({ dailyFactors }: Results): boolean =>
+  dailyFactors.some(({ degraded: named }) => named !== null);
 
 function degraded(page: Page): Html {
   const { degradedDays, dayModels } = page.results;

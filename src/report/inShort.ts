@@ -1,5 +1,6 @@
 import type { Rule } from '../rule/index.js';
 import type { Results } from '../study/index.js';
+import { daysJudged } from './daysSection.js';
 import { date, type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { byDays, whyNoRule } from './words.js';
@@ -8,15 +9,16 @@ import { byDays, whyNoRule } from './words.js';
 export function inShort(page: Page): Html {
   const { fits } = page.results;
   if (fits.length === 0) return html``;
-  const lines: [string, string, Html][] = [
+  const { rules, backTest } = page.results;
+  const lines: [string, string | null, Html][] = [
     ['How far', 'rule', howFar(page)],
-    ['How sure', 'proof', howSure(page)],
+    ['How sure', rules.length + backTest.length === 0 ? null : 'proof', howSure(page)],
     ['When not', 'days', whenNot(page)],
     ['Against the spec sheet', 'fit', againstSheet(page)],
     ['Set aside', 'account', setAside(page)],
   ];
   return html`<section id="short"><h2>In short</h2>
-<dl>${lines.map(([head, id, words]) => html`<dt><a href="#${id}">${head}</a></dt><dd>${words}</dd>\n`)}</dl>
+<dl>${lines.map(([head, id, words]) => html`<dt>${id === null ? head : html`<a href="#${id}">${head}</a>`}</dt><dd>${words}</dd>\n`)}</dl>
 </section>
 `;
 }
@@ -62,14 +64,13 @@ function howSure(page: Page): Html {
 }
 
 function whenNot(page: Page): Html {
-  const { degradedDays, dayModels, hoursOfCaution } = page.results;
+  const { degradedDays, hoursOfCaution } = page.results;
   const days = [...new Set(degradedDays.map(({ day }) => day))].sort();
-  const dayWords =
-    dayModels.length === 0
-      ? html`Single days could not be judged.`
-      : days.length === 0
-        ? html`No day stands out.`
-        : html`Errors were clearly larger than usual on ${days.map((day, k) => html`${k === 0 ? '' : k === days.length - 1 ? ' and ' : ', '}${date(day)}`)}.`;
+  const dayWords = !daysJudged(page.results)
+    ? html`Single days could not be judged.`
+    : days.length === 0
+      ? html`No day stands out.`
+      : html`Errors were clearly larger than usual on ${days.map((day, k) => html`${k === 0 ? '' : k === days.length - 1 ? ' and ' : ', '}${date(day)}`)}.`;
   const hours = hoursOfCaution.map(
     (one) =>
       html` Take care ${place(one.component)} from ${page.number(one, 'fromHour', 'hour')} to ${page.number(one, 'toHour', 'hour')} solar time.`,

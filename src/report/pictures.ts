@@ -4,6 +4,10 @@ import { type Html, html } from './html.js';
 export interface ReportPicture {
   readonly svg: string;
   readonly description: string;
+  /** Its file beside the pages. */
+  readonly file?: string | undefined;
+  /** Not shown, since the page would be too long. */
+  readonly tooLarge?: boolean | undefined;
 }
 
 /** Pictures of the pages; null where there was nothing to draw. */
@@ -33,7 +37,9 @@ export interface ReportPictures {
 /** A picture inside the page, with its words for those who do not see it. */
 export function figure(picture: ReportPicture | null): Html | null {
   if (picture === null) return null;
-  const { svg, description } = picture;
+  const { svg, description, file, tooLarge } = picture;
+  if (tooLarge)
+    return html`<p class="small">Too large for this page${file === undefined ? '' : `, see ${file}`}: ${description}</p>\n`;
   const source = `data:image/svg+xml;base64,${Buffer.from(svg, 'utf8').toString('base64')}`;
   return html`<figure><img src="${source}" alt="${description}"></figure>\n`;
 }

@@ -7,7 +7,7 @@ import { figure, type ReportPicture } from './pictures.js';
 /** Why to believe the rule: one picture, and what can be counted by hand. */
 export function proofSection(page: Page, picture: ReportPicture | null): Html {
   const { backTest, rules } = page.results;
-  if (rules.length === 0) return html``;
+  if (rules.length + backTest.length === 0) return html``;
   if (backTest.length === 0) {
     return html`<section id="proof"><h2>Why to believe it</h2>
 <p>The rules were not tried on days that they had not seen: that takes more days.</p></section>\n`;

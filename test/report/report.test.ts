@@ -14,7 +14,10 @@ import {
   arrowBytes,
   cardHtml,
   markdownOf,
+  monthHtml,
   Page,
+  type ReportPicture,
+  type ReportPictures,
   reportHtml,
   reportTables,
   ruleSentence,
@@ -29,6 +32,7 @@ import {
   readStudy,
   runStudy,
   type StudyRun,
+  type WatchRun,
 } from '../../src/study/index.js';
 import { REPOSITORY } from '../cli/ppmwise.js';
 import { testFolder } from '../files.js';
@@ -345,6 +349,71 @@ describe('pages of poor studies', () => {
     expect(bare.card).toContain('the study file states no tolerance');
   });
 
+  it('say of one day that days could not be judged, and a reason of several limits once', () => {
+    const rules = run.results.rules.map(
+      (rule): Rule => ({
+        ...rule,
+        maximumBaselineKm: null,
+        reason: '1 day is too few: a rule needs 15 days',
+      }),
+    );
+    const oneDay = pagesOf(
+      withResults({
+        rules,
+        backTest: [],
+        degradedDays: [],
+        hoursOfCaution: [],
+        dailyFactors: run.results.dailyFactors.map((one) => ({ ...one, degraded: null })),
+        timeOfDay: run.results.timeOfDay.map((one) => ({ ...one, pValue: null })),
+      }),
+    );
+    expect(oneDay.report).toContain('Single days could not be judged.');
+    expect(oneDay.report).not.toContain('No day stands out');
+    expect(oneDay.card!.match(/1 day is too few/g)).toHaveLength(2);
+    expect(oneDay.card).toContain('Whether some hours are worse could not be judged');
+  });
+
+  it('of a month without a new day, a model or a crew read well', () => {
+    const evil = '<script>alert(1)</script>';
+    const month: WatchRun['month'] = {
+      after: null,
+      from: null,
+      to: null,
+      days: 0,
+      crews: [],
+      visits: { withFix: 0, withoutFix: 0, shareWithoutFix: null },
+      earlierShareWithoutFix: null,
+      rowsSetAside: [],
+      occupationsSetAside: [],
+      markShifts: [],
+      nextMarks: [],
+      messagesToldBefore: 0,
+    };
+    const empty = monthHtml({ results: run.results, watches: [], unwatched: [], month, messages: [] });
+    expect(otherWords(empty)).not.toMatch(/undefined|NaN|null|\[object/);
+    expect(empty).toContain('Put the new logs into the study file.');
+    expect(empty).toContain('There is nothing to watch by');
+    const place = { day: '2025-06-01', mark: evil, crew: evil, file: evil, row: 3 };
+    const spoiled = monthHtml({
+      results: { ...run.results, study: { ...run.results.study, title: evil }, crews: [] },
+      watches: [],
+      unwatched: [{ component: 'horizontal', reason: evil }],
+      month: {
+        ...month,
+        crews: [
+          { crew: evil, days: 1, visits: 2, visitsWithoutFix: 0, occupations: 2 },
+          { crew: '', days: 1, visits: 1, visitsWithoutFix: 0, occupations: 1 },
+        ],
+        occupationsSetAside: [{ ...place, reason: 'suspected-blunder', detail: evil }],
+        nextMarks: [{ mark: evil, baselineKm: 3, days: 2, reason: 'few days', informationGain: null }],
+      },
+      messages: [],
+    });
+    expect(spoiled).not.toContain('<script>');
+    expect(spoiled).toContain('not named');
+    expect(markdownOf(spoiled)).not.toContain('<script>');
+  });
+
   it('escape whatever stands in logs and study file, and keep its direction', () => {
     const evil = '<script>alert(1)</script>';
     const hebrew = '\u05e0\u05e7\u05d5\u05d3\u05d4 7';
@@ -374,6 +443,28 @@ describe('pages of poor studies', () => {
     const many = Array.from({ length: 200 }, (_, k) => ({ ...run.results.marks[0]!, mark: `P${k}` }));
     const crowded = pagesOf(withResults({ marks: many }));
     for (const { mark } of many) expect(crowded.annex).toContain(`<bdi>${mark}</bdi>`);
+  });
+});
+
+describe('pictures of long studies', () => {
+  it('are named instead of shown where they would make the annex too long, the least needed first', () => {
+    const svg = `<svg xmlns="http://www.w3.org/2000/svg">${'x'.repeat(300_000)}</svg>`;
+    const picture = (name: string): ReportPicture => ({
+      svg,
+      description: `Of ${name}`,
+      file: `charts/${name}.svg`,
+    });
+    const pictures: ReportPictures = {
+      ...NO_PICTURES,
+      horizontal: picture('fit'),
+      days: [picture('days')],
+      hourDays: [picture('cells')],
+    };
+    const annex = annexHtml(run, pictures);
+    expect(annex.length).toBeLessThan(3e6);
+    for (const name of ['fit', 'days']) expect(annex).toContain(`alt="Of ${name}"`);
+    expect(annex).not.toContain('alt="Of cells"');
+    expect(annex).toContain('Too large for this page, see charts/cells.svg: Of cells');
   });
 });
 
