@@ -60,6 +60,11 @@ export class RowMessages {
 /** Stands in the detail of a name that is near a known one. */
 export const DID_YOU_MEAN = 'did you mean';
 
+/** Begins the detail of a row without a base, in a study with several. */
+const NO_BASE = 'the row names no base';
+const STATE_BASE =
+  'State it as "constants: {base: NAME}" in the layout of these logs, or leave only the base that was used in the bases file.';
+
 const isName = (reason: RowReason): boolean => reason === 'unknown-mark' || reason === 'unknown-base';
 
 /** What rows of one message have in common. Unreadable values differ from row to row: their column counts. */
@@ -78,7 +83,7 @@ const areRows = (count: number): string => (count === 1 ? '1 row is' : `${count}
 const inFiles = (count: number): string => (count === 1 ? '' : `, in ${count} files`);
 
 function groupMessage({ first, count, files }: Group): Message {
-  const remedy = REMEDIES[first.reason as ToldReason];
+  const remedy = first.detail.startsWith(NO_BASE) ? STATE_BASE : REMEDIES[first.reason as ToldReason];
   return message(
     'warning',
     first.reason,
@@ -95,7 +100,7 @@ function restMessage(groups: readonly Group[]): Message {
   return message(
     'warning',
     first.reason,
-    `${areRows(count)} set aside as ${first.reason} for ${groups.length} further ${groups.length === 1 ? 'name' : 'names'}${inFiles(files)}: here ${first.detail}. Nothing is wrong where these are ordinary points and no check shots.`,
+    `${areRows(count)} set aside as ${first.reason} for ${groups.length} further ${groups.length === 1 ? 'name' : 'names'}${inFiles(files)}: here ${first.detail}. Nothing is wrong where these are ordinary points and no check shots. Where the mark stands in another column, give that column the role "description" in the layout, and a "pattern" in marks.names where more than the name stands there.`,
     { file: first.file, row: first.row },
   );
 }

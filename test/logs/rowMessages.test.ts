@@ -32,6 +32,12 @@ describe('RowMessages', () => {
     expect(told([...rows].reverse())).toEqual(expected);
   });
 
+  it('says what to do about rows that name no base where there are several', () => {
+    expect(told([row('a.csv', 2, 'unknown-base', 'the row names no base and the study has 2')])).toEqual([
+      'a.csv:2 warning: 1 row is set aside as unknown-base: the row names no base and the study has 2. State it as "constants: {base: NAME}" in the layout of these logs, or leave only the base that was used in the bases file.',
+    ]);
+  });
+
   it('tells of unreadable values once a file and column, by the first of them', () => {
     const rows = [
       row('a.csv', 5, 'unreadable', 'expected a number, came "b"', 'height'),
@@ -62,7 +68,7 @@ describe('RowMessages', () => {
     expect(messages[0]).toContain('"CP-5"');
     expect(messages[1]).toContain('no mark is named "0"');
     expect(messages.at(-1)).toBe(
-      'a.csv:5 warning: 4997 rows are set aside as unknown-mark for 4997 further names: here no mark is named "3". Nothing is wrong where these are ordinary points and no check shots.',
+      'a.csv:5 warning: 4997 rows are set aside as unknown-mark for 4997 further names: here no mark is named "3". Nothing is wrong where these are ordinary points and no check shots. Where the mark stands in another column, give that column the role "description" in the layout, and a "pattern" in marks.names where more than the name stands there.',
     );
   });
 });

@@ -17,7 +17,7 @@ export function settleLeftColumns(draft: Draft): void {
   draft.doubt({
     code: 'unused-columns',
     question: `Should ${left.length === 1 ? 'a further column' : 'further columns'} be read?`,
-    because: `Not read, as nothing says what ${left.length === 1 ? 'it is' : 'they are'}: ${named}${more}.`,
+    because: `Not read, as nothing says what ${left.length === 1 ? 'it is' : 'they are'}: ${named}${more}. A column that holds the name of the mark among other words has the role description.`,
     key: 'layout.columns',
     choices: [],
     decisive: false,
