@@ -132,7 +132,7 @@ const limitWords = ({ component, limitMm }: JobResult): string =>
   `${shortNumber(limitMm)} mm ${component === 'horizontal' ? 'in plan' : 'in height'}`;
 
 function title(job: JobResult): string {
-  const far = job.points.filter(({ needsAnotherBase }) => needsAnotherBase).length;
+  const far = job.points.filter(({ needsAnotherBase }) => needsAnotherBase === true).length;
   if (job.maximumBaselineKm === null) return `No rule for ${limitWords(job)}: no point can be promised it`;
   if (far === 0) {
     return job.points.length === 1

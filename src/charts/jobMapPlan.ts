@@ -29,7 +29,7 @@ export function jobPlan({ bases, points }: Pick<JobResult, 'bases' | 'points'>):
     ...points.map(
       (point): JobPlacePoint => ({
         name: point.point,
-        kind: point.needsAnotherBase ? 'not reached' : 'reached',
+        kind: point.needsAnotherBase === false ? 'reached' : 'not reached',
         ...plan(point),
         reachKm: null,
       }),

@@ -51,7 +51,7 @@ function pointTable(page: Page, jobs: readonly JobResult[]): Html {
     ...jobs.map(
       (job): Column<Point> => ({
         head: html`${page.number(job, 'limitMm', 'limit')} ${error.name}`,
-        cell: (_, k) => holdsWords(job, job.points[k]!),
+        cell: (_, k) => holdsWords(job.points[k]!),
         text: true,
       }),
     ),
@@ -62,8 +62,8 @@ function pointTable(page: Page, jobs: readonly JobResult[]): Html {
   });
 }
 
-function holdsWords(job: JobResult, { reachedFrom, needsAnotherBase }: Point): string {
-  if (job.maximumBaselineKm === null && reachedFrom.length === 0) return 'no rule';
+function holdsWords({ needsAnotherBase }: Point): string {
+  if (needsAnotherBase === null) return 'no rule';
   return needsAnotherBase ? 'beyond' : 'holds';
 }
 

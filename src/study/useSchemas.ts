@@ -35,7 +35,10 @@ export const job = z.strictObject({
       promisedMm: nullable.describe('What can be promised there, from the best base.'),
       reason: z.string().nullable(),
       reachedFrom: z.array(z.string()),
-      needsAnotherBase: z.boolean().describe('The rule reaches it from no base.'),
+      needsAnotherBase: z
+        .boolean()
+        .nullable()
+        .describe('The rule reaches it from no base; null without a rule.'),
     }),
   ),
   reaches: z.array(

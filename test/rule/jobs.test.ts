@@ -32,6 +32,13 @@ describe('points of a job', () => {
       /points? lies? beyond the maximum baseline of every base: .*"P4"\. Put a base nearer/,
     );
   });
+  it('need no other base where there is no rule', () => {
+    const none = { rule: { ...rule, maximumBaselineKm: null, reason: 'too few days' }, promise };
+    const { points, reaches, sentence } = reachPoints([place('P1', 44.32)], bases, none);
+    expect(points[0]).toMatchObject({ reachedFrom: [], needsAnotherBase: null });
+    expect(reaches.map(({ holds }) => holds)).toEqual([null, null]);
+    expect(sentence).toContain('because there is no rule: too few days.');
+  });
   it('have what can be promised there, or the reason', () => {
     const [near, far] = ['P1', 'P2'].map((name) => plan.reaches.find(({ point }) => point === name));
     expect(near!.promisedMm!).toBeLessThan(far!.promisedMm!);

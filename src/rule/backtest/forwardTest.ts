@@ -38,7 +38,8 @@ const FEWEST_JUDGED = 5;
 
 /**
  * Fits the first half of the days (15 at least) and judges the others: everything is as it would have been known then,
- * except the weights of the screening.
+ * except the weights of the screening and what a site's height adds. Whether the forms are in doubt is asked of the first
+ * days alone, if `formDoubt` is given at all.
  * @param errors all that were fitted, suspects too
  * @throws InputError when a column is missing or the model is of reference `relative`
  */
@@ -110,7 +111,7 @@ export function forwardTest(
     baseSigmaMm,
     basePpm,
     height,
-    formDoubt: options.formDoubt ? findFormDoubt(own, fit, ownWeights) : null,
+    formDoubt: options.formDoubt === undefined ? null : findFormDoubt(own, fit, ownWeights),
   };
   const used = own.filter((_, i) => ownWeights === undefined || ownWeights[i]! >= 0.5);
   const tolerances = (options.tolerances ?? []).filter((each) => each.component === component);

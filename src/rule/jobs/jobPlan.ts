@@ -54,7 +54,8 @@ export interface JobPoint extends PlannedPlace {
   readonly reason: string | null;
   /** Bases from which the rule reaches it, the nearest first. */
   readonly reachedFrom: readonly string[];
-  readonly needsAnotherBase: boolean;
+  /** Whether no base reaches it; null without a rule, which says nothing of any base. */
+  readonly needsAnotherBase: boolean | null;
 }
 
 export interface JobPlan

@@ -32,7 +32,7 @@ export function reachPoints(
         promisedMm: best.promisedMm,
         reason: best.reason,
         reachedFrom,
-        needsAnotherBase: reachedFrom.length === 0,
+        needsAnotherBase: reaches.every(({ holds }) => holds === null) ? null : reachedFrom.length === 0,
       },
       reaches,
     };
@@ -120,7 +120,7 @@ function checkPlaces(what: 'point' | 'base', places: readonly JobPlace[]): void 
 function sentenceOf(points: readonly JobPoint[], { limitMm, maximumBaselineKm, reason }: Rule): string {
   if (maximumBaselineKm === null)
     return `No point can be promised ${limitMm} mm, because there is no rule: ${reason}.`;
-  const far = points.filter(({ needsAnotherBase }) => needsAnotherBase);
+  const far = points.filter(({ needsAnotherBase }) => needsAnotherBase === true);
   if (far.length === 0) {
     return points.length === 1
       ? 'The point lies within the maximum baseline of a base.'
