@@ -80,22 +80,6 @@ export function fitComponents(
   return { components, messages };
 }
 
-/** The fits behind the rules alone, of the components that can be fitted. */
-export function basisFits(
-  errors: readonly OccupationError[],
-  weights: Float64Array | null,
-  study: Study,
-): ErrorModel[] {
-  return COMPONENTS.flatMap((component) => {
-    try {
-      return [basisFit(errors, weights, component, study).basis];
-    } catch (error) {
-      if (error instanceof InputError) return [];
-      throw error;
-    }
-  });
-}
-
 /** The fit of a component behind the rules, and what its reference was chosen by. */
 function basisFit(
   errors: readonly OccupationError[],

@@ -67,9 +67,6 @@ export function makeRules(
   | 'watch'
 > {
   const { used, models, wrongFixes, options } = input;
-  const finders = new Map(
-    models.map((model) => [model.component, ruleFinder(used, model, options.get(model.component)!)]),
-  );
   const dayModel = (component: Component) => options.get(component)!.dayModel ?? null;
   const usedWeights = wrongFixes?.weights?.filter((weight) => weight >= 0.5);
   const grouped = (make: typeof ruleByHour): (PartRule & { readonly group: string })[] =>
@@ -83,9 +80,7 @@ export function makeRules(
       }));
     });
   return {
-    rules: tolerances.map(
-      (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),
-    ),
+    rules: toleranceRules(input, { tolerances }),
     ruleTable: models.flatMap((model) => ruleTable(used, model, options.get(model.component)!)),
     rulesByHour: grouped(ruleByHour).map(({ group, ...rule }) => ({ hours: group, ...rule })),
     rulesBySeason: grouped(ruleBySeason).map(({ group, ...rule }) => ({ month: group, ...rule })),
@@ -123,12 +118,11 @@ const promisesOf = (
 
 /** The rules of the study's tolerances, in their order, and nothing else. */
 export function toleranceRules(
-  input: Omit<RuleInput, 'options'>,
+  { used, models, options }: RuleInput,
   { tolerances }: Pick<Study, 'tolerances'>,
 ): Rule[] {
-  const { used, models } = input;
   const finders = new Map(
-    models.map((model) => [model.component, ruleFinder(used, model, ruleOptions(model, input))]),
+    models.map((model) => [model.component, ruleFinder(used, model, options.get(model.component)!)]),
   );
   return tolerances.map(
     (tolerance) => finders.get(tolerance.component)?.(tolerance) ?? withoutFit(used, tolerance),

@@ -2,9 +2,9 @@ import type { EstimateWithLimits } from '../fit/index.js';
 import { type Message, message } from '../logs/index.js';
 import type { Rule } from '../rule/index.js';
 import type { LeftOutDays } from './dayResultTypes.js';
-import { basisFits } from './fitComponents.js';
+import { fitComponents, formDoubtOf, markSigmaOf } from './fitComponents.js';
 import { dayModelOfFit, ppmInterval } from './judgeDays.js';
-import { type RuleInput, toleranceRules } from './makeRules.js';
+import { type RuleInput, toleranceRules, withRuleOptions } from './makeRules.js';
 import type { Results } from './results.js';
 import { screenStudy } from './screenStudy.js';
 import type { Study } from './study.js';
@@ -13,21 +13,33 @@ import type { Study } from './study.js';
  * Screens, fits and makes the rules a second time with the days that the study file leaves out, so that both results can
  * be shown.
  * @param whole errors and visits before days were left out
- * @param common what the rules without them stand on too
+ * @param ground of the rules without them: bases, the height of a site and the sun are the same for both
  */
 export function withLeftOutDays(
   { errors, visits }: Pick<RuleInput, 'errors' | 'visits'>,
-  common: Pick<RuleInput, 'control' | 'doubts' | 'height' | 'markSigmaMm' | 'f107'>,
+  ground: RuleInput,
   study: Study,
 ): LeftOutDays {
   const named = new Set(study.leaveOutDays);
   const left = errors.filter(({ day }) => named.has(day));
   const wrongFixes = screenStudy(errors, study);
   const weights = wrongFixes?.weights ?? null;
-  const models = basisFits(errors, weights, study);
+  const { components } = fitComponents(errors, weights, study);
+  const models = components.map(({ basis }) => basis);
   const days = models.flatMap((model) => dayModelOfFit(errors, weights, model));
   const used = weights === null ? errors : errors.filter((_, i) => weights[i]! >= 0.5);
-  const rules = toleranceRules({ ...common, errors, used, visits, models, days, wrongFixes }, study);
+  const again = withRuleOptions({
+    ...ground,
+    errors,
+    used,
+    visits,
+    models,
+    doubts: new Map(components.map((each) => [each.component, formDoubtOf(each)])),
+    days,
+    markSigmaMm: new Map(components.map((each) => [each.component, markSigmaOf(each)])),
+    wrongFixes,
+  });
+  const rules = toleranceRules(again, study);
   return {
     days: [...new Set(left.map(({ day }) => day))].sort(),
     occupations: left.length,
