@@ -14,14 +14,19 @@ export interface JobMapInput {
 const [WIDTH_PX, HEIGHT_PX] = [640, 560];
 /** More names than these cannot be read; points that need another base come first. */
 const MOST_NAMED = 40;
+/** More points than these cover each other: of each small cell one is drawn. */
+const MOST_POINTS = 300;
+const CELL_PX = 7;
 
 /**
  * Plan of the points of a job with the bases and a ring around each as far as the rule reaches; points that no base
  * reaches are hollow triangles with their names.
  */
 export function jobMapChart({ job }: JobMapInput): ChartSpec {
-  const places = nearTheJob(jobPlan(job));
-  const frame = frameAround(places, WIDTH_PX, HEIGHT_PX);
+  const all = nearTheJob(jobPlan(job));
+  const frame = frameAround(all, WIDTH_PX, HEIGHT_PX);
+  const crowded = all.length > MOST_POINTS;
+  const places = crowded ? onePerCell(all, frame) : all;
   const channels = mapChannels(frame);
   const [first] = job.bases;
   const axis = (channel: View, direction: string): View => ({
@@ -29,24 +34,45 @@ export function jobMapChart({ job }: JobMapInput): ChartSpec {
     axis: { ...(channel.axis as View), title: `${direction} of base ${first!.base}, km` },
   });
   const position = { x: axis(channels.x, 'east'), y: axis(channels.y, 'north') };
-  return chartSpec(title(job), subtitle(job), description(job), {
+  const points = [
+    symbols(places, position, 'reached', {
+      shape: 'circle',
+      filled: true,
+      color: COLORS.water,
+      size: crowded ? 14 : 52,
+    }),
+    symbols(places, position, 'not reached', {
+      shape: 'triangle-up',
+      filled: true,
+      fill: 'white',
+      stroke: COLORS.ink,
+      strokeWidth: crowded ? 0.8 : 1.8,
+      size: crowded ? 16 : 96,
+    }),
+  ];
+  const ring = rings(places, position);
+  return chartSpec(title(job), subtitle(job, crowded), description(job), {
     width: frame.widthPx,
     height: frame.heightPx,
     view: { stroke: COLORS.mist, strokeWidth: 1.6 },
     layer: [
-      rings(places, position),
-      symbols(places, position, 'reached', { shape: 'circle', filled: true, color: COLORS.water, size: 52 }),
-      symbols(places, position, 'not reached', {
-        shape: 'triangle-up',
-        filled: true,
-        fill: 'white',
-        stroke: COLORS.ink,
-        strokeWidth: 1.8,
-        size: 96,
-      }),
+      ...(crowded ? [...points, ring] : [ring, ...points]),
       symbols(places, position, 'base', { shape: 'square', filled: true, color: COLORS.ink, size: 144 }),
-      ...textLayers(names(places, frame), position, { align: 'center' }),
+      ...textLayers(names(crowded ? places.filter(({ kind }) => kind === 'base') : places, frame), position, {
+        align: 'center',
+      }),
     ],
+  });
+}
+
+/** Of the points of a kind in one cell the first. */
+function onePerCell(places: readonly JobPlacePoint[], frame: MapFrame): JobPlacePoint[] {
+  const taken = new Set<string>();
+  return places.filter((place) => {
+    if (place.kind === 'base') return true;
+    const { x, y } = toPx(frame, place);
+    const cell = `${place.kind} ${Math.floor(x / CELL_PX)} ${Math.floor(y / CELL_PX)}`;
+    return !taken.has(cell) && taken.add(cell);
   });
 }
 
@@ -128,6 +154,10 @@ function names(places: readonly JobPlacePoint[], frame: MapFrame): PlacedText[] 
   }));
 }
 
+/** Spreading a long list as arguments overflows the stack. */
+const leastOf = (values: readonly number[]): number => values.reduce((a, b) => Math.min(a, b));
+const mostOf = (values: readonly number[]): number => values.reduce((a, b) => Math.max(a, b));
+
 const limitWords = ({ component, limitMm }: JobResult): string =>
   `${shortNumber(limitMm)} mm ${component === 'horizontal' ? 'in plan' : 'in height'}`;
 
@@ -142,7 +172,7 @@ function title(job: JobResult): string {
   return `${far} of ${counted(job.points.length, 'point')} ${far === 1 ? 'needs' : 'need'} another base for ${limitWords(job)}`;
 }
 
-function subtitle(job: JobResult): string[] {
+function subtitle(job: JobResult, crowded: boolean): string[] {
   const promised = job.points.flatMap(({ promisedMm }) => (promisedMm === null ? [] : [promisedMm]));
   return [
     `${job.file}: ${percentWords(job.share)} of a day’s positions on ${percentWords(job.dayShare)} of the days`,
@@ -152,8 +182,9 @@ function subtitle(job: JobResult): string[] {
     ...(promised.length === 0
       ? []
       : [
-          `What can be promised at the points: ${shortNumber(Math.min(...promised))} to ${shortNumber(Math.max(...promised))} mm.`,
+          `What can be promised at the points: ${shortNumber(leastOf(promised))} to ${shortNumber(mostOf(promised))} mm.`,
         ]),
+    ...(crowded ? ['Points that would cover each other are drawn as one; names are left out.'] : []),
   ];
 }
 

@@ -44,8 +44,10 @@ const FAR_FROM_JOB = 3;
 export function nearTheJob(places: readonly JobPlacePoint[]): JobPlacePoint[] {
   const points = places.filter(({ kind }) => kind !== 'base');
   const distanceOf = (base: JobPlacePoint): number =>
-    Math.min(
-      ...points.map(({ eastKm, northKm }) => Math.hypot(eastKm - base.eastKm, northKm - base.northKm)),
+    points.reduce(
+      (least, { eastKm, northKm }) =>
+        Math.min(least, Math.hypot(eastKm - base.eastKm, northKm - base.northKm)),
+      Number.POSITIVE_INFINITY,
     );
   const bases = places.filter(({ kind }) => kind === 'base');
   const nearest = Math.min(...bases.map(distanceOf));

@@ -32,10 +32,13 @@ export function frameAround(
   mostHeightPx: number,
   leastSidePx = LEAST_SIDE_PX,
 ): MapFrame {
-  const east = [0, ...points.map(({ eastKm }) => eastKm)];
-  const north = [0, ...points.map(({ northKm }) => northKm)];
-  const [west, south] = [Math.min(...east), Math.min(...north)];
-  const [wide, high] = [Math.max(...east) - west, Math.max(...north) - south];
+  // Spreading a long list as arguments overflows the stack.
+  let [west, south, east, north] = [0, 0, 0, 0];
+  for (const { eastKm, northKm } of points) {
+    [west, south] = [Math.min(west, eastKm), Math.min(south, northKm)];
+    [east, north] = [Math.max(east, eastKm), Math.max(north, northKm)];
+  }
+  const [wide, high] = [east - west, north - south];
   const pxPerKm = Math.min(
     (mostWidthPx - 2 * MARGIN_PX) / Math.max(wide, 1e-6),
     (mostHeightPx - 2 * MARGIN_PX) / Math.max(high, 1e-6),

@@ -58,6 +58,17 @@ describe('jobMapChart', () => {
       expect(Math.hypot(eastKm as number, northKm as number)).toBeCloseTo(7.96, 9);
     expect(layersOf(jobMapChart({ job: job(null, two) }).vegaLite)[0]!.data.values).toEqual([]);
   });
+  it('draws points that would cover each other as one, so that 50 000 take no more than some hundreds', async () => {
+    const crowd = Array.from({ length: 50_000 }, (_, k) =>
+      point(`P${k}`, 44.2 + ((k * 7919) % 50_000) / 250_000, k % 3 === 0),
+    );
+    const crowded = jobMapChart({ job: job(7.96, crowd) });
+    const drawn = layersOf(crowded.vegaLite).flatMap(({ data }) => data.values.filter(({ kind }) => kind));
+    expect(drawn.length).toBeLessThan(1000);
+    expect(new Set(drawn.map(({ kind }) => kind))).toEqual(new Set(['base', 'reached', 'not reached']));
+    expect(crowded.subtitle.join(' ')).toContain('drawn as one');
+    expect((await renderSvg(crowded)).length).toBeLessThan(200_000);
+  });
   it('is drawn, the same bytes twice', async () => {
     const svg = await renderSvg(chart);
     expect(svg).toContain('far');
