@@ -67,12 +67,12 @@ function thresholdTable(page: Page, one: SkyThreshold): Html {
     {
       head: 'Degraded days caught',
       cell: ({ caught }) =>
-        html`${page.number(caught, 'count', 'count')} of ${page.number(caught, 'of', 'count')}`,
+        html`${page.number(caught, 'count', 'count')} of ${page.number(caught, 'of', 'count')} ${page.limits(caught, 'share')}`,
     },
     {
       head: 'Other days flagged',
       cell: ({ falseAlarms }) =>
-        html`${page.number(falseAlarms, 'count', 'count')} of ${page.number(falseAlarms, 'of', 'count')}`,
+        html`${page.number(falseAlarms, 'count', 'count')} of ${page.number(falseAlarms, 'of', 'count')} ${page.limits(falseAlarms, 'share')}`,
     },
     { head: 'Caught less false (shares)', cell: (row) => page.number(row, 'youden', 'signed ppm') },
   ])}`;
@@ -83,12 +83,14 @@ function dayTable(page: Page, { days }: Sky): Html {
   const kinds = [
     ['ap', 'Mean ap', 'ratio'],
     ['kpMax', 'Greatest Kp', 'ratio'],
+    ['hpMax', 'Greatest Hp', 'ratio'],
     ['f107', 'F10.7, sfu', 'ratio'],
     ['dstMin', 'Least Dst, nT', 'signed ppm'],
     ['tecMean', 'TEC, TECU', 'ratio'],
     ['tecMax', 'Greatest TEC, TECU', 'ratio'],
     ['gradientMean', 'Gradient, TECU per 100 km', 'ratio'],
     ['tecChange', 'Change of TEC, TECU', 'signed ppm'],
+    ['shorteningPpm', 'Shortening on L1, ppm', 'ratio'],
     ['shareWithoutFix', 'Visits without a fix', 'share'],
   ] as const;
   const known = kinds.filter(([key]) => days.some((day) => day[key] !== null));

@@ -30,7 +30,7 @@ export function annexSplits(
   });
   return html`<section id="splits"><h2>The errors split</h2>
 <p>What was measured, all distances together: classes may differ because their distances do. Suspected wrong fixes are left
-out. With a star: fewer than 10 occupations or 3 days, which describe these occupations and nothing more.</p>
+out. With a star: fewer than 10 occupations, or, where the classes are not days or setups themselves, 3 days; they describe these occupations and nothing more.</p>
 ${[...hourDays, ...charts].map(figure)}
 ${[...tables].map(([by, groups]) => splitTable(page, splits, by, groups))}
 </section>

@@ -18,32 +18,56 @@ export function secondVisit(page: Page): Html {
     return html`<section id="twice"><h2>A new point, twice</h2>
 <p>What a second visit on the same day gains could not be found. Visit again on another day, or from another base.</p></section>`;
   }
-  const minutes = gapOf(given);
+  const { minutes, worth } = gapOf(given);
   const { distance, error } = page.units;
-  const rows = given[0]!.visits.filter((visit) => visit.minutes === minutes);
+  const lengths = given
+    .flatMap(({ visits }) => visits.filter((visit) => visit.minutes === minutes))
+    .filter(({ baselineKm }, k, all) => all.findIndex((other) => other.baselineKm === baselineKm) === k)
+    .sort((a, b) => a.baselineKm - b.baselineKm);
+  const advice = worth
+    ? html`Come back after <strong>${page.number(lengths[0]!, 'minutes', 'count')} minutes</strong> or more, with a new fix. Take the mean.`
+    : html`No gap up to <strong>${page.number(lengths[0]!, 'minutes', 'count')} minutes</strong> makes the mean of both much better: come back on another day where it matters.`;
   return html`<section id="twice"><h2>A new point, twice on one day</h2>
-<p>Come back after <strong>${page.number(rows[0]!, 'minutes', 'count')} minutes</strong> or more, with a new fix. Take the mean. Something is wrong beyond:</p>
-${table<Visit>(`Difference of both visits, ${error.name}`, rows, [
+<p>${advice} Something is wrong beyond:</p>
+${table<Visit>(`Difference of both visits, ${error.name}, and error left in their mean`, lengths, [
   { head: `At, ${distance.name}`, cell: (row) => page.number(row, 'baselineKm', 'distance'), text: true },
   ...given.map(({ component, visits }) => ({
-    head: component === 'horizontal' ? 'Plan' : 'Height',
+    head: nameOf(component),
     cell: ({ baselineKm }: Visit) => {
-      const own = visits.find((visit) => visit.minutes === minutes && visit.baselineKm === baselineKm);
-      return own === undefined ? '—' : page.number(own, 'differenceLimitMm', 'error on a card');
+      const widest = widestFrom(visits, baselineKm, minutes);
+      return widest === null ? '—' : page.number(widest, 'differenceLimitMm', 'error on a card');
     },
   })),
-  {
-    head: 'Error left in the mean',
-    cell: ({ factor }) => page.number(factor, 'estimate', 'share'),
-  },
+  ...given.map(({ component, visits }) => ({
+    head: `${nameOf(component)}: left`,
+    cell: ({ baselineKm }: Visit) => {
+      const own = visits.find((visit) => visit.minutes === minutes && visit.baselineKm === baselineKm);
+      return own === undefined ? '—' : page.number(own.factor, 'estimate', 'share');
+    },
+  })),
 ])}</section>`;
 }
 
+const nameOf = (component: Visits['component']): string => (component === 'horizontal' ? 'Plan' : 'Height');
+
+/** Visits farther apart in time are less alike: the limit for a gap "or more" is the widest of these. */
+function widestFrom(visits: readonly Visit[], baselineKm: number, minutes: number): Visit | null {
+  return visits
+    .filter((visit) => visit.baselineKm === baselineKm && visit.minutes >= minutes)
+    .filter(({ differenceLimitMm }) => differenceLimitMm !== null)
+    .reduce<Visit | null>(
+      (widest, visit) =>
+        widest === null || visit.differenceLimitMm! > widest.differenceLimitMm! ? visit : widest,
+      null,
+    );
+}
+
 /** The shortest gap that is worth its way at all distances, else the longest. */
-function gapOf(given: readonly Visits[]): number {
+function gapOf(given: readonly Visits[]): { readonly minutes: number; readonly worth: boolean } {
   const all = given.flatMap(({ visits }) => visits);
   const gaps = [...new Set(all.map(({ minutes }) => minutes))].sort((a, b) => a - b);
-  const worth = (gap: number): boolean =>
+  const isWorth = (gap: number): boolean =>
     all.every(({ minutes, factor }) => minutes !== gap || (factor.estimate ?? 1) <= WORTH);
-  return gaps.find(worth) ?? gaps.at(-1)!;
+  const found = gaps.find(isWorth);
+  return { minutes: found ?? gaps.at(-1)!, worth: found !== undefined };
 }

@@ -52,7 +52,7 @@ function visitTable(page: Page, one: Visits): Html {
     { head: 'Minutes apart', cell: (row) => page.number(row, 'minutes', 'count') },
     { head: 'Error of the mean over that of one', cell: ({ factor }) => page.limits(factor, 'ratio') },
     {
-      head: 'Difference over that of independent ones',
+      head: 'Error of the difference over that of one',
       cell: ({ differenceFactor }) => page.limits(differenceFactor, 'ratio'),
     },
     {

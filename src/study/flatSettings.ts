@@ -14,5 +14,7 @@ export function flatSettings(settings: unknown, key = ''): StatedSetting[] {
         key === '' ? name : `${key}.${name}`,
         part,
       ]);
+  // An empty list is a setting too.
+  if (parts.length === 0) return key === '' ? [] : [{ key, value: Array.isArray(settings) ? '[]' : '{}' }];
   return parts.flatMap(([path, part]) => flatSettings(part, path));
 }
