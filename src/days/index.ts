@@ -49,3 +49,4 @@ export {
   timeOfDay,
 } from './timeOfDay.js';
 export { type DayDependence, dayDependence } from './weekClusters.js';
+export { weightedQuantiles } from './weightedQuantile.js';

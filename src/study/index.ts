@@ -24,6 +24,7 @@ export type { StatedSetting } from './flatSettings.js';
 export type { HoursOfCaution } from './hoursOfCaution.js';
 export type { InputFile } from './inputFiles.js';
 export type { JudgedDays } from './judgeDays.js';
+export type { LateOccupations } from './lateOccupations.js';
 export {
   REPORT_UNITS,
   type ReaderUnit,

@@ -1,6 +1,7 @@
 import type { OccupationError, SetAsideOccupation, Visit } from '../errors/index.js';
 import type { OccupationReason, RowReason } from '../logs/index.js';
 import { type MarkShift, markShifts, type NextMark, nextMarks, type WatchBasis } from '../rule/index.js';
+import { type LateOccupations, lateOccupations } from './lateOccupations.js';
 import type { FileResult, Results } from './results.js';
 
 /** What happened on new days, for the page of a month. */
@@ -11,6 +12,8 @@ export interface WatchMonth {
   readonly to: string | null;
   /** New days with a visit. */
   readonly days: number;
+  /** Earlier days of which logs came late: nothing below counts them. */
+  readonly late: LateOccupations;
   readonly crews: readonly CrewShots[];
   readonly visits: {
     readonly withFix: number;
@@ -83,6 +86,7 @@ export function watchMonth(earlier: EarlierRun, read: NewDays): WatchMonth {
     from: days[0] ?? null,
     to: days.at(-1) ?? null,
     days: days.length,
+    late: lateOccupations({ ...read, files: read.results.files }, earlier.files, after),
     crews: crewShots(visits, errors),
     visits: {
       withFix: visits.length - withoutFix,

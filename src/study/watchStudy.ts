@@ -2,6 +2,7 @@ import { readFile } from 'node:fs/promises';
 import { screenWrongFixes } from '../fit/index.js';
 import { inputError, type Message, quoted } from '../logs/index.js';
 import { type Watch, watchDays } from '../rule/index.js';
+import { lateMessages } from './lateOccupations.js';
 import type { Results } from './results.js';
 import { resultsSchema } from './resultsSchema.js';
 import { type RunOptions, readStudyErrors } from './run.js';
@@ -82,6 +83,14 @@ export async function watchStudy(
   const before = new Set(earlier.messages.map(sameMessage));
   const told = [...results.messages, ...(screening?.notes ?? [])];
   const fresh = told.filter((message) => !before.has(sameMessage(message)));
+  const month = watchMonth(earlier, {
+    results,
+    errors,
+    weights,
+    setAside: [...setAside, ...(weights === undefined ? [] : suspectsOf(errors, screening!))],
+    visits,
+    messagesToldBefore: told.length - fresh.length,
+  });
   return {
     results,
     watches: earlier.watch.flatMap(({ basis }) =>
@@ -90,15 +99,8 @@ export async function watchStudy(
     unwatched: earlier.watch.flatMap(({ component, reason }) =>
       reason === null ? [] : [{ component, reason }],
     ),
-    month: watchMonth(earlier, {
-      results,
-      errors,
-      weights,
-      setAside: [...setAside, ...(weights === undefined ? [] : suspectsOf(errors, screening!))],
-      visits,
-      messagesToldBefore: told.length - fresh.length,
-    }),
-    messages: fresh,
+    month,
+    messages: [...lateMessages(month.late, month.after), ...fresh],
   };
 }
 

@@ -383,6 +383,7 @@ describe('pages of poor studies', () => {
       crews: [],
       visits: { withFix: 0, withoutFix: 0, shareWithoutFix: null },
       earlierShareWithoutFix: null,
+      late: { occupations: 0, days: [] },
       rowsSetAside: [],
       occupationsSetAside: [],
       markShifts: [],

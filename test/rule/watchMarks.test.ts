@@ -24,6 +24,24 @@ describe('marks that may have moved', () => {
     for (const { shiftMm, seMm } of shifts)
       for (const value of shiftMm) expect(Math.abs(value / seMm)).toBeLessThan(3);
   });
+  it('are none in nearly all of 40 seasons, with as few marks as tell a move of the base', () => {
+    const wrong = Array.from({ length: 40 }, (_, k) => {
+      const { rows, truth } = simulateErrors({ seed: 100 + k, days: 45, marks: { ...marks, count: 4 } });
+      const last = truth.days[29]!.day;
+      const first = rows.filter(({ day }) => day <= last);
+      const fit = fitErrorModel(first, { component: 'horizontal', reference: 'repeatability' });
+      const own = watchBasis(fit, dayModel(first, fit)).basis;
+      if (own === null) return false;
+      const shifts = markShifts(
+        rows.filter(({ day }) => day > last),
+        markMeans(first),
+        own,
+      );
+      return shifts.some(({ verdict }) => verdict === 'moved');
+    });
+    // 1 in 100 is stated: more than 3 of 40 would be one chance in 700.
+    expect(wrong.filter(Boolean).length).toBeLessThanOrEqual(3);
+  });
   it('are found with how far they went, and only they', () => {
     const moved = later.map((row) => (row.mark === near ? { ...row, east: row.east + 25 } : row));
     const shifts = markShifts(moved, known, basis);

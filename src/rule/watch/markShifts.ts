@@ -1,4 +1,4 @@
-import { familyAdjusted } from '../../days/index.js';
+import { familyAdjusted, weightedQuantiles } from '../../days/index.js';
 import { type ErrorsInput, errorColumns, groupIndices } from '../../errors/index.js';
 import { axesOf, COMPONENT_COLUMNS, type Component } from '../../fit/index.js';
 import type { MarkMean } from '../../split/index.js';
@@ -85,16 +85,33 @@ function varianceAt({ A, B, logFactors, probabilities, component }: WatchBasis, 
   return (A + B * factor * baselineKm ** 2) / axesOf(component);
 }
 
-/** Takes out what the marks of a base share: another setting of the base moves them all. */
+/**
+ * Takes out what the other marks of a base share: another setting of the base moves them all. Their median, each with the
+ * inverse of its standard error as weight, has an error of its own, which is added.
+ */
 function lessCommon(shifts: readonly MarkShift[]): MarkShift[] {
   return shifts.map((shift) => {
-    const same = shifts.filter(({ base }) => base === shift.base);
-    if (same.length < FEWEST_COMMON) return shift;
-    const shiftMm = shift.shiftMm.map(
-      (value, axis) => value - median(same.map((other) => other.shiftMm[axis]!)),
-    );
-    return { ...shift, shiftMm };
+    const others = shifts.filter((other) => other !== shift && other.base === shift.base);
+    if (others.length + 1 < FEWEST_COMMON) return shift;
+    const weights = Float64Array.from(others, ({ seMm }) => 1 / seMm);
+    const shiftMm = shift.shiftMm.map((value, axis) => {
+      const values = Float64Array.from(others, (other) => other.shiftMm[axis]!);
+      return value - weightedMedian(values, weights);
+    });
+    const ofCommon = OF_MEDIAN / weights.reduce((sum, weight) => sum + weight ** 2, 0);
+    return { ...shift, shiftMm, seMm: Math.sqrt(shift.seMm ** 2 + ofCommon) };
   });
+}
+
+/** The same from above and from below, where two values share the middle. */
+function weightedMedian(values: Float64Array, weights: Float64Array): number {
+  const [below] = weightedQuantiles(values, weights, [0.5]);
+  const [above] = weightedQuantiles(
+    values.map((value) => -value),
+    weights,
+    [0.5],
+  );
+  return (below! - above!) / 2;
 }
 
 function judged(shifts: readonly MarkShift[], axes: number): MarkShift[] {
