@@ -35,6 +35,10 @@ describe('a study file', () => {
       model: { form: 'root-sum-square', reference: 'auto', confidence: 0.95, screen: true },
       occupations: { gapSeconds: 60 },
       tolerances: [],
+      jobs: [],
+      checkShots: { falseAlarmsPerYear: 1, checksPerYear: 1000 },
+      standards: [],
+      fieldTests: [],
       centringSigmaMm: 0,
       terms: [],
       by: [],
@@ -72,7 +76,7 @@ describe('a key', () => {
     ['titel: x', ':5 [titel] The key "titel" is not known. Did you mean "title"? Correct or remove it.'],
     [
       'colour: x',
-      ':5 [colour] The key "colour" is not known. Known here: title, surveyor, reportDate, reportUnits, showCrews, timeZone, coordinates, heights, marks, bases, logs, period, model, occupations, tolerances, specSheet, centringSigmaMm, terms, by, indices, maps, leaveOutDays, seed. Correct or remove it.',
+      ':5 [colour] The key "colour" is not known. Known here: title, surveyor, reportDate, reportUnits, showCrews, timeZone, coordinates, heights, marks, bases, logs, period, model, occupations, tolerances, specSheet, site, jobs, checkShots, standards, fieldTests, centringSigmaMm, terms, by, indices, maps, leaveOutDays, seed. Correct or remove it.',
     ],
     ['4: x', /^:5 \[4\] The key "4" is not known\. Known here: /],
     [
