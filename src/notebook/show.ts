@@ -3,12 +3,20 @@ import { type ChartSpec, renderPng } from '../charts/index.js';
 import { type ErrorModel, type FitComponent, formatFit } from '../fit/index.js';
 import { fitHtml, isFit } from './fitHtml.js';
 import { type DisplayBundle, runningCell } from './kernel.js';
-import { isColumnTable, textTable } from './tableCells.js';
+import { recordTable } from './recordTable.js';
+import { isRule, ruleHtml, ruleText } from './ruleView.js';
+import { isColumnTable, type TextTable, textTable } from './tableCells.js';
 import { tableHtml } from './tableHtml.js';
 import { tableText } from './tableText.js';
 
-/** What {@link show} can show: a chart, a fit, a table, records, or a text. */
-export type Showable = ChartSpec | ErrorModel<FitComponent> | ColumnTable | readonly object[] | string;
+/** What {@link show} can show: a chart, a fit, a rule, a table, records, any other single result, or a text. */
+export type Showable =
+  | ChartSpec
+  | ErrorModel<FitComponent>
+  | ColumnTable
+  | readonly object[]
+  | object
+  | string;
 
 /** Longer tables are cut, so that a notebook stays readable. */
 const MOST_ROWS = 20;
@@ -16,8 +24,8 @@ const MOST_ROWS = 20;
 const SCALE = 2;
 
 /**
- * Shows a chart, a fit, a table or a text below the running cell of a notebook; anywhere else writes the table, the fit, or the
- * words of the chart, to the standard output. Tables are cut after 20 rows and say how many more there are.
+ * Shows a chart, a fit, a rule, a table, a single result or a text below the running cell of a notebook; anywhere else writes
+ * the same, of a chart its words, to the standard output. Tables are cut after 20 rows and say how many more there are.
  * @throws TypeError when it is something else
  */
 export async function show(what: Showable): Promise<void> {
@@ -32,6 +40,7 @@ async function bundleOf(what: Showable): Promise<DisplayBundle> {
   const plain = { 'text/plain': plainText(what) };
   if (typeof what === 'string') return { data: plain, metadata: {} };
   if (isFit(what)) return { data: { 'text/html': fitHtml(what), ...plain }, metadata: {} };
+  if (isRule(what)) return { data: { 'text/html': ruleHtml(what), ...plain }, metadata: {} };
   if (isChart(what)) {
     const png = await renderPng(what, SCALE);
     return {
@@ -39,18 +48,22 @@ async function bundleOf(what: Showable): Promise<DisplayBundle> {
       metadata: { 'image/png': sizeOnPage(png) },
     };
   }
-  return { data: { 'text/html': tableHtml(textTable(what, MOST_ROWS)), ...plain }, metadata: {} };
+  return { data: { 'text/html': tableHtml(tableOf(what)), ...plain }, metadata: {} };
 }
 
 function plainText(what: Showable): string {
   if (typeof what === 'string') return what;
   if (isFit(what)) return formatFit(what);
   if (isChart(what)) return [what.title, ...what.subtitle, what.description].join('\n');
-  if (isColumnTable(what) || Array.isArray(what)) return tableText(textTable(what, MOST_ROWS));
+  if (isRule(what)) return ruleText(what);
+  if (typeof what === 'object' && what !== null) return tableText(tableOf(what));
   throw new TypeError(
-    `Expected a chart, a fit, a table, an array of records or a text to show, came ${JSON.stringify(what) ?? typeof what}. Hand in one of these.`,
+    `Expected a chart, a fit, a rule, a table, records or a text to show, came ${JSON.stringify(what) ?? typeof what}. Hand in one of these.`,
   );
 }
+
+const tableOf = (what: ColumnTable | readonly object[] | object): TextTable =>
+  isColumnTable(what) || Array.isArray(what) ? textTable(what, MOST_ROWS) : recordTable(what);
 
 const isChart = (what: Showable): what is ChartSpec =>
   typeof what === 'object' && what !== null && 'vegaLite' in what;

@@ -8,6 +8,8 @@ import { simulateErrors } from '../../src/campaign/index.js';
 import { type ChartSpec, markMeansChart } from '../../src/charts/index.js';
 import { fitErrorModel, formatFit } from '../../src/fit/index.js';
 import { show } from '../../src/notebook/index.js';
+import { ruleSentence } from '../../src/report/index.js';
+import { maximumBaseline } from '../../src/rule/index.js';
 
 interface Sent {
   readonly data: Record<string, string>;
@@ -98,9 +100,68 @@ describe('show in a terminal', () => {
 
   it('refuses what it cannot show', async () => {
     await expect(show(7 as unknown as string)).rejects.toThrow(
-      'Expected a chart, a fit, a table, an array of records or a text to show, came 7.',
+      'Expected a chart, a fit, a rule, a table, records or a text to show, came 7.',
     );
     await expect(show(undefined as unknown as string)).rejects.toThrow('came undefined.');
+  });
+});
+
+describe('show of a rule and of other results', () => {
+  const { rows: errors } = simulateErrors({ seed: 3, days: 30 });
+  const model = fitErrorModel(errors, { component: 'horizontal', screen: false });
+  const tolerance = {
+    component: 'horizontal',
+    limitMm: 25,
+    share: 0.95,
+    dayShare: 0.9,
+    confidence: 0.95,
+  } as const;
+  const rule = maximumBaseline(errors, model, tolerance);
+  const written = async (what: Parameters<typeof show>[0]): Promise<string> => {
+    const write = vi.spyOn(process.stdout, 'write').mockReturnValue(true);
+    await show(what);
+    return write.mock.calls.map(([text]) => String(text)).join('');
+  };
+
+  it('writes the sentence of a rule, the lengths, the conditions and every remark', async () => {
+    const text = await written(rule);
+    expect(text.split('\n')[0]).toBe(ruleSentence(rule));
+    expect(text).toMatch(/^maximum baseline, km +\d/m);
+    expect(text).toContain(`${errors.length} occupations on 30 days`);
+    for (const remark of rule.remarks) expect(text).toContain(remark);
+  });
+  it('writes a rule that is none with its reason', async () => {
+    const few = errors.slice(0, 40);
+    const none = maximumBaseline(
+      few,
+      fitErrorModel(few, { component: 'horizontal', screen: false }),
+      tolerance,
+    );
+    expect(none.maximumBaselineKm).toBeNull();
+    expect(await written(none)).toContain(none.reason);
+  });
+  it('writes any other result as keys and values, long lists by their count', async () => {
+    const text = await written({
+      limitMm: 25,
+      constant: { estimate: 8, low: 7, high: 9 },
+      se: { east: 1, north: 2 },
+      marks: ['A', 'B'],
+      failures: [{ day: 'a' }, { day: 'b' }],
+      days: new Map([['a', 1]]),
+      reason: null,
+    });
+    expect(text.split('\n').map((line) => line.trim().replace(/ {2,}/, '|'))).toEqual([
+      'value',
+      'limitMm|25',
+      'constant|8 (7 to 9)',
+      'se.east|1',
+      'se.north|2',
+      'marks|A, B',
+      'failures|2 entries',
+      'days|1 entry',
+      'reason|–',
+      '',
+    ]);
   });
 });
 
