@@ -1,6 +1,7 @@
 import type { ColumnTable } from 'arquero';
 import { type ChartSpec, renderPng } from '../charts/index.js';
 import { type ErrorModel, type FitComponent, formatFit } from '../fit/index.js';
+import { escapeHtml } from '../report/index.js';
 import { fitHtml, isFit } from './fitHtml.js';
 import { type DisplayBundle, runningCell } from './kernel.js';
 import { recordTable } from './recordTable.js';
@@ -38,7 +39,7 @@ export async function show(what: Showable): Promise<void> {
 /** A thing in all the forms that a notebook is given. */
 async function bundleOf(what: Showable): Promise<DisplayBundle> {
   const plain = { 'text/plain': plainText(what) };
-  if (typeof what === 'string') return { data: plain, metadata: {} };
+  if (typeof what === 'string') return { data: { 'text/html': textHtml(what), ...plain }, metadata: {} };
   if (isFit(what)) return { data: { 'text/html': fitHtml(what), ...plain }, metadata: {} };
   if (isRule(what)) return { data: { 'text/html': ruleHtml(what), ...plain }, metadata: {} };
   if (isChart(what)) {
@@ -50,6 +51,13 @@ async function bundleOf(what: Showable): Promise<DisplayBundle> {
   }
   return { data: { 'text/html': tableHtml(tableOf(what)), ...plain }, metadata: {} };
 }
+
+/** A text in paragraphs: plain text of a notebook is broken within words. */
+const textHtml = (text: string): string =>
+  text
+    .split('\n')
+    .map((line) => `<p style="margin: 2px 0">${escapeHtml(line)}</p>`)
+    .join('\n');
 
 function plainText(what: Showable): string {
   if (typeof what === 'string') return what;

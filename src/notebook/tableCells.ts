@@ -72,11 +72,13 @@ function columnTexts(values: readonly unknown[]): { readonly texts: string[]; re
 const isFiniteNumber = (value: unknown): value is number =>
   typeof value === 'number' && Number.isFinite(value);
 
-/** Decimals that show about four digits of the largest number; none for whole numbers. */
+/** Decimals that show about four digits of the largest number, and no zeros that all numbers end with. */
 function decimalsFor(numbers: readonly number[]): number {
-  if (numbers.every(Number.isInteger)) return 0;
   const largest = numbers.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
-  return largest >= 100 ? 1 : largest >= 10 ? 2 : 3;
+  const most = largest >= 100 ? 1 : largest >= 10 ? 2 : 3;
+  const texts = numbers.map((value) => value.toFixed(most));
+  const zeros = Math.min(...texts.map((text) => /0*$/.exec(text)![0].length));
+  return texts.length === 0 ? 0 : Math.max(0, most - zeros);
 }
 
 function cellText(value: unknown, decimals: number): string {

@@ -83,8 +83,8 @@ describe('show in a terminal', () => {
     ]);
     expect(text.split('\n').map((line) => line.split(/ {2,}/).filter((cell) => cell !== ''))).toEqual([
       ['rms', 'se.east', 'se.up', 'p', 'day'],
-      ['8.123 (7.000 to 9.500)', '0.100', '–', '0.00001', '–'],
-      ['8.000', '–', '2', '0.500', 'a'],
+      ['8.123 (7.000 to 9.500)', '0.1', '–', '0.00001', '–'],
+      ['8.000', '–', '2', '0.5', 'a'],
       [],
     ]);
   });
@@ -236,9 +236,13 @@ describe('show in a cell of a notebook', () => {
     expect(data['text/html']).not.toContain('<M');
   });
 
-  it('sends texts as texts', async () => {
-    await show('a mm + b ppm');
-    expect(sent).toEqual([{ data: { 'text/plain': 'a mm + b ppm' }, metadata: {}, transient: {} }]);
+  it('sends texts as paragraphs, which break between words, and as they are', async () => {
+    await show('a < 8 mm\nb ppm');
+    expect(sent).toHaveLength(1);
+    expect(sent[0]!.data['text/plain']).toBe('a < 8 mm\nb ppm');
+    expect(sent[0]!.data['text/html']).toBe(
+      '<p style="margin: 2px 0">a &lt; 8 mm</p>\n<p style="margin: 2px 0">b ppm</p>',
+    );
   });
 
   it('writes to the terminal when the kernel runs no cell', async () => {
