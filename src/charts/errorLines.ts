@@ -1,4 +1,4 @@
-import { type ErrorModel, type EstimateWithLimits, errorCurve } from '../fit/index.js';
+import { type ErrorModel, type EstimateWithLimits, errorCurve, spreadMm } from '../fit/index.js';
 import { type SpecSheet, specSheetSigmaMm, toleranceFactorAt } from '../rule/index.js';
 import { COLORS } from './theme.js';
 import { percentWords } from './words.js';
@@ -95,6 +95,3 @@ export function errorBand(model: ErrorModel, longestKm: number, ppm: EstimateWit
     return [{ baselineKm, lowMm: Math.min(lowMm, low ?? lowMm), highMm: Math.max(highMm, high ?? highMm) }];
   });
 }
-
-const spreadMm = (form: ErrorModel['form'], constantMm: number, ppm: number, baselineKm: number): number =>
-  form === 'root-sum-square' ? Math.hypot(constantMm, ppm * baselineKm) : constantMm + ppm * baselineKm;

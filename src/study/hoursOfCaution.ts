@@ -4,6 +4,7 @@ import type { Component } from '../fit/index.js';
 import { zoneOffsetMs } from '../time/index.js';
 import type { TimeOfDayResult } from './dayResultTypes.js';
 import type { Study } from './study.js';
+import { usualBase } from './usualBase.js';
 
 /** The hours at which errors are shown to be larger. */
 export interface HoursOfCaution {
@@ -47,12 +48,10 @@ function clockAhead(
   control: Control,
   timeZone: string | null,
 ): { readonly day: string; readonly hours: number } | null {
-  const counts = new Map<string, number>();
-  for (const { base } of errors) counts.set(base, (counts.get(base) ?? 0) + 1);
-  const [usual] = [...counts].sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
+  const usual = usualBase(errors);
   const day = [...new Set(errors.map((error) => error.day))].sort().at(-1) ?? '';
   const noon = Date.parse(`${day}T12:00:00Z`);
-  if (timeZone === null || usual === undefined || Number.isNaN(noon)) return null;
-  const { longitudeDeg } = control.bases.get(usual[0])!.position;
+  if (timeZone === null || usual === null || Number.isNaN(noon)) return null;
+  const { longitudeDeg } = control.bases.get(usual)!.position;
   return { day, hours: zoneOffsetMs(timeZone, noon) / MS_AN_HOUR - longitudeDeg / 15 };
 }

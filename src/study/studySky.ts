@@ -7,6 +7,7 @@ import { readSkyFiles } from './skyFiles.js';
 import { skyOfDays } from './skyOfDays.js';
 import type { Sky } from './skyResult.js';
 import type { Study } from './study.js';
+import { usualBase } from './usualBase.js';
 
 /** What of a run the sky is compared with. */
 export interface ReadStudy {
@@ -55,14 +56,6 @@ export async function studySky(
 /** Solar radio flux of the days of which it is known. */
 export const f107OfDays = (sky: Sky | null): Map<string, number> =>
   new Map(sky?.days.flatMap(({ day, f107 }) => (f107 === null ? [] : [[day, f107]])));
-
-/** The base with the most occupations, of several the first by name; null without occupations. */
-function usualBase(errors: readonly OccupationError[]): string | null {
-  const counts = new Map<string, number>();
-  for (const { base } of errors) counts.set(base, (counts.get(base) ?? 0) + 1);
-  const [first] = [...counts].sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
-  return first?.[0] ?? null;
-}
 
 const noFiles = (): Message =>
   message(
