@@ -3,7 +3,7 @@
  * coefficients from memory; the tests hold them against R and against the incomplete gamma function.
  */
 
-/** Numerators from the lowest power of the argument up, the last one first in Horner's scheme; y ≤ 0.46875. */
+/** Coefficients as Horner's scheme takes them; a `LEAD` comes before all others of its numerator. y ≤ 0.46875. */
 const NEAR = [3.1611237438705655, 113.86415415105016, 377.485237685302, 3209.3775891384694] as const;
 const NEAR_LEAD = 0.18577770618460315;
 const NEAR_BELOW = [23.601290952344122, 244.02463793444417, 1282.6165260773723, 2844.236833439171] as const;

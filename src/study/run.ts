@@ -147,6 +147,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const made = makeRules(ground, study);
   const tested = testRules(ground, study);
   const planned = planJobs(read.jobs, ground, study);
+  const visited = visitsAndLengths(ground, weights, study.seed);
   const fitted = fitResults(components, errors, wrongFixes, judged);
   const { withLeftOut } = read;
   const leftOut = withLeftOut === null ? null : withLeftOutDays(withLeftOut, ground, study);
@@ -162,6 +163,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
       ...sky.messages,
       ...tested.messages,
       ...planned.messages,
+      ...visited.messages,
       ...ruleMessages(made.rules),
       ...(leftOut === null ? [] : leftOutMessages(leftOut, { ...fitted, ...made })),
     ],
@@ -180,7 +182,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     backTest: tested.backTest,
     jobs: planned.jobs,
     standards: studyStandards({ ...ground, weights, files: read.results.files }, study),
-    ...visitsAndLengths(ground, weights, study.seed),
+    ...visited.results,
     sky: sky.sky,
   };
   const setAside = [...read.setAside, ...suspects(errors, wrongFixes)];

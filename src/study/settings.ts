@@ -180,7 +180,7 @@ export const studySchema = z.strictObject({
     .array(z.enum(['crew', 'rover', 'base']))
     .default([])
     .describe('Whether these differ in constant and ppm.'),
-  indices: skyFiles.describe('Public files of Kp, Hp30, Dst or F10.7 to compare days with.'),
+  indices: skyFiles.describe('Public files of Kp, Hp30, Hp60, Dst or F10.7 to compare days with.'),
   maps: skyFiles.describe('Maps of the electron content (IONEX) to compare days with.'),
   leaveOutDays: z
     .array(day)

@@ -28,7 +28,7 @@ export function siteHeight(
       message(
         'warning',
         'site-without-height-term',
-        `Expected a fitted height-difference term for the site ${differenceM} m above its base, came none: the vertical rules hold for height differences as the marks have them, and not for the site. Add terms: [height-difference], and shots on marks at several heights on 4 days or more.`,
+        `Expected a fitted height-difference term for the site ${Math.abs(differenceM)} m ${differenceM < 0 ? 'below' : 'above'} its base, came none: the vertical rules hold for height differences as the marks have them, and not for the site. Add terms: [height-difference], and shots on marks at several heights on 4 days or more.`,
       ),
     ],
   };

@@ -1,4 +1,4 @@
-import { InputError } from '../logs/index.js';
+import { InputError, type Message, message } from '../logs/index.js';
 import {
   errorByOccupationLength,
   type SecondVisits,
@@ -22,14 +22,20 @@ export function visitsAndLengths(
   { errors, models, options }: RuleInput,
   weights: Float64Array | null,
   seed: number,
-): Pick<Results, 'secondVisits' | 'errorByOccupationLength'> {
+): {
+  readonly results: Pick<Results, 'secondVisits' | 'errorByOccupationLength'>;
+  readonly messages: readonly Message[];
+} {
   const own = weights ?? undefined;
-  return {
+  const reasons = new Set<string>();
+  const results = {
     secondVisits: models.flatMap((model): SecondVisitsResult[] => {
       // The correlation is that of the parts of root-sum-square.
       if (model.variance === null) return [];
       const random = randomStream(seed, `second visits ${model.component}`);
-      const found = possible(() => secondVisits(errors, model, { random, weights: own }));
+      const found = possible('What a second visit gains could not be found', reasons, () =>
+        secondVisits(errors, model, { random, weights: own }),
+      );
       if (found === null) return [];
       const { dayModel = null } = options.get(model.component)!;
       return [
@@ -51,9 +57,13 @@ export function visitsAndLengths(
       ];
     }),
     errorByOccupationLength: models.flatMap(
-      (model) => possible(() => errorByOccupationLength(errors, model, own)) ?? [],
+      (model) =>
+        possible('Errors could not be told by the length of occupations', reasons, () =>
+          errorByOccupationLength(errors, model, own),
+        ) ?? [],
     ),
   };
+  return { results, messages: [...reasons].map((text) => message('info', 'visits-not-compared', text)) };
 }
 
 const correlationOf = (
@@ -61,12 +71,13 @@ const correlationOf = (
   { baselineKm, minutes }: { readonly baselineKm: number; readonly minutes: number },
 ): number => (correlation === null ? 0 : visitCorrelation(correlation, baselineKm, minutes));
 
-/** What needs a column that the logs do not have is left out. */
-function possible<T>(make: () => T): T | null {
+/** A reason is told once, and not for each component; what could not be found is left out. */
+function possible<T>(what: string, reasons: Set<string>, make: () => T): T | null {
   try {
     return make();
   } catch (error) {
     if (!(error instanceof InputError)) throw error;
+    reasons.add(`${what}: ${error.messages[0]!.text}`);
     return null;
   }
 }
