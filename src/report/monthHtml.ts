@@ -29,7 +29,7 @@ export function monthHtml(run: WatchRun, earlierCrews: readonly string[] = []): 
   const numbered = [...earlierCrews, ...crews.filter((crew) => !earlierCrews.includes(crew))];
   const page = new Page({ ...run.results, crews: numbered, messages: run.messages }, found);
   const body = html`<header><h1>New days: ${page.name(study.title)}</h1>
-<p class="lead">${lead(page, found)}</p></header>
+<p class="lead">${lead(page, found)}</p>${late(page, found)}</header>
 ${verdict(page, found)}
 ${crewSection(page, found)}
 ${newlySetAside(page, found.month)}
@@ -53,6 +53,12 @@ function lead(page: Page, { month }: WatchFound): Html {
   if (from === null || to === null)
     return html`No visit lies on a day${since}. Put the new logs into the study file.`;
   return html`${page.counted(month, 'days', 'new day')} from ${date(from)} to ${date(to)}${since}.`;
+}
+
+/** Logs of days that the earlier run covers. */
+function late(page: Page, { month: { late: came } }: WatchFound): Html | null {
+  if (came.occupations === 0) return null;
+  return html`\n<p class="first">${page.counted(came, 'occupations', 'occupation')} on ${page.lengthOf(came.days, 'earlier day')} came too late for the earlier run and are not counted below. Run the whole study again.</p>`;
 }
 
 function verdict(page: Page, { watches, unwatched, month }: WatchFound): Html {

@@ -1,6 +1,7 @@
 import type { OccupationError } from '../errors/index.js';
 import type { StudyRun } from '../study/index.js';
 import { controlTables } from './controlTables.js';
+import { evidenceTables } from './evidenceTables.js';
 import { findingTables } from './findingTables.js';
 import { withHeightsColumn } from './heightsColumn.js';
 import { outcomeTables } from './outcomeTables.js';
@@ -210,6 +211,7 @@ export function reportTables(run: StudyRun): ReportTable[] {
       ]),
     },
     ...controlTables(results),
+    ...evidenceTables(results),
     ...findingTables(results),
     splitTable(run),
     {
