@@ -46,6 +46,19 @@ describe.each(notebooks)('%s', (name) => {
     );
     expect(text).not.toMatch(/\/home\/|\/tmp\/|Error/);
   });
+  it.skipIf(name.startsWith('05'))('runs on one week of a study without jobs and indices', async () => {
+    const copy = join(FOLDER, `executed-${process.pid}-week-${name}`);
+    const text = readFileSync(join(FOLDER, name), 'utf8');
+    const reading = "await ppmwise.readStudy('../datasets-demo/study.yaml')";
+    expect(text).toContain(reading);
+    const week = `{ ...(${reading}), period: { from: '2025-03-03', to: '2025-03-07' }, indices: [], jobs: [] }`;
+    writeFileSync(copy, text.replace(reading, week));
+    try {
+      await run(process.execPath, [RUNNER, copy]);
+    } finally {
+      rmSync(copy);
+    }
+  });
   it('has fewer than 15 code cells', () => {
     expect(cells(join(FOLDER, name)).filter(({ cell_type: type }) => type === 'code').length).toBeLessThan(
       15,
