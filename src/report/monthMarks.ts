@@ -49,7 +49,7 @@ ${table<MarkShift>(`Mean error of the new days less that of the earlier ones, ${
 
 const MOVED = {
   moved: 'yes',
-  'not shown to have moved': 'not shown',
+  'not shown to have moved': 'not\u00a0shown',
   'too few days': 'too few days',
 } as const;
 

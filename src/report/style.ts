@@ -12,7 +12,7 @@ main { max-width: 50rem; margin: 0 auto; padding: 2.5rem 1.25rem 4rem; }
 h1 { font-size: 1.9rem; line-height: 1.2; margin: 0 0 .3rem; }
 h2 { font-size: 1.3rem; margin: 2.6rem 0 .6rem; padding-top: .6rem; border-top: 2px solid var(--ink); break-after: avoid; }
 p, ul { margin: .5rem 0; } ul { padding-left: 1.3rem; } li { margin: .25rem 0; }
-p, li { orphans: 3; widows: 3; }
+p, li { orphans: 3; widows: 3; } p:has(+ ul), p:has(+ figure) { break-after: avoid; }
 .lead { color: var(--quiet); margin-bottom: .6rem; }
 a { color: var(--water); } a:focus-visible, .scroll:focus-visible { outline: 3px solid var(--water); outline-offset: 2px; }
 nav ul { columns: 2; padding-left: 1.2rem; }
