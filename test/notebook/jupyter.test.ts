@@ -6,7 +6,7 @@ import { promisify } from 'node:util';
 import { type Browser, chromium, type Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { emptyFolder, REPOSITORY } from '../cli/ppmwise.js';
-import { noFrontEnd, noNbconvert } from './jupyter.js';
+import { chromiumPath, noFrontEnd, noNbconvert } from './jupyter.js';
 
 const run = promisify(execFile);
 const NOTEBOOKS = join(REPOSITORY, 'notebooks');
@@ -46,7 +46,7 @@ describe.skipIf(noFrontEnd !== null)(
     let browser: Browser;
     beforeAll(async () => {
       server = await jupyter();
-      browser = await chromium.launch({ executablePath: '/usr/bin/chromium', args: ['--no-sandbox'] });
+      browser = await chromium.launch({ executablePath: chromiumPath(), args: ['--no-sandbox'] });
     }, 3 * MINUTES);
     afterAll(async () => {
       await browser?.close();

@@ -15,3 +15,7 @@ export const noFrontEnd = !answers('jupyter', ['notebook', '--version'])
   : answers('chromium', ['--version'])
     ? null
     : 'Chromium is not installed: apt-get install --no-install-recommends chromium';
+
+/** Where Chromium is. */
+export const chromiumPath = (): string =>
+  spawnSync('sh', ['-c', 'command -v chromium'], { encoding: 'utf8' }).stdout.trim();
