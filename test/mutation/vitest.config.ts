@@ -4,8 +4,8 @@ import { defineConfig } from 'vitest/config';
 export default defineConfig({
   test: {
     include: [
-      'test/fit/{laws,againstR,linearSum,thinData,jackknife}.test.ts',
-      'test/rule/{laws,maximumBaseline,specSheetTest}.test.ts',
+      'test/fit/{laws,againstR,linearSum,thinData,jackknife,intervals}.test.ts',
+      'test/rule/{laws,maximumBaseline,specSheetTest,tolerance}.test.ts',
     ],
     testTimeout: 120_000,
   },
