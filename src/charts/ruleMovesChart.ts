@@ -129,10 +129,11 @@ function panelView(
       },
       {
         data: { values: rows.filter(({ inside }) => inside) },
-        mark: { type: 'text', align: 'right', baseline: 'middle', dx: -6 },
+        // At the beginning of the bar, where no rule can cross it.
+        mark: { type: 'text', align: 'left', baseline: 'middle', dx: 6 },
         encoding: {
           y,
-          x: { ...x, field: 'km' },
+          x: { datum: 0, type: 'quantitative' },
           text: { field: 'text' },
           color: { field: 'ink', type: 'nominal', scale: null },
         },

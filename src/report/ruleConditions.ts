@@ -38,7 +38,7 @@ const remarksOf = (page: Page, of: (rule: Rule) => boolean): Html[] =>
 export function statements(page: Page, c: Rule['conditions']): Html[] {
   const { height } = page.units;
   return [
-    ...(c.solarHours === null ? [] : [html`shots between ${range(page, c.solarHours, 'hour')} solar time`]),
+    ...(c.solarHours === null ? [] : [html`shots from ${range(page, c.solarHours, 'hour')} solar time`]),
     ...(c.epochs === null
       ? []
       : [html`${range(page, c.epochs, 'plain')} positions averaged to an occupation`]),
