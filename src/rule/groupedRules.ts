@@ -85,7 +85,10 @@ export function ruleBySeason(
   );
 }
 
-/** What the tolerances of a group share is fitted once. */
+/**
+ * What the tolerances of a group share is fitted once. Wrong fixes and the doubt about the form are those of all shots: a
+ * third of them tells too little of either.
+ */
 function groupRules(
   errors: ErrorsInput,
   group: string,

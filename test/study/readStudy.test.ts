@@ -114,6 +114,13 @@ describe('readStudy', () => {
     expect(await filesOf('"logs/[x].csv"')).toEqual(['logs/[x].csv']);
   });
 
+  it('understands limits of jobs in feet', async () => {
+    folder.write('job.csv', 'point,latitude,longitude\nP,47,8\n');
+    const { jobs } = await study(
+      'logs: [{files: logs/a.csv}]\njobs: [{file: job.csv, limitFeet: 0.1}, {file: job.csv, limitMm: 20}, job.csv]',
+    );
+    expect(jobs.map(({ limitMm }) => limitMm)).toEqual([0.1 * 304.8, 20, null]);
+  });
   it('understands feet: one foot is 304.8 mm', async () => {
     const { tolerances } = await study(
       'logs: [{files: logs/a.csv}]\ntolerances: [{component: vertical, limitFeet: 0.1}, {component: horizontal, limitMm: 25}]',

@@ -6,7 +6,7 @@ import type { WatchBasis } from './watchBasis.js';
 export interface NextMark {
   readonly mark: string;
   readonly baselineKm: number;
-  /** Days there so far, old and new. */
+  /** Days there so far: those fitted, from the base of most of them, and all new ones. */
   readonly days: number;
   readonly reason: 'may have moved' | 'tells most of the ppm' | 'not visited' | 'few days';
   /** One more occupation there adds so much of what all marks tell of the ppm now; null without a model. */
