@@ -18,7 +18,11 @@ export function watchText({ results, watches, unwatched, month, messages }: Watc
 }
 
 /** Marks to look after, and what the crews did. */
-function monthLines({ visits, markShifts, nextMarks }: WatchMonth): string[] {
+function monthLines({ after, from, visits, markShifts, nextMarks }: WatchMonth): string[] {
+  if (from === null) {
+    const since = after === null ? '' : ` after ${after}, the last day of the earlier run`;
+    return [`No visit lies on a day${since}. Put the new logs into the study file.`];
+  }
   const moved = markShifts.filter(({ verdict }) => verdict === 'moved');
   return [
     `New visits: ${count(visits.withFix)} with a fix, ${count(visits.withoutFix)} without.`,
@@ -28,7 +32,9 @@ function monthLines({ visits, markShifts, nextMarks }: WatchMonth): string[] {
     ),
     ...(nextMarks.length === 0
       ? []
-      : [`Visit next: ${nextMarks.map(({ mark, reason }) => `${quoted(mark)} (${reason})`).join(', ')}.`]),
+      : [
+          `Visit next: ${nextMarks.map(({ mark, reason }) => `${quoted(mark)} (${reason === 'not visited' ? 'not visited on the new days' : reason})`).join(', ')}.`,
+        ]),
   ];
 }
 

@@ -14,7 +14,7 @@ import {
 } from '../fit/index.js';
 import { InputError, type Message, message } from '../logs/index.js';
 import { randomStream } from '../stats/index.js';
-import type { ComponentFits } from './fitComponents.js';
+import { type ComponentFits, ofComponent } from './fitComponents.js';
 import type { Results } from './results.js';
 import type { Study } from './study.js';
 
@@ -137,12 +137,15 @@ function evidenceOf(
   const shares = INFORMATION_BY.filter((by) => by !== 'crew' || errors.some(({ crew }) => crew !== '')).map(
     (by) => informationShares(errors, model, by, { weights }),
   );
-  messages.push(...shares.flatMap(({ notes }) => notes));
+  const tell = (notes: readonly Message[]): void => {
+    messages.push(...notes.map((note) => ofComponent(component, note)));
+  };
+  tell(shares.flatMap(({ notes }) => notes));
   // Where the distance part exceeds the constant shots speak of the ppm.
   const farKm = ppm.estimate ? (constantMm.estimate ?? 0) / ppm.estimate : null;
   const farDays = farKm === null || farKm <= 0 ? null : daysWithFarShots(errors, { ...common, farKm });
   const pairs = firstAndLast(errors, common);
-  messages.push(...(farDays === null ? [] : [farDays.message]), pairs.message);
+  tell([...(farDays === null ? [] : [farDays.message]), pairs.message]);
   return {
     component,
     shares: shares.map(({ by, shares: list }) => ({

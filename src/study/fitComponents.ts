@@ -71,7 +71,7 @@ export function fitComponents(
     try {
       const { fits, told } = fitComponent(errors, weights, component, study);
       components.push(fits);
-      messages.push(...told.map((note) => ({ ...note, text: `${title(component)}: ${note.text}` })));
+      messages.push(...told.map((note) => ofComponent(component, note)));
     } catch (error) {
       if (!(error instanceof InputError)) throw error;
       messages.push(...error.messages);
@@ -93,7 +93,11 @@ function basisFit(
   return { basis: fitErrorModel(errors, { component, form, reference, confidence, ...screened }), choice };
 }
 
-const title = (component: Component): string => (component === 'horizontal' ? 'Horizontal' : 'Vertical');
+/** How a message names the component that it is about. */
+export const ofComponent = (component: Component, note: Message): Message => ({
+  ...note,
+  text: `${component === 'horizontal' ? 'Horizontal' : 'Vertical'}: ${note.text}`,
+});
 
 function fitComponent(
   errors: readonly OccupationError[],

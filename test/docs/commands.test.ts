@@ -39,7 +39,7 @@ const RUN_BY: readonly (readonly [RegExp, string])[] = [
   [/^npx tsc$/, 'DEVELOPERS.md'], // warned of
   [/^sudo apt-get install -y --no-install-recommends jupyter-notebook jupyter-nbconvert$/, '.ci/run'],
   [
-    /^npm (pack|install)$|^cd my-study$|^npx --package=\/path\/to\/ppmwise-[\d.]+\.tgz ppmwise new my-study$/,
+    /^npm (pack|install)$|^cd my-study$|^npx --yes --package=\/path\/to\/ppmwise-[\d.]+\.tgz ppmwise new my-study$/,
     'test/docs/walkthrough.test.ts',
   ],
   [/^npx ppmwise (layout logs\/\*|check study\.yaml|run study\.yaml)$/, 'test/docs/walkthrough.test.ts'],
