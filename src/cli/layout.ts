@@ -60,6 +60,7 @@ function alike(recognitions: readonly Recognition[], files: readonly string[]): 
       recognition.kind === 'recognized'
         ? JSON.stringify([
             recognition.layout,
+            recognition.columns,
             recognition.coordinates,
             recognition.unsure.map(({ code, key }) => [code, key]),
           ])

@@ -257,3 +257,25 @@ describe('decimal commas', () => {
     expect(found.layout).not.toHaveProperty('decimal');
   });
 });
+
+describe('a column Datum', () => {
+  const rows = (datum: string): string =>
+    file(
+      'Datum;Uhrzeit;mark;latitude;longitude;height;fix',
+      `${datum};10:28:11;M06;44,278064588;-18,458611517;685,8064;fixed`,
+      `${datum};10:28:12;M06;44,278064601;-18,458611518;685,8076;fixed`,
+    );
+
+  it('of dates is the date, and its format and zone are asked for', async () => {
+    expect(recognized(rows('13.03.2025')).columns).toMatchObject({ date: 'Datum', timeOfDay: 'Uhrzeit' });
+    expect(recognized(rows('13.03.2025')).columns).not.toHaveProperty('frame');
+    expect(decisive(recognized(rows('13.03.2025')))).toEqual(['time-zone']);
+    expect(decisive(recognized(rows('03.04.2025')))).toEqual(['date-order', 'time-zone']);
+    const { log } = await readRecognized(folder, rows('13.03.2025'), { timeZone: 'UTC' });
+    expect(log.positions[0]?.utcMs).toBe(Date.UTC(2025, 2, 13, 10, 28, 11));
+  });
+
+  it.each(['ETRF2000', '4258', '31467', 'WGS 84'])('of frames such as %s is the frame', (datum) => {
+    expect(recognized(rows(datum)).columns).toMatchObject({ frame: 'Datum' });
+  });
+});

@@ -34,7 +34,7 @@ describe('layoutYaml', () => {
       expect({ files, coordinates, layout }).toEqual({
         files: 'logs/a b.csv',
         coordinates: 'geographic',
-        layout: found.layout,
+        layout: { ...found.layout, columns: found.columns },
       });
     }
   });
@@ -78,7 +78,13 @@ logs:
     layout:
       kind: delimited
       columns:
+        date: Date
         timeOfDay: Time
+        pointNumber: Point
+        latitude: Latitude
+        longitude: Longitude
+        height: Height (m)
+        fix: Fix
       time:
         format: MM/dd/yyyy hh:mm:ss a
       # TO STATE (layout.fixValues): Which texts in column "Fix" mean fixed, float or other? Only "fixed"
@@ -104,6 +110,17 @@ To be stated:
     );
     // biome-ignore lint/suspicious/noControlCharactersInRegex: these are the ones that must not be there
     expect(recognitionText(recognize(text), 'log.csv')).not.toMatch(/[\u0000-\u0009\u000b-\u001f]/);
+  });
+
+  it('lists a column that its name alone gives a role, so that a wrong role is seen', () => {
+    const { layout, columns } = recognized(
+      file(
+        'time,mark,latitude,longitude,height,fix,pdop',
+        '2025-03-04T09:00:00Z,CP1,47.0,8.0,500.0,fixed,1.4',
+      ),
+    );
+    expect(layout).toEqual({ kind: 'delimited' });
+    expect(columns).toMatchObject({ time: 'time', fix: 'fix', pdop: 'pdop' });
   });
 
   it('of a file that is no log is its message', () => {

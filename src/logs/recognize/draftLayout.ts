@@ -28,18 +28,27 @@ export function draftLayout(draft: Draft, head: HeadText): DelimitedLayout {
   };
 }
 
+/** Roles and the names or numbers of their columns. */
+type ColumnReferences = Partial<Record<ColumnRole, string | number>>;
+
+/** Every column with a role, in the order of the file. */
+export const allColumns = ({ roles }: Draft): ColumnReferences => references([...roles]);
+
+const references = (roles: readonly (readonly [ColumnRole, Column])[]): ColumnReferences =>
+  Object.fromEntries(
+    roles.toSorted(([, a], [, b]) => a.index - b.index).map(([role, { reference }]) => [role, reference]),
+  );
+
 /** The columns that must be stated, in the order of the file. */
-function statedColumns({ sheet, columns, roles }: Draft): Partial<Record<ColumnRole, string | number>> {
+function statedColumns({ sheet, columns, roles }: Draft): ColumnReferences {
   const spelled = (role: ColumnRole): readonly Column[] =>
     columns.filter(({ name }) => name !== '' && roleOfHeader(name) === role);
-  const stated = [...roles]
-    .filter(([role, column]) => {
-      if (sheet.header === null) return true;
-      const spelling = spelled(role);
-      return spelling.length !== 1 || spelling[0] !== column;
-    })
-    .sort(([, a], [, b]) => a.index - b.index);
-  return Object.fromEntries(stated.map(([role, { reference }]) => [role, reference]));
+  const stated = [...roles].filter(([role, column]) => {
+    if (sheet.header === null) return true;
+    const spelling = spelled(role);
+    return spelling.length !== 1 || spelling[0] !== column;
+  });
+  return references(stated);
 }
 
 /** Whether the reader finds the delimiter in the header by itself. */

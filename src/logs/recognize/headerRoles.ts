@@ -3,6 +3,7 @@ import type { ColumnRole } from '../roles.js';
 import type { Column } from './columns.js';
 import type { Draft } from './draft.js';
 import { roleOfName } from './headerName.js';
+import { MOST_OF_THEM, textFormats } from './timeTexts.js';
 
 /** Roles that decide numbers: of two columns that spell one, neither is taken. */
 const DECIDING: ReadonlySet<ColumnRole> = new Set<ColumnRole>([
@@ -30,7 +31,7 @@ const DECIDING: ReadonlySet<ColumnRole> = new Set<ColumnRole>([
 export function assignByHeader(draft: Draft): void {
   const found = new Map<ColumnRole, Column[]>();
   for (const column of draft.columns) {
-    const role = column.name === '' ? null : roleOfName(column.name);
+    const role = spelledRole(column);
     if (role !== null) found.set(role, [...(found.get(role) ?? []), column]);
   }
   for (const [role, columns] of found) {
@@ -44,6 +45,20 @@ export function assignByHeader(draft: Draft): void {
     }
   }
 }
+
+/** `Datum` is a frame in English and a date in German: the cells tell which. */
+function spelledRole({ name, texts }: Column): ColumnRole | null {
+  const role = name === '' ? null : roleOfName(name);
+  return role === 'frame' && areDates(texts) ? 'date' : role;
+}
+
+/** Plain numbers, such as codes of frames, may be serial days as well and do not count. */
+const areDates = (texts: readonly string[]): boolean => {
+  const { guesses, share } = textFormats(texts);
+  return (
+    share >= MOST_OF_THEM && guesses.some(({ kind, format }) => kind !== 'time-of-day' && format !== 'excel')
+  );
+};
 
 const named = (columns: readonly Column[]): string => quotedList(columns.map(({ name }) => name));
 

@@ -6,12 +6,15 @@ const COMMENT_WIDTH = 100;
 type Tree = { [key: string]: unknown };
 
 /**
- * The entry of a log in a study file (`logs:` and below) as YAML. Doubts stand as comments at the keys they concern; a
+ * The entry of a log in a study file (`logs:` and below) as YAML. Every column with a role is listed, so that a wrong role
+ * is seen where it is mended. Doubts stand as comments at the keys they concern; a
  * key that must be stated has no value yet, so that a study file with it is refused until it is filled in.
  */
 export function layoutYaml(recognition: RecognizedLog): string {
-  const { file, coordinates, layout, unsure } = recognition;
-  const entry: Tree = { files: file, coordinates, layout: structuredClone(layout) };
+  const { file, coordinates, columns, unsure } = recognition;
+  const isListed = Object.keys(columns).length > 0;
+  const layout = { ...structuredClone(recognition.layout), ...(isListed ? { columns: { ...columns } } : {}) };
+  const entry: Tree = { files: file, coordinates, layout };
   if (coordinates === null && !unsure.some(({ key }) => key === 'coordinates')) delete entry.coordinates;
   for (const { key, decisive } of unsure) if (decisive) leaveOpen(entry, key);
   const document = new Document({ logs: [entry] });

@@ -1,6 +1,6 @@
 import type { Geodetic } from '../../geodesy/index.js';
 import type { CoordinateSystem } from '../coordinateSystem.js';
-import type { LogLayout } from '../layout.js';
+import type { DelimitedLayout, LogLayout } from '../layout.js';
 import type { Message } from '../messages.js';
 import type { ColumnRole } from '../roles.js';
 
@@ -47,6 +47,8 @@ export interface RecognizedLog {
   readonly file: string;
   /** What was decided; keys that a decisive doubt asks for are left out. */
   readonly layout: LogLayout;
+  /** Every column that was given a role, also those whose names the reader of the file knows without a layout. */
+  readonly columns: NonNullable<DelimitedLayout['columns']>;
   /** Null when the user must state it. */
   readonly coordinates: CoordinateSystem | null;
   /** The first five rows. */

@@ -3,7 +3,7 @@ import { sheetColumns } from './columns.js';
 import { settleCoordinates } from './coordinateRoles.js';
 import { commasCutNumbers, decimalMark, thousandsExample } from './decimalMark.js';
 import { Draft } from './draft.js';
-import { draftLayout, structureDoubts } from './draftLayout.js';
+import { allColumns, draftLayout, structureDoubts } from './draftLayout.js';
 import { findFix, settleFix } from './fixRoles.js';
 import { assignByHeader } from './headerRoles.js';
 import type { HeadText } from './headText.js';
@@ -54,7 +54,8 @@ export function recognizeDelimited(head: HeadText, fileName: string, options: Re
   const unsure = [...asked].sort((a, b) => Number(b.decisive) - Number(a.decisive));
   const complete = !unsure.some(({ decisive }) => decisive);
   const preview = previewRows(draft, layout, fileName, options);
-  return { kind: 'recognized', file: fileName, layout, coordinates, preview, unsure, complete };
+  const columns = allColumns(draft);
+  return { kind: 'recognized', file: fileName, layout, columns, coordinates, preview, unsure, complete };
 }
 
 /** Rows that cannot be read though nothing was asked: a few are damaged ones, all of them are a wrong layout. */

@@ -27,6 +27,7 @@ export function recognizeLayout(head: Buffer, fileName: string, options: Recogni
       kind: 'recognized',
       file: fileName,
       layout,
+      columns: {},
       coordinates: 'geographic',
       preview,
       unsure: doubts,

@@ -3,10 +3,7 @@ import type { ColumnRole } from '../roles.js';
 import { type Column, isInteger } from './columns.js';
 import { isAngle } from './contentCoordinates.js';
 import type { Draft } from './draft.js';
-import { textFormats } from './timeTexts.js';
-
-/** Fewest texts of a column, as a share, that must be times. */
-const MOST_OF_THEM = 0.8;
+import { MOST_OF_THEM, textFormats } from './timeTexts.js';
 
 /** Kind of times in a column, or null when it holds none. */
 function timeKind(column: Column): TimeGuess['kind'] | null {

@@ -1,5 +1,7 @@
 import { compileTimeFormat, guessTimeFormats, parseIsoTime, type TimeGuess } from '../../time/index.js';
 
+/** Fewest texts of a column, as a share, that must be times for it to be one of times. */
+export const MOST_OF_THEM = 0.8;
 /** Texts that are looked at. */
 const MOST_TEXTS = 400;
 const SEEDS = 3;
