@@ -6,7 +6,8 @@ export const RESULT_WORDS: Readonly<Record<string, string>> = {
   version: 'Of this layout; a change that breaks readers raises it.',
   study: 'What the study file says of itself.',
   title: 'Of the study.',
-  timeZone: 'IANA zone of the days; null where days are local mean solar days.',
+  timeZone:
+    'Zone of the days, an IANA name or an offset from UTC; null where days are local mean solar days.',
   seed: 'From which everything random started.',
   surveyor: 'Who answers for the report; null where the study names nobody.',
   reportDate: 'As the study states it; null without one.',

@@ -12,7 +12,7 @@ import {
   recognitionText,
   recognizeLayout,
 } from '../logs/index.js';
-import { isTimeZone } from '../time/index.js';
+import { expectedZone, isTimeZone } from '../time/index.js';
 
 interface LayoutFlags {
   readonly timeZone?: string;
@@ -26,7 +26,7 @@ export function layoutCommand(done: (code: number) => void): Command {
       'Recognise the layout of exported logs: print it for the study file, with the first rows as understood.',
     )
     .argument('<file...>', 'exported logs')
-    .option('--time-zone <zone>', 'zone of times without an offset, such as Europe/Lisbon or Etc/GMT+1')
+    .option('--time-zone <zone>', 'zone of times without an offset, such as Europe/Lisbon or +02:00')
     .option('--coordinates <system>', 'geographic, geocentric or the projection of plane coordinates')
     .option('--json', 'print the recognitions as JSON')
     .addHelpText(
@@ -100,7 +100,7 @@ function checkedOptions({ timeZone, coordinates }: LayoutFlags): RecognizeOption
   if (timeZone !== undefined && !isTimeZone(timeZone)) {
     throw inputError(
       'unknown-time-zone',
-      `Expected an IANA time zone like Europe/Lisbon or Etc/GMT+1 as --time-zone, came ${quoted(timeZone)}. Correct it.`,
+      `Expected as --time-zone ${expectedZone(timeZone)}, came ${quoted(timeZone)}. Correct it.`,
     );
   }
   if (coordinates !== undefined) checkCoordinates(coordinates);

@@ -5,7 +5,8 @@ export const STARTER_FILES: Readonly<Record<string, string>> = {
 
 title: Check shots
 
-# Zone of your days, as an IANA name. Without it a day is the local mean solar day at the base.
+# Zone of your days, as an IANA name or an offset from UTC such as "+02:00". Without it a day is the local mean solar
+# day at the base.
 # timeZone: Europe/Lisbon
 
 # Coordinates of marks, bases and logs: geographic (degrees, WGS 84), geocentric (metres), a code of the EPSG

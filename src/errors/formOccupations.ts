@@ -5,7 +5,7 @@ import type { FarOffPlace } from './farOffPlaces.js';
 import type { Occupation, Visit } from './occupation.js';
 
 export interface FormOccupationsOptions {
-  /** IANA name; null takes the local mean solar day at the base. */
+  /** IANA name or offset such as `+02:00`; null takes the local mean solar day at the base. */
   readonly timeZone?: string | null | undefined;
   /** First and last day of the study, `YYYY-MM-DD`, both included. */
   readonly period?: { readonly from: string; readonly to: string } | null | undefined;

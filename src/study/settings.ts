@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { CORRECTION_KINDS } from '../logs/index.js';
-import { isTimeZone } from '../time/index.js';
+import { expectedZone, isTimeZone } from '../time/index.js';
 import { coordinateKeys, coordinates, heights } from './coordinateSettings.js';
 import { heightOf, layout, units } from './layoutSettings.js';
 import { day, reportKeys } from './reportSettings.js';
@@ -114,9 +114,11 @@ export const studySchema = z.strictObject({
   ...reportKeys,
   timeZone: z
     .string()
-    .refine(isTimeZone, { message: 'an IANA time zone like Europe/Lisbon or Etc/GMT+1' })
+    .refine(isTimeZone, { error: ({ input }) => expectedZone(String(input)) })
     .optional()
-    .describe('Zone of days and of log times without an offset; without it days are local mean solar days.'),
+    .describe(
+      'Zone of days and of log times without an offset, an IANA name or an offset from UTC like "+02:00"; without it days are local mean solar days.',
+    ),
   coordinates: coordinates.default('geographic'),
   heights: heights
     .optional()

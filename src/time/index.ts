@@ -1,4 +1,5 @@
 export { equationOfTimeMinutes } from './equationOfTime.js';
+export { expectedZone } from './fixedOffset.js';
 export type { TimeKind } from './formatFields.js';
 export {
   type GpsWeekOutcome,

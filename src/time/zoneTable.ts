@@ -1,4 +1,6 @@
 import { DAY_MS } from './calendarDates.js';
+import { expectedZone, fixedOffsetMs, looksLikeOffset } from './fixedOffset.js';
+import { quoted } from './quoted.js';
 
 /** A stretch of time, from `startMs` up to but not at `endMs` (UTC), in which a zone's offset is the same. */
 export interface OffsetSpan {
@@ -11,14 +13,16 @@ const FIRST_YEAR = 1900;
 const LAST_YEAR = 2199;
 
 interface Zone {
-  readonly format: Intl.DateTimeFormat;
+  /** Null where the offset is always `fixedMs`. */
+  readonly format: Intl.DateTimeFormat | null;
+  readonly fixedMs: number;
   readonly years: Map<number, readonly OffsetSpan[]>;
 }
 
 /** Tables worked out so far. They hold facts that do not change, so sharing them disturbs nobody. */
 const zones = new Map<string, Zone>();
 
-/** Whether the run-time knows a time zone of this name (IANA name such as `Europe/Oslo`, `Etc/GMT+1`, `UTC`). */
+/** Whether this is a time zone: an IANA name such as `Europe/Oslo` or `UTC`, or an offset from UTC such as `+02:00`. */
 export function isTimeZone(name: string): boolean {
   return zoneOf(name) !== undefined;
 }
@@ -26,6 +30,13 @@ export function isTimeZone(name: string): boolean {
 function zoneOf(name: string): Zone | undefined {
   const known = zones.get(name);
   if (known) return known;
+  if (looksLikeOffset(name)) {
+    const fixedMs = fixedOffsetMs(name);
+    if (fixedMs === null) return undefined;
+    const fixed: Zone = { format: null, fixedMs, years: new Map() };
+    zones.set(name, fixed);
+    return fixed;
+  }
   try {
     const format = new Intl.DateTimeFormat('en-US', {
       timeZone: name,
@@ -39,7 +50,7 @@ function zoneOf(name: string): Zone | undefined {
       minute: 'numeric',
       second: 'numeric',
     });
-    const zone: Zone = { format, years: new Map() };
+    const zone: Zone = { format, fixedMs: Number.NaN, years: new Map() };
     zones.set(name, zone);
     return zone;
   } catch (error) {
@@ -57,9 +68,10 @@ function printedOffsetMs(format: Intl.DateTimeFormat, utcMs: number): number {
 }
 
 /** Spans of one UTC year: offsets at daily steps, changes between them bisected to the second. */
-function spansOfYear(format: Intl.DateTimeFormat, year: number): readonly OffsetSpan[] {
+function spansOfYear({ format, fixedMs }: Zone, year: number): readonly OffsetSpan[] {
   const yearStart = Date.UTC(year, 0, 1);
   const yearEnd = Date.UTC(year + 1, 0, 1);
+  if (format === null) return [{ startMs: yearStart, endMs: yearEnd, offsetMs: fixedMs }];
   const spans: OffsetSpan[] = [];
   let startMs = yearStart;
   let offsetMs = printedOffsetMs(format, yearStart);
@@ -87,10 +99,7 @@ function spansOfYear(format: Intl.DateTimeFormat, year: number): readonly Offset
  */
 export function offsetSpanAt(timeZone: string, utcMs: number): OffsetSpan {
   const zone = zoneOf(timeZone);
-  if (!zone)
-    throw new RangeError(
-      `timeZone: expected an IANA name such as Europe/Oslo or Etc/GMT+1, received ${timeZone}`,
-    );
+  if (!zone) throw new RangeError(`timeZone: expected ${expectedZone(timeZone)}, came ${quoted(timeZone)}`);
   const year = new Date(utcMs).getUTCFullYear();
   if (!(year >= FIRST_YEAR && year <= LAST_YEAR))
     throw new RangeError(
@@ -98,7 +107,7 @@ export function offsetSpanAt(timeZone: string, utcMs: number): OffsetSpan {
     );
   let spans = zone.years.get(year);
   if (!spans) {
-    spans = spansOfYear(zone.format, year);
+    spans = spansOfYear(zone, year);
     zone.years.set(year, spans);
   }
   const span = spans.find((candidate) => utcMs < candidate.endMs);

@@ -23,14 +23,14 @@ export interface ClockOverlap {
 
 export type LocalToUtc = OneInstant | ClockGap | ClockOverlap;
 
-/** No offset from UTC is larger than 14 hours, and no change of one was nearer than this to another. */
+/** No offset of a changing zone is larger than 14 hours, and no change of one was nearer than this to another. */
 const REACH_MS = 16 * 3_600_000;
 
 let lastZone = '';
 let last: OffsetSpan = { startMs: 0, endMs: 0, offsetMs: 0 };
 
 /**
- * Local clock minus UTC, milliseconds, in an IANA time zone at a time. Rows of a log come in order, so the span of the
+ * Local clock minus UTC, milliseconds, in a time zone (an IANA name or an offset such as `+02:00`) at a time. Rows of a log come in order, so the span of the
  * last answer is tried first; the rest is a table kept for the life of the process.
  * @throws RangeError for an unknown zone, or a time outside the years 1900 to 2199.
  */

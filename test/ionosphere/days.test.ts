@@ -24,6 +24,7 @@ const DAILY = readIndices(
 describe('days as spans', () => {
   it('of a zone follow its clock, with the long and the short day', () => {
     const hours = ({ startMs, endMs }: DaySpan): number => (endMs - startMs) / 3_600_000;
+    expect(localDaySpan('2024-01-22', '+05:00')).toEqual(localDaySpan('2024-01-22', 'Etc/GMT-5'));
     expect(localDaySpan('2024-01-22', 'Etc/GMT-5')).toEqual({
       day: '2024-01-22',
       startMs: utc('2024-01-21T19:00Z'),

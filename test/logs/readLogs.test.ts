@@ -146,6 +146,7 @@ describe('local times', () => {
 
   it('are read in the zone of the study', async () => {
     expect(await timeOf('2025-03-04T09:00:00', 'Etc/GMT+1')).toBe(Date.UTC(2025, 2, 4, 10));
+    expect(await timeOf('2025-03-04T09:00:00', '+02:00')).toBe(Date.UTC(2025, 2, 4, 7));
     expect(await timeOf('2025-07-04 09:00', 'Europe/Paris')).toBe(Date.UTC(2025, 6, 4, 7));
     expect(await timeOf('2025-07-04T09:00+05:30', 'Europe/Paris')).toBe(Date.UTC(2025, 6, 4, 3, 30));
   });

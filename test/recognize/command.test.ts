@@ -74,7 +74,7 @@ describe('ppmwise layout', () => {
   it.each([
     [['nowhere.csv'], /came a path that does not exist\. Name the file\./],
     [[folder.path], /came a folder\. Name the file\./],
-    [[plain, '--time-zone', 'Mars'], /as --time-zone, came "Mars"\. Correct it\./],
+    [[plain, '--time-zone', 'Mars'], /as --time-zone an IANA time zone .*, came "Mars"\. Correct it\./],
     [[plain, '--coordinates', 'mars'], /as --coordinates, came "mars"/],
   ])('refuses %j', async (args, text) => {
     const refused = layout(...args);

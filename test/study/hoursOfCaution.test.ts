@@ -37,6 +37,8 @@ describe('hours of caution', () => {
         clock: { day: '2025-07-02', fromHour: expect.closeTo(13.4, 9), toHour: expect.closeTo(17.4, 9) },
       },
     ]);
+    const fixed = hoursOfCaution([hours(0.01)], errors, control, { timeZone: '+02:00' });
+    expect(fixed).toEqual(hoursOfCaution([hours(0.01)], errors, control, { timeZone: 'Europe/Zurich' }));
   });
   it('have no clock without a zone', () => {
     expect(hoursOfCaution([hours(0.01)], errors, control, { timeZone: null })[0]!.clock).toBeNull();

@@ -126,7 +126,11 @@ describe('a value', () => {
     ['title: ""', ':5 [title] Expected at least one entry, came "". Correct it.'],
     [
       'timeZone: Mars/Base',
-      ':5 [timeZone] Expected an IANA time zone like Europe/Lisbon or Etc/GMT+1, came "Mars/Base". Correct it.',
+      ':5 [timeZone] Expected an IANA time zone like Europe/Lisbon or an offset from UTC like +02:00, came "Mars/Base". Correct it.',
+    ],
+    [
+      'timeZone: UTC+2',
+      ':5 [timeZone] Expected an IANA time zone like Europe/Lisbon or an offset from UTC, which for UTC+2 is written "+02:00", came "UTC+2". Correct it.',
     ],
     ['timeZone: 5', ':5 [timeZone] Expected a text, came 5. Correct it.'],
     ['period: 2025', ':5 [period] Expected keys with values, came 2025. Correct it.'],

@@ -115,19 +115,23 @@ describe('timeReader', () => {
     [
       { zone: 'Europe/Atlantis' },
       null,
-      'zone: expected an IANA name such as Europe/Oslo, UTC, or an offset such as +02:00, came "Europe/Atlantis"',
+      'zone: expected an IANA time zone like Europe/Lisbon or an offset from UTC like +02:00, came "Europe/Atlantis"',
     ],
     [
       { zone: '+17' },
       null,
-      'zone: expected an IANA name such as Europe/Oslo, UTC, or an offset such as +02:00, came "+17"',
+      'zone: expected an IANA time zone like Europe/Lisbon or an offset from UTC like +02:00, came "+17"',
     ],
     [
       { zone: '+02:60' },
       null,
-      'zone: expected an IANA name such as Europe/Oslo, UTC, or an offset such as +02:00, came "+02:60"',
+      'zone: expected an IANA time zone like Europe/Lisbon or an offset from UTC like +02:00, came "+02:60"',
     ],
-    [{}, '', 'zone: expected an IANA name such as Europe/Oslo, UTC, or an offset such as +02:00, came ""'],
+    [
+      {},
+      '',
+      'zone: expected an IANA time zone like Europe/Lisbon or an offset from UTC like +02:00, came ""',
+    ],
     [
       { format: 'HH:mm' },
       'UTC',

@@ -13,10 +13,23 @@ describe('isTimeZone', () => {
     for (const name of ['', 'Europe/Atlantis', 'GMT+1 ', 'local', 'Mars'])
       expect(isTimeZone(name), name).toBe(false);
   });
+  it('knows offsets, on every run-time the same', () => {
+    for (const name of ['+02:00', '-0330', '-3', '+14', '\u221203:00', '+00:00'])
+      expect(isTimeZone(name), name).toBe(true);
+    for (const name of ['+17', '+02:60', '+', '+2h', 'UTC+2', 'GMT-3'])
+      expect(isTimeZone(name), name).toBe(false);
+  });
+  it.each([
+    ['UTC+2', '+02:00'],
+    ['GMT -3:30', '-03:30'],
+    ['utc+0545', '+05:45'],
+  ])('%s is refused with the offset that was meant', (came, meant) => {
+    expect(() => zoneOffsetMs(came, 0)).toThrow(`which for ${came} is written "${meant}", came "${came}"`);
+  });
   it('an unknown zone is refused by name', () => {
     expect(() => zoneOffsetMs('Europe/Atlantis', 0)).toThrow(
       new RangeError(
-        'timeZone: expected an IANA name such as Europe/Oslo or Etc/GMT+1, received Europe/Atlantis',
+        'timeZone: expected an IANA time zone like Europe/Lisbon or an offset from UTC like +02:00, came "Europe/Atlantis"',
       ),
     );
   });
@@ -51,6 +64,9 @@ describe('zoneOffsetMs', () => {
     ['Pacific/Apia', '2011-12-30T10:00:00', 14],
     // POSIX signs: Etc/GMT+1 is one hour behind Greenwich
     ['Etc/GMT+1', '2025-06-01T00:00:00', -1],
+    // offsets as ISO 8601 signs them: ahead of UTC is plus
+    ['+02:00', '2025-06-01T00:00:00', 2],
+    ['-0330', '1900-01-01T00:00:00', -3.5],
     ['UTC', '2025-06-01T00:00:00', 0],
   ])('%s at %s', (zone, time, hours) => {
     expect(zoneOffsetMs(zone, utc(time))).toBe(hours * HOUR);
