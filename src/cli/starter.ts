@@ -19,7 +19,7 @@ coordinates: geographic
 
 marks: marks.csv
 # Where logs name marks inside longer texts, such as "CHK A3 ok", a regular expression (of JavaScript) reads them out:
-# marks: {file: marks.csv, names: {pattern: "CHK (\\w+)"}}
+# marks: {file: marks.csv, names: {pattern: 'CHK (\\w+)'}}
 bases: bases.csv
 logs:
   - files: logs/*.csv

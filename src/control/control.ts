@@ -20,11 +20,15 @@ export type Match<Point> =
   | { readonly kind: 'known'; readonly point: Point }
   | { readonly kind: 'unknown'; readonly detail: string };
 
-/** The mark of that name; unknown names come back with the nearest known one. */
-export function matchMark(control: Control, name: string): Match<Mark> {
+/**
+ * The mark of that name; unknown names come back with the nearest known one.
+ * @param written the text out of which a pattern read the name
+ */
+export function matchMark(control: Control, name: string, written = name): Match<Mark> {
   const mark = control.marks.get(name);
   if (mark !== undefined) return { kind: 'known', point: mark };
   if (name === '') return { kind: 'unknown', detail: 'the row names no mark' };
+  if (written !== name) return { kind: 'unknown', detail: misreadName(name, written, control.marks.keys()) };
   return { kind: 'unknown', detail: unknownName('mark', name, control.marks.keys()) };
 }
 
@@ -38,6 +42,18 @@ export function matchBase(control: Control, name: string): Match<Base> {
   const base = bases.get(name);
   if (base !== undefined) return { kind: 'known', point: base };
   return { kind: 'unknown', detail: unknownName('base', name, bases.keys()) };
+}
+
+/** Of a name that the pattern under marks.names read out of a text. */
+function misreadName(name: string, written: string, known: Iterable<string>): string {
+  const names = [...known];
+  const nearWord = (): string | null => {
+    const words = written.split(/[\s,;:/]+/).filter((word) => /\d/.test(word));
+    return words.map((word) => nearestName(word, names)).find((found) => found !== null) ?? null;
+  };
+  const near = names.find((each) => holdsWord(written, each)) ?? nearestName(name, names) ?? nearWord();
+  const meant = near === null ? '' : ` (${DID_YOU_MEAN} ${quoted(near)}?)`;
+  return `no mark is named ${quoted(name)}, which the pattern under marks.names reads out of ${quoted(written)}${meant}`;
 }
 
 function unknownName(what: string, name: string, known: Iterable<string>): string {

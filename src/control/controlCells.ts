@@ -29,6 +29,8 @@ export interface ControlCellsRow {
   readonly isDay: (text: string) => boolean;
 }
 
+const DECIMAL_COMMA = /^[-+]?\d*,\d+$/;
+
 const NO_ROD =
   'Heights are those of the antenna: expected its height above the mark, came a blank cell. Fill it in.';
 
@@ -38,6 +40,8 @@ const isDay = (text: string): boolean =>
 /** The cells of a marks or bases file, and everything that is wrong with them. */
 export class ControlCells {
   readonly errors: Message[] = [];
+  /** Cells whose numbers have a decimal comma. */
+  #commas = 0;
 
   private constructor(
     readonly control: ControlFile,
@@ -84,12 +88,17 @@ export class ControlCells {
       const angle = this.control.units?.angle === 'dms' && (role === 'latitude' || role === 'longitude');
       const value = angle ? parseDms(text(role)) : parseNumber(text(role));
       if (value !== null) return value;
+      if (!angle && DECIMAL_COMMA.test(text(role))) {
+        this.#decimalComma(text(role), row, role);
+        return Number.NaN;
+      }
       const expected = angle ? 'degrees, minutes and seconds like 53 48 33.82 N' : 'a number';
       const came = quoted(text(role));
       report('not-a-number', `Expected ${expected}, came ${came}. Correct the cell or leave it blank.`, role);
       return Number.NaN;
     };
-    const faulty = (): boolean => this.errors.length > before;
+    const commasBefore = this.#commas;
+    const faulty = (): boolean => this.errors.length > before || this.#commas > commasBefore;
     return { row, text, number, report, faulty, isDay, place: () => this.#place(number, report, faulty) };
   }
 
@@ -140,6 +149,14 @@ export class ControlCells {
       throw new CoordinateFault('a height without a place cannot be taken to another frame', 2);
     }
     return height === undefined ? place : { ...place, heightM: height(place, separationM) };
+  }
+
+  /** Told once: where one number has a comma, mostly all have. */
+  #decimalComma(came: string, row: number, role: ColumnRole): void {
+    this.#commas += 1;
+    if (this.#commas > 1) return;
+    const text = `Expected numbers with a decimal point, came ${quoted(came)}: numbers are written with a comma. Write all numbers of this file with a point, here ${came.replace(',', '.')}.`;
+    this.#report('decimal-comma', text, row, role);
   }
 
   #report(code: string, text: string, row: number, role: ColumnRole | null): void {

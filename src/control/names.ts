@@ -28,13 +28,21 @@ export function matchRowNames(control: Control, row: RowNames): Match<Mark> {
     if (point !== undefined) return { kind: 'known', point };
   }
   const pattern = control.names?.pattern ?? null;
-  const named = pattern === null ? [] : texts.flatMap((text) => pattern.exec(text)?.[1]?.trim() ?? []);
-  for (const name of named) {
+  const named = pattern === null ? [] : texts.flatMap((text) => readOut(pattern, text));
+  for (const { name } of named) {
     const point = control.marks.get(name) ?? aliased(control, name);
     if (point !== undefined) return { kind: 'known', point };
   }
   // The text that was meant to name the mark is the one to tell of.
-  return matchMark(control, named[0] ?? texts[0] ?? '');
+  const [first] = named;
+  return first === undefined
+    ? matchMark(control, texts[0] ?? '')
+    : matchMark(control, first.name, first.text);
+}
+
+function readOut(pattern: RegExp, text: string): { readonly name: string; readonly text: string }[] {
+  const name = pattern.exec(text)?.[1]?.trim();
+  return name === undefined ? [] : [{ name, text }];
 }
 
 function aliased(control: Control, text: string): Mark | undefined {

@@ -102,7 +102,7 @@ export class FileFinder {
       if (new RegExp(`${pattern}|`).exec('')!.length > 1) return expression;
       this.mistake(
         'bad-pattern',
-        `Expected a pattern with a group for the mark, such as "CHK (\\d+)", came ${quoted(pattern)}. Put the name of the mark in brackets.`,
+        `Expected a pattern with a group for the mark, such as 'CHK (\\d+)', came ${quoted(pattern)}. Put the name of the mark in brackets.`,
         path,
       );
     } catch (error) {

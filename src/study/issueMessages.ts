@@ -72,10 +72,24 @@ function expectations(issue: Issue): string[] {
 }
 
 function unknownKey(key: string, path: Path, value: unknown, placeOf: PlaceOf): Message {
+  const cut = cutNumber(key, valueAt(value, path));
+  if (cut !== null) return message('error', 'unknown-key', cut, placeOf([...path, key]));
   const known = knownKeys(path, value);
   const allowed = known.length === 0 ? '' : ` Known here: ${known.join(', ')}.`;
   const text = `The key ${quoted(key)} is not known.${suggestion(key, known) || allowed} Correct or remove it.`;
   return message('error', 'unknown-key', text, placeOf([...path, key]));
+}
+
+/** What to say of a decimal comma between braces, which parts `30,0` into the number 30 and a key 0; null otherwise. */
+function cutNumber(key: string, around: unknown): string | null {
+  const entries = Object.entries(around as Record<string, unknown>);
+  const isCut = /^\d+$/.test(key) && entries.some(([name, value]) => name === key && value === null);
+  const numbers = entries.filter(([, value]) => typeof value === 'number' && Number.isInteger(value));
+  if (!isCut || numbers.length === 0) return null;
+  // Digits of a key lose their zeros in front, so that only of a plain 0 the whole number is known.
+  const [only] = numbers.length === 1 && key === '0' ? numbers : [];
+  const remedy = only === undefined ? 'such as 30.5' : `here ${only[0]}: ${only[1]}.0`;
+  return `Expected numbers with a decimal point, came the key ${quoted(key)} without a value: a decimal comma ends a number here. Write a point, ${remedy}.`;
 }
 
 const valueAt = (value: unknown, path: Path): unknown =>

@@ -13,6 +13,10 @@ export interface ParsedStudy {
 /** Once a file is out of step every further line may seem wrong: so many mistakes are told. */
 const MOST_YAML_MISTAKES = 5;
 
+/** Between double quotes a backslash begins an escape sequence. */
+const SINGLE_QUOTES =
+  "Put a pattern or path with backslashes in single quotes, such as 'CHK (\\d+)': between them a backslash is one.";
+
 /**
  * Text of a study file → settings.
  * @throws InputError with one message for every mistake: line, key, what was expected, what came
@@ -21,13 +25,16 @@ export function parseStudyText(text: string, file: string): ParsedStudy {
   const lines = new LineCounter();
   const document = parseDocument(text, { lineCounter: lines, prettyErrors: false });
   const mistakes: Message[] = [];
-  const broken = (fault: string, offset: number): void => {
+  const broken = (fault: string, offset: number, remedy = 'Correct the line.'): void => {
     const { line } = lines.linePos(offset);
-    const sentences = `The file is not valid YAML: ${sentence(fault)} Correct the line.`;
+    const sentences = `The file is not valid YAML: ${sentence(fault)} ${remedy}`;
+    // A pattern with several backslashes has the same mistake several times.
+    if (mistakes.some(({ text: told, row }) => told === sentences && row === line)) return;
     mistakes.push(message('error', 'broken-yaml', sentences, { file, row: line }));
   };
   for (const { code, message: fault, pos } of document.errors) {
-    broken(code === 'MULTIPLE_DOCS' ? 'a line of three dashes begins a second document' : fault, pos[0]);
+    if (code === 'MULTIPLE_DOCS') broken('a line of three dashes begins a second document', pos[0]);
+    else broken(fault, pos[0], code === 'BAD_DQ_ESCAPE' ? SINGLE_QUOTES : undefined);
   }
   visit(document, {
     Alias(_, alias) {

@@ -46,6 +46,12 @@ describe('a row names a mark', () => {
 });
 
 describe('a pattern', () => {
+  it('that cuts a name short is told with the text as written and the mark that was near', () => {
+    expect(named(withNames({ pattern: /KONTR (\w+)/ }), { description: 'KONTR CP-02' })).toBe(
+      'no mark is named "CP", which the pattern under marks.names reads out of "KONTR CP-02" (did you mean "CP2"?)',
+    );
+  });
+
   const checks = withNames({ pattern: /^(?:CHK\s+)?(CP\d+)(?:-\d+)?$/ });
 
   it('finds the mark in point numbers and descriptions by its first group', () => {
@@ -60,8 +66,10 @@ describe('a pattern', () => {
     expect(named(checks, { pointNumber: 'CHK CP1', description: 'CP2' })).toBe('CP2');
   });
 
-  it('tells of the name that it found, not of the whole text', () => {
-    expect(named(checks, { description: 'CHK CP4' })).toBe('no mark is named "CP4" (did you mean "CP1"?)');
+  it('tells of the name that it found and of the whole text', () => {
+    expect(named(checks, { description: 'CHK CP4' })).toBe(
+      'no mark is named "CP4", which the pattern under marks.names reads out of "CHK CP4" (did you mean "CP1"?)',
+    );
     expect(named(checks, { pointNumber: '1023', description: 'TREE' })).toBe('no mark is named "1023"');
   });
 

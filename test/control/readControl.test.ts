@@ -92,6 +92,14 @@ describe('readMarks', () => {
     ]);
   });
 
+  it('tells of decimal commas once, and does not advise to leave them out', async () => {
+    const lines = ['mark;latitude;longitude;height', 'A;47,1;8,2;500,3', 'B;47,2;8,3;x'];
+    expect(await refusal(marksOf(lines))).toEqual([
+      'points.csv:2 [latitude] error: Expected numbers with a decimal point, came "47,1": numbers are written with a comma. Write all numbers of this file with a point, here 47.1.',
+      'points.csv:3 [height] error: Expected a number, came "x". Correct the cell or leave it blank.',
+    ]);
+  });
+
   it('refuses half a position and no position', async () => {
     expect(await refusal(marksOf([HEADER, 'HALF,47,,500', 'NOTHING,,,']))).toEqual([
       'points.csv:2 error: Mark "HALF" has only some of the coordinates that belong together. Fill in all of them, or none when the place is not known.',

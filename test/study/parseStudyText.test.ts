@@ -230,6 +230,19 @@ describe('a value', () => {
   });
 });
 
+describe('a decimal comma between braces', () => {
+  const tolerance = (limit: string): string[] =>
+    mistakes(`${NEEDED}tolerances: [{component: vertical, limitMm: ${limit}}]\n`);
+  const TOLD = (key: string): string =>
+    `:5 [tolerances[0].${key}] Expected numbers with a decimal point, came the key "${key}" without a value: a decimal comma ends a number here. Write a point,`;
+
+  it('is told as what it is', () => {
+    expect(tolerance('30,0')).toEqual([`${TOLD('0')} here limitMm: 30.0.`]);
+    expect(tolerance('30,5')).toEqual([`${TOLD('5')} such as 30.5.`]);
+    expect(tolerance('30, 5: 1')[0]).toContain('The key "5" is not known.');
+  });
+});
+
 describe('broken YAML', () => {
   it.each([
     [
@@ -251,6 +264,12 @@ describe('broken YAML', () => {
     [
       'marks: m.csv\nbases: b.csv\nlogs:\n  - files: *.csv\n',
       [':4 The file is not valid YAML: a text that begins with * needs quotes: "*.csv". Correct the line.'],
+    ],
+    [
+      'marks: {file: m.csv, names: {pattern: "CHK (\\w+) \\w"}}\n',
+      [
+        ":1 The file is not valid YAML: Invalid escape sequence \\w. Put a pattern or path with backslashes in single quotes, such as 'CHK (\\d+)': between them a backslash is one.",
+      ],
     ],
     ['a: 1\n? [b]\n: 1\n', [':2 The file is not valid YAML: a key is not a plain text. Correct the line.']],
   ])('%j', (text, expected) => {
