@@ -42,7 +42,7 @@ ${table('Settings', lines, [
 ])}
 ${table<StatedSetting>('Every setting of the study file, defaults filled in', settings.stated, [
   { head: 'Setting', cell: ({ key }) => html`<code>${key}</code>`, text: true },
-  { head: 'Value', cell: ({ value }) => html`<bdi>${page.crew(value)}</bdi>`, text: true },
+  { head: 'Value', cell: ({ value }) => page.name(value), text: true },
 ])}
 </section>
 `;

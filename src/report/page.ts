@@ -1,6 +1,13 @@
 import type { EstimateWithLimits } from '../fit/index.js';
-import { lengthLikeNames, type ReaderUnits, type Results, readerUnits, textInUnits } from '../study/index.js';
-import { maskedText } from './crewNames.js';
+import {
+  givenNames,
+  lengthLikeNames,
+  type ReaderUnits,
+  type Results,
+  readerUnits,
+  textInUnits,
+} from '../study/index.js';
+import { crewMask } from './crewNames.js';
 import { formatNumber, NOT_GIVEN, type NumberKind } from './format.js';
 import { type Html, html } from './html.js';
 
@@ -12,6 +19,7 @@ export class Page {
   readonly units: ReaderUnits;
   /** Names that look like lengths and are none. */
   readonly names: readonly string[];
+  readonly #masked: (sentence: string) => string;
   readonly #places = new Map<object, string>();
 
   /** @param written what is written beside the page, in which every number has its place; default the results */
@@ -21,6 +29,9 @@ export class Page {
   ) {
     this.units = readerUnits(results.study.reportUnits);
     this.names = lengthLikeNames(results);
+    this.#masked = results.study.showCrews
+      ? (sentence) => sentence
+      : crewMask(results.crews, givenNames(results));
     this.#place(written, '');
   }
 
@@ -74,9 +85,7 @@ export class Page {
 
   /** A sentence of the results in the units of the reader, without the names of crews. */
   text(sentence: string): string {
-    const { showCrews } = this.results.study;
-    const masked = showCrews ? sentence : maskedText(sentence, this.results.crews);
-    return textInUnits(masked, this.units, this.names);
+    return textInUnits(this.#masked(sentence), this.units, this.names);
   }
 
   /** The name of a crew, or its number. */

@@ -30,9 +30,19 @@ They hold under the conditions of these days:</p>
 const ownRemarks = ({ remarks, dayBound }: Rule): string[] =>
   remarks.filter((remark) => remark !== dayBound?.sentence);
 
-/** What must be known beside the numbers, each sentence once. */
-const remarksOf = (page: Page, of: (rule: Rule) => boolean): Html[] =>
-  [...new Set(page.results.rules.filter(of).flatMap(ownRemarks))].map((remark) => html`${page.text(remark)}`);
+/** What must be known beside the numbers, each sentence once, and of which rules it is said where it is not of all. */
+function remarksOf(page: Page, of: (rule: Rule) => boolean): Html[] {
+  const rules = page.results.rules.filter(of);
+  const components = new Set(rules.map(({ component }) => component));
+  return [...new Set(rules.flatMap(ownRemarks))].map((remark) => {
+    const said = new Set(
+      rules.filter((rule) => ownRemarks(rule).includes(remark)).map(({ component }) => component),
+    );
+    const whole = page.text(remark);
+    if (said.size === components.size) return html`${whole}`;
+    return html`${said.has('horizontal') ? 'In plan' : 'In height'}: ${whole}`;
+  });
+}
 
 /** Conditions that are known, one a line. */
 export function statements(page: Page, c: Rule['conditions']): Html[] {

@@ -55,6 +55,6 @@ export { SKY_MEASURES, SKY_OUTCOMES } from './skyResult.js';
 export { softwareVersion } from './softwareVersion.js';
 export type { JobFile, Study } from './study.js';
 export type { StudyJob } from './studyJobs.js';
-export { lengthLikeNames, textInUnits } from './textInUnits.js';
+export { givenNames, lengthLikeNames, textInUnits } from './textInUnits.js';
 export type { CrewShots, EarlierRun, NewlySetAside, RowsSetAside, WatchMonth } from './watchMonth.js';
 export { readResults, type WatchRun, watchStudy } from './watchStudy.js';

@@ -31,7 +31,11 @@ export function textInUnits(sentence: string, units: ReaderUnits, names: readonl
 }
 
 /** The names of a study in which a length could be read. */
-export function lengthLikeNames(results: Results): string[] {
+export const lengthLikeNames = (results: Results): string[] =>
+  givenNames(results).filter((name) => new RegExp(LENGTHS.source).test(name));
+
+/** What the study calls its files, marks, bases, crews and receivers, and itself. */
+export function givenNames(results: Results): string[] {
   const { study, marks, controlMarks, siteMarks, bases, crews, rovers, setups, jobs, files, inputs } =
     results;
   const names = [
@@ -47,7 +51,7 @@ export function lengthLikeNames(results: Results): string[] {
     ...jobs.flatMap((job) => [job.file, ...job.points.map(({ point }) => point)]),
     ...[...files, ...inputs].map(({ file }) => file),
   ];
-  return [...new Set(names)].filter((name) => new RegExp(LENGTHS.source).test(name));
+  return [...new Set(names)];
 }
 
 const turned = (text: string, units: ReaderUnits): string =>

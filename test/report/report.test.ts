@@ -107,6 +107,26 @@ describe('the report', () => {
     expect(pagesOf(named).annex).toContain(`without crew ${crews[0]}`);
     expect(pagesOf(run).annex).toContain('without crew 1');
   });
+  it('keeps settings as they were stated, though a crew has the same name', () => {
+    const stated = [{ key: 'logs[0].layout.columns.latitude', value: run.results.crews[1]! }];
+    const { annex } = pagesOf(withResults({ settings: { ...run.results.settings, stated } }));
+    expect(annex).toContain(`<bdi>${run.results.crews[1]}</bdi>`);
+  });
+  it('says of which rules a remark is where it is not of all', () => {
+    const remark = 'Days left out do not tell root-sum-square and linear sum apart.';
+    const [conditions] = run.results.rules.map((rule) => rule.conditions);
+    const rules = run.results.rules.map((rule) => ({
+      ...rule,
+      conditions: conditions!,
+      remarks: [] as string[],
+    }));
+    const some = rules.map((rule) => (rule.component === 'vertical' ? { ...rule, remarks: [remark] } : rule));
+    expect(reportHtml({ ...run.results, rules: some }, NO_PICTURES)).toContain(
+      `<li>In height: ${remark}</li>`,
+    );
+    const all = rules.map((rule) => ({ ...rule, remarks: [remark] }));
+    expect(reportHtml({ ...run.results, rules: all }, NO_PICTURES)).toContain(`<li>${remark}</li>`);
+  });
 });
 
 describe('numbers on pages', () => {
