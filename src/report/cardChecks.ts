@@ -1,4 +1,5 @@
 import type { CheckShotLimit, CheckShotLimits } from '../rule/index.js';
+import { withinReach } from './cardReach.js';
 import { type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { type Column, table } from './table.js';
@@ -32,11 +33,11 @@ function limitTable(page: Page, { component, limits }: CheckShotLimits): Html {
   const { error, distance } = page.units;
   return table<CheckShotLimit>(
     `${component === 'horizontal' ? 'Plan' : 'Height'}: differences, ${error.name}`,
-    limits,
+    withinReach(page.results, limits),
     [
       {
         head: `At, ${distance.name}`,
-        cell: (row) => page.number(row, 'baselineKm', 'distance'),
+        cell: (row) => page.number(row, 'baselineKm', 'distance, rounded down'),
         text: true,
       },
       ...KINDS.map(

@@ -1,4 +1,5 @@
 import type { Results } from '../study/index.js';
+import { withinReach } from './cardReach.js';
 import { type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { table } from './table.js';
@@ -11,9 +12,9 @@ const WORTH = 0.8;
 
 /** A new point shot twice on one day: how long to wait, and how far both may lie apart. */
 export function secondVisit(page: Page): Html {
-  const given = page.results.secondVisits.filter(({ visits }) =>
-    visits.some(({ differenceLimitMm }) => differenceLimitMm !== null),
-  );
+  const given = page.results.secondVisits
+    .map((one) => ({ ...one, visits: withinReach(page.results, one.visits) }))
+    .filter(({ visits }) => visits.some(({ differenceLimitMm }) => differenceLimitMm !== null));
   if (given.length === 0) {
     return html`<section id="twice"><h2>A new point, twice</h2>
 <p>What a second visit on the same day gains could not be found. Visit again on another day, or from another base.</p></section>`;
@@ -29,8 +30,12 @@ export function secondVisit(page: Page): Html {
     : html`No gap up to <strong>${page.number(lengths[0]!, 'minutes', 'count')} minutes</strong> makes the mean of both much better: come back on another day where it matters.`;
   return html`<section id="twice"><h2>A new point, twice on one day</h2>
 <p>${advice} Something is wrong beyond:</p>
-${table<Visit>(`Difference of both visits, ${error.name}, and error left in their mean`, lengths, [
-  { head: `At, ${distance.name}`, cell: (row) => page.number(row, 'baselineKm', 'distance'), text: true },
+${table<Visit>(`Difference of both visits, ${error.name}`, lengths, [
+  {
+    head: `At, ${distance.name}`,
+    cell: (row) => page.number(row, 'baselineKm', 'distance, rounded down'),
+    text: true,
+  },
   ...given.map(({ component, visits }) => ({
     head: nameOf(component),
     cell: ({ baselineKm }: Visit) => {
@@ -39,10 +44,10 @@ ${table<Visit>(`Difference of both visits, ${error.name}, and error left in thei
     },
   })),
   ...given.map(({ component, visits }) => ({
-    head: `${nameOf(component)}: left`,
+    head: `${nameOf(component)}: error left in the mean, % of one shot’s`,
     cell: ({ baselineKm }: Visit) => {
       const own = visits.find((visit) => visit.minutes === minutes && visit.baselineKm === baselineKm);
-      return own === undefined ? '—' : page.number(own.factor, 'estimate', 'share');
+      return own === undefined ? '—' : page.number(own.factor, 'estimate', 'whole share');
     },
   })),
 ])}</section>`;

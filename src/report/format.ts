@@ -18,6 +18,7 @@ export type NumberKind =
   | 'ppm'
   | 'signed ppm'
   | 'share'
+  | 'whole share'
   | 'small share'
   | 'count'
   | 'ratio'
@@ -57,6 +58,8 @@ export function formatNumber(value: number | null, kind: NumberKind, units: Read
       return signed(value, 2);
     case 'share':
       return percent(value);
+    case 'whole share':
+      return fixed(100 * value, 0);
     case 'small share':
       return `${Number((100 * value).toFixed(2))}\u00a0%`;
     case 'count':

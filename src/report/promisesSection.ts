@@ -25,7 +25,7 @@ function oneTable(page: Page, component: Promised['component']): Html | null {
   return table<Promised>(caption, lengths, [
     {
       head: `At, ${page.units.distance.name}`,
-      cell: (row) => page.number(row, 'baselineKm', 'distance'),
+      cell: (row) => page.number(row, 'baselineKm', 'distance, rounded down'),
       text: true,
     },
     ...shares.map((column) => ({

@@ -30,10 +30,13 @@ function twoBasesTable(page: Page, { component, twoBases }: CheckShotLimits): Ht
     [
       {
         head: `From one base, ${distance.name}`,
-        cell: (row) => page.number(row, 'firstKm', 'distance'),
+        cell: (row) => page.number(row, 'firstKm', 'distance, rounded down'),
         text: true,
       },
-      { head: `From the other, ${distance.name}`, cell: (row) => page.number(row, 'secondKm', 'distance') },
+      {
+        head: `From the other, ${distance.name}`,
+        cell: (row) => page.number(row, 'secondKm', 'distance, rounded down'),
+      },
       { head: `Limit, ${error.name}`, cell: (row) => page.number(row, 'limitMm', 'error on a card') },
     ],
   );
@@ -46,7 +49,7 @@ function visitTable(page: Page, one: Visits): Html {
   return html`${rests}${table(`A second visit on the same day, ${one.component}`, one.visits, [
     {
       head: `Distance, ${distance.name}`,
-      cell: (row) => page.number(row, 'baselineKm', 'distance'),
+      cell: (row) => page.number(row, 'baselineKm', 'distance, rounded down'),
       text: true,
     },
     { head: 'Minutes apart', cell: (row) => page.number(row, 'minutes', 'count') },

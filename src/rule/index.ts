@@ -15,6 +15,7 @@ export { type RuleTableOptions, type RuleTableRow, ruleTable } from './ruleTable
 export { type SpecSheet, specSheetSigmaMm } from './specSheet.js';
 export * from './standards/index.js';
 export { longestSupportedKm } from './supportedLength.js';
+export { tabledLengths } from './tabledLengths.js';
 export {
   type SpecSheetRatio,
   type SpecSheetTest,

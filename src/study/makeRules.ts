@@ -22,6 +22,7 @@ import {
 import { usedBaseErrors } from './baseErrors.js';
 import type { JudgedDays } from './judgeDays.js';
 import type { Results } from './results.js';
+import { rowLengths } from './rowLengths.js';
 import type { PartRule } from './ruleResultTypes.js';
 import type { WrongFixes } from './screenStudy.js';
 import type { Study } from './study.js';
@@ -79,8 +80,9 @@ export function makeRules(
         ...short(rule),
       }));
     });
+  const rules = toleranceRules(input, { tolerances });
   return {
-    rules: toleranceRules(input, { tolerances }),
+    rules,
     ruleTable: models.flatMap((model) => ruleTable(used, model, options.get(model.component)!)),
     rulesByHour: grouped(ruleByHour).map(({ group, ...rule }) => ({ hours: group, ...rule })),
     rulesBySeason: grouped(ruleBySeason).map(({ group, ...rule }) => ({ month: group, ...rule })),
@@ -94,6 +96,7 @@ export function makeRules(
     checkShotLimits: models.map((model) =>
       checkShotLimits(model, dayModel(model.component), {
         ...checkShots,
+        lengthsKm: rowLengths(USUAL_KM, used, model.component, rules),
         markSigmaMm: input.markSigmaMm.get(model.component),
         baseSigmaMm: options.get(model.component)!.baseSigmaMm,
       }),
@@ -105,7 +108,8 @@ export function makeRules(
   };
 }
 
-const PROMISED_KM = [0.5, 1, 2, 5, 10, 15, 20];
+/** Lengths of rows, as far as the data reach. */
+const USUAL_KM = [0.5, 1, 2, 5, 10, 15, 20];
 const PROMISED_SHARES = [0.68, 0.95, 0.99];
 
 /** The question of a rule turned round: what can be promised at some lengths. */
@@ -114,7 +118,9 @@ const promisesOf = (
   model: ErrorModel,
   options: RuleOptions,
 ): PositionPromise[] =>
-  PROMISED_SHARES.flatMap((share) => PROMISED_KM.map(promiser(used, model, { ...options, share })));
+  PROMISED_SHARES.flatMap((share) =>
+    rowLengths(USUAL_KM, used, model.component, []).map(promiser(used, model, { ...options, share })),
+  );
 
 /** The rules of the study's tolerances, in their order, and nothing else. */
 export function toleranceRules(

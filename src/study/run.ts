@@ -147,7 +147,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
   const made = makeRules(ground, study);
   const tested = testRules(ground, study);
   const planned = planJobs(read.jobs, ground, study);
-  const visited = visitsAndLengths(ground, weights, study.seed);
+  const visited = visitsAndLengths(ground, made.rules, weights, study.seed);
   const fitted = fitResults(components, errors, wrongFixes, judged);
   const { withLeftOut } = read;
   const leftOut = withLeftOut === null ? null : withLeftOutDays(withLeftOut, ground, study);

@@ -1,6 +1,7 @@
 import { InputError, type Message, message } from '../logs/index.js';
 import {
   errorByOccupationLength,
+  type Rule,
   type SecondVisits,
   secondVisits,
   twoVisitLimitMm,
@@ -9,17 +10,22 @@ import {
 import { randomStream } from '../stats/index.js';
 import type { RuleInput } from './makeRules.js';
 import type { Results } from './results.js';
+import { rowLengths } from './rowLengths.js';
 import type { SecondVisitsResult } from './ruleResultTypes.js';
 
 /** Good pairs that lie beyond the limit of their difference: one in a thousand. */
 const ALARM_SHARE = 1 / 1000;
+/** Lengths of rows, as far as the data reach. */
+const USUAL_KM = [1, 5, 10];
 
 /**
  * What a second visit on the same day gains, and how errors depend on the number of epochs behind an occupation.
+ * @param rules those of the study, to whose reach second visits are told of
  * @param weights of a screening, one for each error; null without one
  */
 export function visitsAndLengths(
-  { errors, models, options }: RuleInput,
+  { errors, used, models, options }: RuleInput,
+  rules: readonly Rule[],
   weights: Float64Array | null,
   seed: number,
 ): {
@@ -34,7 +40,11 @@ export function visitsAndLengths(
       if (model.variance === null) return [];
       const random = randomStream(seed, `second visits ${model.component}`);
       const found = possible('What a second visit gains could not be found', reasons, () =>
-        secondVisits(errors, model, { random, weights: own }),
+        secondVisits(errors, model, {
+          random,
+          weights: own,
+          lengthsKm: rowLengths(USUAL_KM, used, model.component, rules),
+        }),
       );
       if (found === null) return [];
       const { dayModel = null } = options.get(model.component)!;

@@ -129,6 +129,32 @@ describe('the report', () => {
   });
 });
 
+describe('tables of lengths', () => {
+  const farthest = (): number => Math.max(...run.results.rules.map((rule) => rule.maximumBaselineKm ?? 0));
+  const lengthsOf = (each: string, part: string): number[] =>
+    pageNumbers(each).flatMap(({ attributes }) => {
+      const at = attributes.get('data-at') ?? '';
+      return at.startsWith(`/${part}/`) && at.endsWith('/baselineKm')
+        ? [Number(attributes.get('value'))]
+        : [];
+    });
+  it('of the card end where its farthest rule does', () => {
+    for (const part of ['checkShotLimits', 'secondVisits']) {
+      const lengths = lengthsOf(cardHtml(run.results), part);
+      expect(Math.max(...lengths), part).toBeCloseTo(farthest(), 9);
+    }
+    const nearer = run.results.rules.map((rule) => ({ ...rule, maximumBaselineKm: 2 }));
+    const near = lengthsOf(cardHtml({ ...run.results, rules: nearer }), 'checkShotLimits');
+    expect(Math.max(...near)).toBe(2);
+  });
+  it('of promises end where the data do', () => {
+    for (const { component, longestSupportedKm } of run.results.rules) {
+      const own = run.results.promises.filter((one) => one.component === component);
+      expect(Math.max(...own.map(({ baselineKm }) => baselineKm))).toBe(longestSupportedKm);
+    }
+  });
+});
+
 describe('numbers on pages', () => {
   const units = REPORT_UNITS.map((kind) => [kind] as const);
   /** How many of the shown units one of ours is, by kind of number. */

@@ -193,5 +193,5 @@ function sentenceOf(visits: readonly SecondVisit[], farPairs: number): string {
   const shown = visits[Math.floor(visits.length / 2)];
   if (shown === undefined) return far;
   const { baselineKm, minutes, factor } = shown;
-  return `The mean of two visits ${minutes} minutes apart has ${factor.estimate!.toFixed(2)} times the error of one at ${baselineKm} km (0.71 if they were independent); an error of the base's coordinates is in both.${far === '' ? '' : ` ${far}`}`;
+  return `The mean of two visits ${minutes} minutes apart has ${factor.estimate!.toFixed(2)} times the error of one at ${Number(baselineKm.toFixed(1))} km (0.71 if they were independent); an error of the base's coordinates is in both.${far === '' ? '' : ` ${far}`}`;
 }
