@@ -19,7 +19,7 @@ ${first}
 ${rules.map((rule) => ruleItem(page, rule))}</ul>
 ${conditionsOfRules(page)}
 ${ruleTable(page)}
-<p class="small">${howToRead(rules)}</p>
+<p class="small">${howToRead(rules)}${rules.some(isOpen) ? ' “Or more”: so far the data reach, and what lies beyond is not known.' : ''}</p>
 </section>
 `;
 }
@@ -30,6 +30,15 @@ function howToRead(rules: readonly Rule[]): string {
     ? `${cut} “All days together” counts the positions of all days as one: on a worse day fewer are within the limit. “By days alone” is the length on the day that bounds the share of days, without any model of how days differ.`
     : `${cut} It holds over all days together, so on a worse day fewer positions are within the limit.`;
 }
+
+/** Whether a length is the last of which the data tell. */
+export const endsWithData = ({ longestSupportedKm }: Rule, km: number | null): boolean =>
+  km !== null && km > 0 && km === longestSupportedKm;
+
+const isOpen = (rule: Rule): boolean =>
+  [rule.bestEstimateKm, rule.allDaysKm, rule.dayBound?.baselineKm ?? null].some((km) =>
+    endsWithData(rule, km),
+  );
 
 function ruleItem(page: Page, rule: Rule): Html {
   const { head, body } = ruleParts(rule, {
@@ -48,6 +57,8 @@ function ruleTable(page: Page): Html {
   const unit = page.units.distance.name;
   const km = (rule: Rule, key: 'maximumBaselineKm' | 'bestEstimateKm' | 'allDaysKm' | 'longestSupportedKm') =>
     page.number(rule, key, 'distance, rounded down');
+  const atLeast = (rule: Rule, key: 'bestEstimateKm' | 'allDaysKm') =>
+    endsWithData(rule, rule[key]) ? html`${km(rule, key)} or more` : km(rule, key);
   return table('The rules in one table', page.results.rules, [
     {
       head: 'Positions',
@@ -66,16 +77,20 @@ function ruleTable(page: Page): Html {
       : []),
     { head: 'Confidence', cell: (rule) => page.number(rule, 'confidence', 'share') },
     { head: `Up to, ${unit}`, cell: (rule) => km(rule, 'maximumBaselineKm') },
-    { head: `Best estimate, ${unit}`, cell: (rule) => km(rule, 'bestEstimateKm') },
+    { head: `Best estimate, ${unit}`, cell: (rule) => atLeast(rule, 'bestEstimateKm') },
     ...(page.results.rules.some(byDays)
-      ? [{ head: `All days together, ${unit}`, cell: (rule: Rule) => km(rule, 'allDaysKm') }]
+      ? [{ head: `All days together, ${unit}`, cell: (rule: Rule) => atLeast(rule, 'allDaysKm') }]
       : []),
     ...(page.results.rules.some(({ dayBound }) => dayBound !== null)
       ? [
           {
             head: `By days alone, ${unit}`,
-            cell: ({ dayBound }: Rule) =>
-              dayBound === null ? '—' : page.number(dayBound, 'baselineKm', 'distance, rounded down'),
+            cell: (rule: Rule) => {
+              const { dayBound } = rule;
+              if (dayBound === null) return '—';
+              const bound = page.number(dayBound, 'baselineKm', 'distance, rounded down');
+              return endsWithData(rule, dayBound.baselineKm) ? html`${bound} or more` : bound;
+            },
           },
         ]
       : []),

@@ -2,6 +2,7 @@ import type { RuleTableRow } from '../rule/index.js';
 import { type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { promisesTables } from './promisesSection.js';
+import { endsWithData } from './ruleSection.js';
 import { table } from './table.js';
 import { componentTitle } from './words.js';
 
@@ -24,7 +25,7 @@ function oneTable(page: Page, component: RuleTableRow['component']): Html | null
   const limits = rows.filter(({ share }) => share === rows[0]!.share);
   const first = rows[0]!;
   const caption = html`${componentTitle(component, page.results.heights)}: on ${page.number(first, 'dayShare', 'share')} of days, with ${page.number(first, 'confidence', 'share')} confidence`;
-  return table<RuleTableRow>(caption, limits, [
+  return html`${table<RuleTableRow>(caption, limits, [
     { head: `Within, ${page.units.error.name}`, cell: (row) => page.number(row, 'limitMm', 'limit') },
     ...shares.map((column) => ({
       head: html`${page.number(column, 'share', 'share')} of positions`,
@@ -35,7 +36,15 @@ function oneTable(page: Page, component: RuleTableRow['component']): Html | null
         return html`${page.number(found, 'maximumBaselineKm', 'distance, rounded down')}${found.method === 'pooled' ? ' *' : ''}`;
       },
     })),
-  ]);
+  ])}${endOfData(page, rows)}`;
+}
+
+/** What cells mean that hold the last length of which the data tell. */
+function endOfData(page: Page, rows: readonly RuleTableRow[]): Html | null {
+  const rule = page.results.rules.find(({ component }) => component === rows[0]!.component);
+  if (rule === undefined || !rows.some((row) => endsWithData(rule, row.maximumBaselineKm))) return null;
+  return html`<p class="small">${page.number(rule, 'longestSupportedKm', 'distance, rounded down')} ${page.units.distance.name} is as far as the data reach: such a limit may hold farther, which is not known.</p>
+`;
 }
 
 /** Why there is no rule, for the annex; said once for each reason. */
