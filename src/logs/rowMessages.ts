@@ -1,15 +1,15 @@
 import { type Message, message } from './messages.js';
 import type { RowReason, SetAsideRow } from './reasons.js';
+import { unreadableRemedy } from './unreadableRemedy.js';
 
 /** Set-aside rows of these reasons get a message; the others speak for themselves in the account. */
 const REMEDIES = {
-  unreadable: 'Correct the rows or export them again.',
   'unknown-mark': 'Add the mark to the marks file or correct the name.',
   'unknown-base': 'Add the base to the bases file or correct the name.',
   conflicting:
     'One rover cannot be at two places: all of them are set aside. Look for a wrong mark name or a joined file.',
 } satisfies Partial<Record<RowReason, string>>;
-type ToldReason = keyof typeof REMEDIES;
+const TOLD_REASONS = ['unreadable', 'unknown-mark', 'unknown-base', 'conflicting'] as const;
 
 /** A log full of ordinary points has thousands of names that are no marks: so many are told one by one. */
 const MOST_NAMES = 20;
@@ -30,7 +30,7 @@ export class RowMessages {
   readonly #groups = new Map<string, Group>();
 
   add(row: SetAsideRow): void {
-    if (!(row.reason in REMEDIES)) return;
+    if (!TOLD_REASONS.some((reason) => reason === row.reason)) return;
     const key = [row.reason, ...finding(row)].join('\u0000');
     const group = this.#groups.get(key);
     if (group === undefined) this.#groups.set(key, { first: row, count: 1, files: new Set([row.file]) });
@@ -43,7 +43,7 @@ export class RowMessages {
 
   messages(): Message[] {
     const groups = [...this.#groups.values()].sort((a, b) => byPlace(a.first, b.first));
-    return (Object.keys(REMEDIES) as ToldReason[]).flatMap((reason) => {
+    return TOLD_REASONS.flatMap((reason) => {
       const ofReason = groups.filter(({ first }) => first.reason === reason);
       if (!isName(reason) || ofReason.length <= FEW_NAMES) return ofReason.map(groupMessage);
       // Names that were probably meant to be a known one are worth more than the rest.
@@ -82,8 +82,13 @@ const areRows = (count: number): string => (count === 1 ? '1 row is' : `${count}
 
 const inFiles = (count: number): string => (count === 1 ? '' : `, in ${count} files`);
 
+function remedyOf({ reason, detail }: SetAsideRow): string {
+  if (reason === 'unreadable') return unreadableRemedy(detail);
+  return detail.startsWith(NO_BASE) ? STATE_BASE : REMEDIES[reason as keyof typeof REMEDIES];
+}
+
 function groupMessage({ first, count, files }: Group): Message {
-  const remedy = first.detail.startsWith(NO_BASE) ? STATE_BASE : REMEDIES[first.reason as ToldReason];
+  const remedy = remedyOf(first);
   return message(
     'warning',
     first.reason,

@@ -7,6 +7,7 @@ import { quoted } from './messages.js';
 import { parseNumber } from './numbers.js';
 import type { ColumnRole } from './roles.js';
 import type { RowCells, TextOf } from './rowCells.js';
+import { DECIMAL_COMMA } from './unreadableRemedy.js';
 
 /** For a role a function that reads its number in a row: its cell, or the constant where the cell is blank. */
 export type NumberReaders = (role: ColumnRole) => (cells: RowCells) => number | null;
@@ -95,9 +96,7 @@ export function coordinateReader(
 }
 
 function notANumber(cell: string): string {
-  const comma = /^[-+]?\d+,\d+$/.test(cell)
-    ? ' with a decimal comma; state decimal: comma in the layout'
-    : '';
+  const comma = /^[-+]?\d+,\d+$/.test(cell) ? ` ${DECIMAL_COMMA}; state decimal: comma in the layout` : '';
   const angle =
     /\d\D+\d+\D+\d/.test(cell) && comma === ''
       ? '; are these degrees, minutes and seconds (units: {angle: dms})?'

@@ -1,5 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { parse } from 'yaml';
 import { formatMessage, RowMessages, type RowReason, type SetAsideRow } from '../../src/logs/index.js';
+import { timeReader } from '../../src/time/index.js';
 
 const row = (
   file: string,
@@ -30,6 +32,37 @@ describe('RowMessages', () => {
     ];
     expect(told(rows)).toEqual(expected);
     expect(told([...rows].reverse())).toEqual(expected);
+  });
+
+  it.each([
+    ['03.13.2025 10:28:11', 'time: {format: MM.dd.yyyy HH:mm:ss}'],
+    ['13.03.2025 10:28:11', 'time: {format: dd.MM.yyyy HH:mm:ss}'],
+    ['13/03/2025, 10:28', "time: {format: 'dd/MM/yyyy, HH:mm'}"],
+  ])('says which line of the layout reads a time like %s', (text, line) => {
+    const read = timeReader({}, 'UTC')(text);
+    if (read.kind !== 'invalid') throw new Error('read by the default format');
+    expect(told([row('a.csv', 2, 'unreadable', read.detail, 'Datum')])).toEqual([
+      `a.csv:2 [Datum] warning: 1 row is set aside as unreadable: expected a time like 2025-03-01T10:15:00Z, came ${JSON.stringify(text)}. If all times are written so, add "${line}" to the layout of these logs.`,
+    ]);
+    const { format } = (parse(line) as { time: { format: string } }).time;
+    expect(timeReader({ format }, 'UTC')(text).kind).toBe('instant');
+  });
+
+  it('offers both orders of day and month where a time does not tell, and none where it is no time', () => {
+    const remedy = (came: string): string =>
+      told([row('a.csv', 2, 'unreadable', `expected a time like 2025-03-01T10:15:00Z, came "${came}"`)])[0]!;
+    expect(remedy('03.04.2025 10:28')).toMatch(
+      /add "time: \{format: dd\.MM\.yyyy HH:mm\}" or "time: \{format: MM\.dd\.yyyy HH:mm\}", whichever is meant, to/,
+    );
+    expect(remedy('soon')).toMatch(/came "soon"\. Correct the rows or export them again\.$/);
+  });
+
+  it('says that the layout states decimal commas', () => {
+    expect(
+      told([row('a.csv', 2, 'unreadable', 'expected a number, came "1,5" with a decimal comma')])[0],
+    ).toMatch(
+      /with a decimal comma\. If all numbers are written so, add "decimal: comma" to the layout of these logs\.$/,
+    );
   });
 
   it('says what to do about rows that name no base where there are several', () => {
