@@ -118,7 +118,7 @@ async function run(expect: ExpectStatic, code: number, files: Files, args: reado
   expect(stdout + stderr).not.toMatch(/undefined|\[object|(?<!")\bNaN\b/);
   expect(outcome.code, stdout + stderr).toBe(code);
   if (code === 2) {
-    expect(stderr).not.toBe('');
+    expect(stderr).toMatch(/\S\n$/);
     expect(results).toBe(null);
     return { ...outcome, messages: [] as readonly string[], result: null as unknown as Results };
   }

@@ -279,3 +279,24 @@ describe('a column Datum', () => {
     expect(recognized(rows(datum)).columns).toMatchObject({ frame: 'Datum' });
   });
 });
+
+describe('a column of names among other words', () => {
+  const rows = (...remarks: readonly string[]): string =>
+    file(
+      'time,latitude,longitude,height,fix,Trupp,Bemerkung',
+      ...remarks.map((remark, k) => `2025-03-04T09:00:0${k}Z,47.01,-8.01,500.1,fixed,C,${remark}`),
+    );
+  const told = (text: string): string =>
+    recognized(text).unsure.find(({ code }) => code === 'unused-columns')?.because ?? '';
+
+  it('is told with the pattern that reads the name out of it', () => {
+    const pattern = /pattern: '([^']+)'/.exec(told(rows('KONTR M06', 'KONTR M-04', 'KONTR M01')))?.[1];
+    expect(pattern).toBe('^KONTR\\s+(\\S+)$');
+    expect(new RegExp(pattern!).exec('KONTR M-04')?.[1]).toBe('M-04');
+  });
+
+  it('is told without one where the words differ or no name follows', () => {
+    expect(told(rows('KONTR M06', 'HECKE 3', 'ZAUN 2'))).not.toContain('pattern');
+    expect(told(rows('M06', 'M04', 'M01'))).not.toContain('pattern');
+  });
+});

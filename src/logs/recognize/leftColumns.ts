@@ -1,6 +1,7 @@
 import { quoted } from '../messages.js';
 import { type Column, isInteger } from './columns.js';
 import type { Draft } from './draft.js';
+import { namePattern, patternWords } from './namePattern.js';
 
 const MOST_NAMED = 12;
 
@@ -17,11 +18,20 @@ export function settleLeftColumns(draft: Draft): void {
   draft.doubt({
     code: 'unused-columns',
     question: `Should ${left.length === 1 ? 'a further column' : 'further columns'} be read?`,
-    because: `Not read, as nothing says what ${left.length === 1 ? 'it is' : 'they are'}: ${named}${more}. A column that holds the name of the mark among other words has the role description.`,
+    because: `Not read, as nothing says what ${left.length === 1 ? 'it is' : 'they are'}: ${named}${more}. A column that holds the name of the mark among other words has the role description${patternOf(left)}.`,
     key: 'layout.columns',
     choices: [],
     decisive: false,
   });
+}
+
+/** How the name is read out of the first of these columns whose texts show it. */
+function patternOf(left: readonly Column[]): string {
+  for (const { label, texts } of left) {
+    const pattern = namePattern(texts);
+    if (pattern !== null) return `; for ${label} ${patternWords(pattern)} would read it out`;
+  }
+  return '';
 }
 
 const looksLikeSatellites = (column: Column): boolean =>
