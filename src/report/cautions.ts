@@ -33,9 +33,11 @@ export function limitsOfStudy({ results }: Page): string[] {
 }
 
 /** Days worse than all those observed may have been missed: with none among G, they are at most about 3/G (95 %). */
+export const unseenShare = (days: number): number => Math.min(1, 3 / days);
+
 function unseenDays(days: number): string[] {
   if (days === 0) return [];
   return [
-    `All of this is said of the days observed. Days worse than any of these may be as many as ${percent(Math.min(1, 3 / days))} without one having been met.`,
+    `All of this is said of the days observed. Days worse than any of these may be as many as ${percent(unseenShare(days))} without one having been met.`,
   ];
 }

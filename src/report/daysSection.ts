@@ -1,4 +1,6 @@
 import type { DegradedDayResult, Results, TimeOfDayResult } from '../study/index.js';
+import { unseenShare } from './cautions.js';
+import { percent } from './format.js';
 import { date, type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { table } from './table.js';
@@ -27,7 +29,7 @@ function degraded(page: Page): Html {
       html`<p>${title(model.component)}: on half of the days the ppm is above
 ${page.limits(model.medianDayPpm, 'ppm')}; over days to come it is ${page.limits(model.longRunPpm, 'ppm')} in the root-mean-square.</p>\n`,
   );
-  if (degradedDays.length === 0) return html`${spread}<p>No day stands out as degraded.</p>`;
+  if (degradedDays.length === 0) return html`${spread}<p>No day stands out as degraded.${proviso(page)}</p>`;
   return html`${spread}<p>Some days stand out as degraded; they stay in the fit. The words for each stand in the annex.</p>
 ${table<DegradedDayResult>('Degraded days', degradedDays, [
   { head: 'Day', cell: ({ day }) => date(day), text: true },
@@ -36,6 +38,21 @@ ${table<DegradedDayResult>('Degraded days', degradedDays, [
   { head: 'Probability', cell: (day) => page.number(day, 'probabilityDegraded', 'ratio') },
   { head: 'Put down to', cell: (day) => putDownTo(page, day), text: true },
 ])}`;
+}
+
+/** What may have been missed though no day stands out. */
+export function proviso(page: Page): Html {
+  const { rules, evidence } = page.results;
+  const days = rules[0]?.conditions.days ?? 0;
+  const unseen =
+    days === 0 ? null : html` So many days leave room for ${percent(unseenShare(days))} of worse ones.`;
+  const blind = evidence
+    .map(({ daysWithFarShots }) => daysWithFarShots)
+    .find((far) => far !== null && far.daysWithoutFar > 0);
+  const short = blind
+    ? html` ${page.counted(blind, 'daysWithoutFar', 'day')} had no shot beyond ${page.number(blind, 'farKm', 'distance')} ${page.units.distance.name}, and can hardly stand out.`
+    : null;
+  return html`${unseen}${short}`;
 }
 
 function putDownTo(page: Page, { verdict, subject }: DegradedDayResult): string {

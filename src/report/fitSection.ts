@@ -7,14 +7,14 @@ import { type Column, table } from './table.js';
 import { shownFits } from './words.js';
 
 /** How the errors grow with distance: the fitted model, the spec sheet, and what was measured by length. */
-export function fitSection(page: Page): Html {
+export function fitSection(page: Page, charts: readonly (Html | null)[] = []): Html {
   const { fits } = page.results;
   if (fits.length === 0)
     return html`<section id="fit"><h2>How errors grow with distance</h2><p>No fit was possible.</p></section>\n`;
   const shown = shownFits(page.results);
   const forms = [...new Set(shown.map(({ form }) => FORMULAS[form]))].join(' or ');
   return html`<section id="fit"><h2>How errors grow with distance</h2>
-${specSheetWords(page)}
+${charts}${specSheetWords(page)}
 ${fitTable(page, `Own error model, ${forms}, with ${percent(shown[0]!.confidence)} intervals`, shown)}
 ${lengthTable(page)}
 </section>

@@ -1,5 +1,7 @@
+import type { Html } from './html.js';
+
 /** What the words of the report mean. */
-export const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
+const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
   ['base', 'the point on which the base receiver runs; distances are counted from it'],
   ['baseline', 'the straight line from base to rover, and its length'],
   ['mark', 'a point with known coordinates'],
@@ -36,3 +38,9 @@ export const GLOSSARY: readonly (readonly [word: string, meaning: string])[] = [
     'the distance from the base up to which a tolerance holds, with the stated confidence',
   ],
 ];
+
+/** Those words that a page uses, in one number or the other; pictures are no words. */
+export function wordsUsed(parts: readonly Html[]): typeof GLOSSARY {
+  const words = parts.map(({ text }) => text.replace(/<[^>]*>/g, ' ')).join(' ');
+  return GLOSSARY.filter(([word]) => new RegExp(`\\b${word}(s|es)?\\b`, 'i').test(words));
+}

@@ -1,6 +1,6 @@
 import type { Rule } from '../rule/index.js';
 import type { Results } from '../study/index.js';
-import { daysJudged } from './daysSection.js';
+import { daysJudged, proviso } from './daysSection.js';
 import { date, type Html, html } from './html.js';
 import type { Page } from './page.js';
 import { byDays, whyNoRule } from './words.js';
@@ -69,11 +69,11 @@ function whenNot(page: Page): Html {
   const dayWords = !daysJudged(page.results)
     ? html`Single days could not be judged.`
     : days.length === 0
-      ? html`No day stands out.`
+      ? html`No day stands out.${proviso(page)}`
       : html`Errors were clearly larger than usual on ${days.map((day, k) => html`${k === 0 ? '' : k === days.length - 1 ? ' and ' : ', '}${date(day)}`)}.`;
   const hours = hoursOfCaution.map(
     (one) =>
-      html` Take care ${place(one.component)} from ${page.number(one, 'fromHour', 'hour')} to ${page.number(one, 'toHour', 'hour')} solar time.`,
+      html` Take care ${place(one.component)} from ${page.number(one, 'fromHour', 'hour')} to ${page.number(one, 'toHour', 'hour')} solar time${one.clock === null ? '' : html`, ${page.number(one.clock, 'fromHour', 'hour')} to ${page.number(one.clock, 'toHour', 'hour')} on the clock of ${date(one.clock.day)}`}.`,
   );
   return html`${dayWords}${hours}`;
 }

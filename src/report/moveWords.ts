@@ -7,6 +7,8 @@ export function moveWords({ kind, subject }: RuleMove, crew: (name: string) => s
       return 'the rule itself';
     case 'without a mark':
       return `without the worst mark, ${subject}`;
+    case 'without a far mark':
+      return `without the far mark ${subject}`;
     case 'without a day':
       return `without the worst day, ${subject}`;
     case 'without a crew': {

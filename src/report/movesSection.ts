@@ -10,8 +10,11 @@ export function movesSection(page: Page, picture: Html | null): Html {
   const { ruleMoves, rules } = page.results;
   if (ruleMoves.length === 0 || rules.every(({ maximumBaselineKm }) => !maximumBaselineKm)) return html``;
   return html`<section id="moves"><h2>How the limit moves</h2>
-<p>The first limit in plan and in height was found again with one thing changed. A limit that stays where it is does not hang
-on one mark, one day or one crew.</p>
+<p>The first limit in plan and in height was found again with one thing changed: what moves it much, it hangs on.${
+    ruleMoves.some(({ kind }) => kind === 'without a far mark')
+      ? ' A limit that ends where the data end hangs on the marks that are far enough, so each of the farthest two was left out too.'
+      : ''
+  }</p>
 ${picture ?? movesTables(page)}
 <p class="small">The numbers stand in the annex too.</p>
 </section>

@@ -146,14 +146,33 @@ function sentenceOf(
   const at = list
     .map(
       ({ baselineKm, ratio, low, high }) =>
-        `${ratio.toFixed(2)} (${low.toFixed(2)} to ${high.toFixed(2)}) at ${baselineKm} km`,
+        `${changeWords(ratio)} (${changeRange(low, high)}) at ${baselineKm} km`,
     )
     .join(', ');
+  const better = verdict === 'better' ? [] : ratios.filter((each) => each.verdict === 'better');
+  const alsoBetter =
+    better.length === 0
+      ? ''
+      : ` At ${better.map(({ baselineKm }) => `${baselineKm} km`).join(' and ')} they are shown to be better.`;
   const told = {
     worse: 'are worse than the spec sheet',
     better: 'are better than the spec sheet',
     'not worse by more than 10 %': 'are not worse than the spec sheet by more than 10 %',
     'not shown to differ': 'are not shown to differ from the spec sheet',
   }[verdict];
-  return `On the ${days} days observed the ${component} errors ${told}: their spread is ${at} of the sheet's (${Number((100 * confidence).toFixed(1))} % intervals).`;
+  return `On the ${days} days observed the ${component} errors ${told}: against the sheet's their spread is ${at} (${Number((100 * confidence).toFixed(1))} % intervals).${alsoBetter}`;
+}
+
+/** A ratio as a reader says it: `13 % smaller`. */
+function changeWords(ratio: number): string {
+  const perCent = Math.round(100 * Math.abs(ratio - 1));
+  return perCent === 0 ? 'the same' : `${perCent} % ${ratio < 1 ? 'smaller' : 'larger'}`;
+}
+
+/** `6 to 19 %` where both lie on the side of the ratio, else with words. */
+function changeRange(low: number, high: number): string {
+  const [ofLow, ofHigh] = [low, high].map((ratio) => Math.round(100 * (ratio - 1))) as [number, number];
+  if (ofHigh < 0) return `${-ofHigh} to ${-ofLow} %`;
+  if (ofLow > 0) return `${ofLow} to ${ofHigh} %`;
+  return `${changeWords(low)} to ${changeWords(high)}`;
 }

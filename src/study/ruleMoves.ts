@@ -8,6 +8,7 @@ import type { ComponentFits } from './fitComponents.js';
 export type RuleMoveKind =
   | 'as stated'
   | 'without a mark'
+  | 'without a far mark'
   | 'without a day'
   | 'without a crew'
   | 'wrong fixes counted in'
@@ -47,7 +48,8 @@ interface Change {
 }
 
 /**
- * How far the first rule of each component moves: found again without the worst mark, without the worst day, without each crew, with suspected
+ * How far the first rule of each component moves: found again without the worst mark, without each of the marks
+ * that set its reach where it ends with the data, without the worst day, without each crew, with suspected
  * wrong fixes counted in, in the other form, and from the other reference. The worst is the one whose errors are largest
  * against the fitted spread at their distance.
  * @param rules those of the study
@@ -64,7 +66,8 @@ export function ruleMoves(
     // The others move alike, and each takes as long as all rules of a run.
     const stated = rules.filter(({ component }) => component === basis.component).slice(0, 1);
     if (stated.length === 0) return [];
-    const moved = changesOf(errors, weights, basis, fits).flatMap((change) => {
+    const far = reachMarks(errors, stated[0]!);
+    const moved = changesOf(errors, weights, basis, fits, far).flatMap((change) => {
       const groundwork = changed(errors, weights, basis, fits, change);
       return typeof groundwork === 'string'
         ? stated.map((rule) => move(rule, change, null, groundwork))
@@ -87,6 +90,7 @@ function changesOf(
   weights: Float64Array | null,
   basis: ErrorModel,
   fits: ComponentFits['fits'],
+  farMarks: readonly string[],
 ): Change[] {
   const plain = { keep: () => true, screened: weights !== null, options: {} };
   const mark = worst(errors, weights, basis, ({ mark }) => mark);
@@ -105,6 +109,14 @@ function changesOf(
             keep: (e: OccupationError) => e.mark !== mark,
           },
         ]),
+    ...farMarks
+      .filter((name) => name !== mark)
+      .map((name) => ({
+        ...plain,
+        kind: 'without a far mark' as const,
+        subject: name,
+        keep: (e: OccupationError) => e.mark !== name,
+      })),
     ...(day === null
       ? []
       : [
@@ -137,6 +149,25 @@ function changesOf(
         ]
       : []),
   ];
+}
+
+/** A reach needs two marks at or beyond it. */
+const MARKS_OF_A_REACH = 2;
+
+/** The farthest marks at or beyond the end of a rule that ends where the data do: without them it may end sooner. */
+function reachMarks(
+  errors: readonly OccupationError[],
+  { maximumBaselineKm, longestSupportedKm }: Rule,
+): string[] {
+  if (maximumBaselineKm === null || maximumBaselineKm !== longestSupportedKm) return [];
+  const far = new Map<string, number>();
+  for (const { mark, baselineKm } of errors) {
+    if (baselineKm >= maximumBaselineKm) far.set(mark, Math.max(baselineKm, far.get(mark) ?? 0));
+  }
+  return [...far]
+    .sort(([a, x], [b, y]) => y - x || (a < b ? -1 : 1))
+    .slice(0, MARKS_OF_A_REACH)
+    .map(([mark]) => mark);
 }
 
 /** The changed groundwork, or why there is none. */

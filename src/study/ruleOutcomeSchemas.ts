@@ -9,6 +9,7 @@ const ruleMove = z.strictObject({
   kind: z.enum([
     'as stated',
     'without a mark',
+    'without a far mark',
     'without a day',
     'without a crew',
     'wrong fixes counted in',

@@ -129,6 +129,56 @@ describe('the report', () => {
   });
 });
 
+describe('the words of the report', () => {
+  const paragraphs = (more: Partial<Results>): string =>
+    otherWords(reportHtml({ ...run.results, ...more }, NO_PICTURES)).replace(/\s+/g, ' ');
+  it('say "or more" of a length that is the last of which the data tell, and only then', () => {
+    const rules = (bestEstimateKm: number): Rule[] =>
+      run.results.rules.map((rule) => ({
+        ...rule,
+        bestEstimateKm,
+        allDaysKm: 1,
+        dayBound: null,
+        longestSupportedKm: 8.34,
+      }));
+    expect(paragraphs({ rules: rules(8.34) })).toContain('“Or more”: so far the data reach');
+    expect(reportHtml({ ...run.results, rules: rules(8.34) }, NO_PICTURES)).toMatch(/>8\.3<\/data> or more</);
+    expect(reportHtml({ ...run.results, rules: rules(8) }, NO_PICTURES)).not.toMatch(/> or more<|“Or more”/);
+    const ruleTable = run.results.ruleTable.map((row) => ({ ...row, maximumBaselineKm: 8.34 }));
+    expect(paragraphs({ rules: rules(8), ruleTable })).toContain('is as far as the data reach');
+  });
+  it('say what may have been missed where no day stands out', () => {
+    const none = paragraphs({ degradedDays: [] });
+    expect(none.match(/So many days leave room for/g)).toHaveLength(2);
+    const days = run.results.rules[0]!.conditions.days;
+    expect(none).toContain(`leave room for ${percent(3 / days).replace('\u00a0', ' ')} of worse ones`);
+    const evidence = run.results.evidence.map((one) => ({
+      ...one,
+      daysWithFarShots: { farKm: 8, daysWithFar: 20, daysWithoutFar: 6, near: null },
+    }));
+    expect(paragraphs({ degradedDays: [], evidence })).toContain('and can hardly stand out.');
+  });
+  it('are explained where they are used, and only these', () => {
+    const told = /<section id="glossary">([\s\S]*?)<\/section>/;
+    const words = [...told.exec(page)![1]!.matchAll(/<dt>([^<]*)<\/dt>/g)].map(([, word]) => word!);
+    const rest = otherWords(page.replace(told, ''));
+    expect(words).toContain('ppm');
+    for (const word of words) expect(rest.toLowerCase()).toContain(word.toLowerCase());
+    expect(words).not.toContain('combined factor');
+  });
+  it('stand beside the errors by distance, in plan and in height', () => {
+    const of = (description: string): ReportPicture => ({ svg: '<svg/>', description });
+    const pictures = {
+      ...NO_PICTURES,
+      horizontal: of('plan by distance'),
+      vertical: of('height by distance'),
+    };
+    const fit = reportHtml(run.results, pictures).split('<section id="fit">')[1]!.split('</section>')[0]!;
+    expect(fit).toContain('alt="plan by distance"');
+    expect(fit).toContain('alt="height by distance"');
+  });
+});
+
 describe('tables of lengths', () => {
   const farthest = (): number => Math.max(...run.results.rules.map((rule) => rule.maximumBaselineKm ?? 0));
   const lengthsOf = (each: string, part: string): number[] =>

@@ -41,6 +41,22 @@ describe('the spec sheet against the data', () => {
     expect(found.verdict).toBe('not worse by more than 10 %');
     expect(found.sentence).toMatch(/^On the 29 days observed the horizontal errors are not worse/);
   });
+  it('says by how many per cent, and at which lengths they are shown to be better', () => {
+    const { sentence, ratios } = testSpecSheet(rows, model, sheet(0.5), { dayModel: days });
+    for (const { ratio, low, high } of ratios) {
+      const [most, least] = [low, high].map((each) => Math.round(100 * (1 - each)));
+      expect(sentence).toContain(`${Math.round(100 * (1 - ratio))} % smaller (${least} to ${most} %)`);
+    }
+    expect(sentence).not.toContain('shown to be better');
+    expect(testSpecSheet(rows, model, sheet(1.5), { dayModel: days }).sentence).toContain('% larger (');
+    const steep = {
+      ...sheet(1),
+      horizontal: { constantMm: 0.97 * constantMm, ppm: 3 * longRunPpm },
+    };
+    const partly = testSpecSheet(rows, model, steep, { dayModel: days });
+    expect(partly.verdict).not.toBe('better');
+    expect(partly.sentence).toMatch(/At (5 km and )?10 km they are shown to be better\.$/);
+  });
   it('compares like with like', () => {
     const { ratios } = testSpecSheet(rows, model, sheet(1), { dayModel: days });
     expect(ratios.map(({ baselineKm }) => baselineKm)).toEqual([1, 5, 10]);
