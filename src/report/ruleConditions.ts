@@ -48,7 +48,9 @@ function remarksOf(page: Page, of: (rule: Rule) => boolean): Html[] {
 export function statements(page: Page, c: Rule['conditions']): Html[] {
   const { height } = page.units;
   return [
-    ...(c.solarHours === null ? [] : [html`shots from ${range(page, c.solarHours, 'hour')} solar time`]),
+    ...(c.solarHours === null
+      ? []
+      : [html`shots from ${range(page, c.solarHours, 'hour')} solar time${onClock(page, c.solarHours)}`]),
     ...(c.epochs === null
       ? []
       : [html`${range(page, c.epochs, 'plain')} positions averaged to an occupation`]),
@@ -65,6 +67,15 @@ export function statements(page: Page, c: Rule['conditions']): Html[] {
         ]),
     ...(c.reviewBy === null ? [] : [html`to be looked at again by ${date(c.reviewBy)}`]),
   ];
+}
+
+/** The same hours by the clock of the zone, where it is known. */
+function onClock(page: Page, { from, to }: SeenRange): Html | null {
+  const { shotHours } = page.results;
+  if (shotHours === null || shotHours.clock === null) return null;
+  if (shotHours.fromHour !== from || shotHours.toHour !== to) return null;
+  const { clock } = shotHours;
+  return html`, ${page.number(clock, 'fromHour', 'hour')} to ${page.number(clock, 'toHour', 'hour')} on the clock of ${date(clock.day)}`;
 }
 
 const range = (page: Page, seen: SeenRange, kind: NumberKind): Html =>

@@ -85,8 +85,7 @@ export const leftOut = z.strictObject({
 
 const hour = z.number();
 
-export const hoursOfCaution = z.strictObject({
-  component,
+export const shotHours = z.strictObject({
   fromHour: hour,
   toHour: hour,
   clock: z
@@ -94,3 +93,5 @@ export const hoursOfCaution = z.strictObject({
     .nullable()
     .describe("On the clock of the study's zone on its last day."),
 });
+
+export const hoursOfCaution = shotHours.extend({ component });

@@ -16,6 +16,9 @@ export interface HoursOfCaution {
   readonly clock: { readonly day: string; readonly fromHour: number; readonly toHour: number } | null;
 }
 
+/** Between which hours the shots were taken. */
+export type ShotHours = Omit<HoursOfCaution, 'component'>;
+
 /** Hours are called different below this chance. */
 const LEVEL = 0.05;
 const MS_AN_HOUR = 3_600_000;
@@ -31,14 +34,27 @@ export function hoursOfCaution(
     if (pValue === null || pValue >= LEVEL || hours.length === 0) return [];
     const { from, to } = hours.reduce((a, b) => ((b.ppm.estimate ?? 0) > (a.ppm.estimate ?? 0) ? b : a));
     const ahead = clockAhead(errors, control, timeZone);
-    const clock = ahead && {
-      day: ahead.day,
-      fromHour: onClock(from + ahead.hours),
-      toHour: onClock(to + ahead.hours),
-    };
-    return [{ component, fromHour: from, toHour: to, clock }];
+    return [{ component, fromHour: from, toHour: to, clock: byClock(from, to, ahead) }];
   });
 }
+
+/** The earliest and the latest hour of all shots; null where no time of day is known. */
+export function shotHours(
+  errors: readonly OccupationError[],
+  control: Control,
+  { timeZone }: Pick<Study, 'timeZone'>,
+): ShotHours | null {
+  let [from, to] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (const { solarHour } of errors) {
+    if (solarHour < from) from = solarHour;
+    if (solarHour > to) to = solarHour;
+  }
+  if (from > to) return null;
+  return { fromHour: from, toHour: to, clock: byClock(from, to, clockAhead(errors, control, timeZone)) };
+}
+
+const byClock = (from: number, to: number, ahead: ReturnType<typeof clockAhead>): ShotHours['clock'] =>
+  ahead && { day: ahead.day, fromHour: onClock(from + ahead.hours), toHour: onClock(to + ahead.hours) };
 
 const onClock = (hour: number): number => hour - 24 * Math.floor(hour / 24);
 

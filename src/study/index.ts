@@ -21,7 +21,7 @@ export type {
   WrongFixShareResult,
 } from './fitResultTypes.js';
 export type { StatedSetting } from './flatSettings.js';
-export type { HoursOfCaution } from './hoursOfCaution.js';
+export type { HoursOfCaution, ShotHours } from './hoursOfCaution.js';
 export type { InputFile } from './inputFiles.js';
 export type { JudgedDays } from './judgeDays.js';
 export type { LateOccupations } from './lateOccupations.js';

@@ -28,7 +28,7 @@ import type {
   MarkResult,
   WrongFixResult,
 } from './fitResultTypes.js';
-import type { HoursOfCaution } from './hoursOfCaution.js';
+import type { HoursOfCaution, ShotHours } from './hoursOfCaution.js';
 import type { InputFile } from './inputFiles.js';
 import type { RuleOutcomes } from './ruleOutcomes.js';
 import type {
@@ -134,6 +134,8 @@ export interface Results extends StatedStudy, RuleOutcomes {
   readonly timeOfDay: readonly TimeOfDayResult[];
   /** Hours at which errors are shown to be larger. */
   readonly hoursOfCaution: readonly HoursOfCaution[];
+  /** Between which hours the shots were taken; null where no time of day is known. */
+  readonly shotHours: ShotHours | null;
   readonly lengthClasses: readonly LengthClass[];
   readonly marks: readonly MarkResult[];
   /** The sky of the days and what goes with it; null without files that tell of it. */

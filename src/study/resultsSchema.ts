@@ -2,7 +2,15 @@ import { z } from 'zod';
 import { OCCUPATION_REASONS, ROW_REASONS } from '../logs/index.js';
 import { backTest, watch } from './backTestSchemas.js';
 import { blunders, commonCauses, controlMarks } from './controlSchemas.js';
-import { dailyFactor, dayModel, degradedDay, hoursOfCaution, leftOut, timeOfDay } from './daySchemas.js';
+import {
+  dailyFactor,
+  dayModel,
+  degradedDay,
+  hoursOfCaution,
+  leftOut,
+  shotHours,
+  timeOfDay,
+} from './daySchemas.js';
 import { evidence, group, terms } from './evidenceSchemas.js';
 import { comparison, fit, mark, markComponent, setup, wrongFix } from './fitSchemas.js';
 import { INPUT_ROLES } from './inputFiles.js';
@@ -98,6 +106,7 @@ export const resultsSchema = z.strictObject({
   degradedDays: z.array(degradedDay),
   timeOfDay: z.array(timeOfDay),
   hoursOfCaution: z.array(hoursOfCaution),
+  shotHours: shotHours.nullable().describe('Between which hours the shots were taken.'),
   lengthClasses: z.array(lengthClass),
   marks: z.array(mark),
   sky: skySchema.nullable().describe('The sky of the days and what goes with it.'),

@@ -16,7 +16,7 @@ import { causeMessages } from './causeMessages.js';
 import { studyEvidence } from './evidence.js';
 import { fitComponents, formDoubtOf, markSigmaOf } from './fitComponents.js';
 import { fitResults, markResults } from './fitResults.js';
-import { hoursOfCaution } from './hoursOfCaution.js';
+import { hoursOfCaution, shotHours } from './hoursOfCaution.js';
 import { dayResults, type JudgedDays, judgeDays } from './judgeDays.js';
 import { leaveOutDays } from './leaveOutDays.js';
 import { lengthClasses } from './lengthClasses.js';
@@ -171,6 +171,7 @@ export async function runStudy(study: Study, options: RunOptions = {}): Promise<
     ...fitted,
     ...dayResults(judged),
     hoursOfCaution: hoursOfCaution(dayResults(judged).timeOfDay, used, read.control, study),
+    shotHours: shotHours(used, read.control, study),
     ...evidence.results,
     wrongFixes: wrongFixResults(errors, wrongFixes),
     lengthClasses: lengthClasses(used, read.visits, read.control, study),

@@ -81,6 +81,7 @@ export async function summarizeRun(study: Study, control: Control, parts: ReadPa
     degradedDays: [],
     timeOfDay: [],
     hoursOfCaution: [],
+    shotHours: null,
     lengthClasses: [],
     marks: [],
     sky: null,

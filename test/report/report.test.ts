@@ -158,6 +158,13 @@ describe('the words of the report', () => {
     }));
     expect(paragraphs({ degradedDays: [], evidence })).toContain('and can hardly stand out.');
   });
+  it('give the hours of the shots by the clock too', () => {
+    expect(run.results.study.timeZone).toBe('Etc/GMT+1');
+    expect(paragraphs({})).toMatch(/shots from to solar time, to on the clock of 2025-05-02/);
+    expect(paragraphs({ shotHours: { ...run.results.shotHours!, clock: null } })).not.toMatch(
+      /shots from to solar time,/,
+    );
+  });
   it('are explained where they are used, and only these', () => {
     const told = /<section id="glossary">([\s\S]*?)<\/section>/;
     const words = [...told.exec(page)![1]!.matchAll(/<dt>([^<]*)<\/dt>/g)].map(([, word]) => word!);
@@ -389,6 +396,7 @@ function emptied(): Partial<Results> {
     promises: [],
     leftOut: null,
     hoursOfCaution: [],
+    shotHours: null,
     specSheet: null,
     commonCauses: { bases: [], causes: [] },
   };

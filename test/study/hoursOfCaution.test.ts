@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Control } from '../../src/control/index.js';
 import type { OccupationError } from '../../src/errors/index.js';
-import { hoursOfCaution } from '../../src/study/hoursOfCaution.js';
+import { hoursOfCaution, shotHours } from '../../src/study/hoursOfCaution.js';
 import type { TimeOfDayResult } from '../../src/study/index.js';
 
 const ppm = (estimate: number) => ({ estimate, low: null, high: null });
@@ -25,6 +25,22 @@ const errors = [
   { base: 'A', day: '2025-07-02' },
   { base: 'B', day: '2025-07-01' },
 ] as OccupationError[];
+
+describe('hours of the shots', () => {
+  const shots = [7.25, Number.NaN, 15.5].map((solarHour, k) => ({ ...errors[k]!, solarHour }));
+  it('are the first and the last, by the sun and by the clock', () => {
+    // As above: the clock is 2 h - 36 min ahead of the sun.
+    expect(shotHours(shots, control, { timeZone: 'Europe/Zurich' })).toEqual({
+      fromHour: 7.25,
+      toHour: 15.5,
+      clock: { day: '2025-07-02', fromHour: expect.closeTo(8.65, 9), toHour: expect.closeTo(16.9, 9) },
+    });
+    expect(shotHours(shots, control, { timeZone: null })!.clock).toBeNull();
+  });
+  it('are not known without a time of day', () => {
+    expect(shotHours(shots.slice(1, 2), control, { timeZone: 'UTC' })).toBeNull();
+  });
+});
 
 describe('hours of caution', () => {
   it('are the worst ones, by the sun and by the clock of the last day at the base of most shots', () => {
