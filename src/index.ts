@@ -450,6 +450,7 @@ export {
   runStudy,
   type SeasonRule,
   type SecondVisitsResult,
+  type ShotHours,
   type SignedPpm,
   SKY_MEASURES,
   SKY_OUTCOMES,
