@@ -30,7 +30,7 @@ export function secondVisit(page: Page): Html {
     : html`No gap up to <strong>${page.number(lengths[0]!, 'minutes', 'count')} minutes</strong> makes the mean of both much better: come back on another day where it matters.`;
   return html`<section id="twice"><h2>A new point, twice on one day</h2>
 <p>${advice} Something is wrong beyond:</p>
-${table<Visit>(`Difference of both visits, ${error.name}`, lengths, [
+${table<Visit>(`Difference of both visits, ${error.name}; error left in the mean, % of one shot’s`, lengths, [
   {
     head: `At, ${distance.name}`,
     cell: (row) => page.number(row, 'baselineKm', 'distance, rounded down'),
@@ -44,7 +44,7 @@ ${table<Visit>(`Difference of both visits, ${error.name}`, lengths, [
     },
   })),
   ...given.map(({ component, visits }) => ({
-    head: `${nameOf(component)}: error left in the mean, % of one shot’s`,
+    head: `${nameOf(component)}: left, %`,
     cell: ({ baselineKm }: Visit) => {
       const own = visits.find((visit) => visit.minutes === minutes && visit.baselineKm === baselineKm);
       return own === undefined ? '—' : page.number(own.factor, 'estimate', 'whole share');
