@@ -42,12 +42,13 @@ function monthLines({ after, from, visits, markShifts, nextMarks }: WatchMonth):
 const MOST_DAYS = 10;
 
 function watchLines({ component, days, leftOut, fitAgain, reasons, sentence }: Watch): string[] {
-  const outside = days.filter((day) => day.outside).map(({ day }) => day);
-  const named = outside.slice(-MOST_DAYS).join(', ');
   const left =
     leftOut === 0
       ? ''
       : ` ${plural(leftOut, 'occupation')} on marks that the model does not know took no part.`;
+  if (days.length === 0) return [`${capital(component)}: no new day could be judged.${left}`];
+  const outside = days.filter((day) => day.outside).map(({ day }) => day);
+  const named = outside.slice(-MOST_DAYS).join(', ');
   return [
     `${capital(component)}: ${plural(days.length, 'new day')}, ${outside.length} of them outside${named === '' ? '' : ` (${named})`}.${left}`,
     ...(fitAgain ? reasons.map((reason) => `  ${capital(reason)}.`) : ['  The model may stay.']),

@@ -22,6 +22,7 @@ import {
   reportTables,
   ruleSentence,
   summaryText,
+  watchText,
   weightsHtml,
 } from '../../src/report/index.js';
 import { noRule, type Rule } from '../../src/rule/index.js';
@@ -498,6 +499,19 @@ describe('pages of poor studies', () => {
     expect(otherWords(empty)).not.toMatch(/undefined|NaN|null|\[object/);
     expect(empty).toContain('Put the new logs into the study file.');
     expect(empty).toContain('There is nothing to watch by');
+    const idle = { component: 'horizontal', days: [], alarms: [], leftOut: 2, fitAgain: false } as const;
+    const told = watchText({
+      results: run.results,
+      watches: [{ ...idle, reasons: [], sentence: '0 new days were watched.' }],
+      unwatched: [],
+      month: { ...month, after: '2025-05-02' },
+      messages: [],
+    });
+    expect(told).toContain(
+      'Horizontal: no new day could be judged. 2 occupations on marks that the model does not know took no part.',
+    );
+    expect(told).not.toContain('may stay');
+    expect(told).toContain('No visit lies on a day after 2025-05-02, the last day of the earlier run.');
     const place = { day: '2025-06-01', mark: evil, crew: evil, file: evil, row: 3 };
     const spoiled = monthHtml({
       results: { ...run.results, study: { ...run.results.study, title: evil }, crews: [] },
