@@ -31,6 +31,7 @@ describe('the packed package', () => {
     expect(names).toEqual([
       '.jupyter',
       'CHANGELOG.md',
+      'DEVELOPERS.md',
       'LICENSE',
       'README.md',
       'datasets-demo',
