@@ -77,7 +77,7 @@ export function makeRules(
       if (own.length === 0) return [];
       return make(used, model, own, { ...rest, weights: usedWeights }).map(({ group, rule }) => ({
         group,
-        ...short(rule),
+        ...partOfRule(rule),
       }));
     });
   const rules = toleranceRules(input, { tolerances });
@@ -135,8 +135,15 @@ export function toleranceRules(
   );
 }
 
-/** What a rule of some hours or months keeps. */
-const short = ({ component, limitMm, share, maximumBaselineKm, bestEstimateKm, reason }: Rule): PartRule => ({
+/** What is kept of a rule of some hours or months, or beside the rule of the study. */
+export const partOfRule = ({
+  component,
+  limitMm,
+  share,
+  maximumBaselineKm,
+  bestEstimateKm,
+  reason,
+}: Rule): PartRule => ({
   component,
   limitMm,
   share,

@@ -4,7 +4,7 @@ import type { Rule } from '../rule/index.js';
 import type { LeftOutDays } from './dayResultTypes.js';
 import { fitComponents, formDoubtOf, markSigmaOf } from './fitComponents.js';
 import { dayModelOfFit, ppmInterval } from './judgeDays.js';
-import { type RuleInput, toleranceRules, withRuleOptions } from './makeRules.js';
+import { partOfRule, type RuleInput, toleranceRules, withRuleOptions } from './makeRules.js';
 import type { Results } from './results.js';
 import { screenStudy } from './screenStudy.js';
 import type { Study } from './study.js';
@@ -53,14 +53,7 @@ export function withLeftOutDays(
       occupations: model.occupations,
       days: model.days,
     })),
-    rules: rules.map(({ component, limitMm, share, maximumBaselineKm, bestEstimateKm, reason }) => ({
-      component,
-      limitMm,
-      share,
-      maximumBaselineKm,
-      bestEstimateKm,
-      reason,
-    })),
+    rules: rules.map(partOfRule),
   };
 }
 
